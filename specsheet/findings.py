@@ -1,0 +1,66 @@
+"""Findings: what is wrong with a tag, how bad it is, and by what margin.
+
+A finding is data, never an exception: user input that cannot be used, or a limit that does not
+hold, travels beside the values to every front end.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from enum import StrEnum
+
+
+class Level(StrEnum):
+    """How bad a finding is."""
+
+    STOP = "stop"  # do not buy this
+    CAUTION = "caution"  # someone must decide
+    NOTE = "note"  # for information
+
+
+class Origin(StrEnum):
+    """Where a value comes from; printed on every row of every output."""
+
+    GIVEN = "given"  # typed by the user
+    DERIVED = "derived"  # computed by a published method
+    ASSUMED = "assumed"  # a default nobody typed
+    TYPICAL = "typical"  # usual for the family, for the bidder to confirm
+
+
+@dataclass(frozen=True, slots=True)
+class Reserve:
+    """By how much one driver can change before a verdict changes.
+
+    Attributes:
+        driver: glossary key of what changes ("mass_flow", "temperature", "pressure", ...).
+        at: value of the driver at which the verdict flips [SI unit of the driver].
+        fraction: (at - present) / present, signed [-]; for a temperature, the difference in kelvin
+            divided by the present absolute temperature.
+    """
+
+    driver: str
+    at: float
+    fraction: float
+
+
+@dataclass(frozen=True, slots=True)
+class Finding:
+    """One thing to say about a tag.
+
+    Attributes:
+        level: stop, caution or note.
+        code: short stable name for scripts, words joined by hyphens ("velocity-high").
+        field: path of the entry it is about ("points.minimum.flow", "meter.bore"), or "".
+        message: one or two sentences: what was wanted, what came, how to mend it.
+        point: name of the operating point, or "".
+        source: citation of the limit or method, or "".
+        reserve: margin to the flip of the verdict, where one driver decides.
+    """
+
+    level: Level
+    code: str
+    field: str
+    message: str
+    point: str = ""
+    source: str = ""
+    reserve: Reserve | None = None
