@@ -2,7 +2,7 @@
 
 ``basis`` is honest about how the project knows it:
 
-* ``published values``: figures of the source (or of public material that quotes it) are in the tests;
+* ``published values``: figures of the source, or of public material quoting it, are in the tests;
 * ``read``: the passage used was read in public material;
 * ``memory``: written from memory; the citation then says so wherever it is printed.
 """

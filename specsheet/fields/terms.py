@@ -1,0 +1,136 @@
+"""Derived terms: the keys of the JSON, with label, symbol and kind.
+
+The keys are the field's standard terms in full (JSON contract); a family may put out only terms
+listed here, and a test holds it to that.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+
+@dataclass(frozen=True, slots=True)
+class Term:
+    """One derived term.
+
+    Attributes:
+        key: name in JSON and code.
+        label: words on sheet and screen.
+        symbol: the standards' symbol, or "".
+        kind: key of its kind of quantity, or "text".
+        shown: unit shown, where it differs from the kind's own.
+    """
+
+    key: str
+    label: str
+    symbol: str
+    kind: str
+    shown: str = ""
+
+
+_TERMS = (
+    # Operating conditions
+    Term("mass_flow", "Mass flow", "qm", "mass_flow"),
+    Term("volume_flow", "Volume flow, operating", "qv", "volume_flow"),
+    Term("base_volume_flow", "Volume flow, base", "qb", "base_volume_flow"),
+    Term("energy_flow", "Energy flow", "qe", "energy_flow"),
+    Term("pressure", "Pressure, absolute", "p", "pressure_absolute"),
+    Term("pressure_gauge", "Pressure, gauge", "pg", "pressure_gauge"),
+    Term("temperature", "Temperature", "t", "temperature"),
+    # Fluid
+    Term("density", "Density", "ρ", "density"),
+    Term("base_density", "Density at base conditions", "ρb", "density"),
+    Term("relative_density", "Relative density (air = 1)", "d", "dimensionless"),
+    Term("viscosity", "Dynamic viscosity", "μ", "dynamic_viscosity"),
+    Term("kinematic_viscosity", "Kinematic viscosity", "ν", "kinematic_viscosity"),
+    Term("isentropic_exponent", "Isentropic exponent", "κ", "dimensionless"),
+    Term("compressibility", "Compressibility factor", "Z", "dimensionless"),
+    Term("base_compressibility", "Compressibility factor, base", "Zb", "dimensionless"),
+    Term("sound_speed", "Speed of sound", "c", "velocity"),
+    Term("vapour_pressure", "Vapour pressure", "pv", "pressure_absolute"),
+    Term("dew_temperature", "Dew point", "td", "temperature"),
+    Term("saturation_temperature", "Saturation temperature", "ts", "temperature"),
+    Term("saturation_margin", "Margin to saturation", "Δts", "temperature_difference"),
+    Term("heat_capacity", "Heat capacity, isobaric", "cp", "heat_capacity"),
+    Term("thermal_conductivity", "Thermal conductivity", "λ", "thermal_conductivity"),
+    Term("specific_enthalpy", "Specific enthalpy", "h", "specific_energy", "kJ/kg"),
+    Term("molar_mass", "Molar mass", "M", "molar_mass"),
+    Term("gross_calorific_value", "Gross calorific value", "Hs", "volume_energy"),
+    Term("net_calorific_value", "Net calorific value", "Hi", "volume_energy"),
+    Term("gross_calorific_value_mass", "Gross calorific value by mass", "Hs,m", "specific_energy"),
+    Term("net_calorific_value_mass", "Net calorific value by mass", "Hi,m", "specific_energy"),
+    Term("wobbe_index", "Wobbe index, gross", "Ws", "volume_energy"),
+    Term("dryness_fraction", "Dryness fraction", "x", "ratio"),
+    Term("electrical_conductivity", "Electrical conductivity", "σ", "conductivity"),
+    Term("phase", "Phase, computed", "", "text"),
+    # Flow in the pipe and the meter
+    Term("inside_diameter", "Inside diameter of the pipe", "D", "length"),
+    Term("velocity", "Velocity in the pipe", "v", "velocity"),
+    Term("meter_velocity", "Velocity in the meter", "vm", "velocity"),
+    Term("throat_velocity", "Velocity in the throat", "vd", "velocity"),
+    Term("reynolds_number", "Reynolds number, pipe", "ReD", "dimensionless"),
+    Term("meter_reynolds_number", "Reynolds number, meter", "Rem", "dimensionless"),
+    Term("throat_reynolds_number", "Reynolds number, throat", "Red", "dimensionless"),
+    Term("mach_number", "Mach number", "Ma", "dimensionless"),
+    Term("dynamic_pressure", "Momentum flux ρv²", "ρv²", "pressure_difference", "Pa"),
+    # Differential pressure
+    Term("differential_pressure", "Differential pressure", "Δp", "pressure_difference"),
+    Term("pressure_ratio", "Pressure ratio p2/p1", "p2/p1", "dimensionless"),
+    Term("expansibility", "Expansibility factor", "ε", "dimensionless"),
+    Term("discharge_coefficient", "Discharge coefficient", "C", "dimensionless"),
+    Term("pressure_loss_coefficient", "Loss coefficient", "K", "dimensionless"),
+    Term("pressure_loss", "Permanent pressure loss", "ϖ", "pressure_difference"),
+    Term("lost_power", "Power lost to the meter", "P", "power"),
+    Term("yearly_energy", "Energy lost in a year", "E", "energy"),
+    Term("yearly_cost", "Cost of the loss in a year", "", "dimensionless"),
+    # Signals
+    Term("signal_fraction", "Signal, share of span", "", "ratio"),
+    Term("signal_current", "Signal current, linear in Δp", "I", "current"),
+    Term("signal_current_root", "Signal current, linear in flow", "I√", "current"),
+    Term("frequency", "Frequency", "f", "frequency"),
+    Term("pulse_rate", "Output pulses", "fp", "frequency"),
+    Term("induced_voltage", "Induced voltage", "U", "voltage"),
+    Term("transit_time_difference", "Transit-time difference", "Δt", "time", "ns"),
+    Term("head", "Head", "h", "length"),
+    Term("strouhal_number", "Strouhal number", "Sr", "dimensionless"),
+    # Margins
+    Term("cavitation_index", "Cavitation index", "σc", "dimensionless"),
+    Term("minimum_back_pressure", "Back pressure needed", "pmin", "pressure_absolute"),
+    Term("back_pressure_margin", "Margin of back pressure", "", "pressure_difference", "bar"),
+    # Uncertainty
+    Term("uncertainty", "Uncertainty of flow, k = 2", "U", "ratio"),
+    Term("error_limit", "Error expected of the meter", "e", "ratio"),
+    Term("turndown", "Turndown", "", "dimensionless"),
+    Term("turndown_available", "Turndown available", "", "dimensionless"),
+    # Element
+    Term("bore_diameter", "Bore at 20 °C", "d20", "length"),
+    Term("bore_diameter_hot", "Bore at operating temperature", "d", "length"),
+    Term("throat_diameter", "Throat at 20 °C", "d20", "length"),
+    Term("throat_diameter_hot", "Throat at operating temperature", "d", "length"),
+    Term("inside_diameter_hot", "Inside diameter at operating temperature", "D", "length"),
+    Term("diameter_ratio", "Diameter ratio", "β", "dimensionless"),
+    Term("differential_pressure_range", "Upper range value, Δp", "Δpmax", "pressure_difference"),
+    Term("upper_range_flow", "Flow at the upper range value", "qmax", "mass_flow"),
+    Term("lower_range_flow", "Smallest flow within all limits", "qmin", "mass_flow"),
+    Term("plate_thickness", "Plate thickness", "E", "length"),
+    Term("edge_thickness", "Edge thickness", "e", "length"),
+    Term("bevel_angle", "Bevel angle", "F", "angle"),
+    Term("plate_stress", "Bending stress in the plate", "", "pressure_difference", "MPa"),
+    Term("meter_size", "Meter size", "", "text"),
+    Term("meter_bore", "Bore of the meter", "Dm", "length"),
+    Term("bluff_width", "Width of the bluff body", "db", "length"),
+    Term("k_factor", "K-factor", "KF", "pulse_factor"),
+    Term("reducer_loss", "Loss of the reducers", "", "pressure_difference"),
+    Term("zero_stability", "Zero stability", "", "mass_flow"),
+    Term("upstream_length", "Straight length upstream", "", "length"),
+    Term("downstream_length", "Straight length downstream", "", "length"),
+    Term("flange_rating", "Flange rating", "", "text"),
+    Term("allowable_pressure", "Allowable pressure of the rating", "", "pressure_gauge"),
+)
+
+TERMS: dict[str, Term] = {term.key: term for term in _TERMS}
+
+
+def term(key: str) -> Term:
+    """Return the term of that key; KeyError when the glossary lacks it (a mistake of ours)."""
+    return TERMS[key]

@@ -1,0 +1,233 @@
+"""The protocol of a meter family: data (its profile) plus four pure functions.
+
+A family module exports one ``FAMILY``. Everything is in SI; arrays have shape (n,), one element a
+flow: the operating points come first, then the sweep along the range, in one call.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass, field, replace
+
+import numpy as np
+from numpy.typing import NDArray
+
+from specsheet.findings import Finding, Level, Origin
+from specsheet.packs import Profile
+from specsheet.tag import Tag
+
+Array = NDArray[np.float64]
+
+
+@dataclass(frozen=True)
+class Stream:
+    """The fluid and its flow at n conditions; every array has shape (n,), SI.
+
+    A value that the fluid layer could not give is NaN there (sound_speed of a brine, say).
+
+    Attributes:
+        mass_flow: [kg/s]
+        density: [kg/m3]
+        viscosity: dynamic [Pa s]
+        pressure: absolute, at the meter's inlet [Pa]
+        temperature: [K]
+        isentropic_exponent: [-], NaN for a liquid
+        sound_speed: [m/s]
+        vapour_pressure: absolute [Pa], NaN for a gas
+        density_uncertainty: relative expanded uncertainty of the density, k = 2 [-]
+    """
+
+    mass_flow: Array
+    density: Array
+    viscosity: Array
+    pressure: Array
+    temperature: Array
+    isentropic_exponent: Array
+    sound_speed: Array
+    vapour_pressure: Array
+    density_uncertainty: Array
+
+    @property
+    def volume_flow(self) -> Array:
+        """Volume flow at operating conditions [m3/s]."""
+        return self.mass_flow / self.density
+
+    def take(self, indices: NDArray[np.intp]) -> Stream:
+        """Return the stream at the chosen conditions (repeats allowed)."""
+        return Stream(*(getattr(self, name)[indices] for name in self.__dataclass_fields__))
+
+    def with_flow(self, mass_flow: Array) -> Stream:
+        """Return the same conditions with other mass flows [kg/s]."""
+        return replace(self, mass_flow=mass_flow)
+
+
+@dataclass(frozen=True, slots=True)
+class Pipe:
+    """The pipe the meter goes into.
+
+    Attributes:
+        inside_diameter: at 20 °C [m]
+        wall: [m], NaN if unknown
+        expansion: linear coefficient of thermal expansion [1/K]
+        roughness: uniform equivalent roughness [m], NaN if unknown
+        size: nominal size as text ("DN 150"), or ""
+        nominal: nominal diameter as DN number, 0 if unknown
+        material: name of the material
+    """
+
+    inside_diameter: float
+    wall: float
+    expansion: float
+    roughness: float
+    size: str
+    nominal: int
+    material: str
+
+
+@dataclass(frozen=True, slots=True)
+class Given:
+    """A value to print that belongs to the element, with its origin.
+
+    Attributes:
+        value: SI number, or text.
+        origin: given, derived, assumed or typical.
+        source: citation, or "".
+    """
+
+    value: float | str
+    origin: Origin
+    source: str = ""
+
+
+@dataclass(frozen=True, slots=True)
+class Derivation:
+    """How one derived value comes about; the calculation annex prints it with the numbers put in.
+
+    Attributes:
+        key: glossary key of the result.
+        equation: in plain text, with the symbols of the glossary.
+        source: citation.
+        inputs: glossary keys of the values put in.
+    """
+
+    key: str
+    equation: str
+    source: str
+    inputs: tuple[str, ...] = ()
+
+
+@dataclass(frozen=True, slots=True)
+class Limit:
+    """A limit of use that belongs to the element as sized.
+
+    Attributes:
+        key: glossary key bounded: a value of ``at``, of the stream, or of the element.
+        low, high: bounds (SI), None where there is none.
+        level: level of the finding when it does not hold.
+        code: code of the finding.
+        message: what crossing it means and how to mend it.
+        source: citation.
+        phase: "liquid", "gas" or "" for both.
+        driver: glossary key of what would change the verdict: "mass_flow" for values of ``at``,
+            the key itself for a property of the stream, "" for the element.
+    """
+
+    key: str
+    low: float | None
+    high: float | None
+    level: Level
+    code: str
+    message: str
+    source: str
+    phase: str = ""
+    driver: str = "mass_flow"
+
+
+@dataclass(frozen=True, slots=True)
+class Contribution:
+    """One contribution to the uncertainty of the flow.
+
+    Attributes:
+        key: short stable name ("discharge_coefficient").
+        label: words for it.
+        relative: standard uncertainty of the flow that it causes, relative, shape (n,) [-].
+        origin: where the figure comes from.
+        source: citation.
+        freedom: degrees of freedom (infinite when not stated).
+    """
+
+    key: str
+    label: str
+    relative: Array
+    origin: Origin
+    source: str
+    freedom: float = float("inf")
+
+
+@dataclass(frozen=True)
+class Request:
+    """What a family is asked: everything it may look at.
+
+    Attributes:
+        tag: the tag, for the family's own entries (``meter.*``) and the requirements.
+        profile: the family's profile.
+        pipe: the pipe.
+        names: names of the operating points.
+        stream: the operating points that could be evaluated, in order (n = len(names)).
+        normal: index of the normal point (else the point of the middle flow).
+        maximum: index of the point with the largest mass flow.
+        minimum: index of the point with the smallest mass flow.
+    """
+
+    tag: Tag
+    profile: Profile
+    pipe: Pipe
+    names: tuple[str, ...]
+    stream: Stream
+    normal: int
+    maximum: int
+    minimum: int
+
+
+@dataclass(frozen=True)
+class Element:
+    """The meter as sized or rated.
+
+    Attributes:
+        numbers: what ``at`` needs, SI floats by name.
+        values: what the sheet prints of it, by glossary key.
+        notes: heading -> sentences on the make of it (edge, bevel, liner, electrodes ...).
+        findings: what is wrong with it as such.
+        choices: words that ``at`` needs ("taps").
+    """
+
+    numbers: Mapping[str, float]
+    values: Mapping[str, Given]
+    notes: Mapping[str, tuple[str, ...]] = field(default_factory=dict)
+    findings: tuple[Finding, ...] = ()
+    choices: Mapping[str, str] = field(default_factory=dict)
+
+
+@dataclass(frozen=True)
+class Family:
+    """A meter family.
+
+    Attributes:
+        key: as in the tag file and the name of its profile.
+        size: sizes the element where it is free, rates it where it is given. Never raises on user
+            data: what is wrong becomes a finding of the element.
+        at: the response to a stream: glossary key -> array of shape (n,); always velocity,
+            reynolds_number, pressure_loss and the family's signal.
+        limits: limits of use of the element as sized.
+        budget: contributions to the uncertainty of the flow, given the response.
+        derivations: how each value of ``at`` and of the element comes about.
+        signal: glossary key of the family's primary signal, rising with flow.
+    """
+
+    key: str
+    size: Callable[[Request], Element]
+    at: Callable[[Element, Stream], Mapping[str, Array]]
+    limits: Callable[[Element, Request], tuple[Limit, ...]]
+    budget: Callable[[Element, Stream, Mapping[str, Array]], tuple[Contribution, ...]]
+    derivations: tuple[Derivation, ...]
+    signal: str

@@ -1,0 +1,170 @@
+"""The data packs of ``profiles/``: found, read and typed. Data only, no engineering.
+
+A pack is a TOML file that a user may read, correct and extend. From a checkout the folder stands
+at the top of the repository; in an installed wheel it stands inside the package.
+"""
+
+from __future__ import annotations
+
+import tomllib
+from collections.abc import Mapping
+from dataclasses import dataclass, field
+from functools import cache
+from pathlib import Path
+from typing import Any
+
+from specsheet.fields import Entry
+
+FAMILY_FOLDER = "families"
+
+
+@cache
+def folder() -> Path:
+    """Return the folder of the data packs.
+
+    Raises:
+        FileNotFoundError: the installation lacks it.
+    """
+    here = Path(__file__).resolve().parent
+    for candidate in (here / "profiles", here.parent / "profiles"):
+        if candidate.is_dir():
+            return candidate
+    raise FileNotFoundError(f"the data packs are missing beside {here}: install specsheet again")
+
+
+@cache
+def table(name: str) -> Mapping[str, Any]:
+    """Return the pack ``profiles/<name>.toml`` as plain TOML data (do not change it)."""
+    with (folder() / f"{name}.toml").open("rb") as file:
+        return tomllib.load(file)
+
+
+@dataclass(frozen=True, slots=True)
+class ProfileLimit:
+    """A usual limit of a family, from its profile.
+
+    Attributes:
+        quantity: glossary key it bounds ("velocity", "temperature").
+        low, high: bounds in SI, None where there is none.
+        phase: "liquid", "gas" or "" for both.
+        level: level of the finding when it does not hold.
+        message: what it means to cross it.
+        source: citation, "common practice, no source" or "from memory".
+    """
+
+    quantity: str
+    low: float | None
+    high: float | None
+    phase: str
+    level: str
+    message: str
+    source: str
+
+
+@dataclass(frozen=True, slots=True)
+class Typical:
+    """A figure usual for the family, printed as typical, for the bidder to confirm."""
+
+    value: float
+    source: str
+
+
+@dataclass(frozen=True)
+class Profile:
+    """The data half of a meter family: ``profiles/families/<key>.toml``.
+
+    Attributes:
+        key, title, group, principle: what it is called and how it works.
+        phases: phases it can meter.
+        entries: what the user may state under ``[meter]``.
+        reply: what a bidder must state.
+        limits: usual limits of use.
+        typical: usual figures by name (SI).
+        straight: straight-length rules, raw (read by :mod:`specsheet.line`).
+        wetted: wetted parts and their usual materials.
+        clauses: clause name (calibration, installation, output ...) -> sentences.
+        outputs: kinds of output.
+        moving_parts: whether anything moves in the flow.
+        data: the whole file, raw.
+    """
+
+    key: str
+    title: str
+    group: str
+    principle: str
+    phases: tuple[str, ...]
+    entries: tuple[Entry, ...] = ()
+    reply: tuple[Entry, ...] = ()
+    limits: tuple[ProfileLimit, ...] = ()
+    typical: Mapping[str, Typical] = field(default_factory=dict)
+    straight: Mapping[str, Any] = field(default_factory=dict)
+    wetted: Mapping[str, tuple[str, ...]] = field(default_factory=dict)
+    clauses: Mapping[str, tuple[str, ...]] = field(default_factory=dict)
+    outputs: tuple[str, ...] = ()
+    moving_parts: bool = False
+    data: Mapping[str, Any] = field(default_factory=dict)
+
+
+def _entry(prefix: str, raw: Mapping[str, Any]) -> Entry:
+    return Entry(
+        path=f"{prefix}.{raw['key']}",
+        label=raw["label"],
+        kind=raw["kind"],
+        help=raw["help"],
+        example=raw.get("example", ""),
+        choices=tuple(raw.get("choices", ())),
+        words=tuple(raw.get("words", ())),
+        default=raw.get("default", ""),
+        needed=raw.get("needed", ""),
+        symbol=raw.get("symbol", ""),
+    )
+
+
+def _limit(raw: Mapping[str, Any]) -> ProfileLimit:
+    return ProfileLimit(
+        quantity=raw["quantity"],
+        low=raw.get("low"),
+        high=raw.get("high"),
+        phase=raw.get("phase", ""),
+        level=raw["level"],
+        message=raw["message"],
+        source=raw["source"],
+    )
+
+
+@cache
+def family_keys() -> tuple[str, ...]:
+    """Return the keys of all families that have a profile, sorted."""
+    return tuple(sorted(path.stem for path in (folder() / FAMILY_FOLDER).glob("*.toml")))
+
+
+@cache
+def profile(key: str) -> Profile:
+    """Return the profile of a family.
+
+    Raises:
+        KeyError: there is no such family.
+    """
+    if key not in family_keys():
+        raise KeyError(key)
+    raw = table(f"{FAMILY_FOLDER}/{key}")
+    return Profile(
+        key=key,
+        title=raw["title"],
+        group=raw["group"],
+        principle=raw["principle"],
+        phases=tuple(raw["phases"]),
+        entries=tuple(_entry("meter", item) for item in raw.get("entries", ())),
+        reply=tuple(_entry("reply", item) for item in raw.get("reply", ())),
+        limits=tuple(_limit(item) for item in raw.get("limits", ())),
+        typical={
+            name: Typical(item["value"], item["source"])
+            for name, item in raw.get("typical", {}).items()
+        },
+        straight=raw.get("straight", {}),
+        wetted={name: tuple(parts) for name, parts in raw.get("wetted", {}).items()},
+        clauses={name: tuple(lines) for name, lines in raw.get("clauses", {}).items()},
+        outputs=tuple(raw.get("outputs", ())),
+        moving_parts=raw.get("moving_parts", False),
+        data=raw,
+    )
