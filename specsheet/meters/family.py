@@ -13,6 +13,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from specsheet.findings import Finding, Level, Origin
+from specsheet.line.pipe import Pipe
 from specsheet.packs import Profile
 from specsheet.tag import Tag
 
@@ -59,29 +60,6 @@ class Stream:
     def with_flow(self, mass_flow: Array) -> Stream:
         """Return the same conditions with other mass flows [kg/s]."""
         return replace(self, mass_flow=mass_flow)
-
-
-@dataclass(frozen=True, slots=True)
-class Pipe:
-    """The pipe the meter goes into.
-
-    Attributes:
-        inside_diameter: at 20 °C [m]
-        wall: [m], NaN if unknown
-        expansion: linear coefficient of thermal expansion [1/K]
-        roughness: uniform equivalent roughness [m], NaN if unknown
-        size: nominal size as text ("DN 150"), or ""
-        nominal: nominal diameter as DN number, 0 if unknown
-        material: name of the material
-    """
-
-    inside_diameter: float
-    wall: float
-    expansion: float
-    roughness: float
-    size: str
-    nominal: int
-    material: str
 
 
 @dataclass(frozen=True, slots=True)
