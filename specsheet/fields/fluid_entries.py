@@ -211,6 +211,15 @@ FLUID: tuple[Entry, ...] = (
         "35.9 MJ/m3",
     ),
     Entry(
+        "fluid.energy_basis",
+        "Basis of energy flows",
+        "choice",
+        "Whether energy flows count with the gross or the net calorific value.",
+        "gross",
+        choices=("gross", "net"),
+        default="gross",
+    ),
+    Entry(
         "fluid.electrical_conductivity",
         "Electrical conductivity",
         "conductivity",

@@ -1,0 +1,90 @@
+"""The meter as a function of the stream: response, margins and uncertainty in one call.
+
+Operating points, the sweep along the range and the search for reserves all go through
+:class:`Model`, so that no two parts of a sheet can disagree.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+import numpy as np
+
+from specsheet.meters.family import Array, Contribution, Element, Family, Stream
+from specsheet.methods import energy, gum
+
+#: properties of the stream that a limit may bound
+STREAM_KEYS = ("density", "viscosity", "pressure", "temperature", "isentropic_exponent")
+
+
+@dataclass(frozen=True)
+class Response:
+    """What the meter does at n conditions.
+
+    Attributes:
+        values: glossary key -> array of shape (n,), the stream's own keys included.
+        contributions: what the uncertainty of the flow is made of.
+    """
+
+    values: Mapping[str, Array]
+    contributions: tuple[Contribution, ...]
+
+
+@dataclass(frozen=True)
+class Model:
+    """A family with its element as sized.
+
+    Attributes:
+        family, element: the meter.
+        gas: whether the stream is a gas.
+        efficiency: of the pump or compressor that makes up the loss [-].
+    """
+
+    family: Family
+    element: Element
+    gas: bool
+    efficiency: float
+
+    def __call__(self, stream: Stream) -> Response:
+        """Return the response to a stream of shape (n,). Impossible states give NaN."""
+        with np.errstate(all="ignore"):
+            values = dict(self.family.at(self.element, stream))
+            for key in STREAM_KEYS:
+                values.setdefault(key, getattr(stream, key))
+            values.setdefault("kinematic_viscosity", stream.viscosity / stream.density)
+            values.setdefault("mach_number", values["velocity"] / stream.sound_speed)
+            if not self.gas:
+                values.setdefault("back_pressure_margin", _back_pressure_margin(stream, values))
+            values["lost_power"] = self._lost_power(stream, values["pressure_loss"])
+            contributions = self.family.budget(self.element, stream, values)
+            if contributions:
+                relative = np.stack([item.relative for item in contributions])
+                freedom = np.array([item.freedom for item in contributions])
+                values["uncertainty"] = gum.combine(relative=relative, freedom=freedom).expanded
+        return Response(values, contributions)
+
+    def _lost_power(self, stream: Stream, loss: Array) -> Array:
+        if self.gas:
+            return energy.lost_power_gas(
+                pressure=stream.pressure,
+                pressure_loss=loss,
+                volume_flow=stream.volume_flow,
+                efficiency=self.efficiency,
+            )
+        return energy.lost_power_liquid(
+            pressure_loss=loss, volume_flow=stream.volume_flow, efficiency=self.efficiency
+        )
+
+
+def _back_pressure_margin(stream: Stream, values: Mapping[str, Array]) -> Array:
+    """Return how far the liquid stays above what it needs not to flash or cavitate [Pa].
+
+    Where the family knows the back pressure it needs downstream, that decides; else the lowest
+    pressure in the meter must stay above the vapour pressure. Gases give NaN.
+    """
+    needed = values.get("minimum_back_pressure")
+    if needed is not None:
+        return stream.pressure - values["pressure_loss"] - needed
+    fall = np.fmax(values["pressure_loss"], values.get("differential_pressure", 0.0))
+    return np.asarray(stream.pressure - fall - stream.vapour_pressure)
