@@ -1,0 +1,16 @@
+"""The pipeline: a tag in, its evaluation out. Every front end calls :func:`evaluate`.
+
+* :mod:`specsheet.evaluate.flows`    the stated flow as mass flow
+* :mod:`specsheet.evaluate.stream`   operating points as arrays
+* :mod:`specsheet.evaluate.model`    the meter as one function of the stream
+* :mod:`specsheet.evaluate.limits`   which limits apply
+* :mod:`specsheet.evaluate.reserve`  where a verdict flips
+* :mod:`specsheet.evaluate.checks`   checks, findings and bands
+* :mod:`specsheet.evaluate.summary`  turndown and cost
+* :mod:`specsheet.evaluate.assemble` arrays to results with origin and source
+"""
+
+from specsheet.evaluate.pipeline import evaluate
+from specsheet.evaluate.result import Evaluation
+
+__all__ = ["Evaluation", "evaluate"]

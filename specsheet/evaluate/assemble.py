@@ -1,0 +1,125 @@
+"""From arrays to results: every value gets its origin, source and method."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable, Mapping
+
+import numpy as np
+
+from specsheet.evaluate.flows import calorific_value_by_mass, density_at_base
+from specsheet.evaluate.result import BudgetLine, PointResult, Result
+from specsheet.evaluate.stream import Points
+from specsheet.findings import Origin
+from specsheet.fluid.state import FluidResult, Property, State
+from specsheet.meters.family import Array, Contribution, Derivation
+from specsheet.quantity.value import Quantity
+from specsheet.tag import Point, Tag
+
+_FLOW_KEYS = {
+    "mass_flow": "mass_flow",
+    "volume_flow": "volume_flow",
+    "base_volume_flow": "base_volume_flow",
+    "energy_flow": "energy_flow",
+}
+
+
+def point_results(
+    tag: Tag,
+    fluid: FluidResult,
+    points: Points,
+    values: Mapping[str, Array],
+    derivations: Mapping[str, Derivation],
+) -> tuple[PointResult, ...]:
+    """Return the values at every operating point of the tag, evaluated or not."""
+    results: list[PointResult] = []
+    for index, point in enumerate(tag.points):
+        row = _conditions(tag, point, fluid.points[index])
+        row.update(_flows(tag, fluid, point, points.mass_flows[index], fluid.points[index]))
+        if index in points.indices:
+            lane = points.indices.index(index)
+            for key, array in values.items():
+                if key not in row and not np.isnan(array[lane]):
+                    row[key] = _derived(float(array[lane]), derivations.get(key))
+        results.append(PointResult(point.name, row))
+    return tuple(results)
+
+
+def _derived(value: float, derivation: Derivation | None) -> Result:
+    source = "" if derivation is None else derivation.source
+    return Result(value, Origin.DERIVED, source)
+
+
+def _conditions(tag: Tag, point: Point, state: State | None) -> dict[str, Result]:
+    """Return pressure, temperature and the properties of the fluid at one point."""
+    row: dict[str, Result] = {}
+    pressure = point.quantity("pressure")
+    if pressure is not None:
+        row["pressure"] = Result(tag.absolute(pressure), Origin.GIVEN, text=pressure.text)
+    temperature = point.quantity("temperature")
+    if temperature is not None:
+        row["temperature"] = Result(temperature.value, Origin.GIVEN, text=temperature.text)
+    if state is None:
+        return row
+    row.setdefault("pressure", Result(state.pressure, Origin.DERIVED, method="saturation"))
+    row.setdefault("temperature", Result(state.temperature, Origin.DERIVED, method="saturation"))
+    row["pressure_gauge"] = Result(state.pressure - tag.atmospheric_pressure, Origin.DERIVED)
+    row["phase"] = Result(state.phase, Origin.DERIVED)
+    for key, found in state.properties.items():
+        stated = point.quantity(key)
+        row[key] = property_result(found, stated)
+    return row
+
+
+def property_result(found: Property, stated: Quantity | None = None) -> Result:
+    """Return a property of the fluid as a result; ``stated`` is what the user typed for it."""
+    text = stated.text if stated is not None and found.origin is Origin.GIVEN else ""
+    return Result(found.value, found.origin, found.source, found.method, text)
+
+
+def _flows(
+    tag: Tag, fluid: FluidResult, point: Point, mass: float | None, state: State | None
+) -> dict[str, Result]:
+    """Return the flow of one point in every kind that can be had, the stated one as typed."""
+    row: dict[str, Result] = {}
+    stated = point.quantity("flow")
+    if stated is None or mass is None:
+        return row
+    row["mass_flow"] = Result(mass, Origin.DERIVED)
+    density = None if state is None else state.value("density")
+    if density:
+        row["volume_flow"] = Result(mass / density, Origin.DERIVED)
+    base_density = density_at_base(tag, fluid)
+    if base_density and tag.phase == "gas":
+        row["base_volume_flow"] = Result(
+            mass / base_density, Origin.DERIVED, method=f"at {tag.base.name}"
+        )
+    calorific = calorific_value_by_mass(tag, fluid)
+    if calorific:
+        row["energy_flow"] = Result(
+            mass * calorific,
+            Origin.DERIVED,
+            method=f"{tag.text('fluid.energy_basis')} calorific value",
+        )
+    row[_FLOW_KEYS[stated.kind]] = _as_stated(tag, stated)
+    return row
+
+
+def _as_stated(tag: Tag, stated: Quantity) -> Result:
+    base = tag.base if stated.base is None else stated.base
+    method = f"at {base.name}" if stated.kind == "base_volume_flow" else ""
+    return Result(stated.value, Origin.GIVEN, method=method, text=stated.text)
+
+
+def budget_lines(contributions: Iterable[Contribution], count: int) -> tuple[BudgetLine, ...]:
+    """Return the contributions at the first ``count`` lanes, largest first."""
+    lines = [
+        BudgetLine(
+            item.key,
+            item.label,
+            tuple(float(share) for share in item.relative[:count]),
+            item.origin,
+            item.source,
+        )
+        for item in contributions
+    ]
+    return tuple(sorted(lines, key=lambda line: -max(line.relative, default=0.0)))
