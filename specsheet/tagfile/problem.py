@@ -1,0 +1,45 @@
+"""What reading a file yields: the tag and its problems, as data."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from specsheet.tag import Tag
+
+#: field of a problem that concerns the file as a whole
+WHOLE_FILE = "file"
+
+
+@dataclass(frozen=True, slots=True)
+class Problem:
+    """One thing in a file that could not be used.
+
+    Attributes:
+        path: the file, or "" for a text without one (printed as "-").
+        line: line it stands on, from 1; 1 where the whole file is meant.
+        field: path of the entry ("points.minimum.flow"), or "file".
+        message: what was wanted, what came, how to mend it.
+    """
+
+    path: str
+    line: int
+    field: str
+    message: str
+
+    def __str__(self) -> str:
+        return f"{self.path or '-'}:{self.line}: {self.field}: {self.message}"
+
+
+@dataclass(frozen=True, slots=True)
+class Reading:
+    """What came out of one tag file.
+
+    Attributes:
+        tag: everything that could be read; None where nothing could.
+        problems: everything that could not, in the order of the file.
+        schema: version of the format the file was written in (it is read as the current one).
+    """
+
+    tag: Tag | None
+    problems: tuple[Problem, ...] = ()
+    schema: int = 1
