@@ -28,6 +28,21 @@ class Origin(StrEnum):
 
 
 @dataclass(frozen=True, slots=True)
+class Given:
+    """A value to print, with its origin.
+
+    Attributes:
+        value: SI number, or text.
+        origin: given, derived, assumed or typical.
+        source: citation, or "".
+    """
+
+    value: float | str
+    origin: Origin
+    source: str = ""
+
+
+@dataclass(frozen=True, slots=True)
 class Reserve:
     """By how much one driver can change before a verdict changes.
 

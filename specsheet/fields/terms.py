@@ -124,6 +124,10 @@ _TERMS = (
     Term("zero_stability", "Zero stability", "", "mass_flow"),
     Term("upstream_length", "Straight length upstream", "", "length"),
     Term("downstream_length", "Straight length downstream", "", "length"),
+    Term("outside_diameter", "Outside diameter of the pipe", "Do", "length"),
+    Term("wall_thickness", "Wall of the pipe", "", "length"),
+    Term("roughness", "Roughness of the pipe", "k", "roughness"),
+    Term("pipe_expansion", "Thermal expansion of the pipe", "α", "expansion"),
     Term("flange_rating", "Flange rating", "", "text"),
     Term("allowable_pressure", "Allowable pressure of the rating", "", "pressure_gauge"),
 )

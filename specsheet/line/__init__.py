@@ -1,0 +1,9 @@
+"""The line: pipe, straight lengths, flange ratings, materials and cautions of the service.
+
+Imports without numpy. Everything takes the tag as it is typed and never raises on what a user
+stated: what is wrong becomes a finding.
+"""
+
+from specsheet.line.piping import PipeResult, pipe_of
+
+__all__ = ["PipeResult", "pipe_of"]

@@ -13,6 +13,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from specsheet.findings import Finding, Level, Origin
+from specsheet.findings import Given as Given  # every family takes it from here
 from specsheet.line.pipe import Pipe
 from specsheet.packs import Profile
 from specsheet.tag import Tag
@@ -60,21 +61,6 @@ class Stream:
     def with_flow(self, mass_flow: Array) -> Stream:
         """Return the same conditions with other mass flows [kg/s]."""
         return replace(self, mass_flow=mass_flow)
-
-
-@dataclass(frozen=True, slots=True)
-class Given:
-    """A value to print that belongs to the element, with its origin.
-
-    Attributes:
-        value: SI number, or text.
-        origin: given, derived, assumed or typical.
-        source: citation, or "".
-    """
-
-    value: float | str
-    origin: Origin
-    source: str = ""
 
 
 @dataclass(frozen=True, slots=True)
