@@ -14,6 +14,14 @@ from specsheet.findings import Level, Origin
 #: text of a cell that has no value
 NOTHING = "–"
 
+#: what joins the citations of a row whose columns have different sources
+CITATION_JOINT = "; "
+
+
+def citations(source: str) -> tuple[str, ...]:
+    """Return the single citations of a row: several are joined by "; "."""
+    return tuple(item for item in source.split(CITATION_JOINT) if item)
+
 
 @dataclass(frozen=True, slots=True)
 class Cell:
@@ -278,7 +286,7 @@ class Sheet:
         cautions: the cautions that the work calls for.
         revisions: oldest first.
         annex: how every derived value comes about.
-        sources: every citation used, in the order of first use; rows are marked by number.
+        sources: every citation used, in the order of first use; rows are marked by its number.
         reply: what the bidder must state.
         remarks: free text of the user.
     """
@@ -310,6 +318,7 @@ class Sheet:
     reply: tuple[Request, ...] = ()
     remarks: str = ""
 
-    def number(self, source: str) -> int:
-        """Return the number of a citation in the list of sources, 0 for none."""
-        return self.sources.index(source) + 1 if source in self.sources else 0
+    def numbers(self, source: str) -> tuple[int, ...]:
+        """Return the numbers of the citations of a row in the list of sources."""
+        cited = citations(source)
+        return tuple(self.sources.index(item) + 1 for item in cited if item in self.sources)

@@ -1,0 +1,139 @@
+"""Evaluation to sheet: the pieces put together."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+from typing import TYPE_CHECKING
+
+from specsheet.fields import KINDS
+from specsheet.findings import Origin
+from specsheet.sheet import annex, axis, limits, ruler, tables, words
+from specsheet.sheet.model import Clauses, Detail, Request, RevisionRow, Row, Sheet, citations
+from specsheet.sheet.rows import of_entry
+from specsheet.sheet.units import Units
+from specsheet.tag import Tag
+
+if TYPE_CHECKING:
+    from specsheet.evaluate.result import Evaluation
+
+#: lines of the head after tag, service and status
+_HEAD = (
+    "document",
+    "diagram",
+    "location",
+    "job.client",
+    "job.site",
+    "job.title",
+    "job.number",
+    "job.author",
+)
+
+#: defaults that say nothing about the meter
+_HOUSEKEEPING = ("schema", "job.schema", "job.paper")
+
+STANDING_CAUTION = (
+    "This sheet supports a purchase; it does not replace the codes in force at the site. Parts "
+    "under pressure, hazardous areas, safety functions and custody transfer are to be confirmed "
+    "by a licensed engineer."
+)
+
+_CAUTIONS = "cautions"
+
+
+def build(evaluation: Evaluation) -> Sheet:
+    """Return the sheet of one evaluated tag. Never raises on user data."""
+    tag = evaluation.tag
+    units = Units(tag)
+    flow = axis.of(evaluation, units)
+    points = tables.points(tag)
+    others = (*tables.by_point(evaluation, units), *tables.single(evaluation, units))
+    budget = tables.budget(evaluation)
+    checked = limits.limits(evaluation, units, flow)
+    findings = tuple(limits.finding(item, units, flow) for item in evaluation.findings)
+    workings = annex.build(evaluation, units)
+    last = tag.revisions[-1] if tag.revisions else None
+    every = [
+        row for table in (points, *others, *((budget,) if budget else ())) for row in table.rows
+    ]
+    cited = [*every, *checked, *findings, *workings]
+    return Sheet(
+        tag=tag.name,
+        title=evaluation.profile.title if evaluation.profile else words.from_key(tag.family),
+        principle=evaluation.profile.principle if evaluation.profile else "",
+        service=tag.text("service"),
+        status=tag.text("status"),
+        revision=last.mark if last else "",
+        date=last.date if last else None,
+        paper=tag.text("job.paper") or "A4",
+        confidentiality=tag.text("job.confidentiality"),
+        verdict=limits.verdict(evaluation),
+        worst=evaluation.worst,
+        head=_head(evaluation),
+        points=points,
+        tables=others,
+        ruler=ruler.build(evaluation, flow),
+        limits=checked,
+        budget=budget,
+        findings=findings,
+        assumptions=_assumptions(tag, every),
+        clauses=_clauses(evaluation),
+        cautions=(*evaluation.notes.get(_CAUTIONS, ()), STANDING_CAUTION),
+        revisions=_revisions(tag),
+        annex=workings,
+        sources=tuple(dict.fromkeys(one for item in cited for one in citations(item.source))),
+        reply=_reply(evaluation),
+        remarks=tag.text("remarks"),
+    )
+
+
+def _head(evaluation: Evaluation) -> tuple[Detail, ...]:
+    tag = evaluation.tag
+    lines = [Detail(path, words.label(path), tag.text(path)) for path in _HEAD]
+    lines.insert(0, Detail("fluid.name", "Fluid", evaluation.fluid_name))
+    return tuple(line for line in lines if line.text)
+
+
+def _assumptions(tag: Tag, every: Iterable[Row]) -> tuple[Row, ...]:
+    """Return all assumed values: the ones that stand in a table, then the rest of the defaults."""
+    met: dict[str, Row] = {}
+    for row in every:
+        if Origin.ASSUMED in row.origins:
+            met.setdefault(row.key, row)
+    site = {"job.atmospheric_pressure"} if tag.quantity("job.altitude") is not None else set()
+    for path in tag.assumed:
+        if path not in met and path not in site and path not in _HOUSEKEEPING:
+            met[path] = of_entry(tag, path, words.label(path))
+    return tuple(row for row in met.values() if row.origins)
+
+
+def _clauses(evaluation: Evaluation) -> tuple[Clauses, ...]:
+    return tuple(
+        Clauses(key, words.capital(key), tuple(sentences))
+        for key, sentences in evaluation.notes.items()
+        if key != _CAUTIONS and sentences
+    )
+
+
+def _revisions(tag: Tag) -> tuple[RevisionRow, ...]:
+    return tuple(
+        RevisionRow(
+            item.mark, item.date.isoformat(), item.text, item.by, item.checked, item.approved
+        )
+        for item in tag.revisions
+    )
+
+
+def _reply(evaluation: Evaluation) -> tuple[Request, ...]:
+    """Return what a bidder must state, as the family's profile lists it."""
+    if evaluation.profile is None:
+        return ()
+    return tuple(
+        Request(
+            item.key,
+            item.label,
+            words.unit(KINDS[item.kind].shown) if item.kind in KINDS else "",
+            item.choices,
+            item.help,
+        )
+        for item in evaluation.profile.reply
+    )

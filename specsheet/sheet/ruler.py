@@ -1,0 +1,105 @@
+"""The range ruler: windows of flow and operating points on a logarithmic axis."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Sequence
+from typing import TYPE_CHECKING
+
+from specsheet.sheet import rounding, words
+from specsheet.sheet.axis import FlowAxis
+from specsheet.sheet.model import Mark, Ruler, Tick, Window
+
+if TYPE_CHECKING:
+    from specsheet.evaluate.result import Band, Evaluation
+
+#: room left and right of the operating points, and how far a window may draw the axis out [-]
+_ROOM = 1.6
+_REACH = 12.0
+
+
+def build(evaluation: Evaluation, axis: FlowAxis) -> Ruler | None:
+    """Return the ruler, None when no operating point has a flow."""
+    flows = {
+        point.name: float(point.values["mass_flow"].value)
+        for point in evaluation.points
+        if "mass_flow" in point.values and float(point.values["mass_flow"].value) > 0.0
+    }
+    if not flows:
+        return None
+    low, high = _ends(list(flows.values()), evaluation.bands)
+    span = math.log(high / low)
+
+    def position(flow: float) -> float:
+        return math.log(flow / low) / span
+
+    return Ruler(
+        label=axis.label,
+        unit=axis.printed_unit,
+        ticks=_ticks(axis.shown(low), axis.shown(high)),
+        windows=tuple(_window(band, axis, low, high, span) for band in evaluation.bands),
+        marks=tuple(Mark(name, axis.text(flow), position(flow)) for name, flow in flows.items()),
+    )
+
+
+def _ends(flows: list[float], bands: Sequence[Band]) -> tuple[float, float]:
+    """Return the ends of the axis [kg/s]: the points with room, and the windows within reach."""
+    smallest, largest = min(flows), max(flows)
+    edges = [edge for band in bands for edge in (band.low, band.high) if edge is not None]
+    near = [edge for edge in edges if smallest / _REACH <= edge <= largest * _REACH]
+    return min([smallest, *near]) / _ROOM, max([largest, *near]) * _ROOM
+
+
+def _window(band: Band, axis: FlowAxis, low: float, high: float, span: float) -> Window:
+    open_low = band.low is None or band.low < low
+    open_high = band.high is None or band.high > high
+    start = 0.0 if open_low or band.low is None else math.log(band.low / low) / span
+    end = 1.0 if open_high or band.high is None else math.log(band.high / low) / span
+    return Window(
+        label=words.capital(band.label),
+        low=min(max(start, 0.0), 1.0),
+        high=min(max(end, 0.0), 1.0),
+        open_low=open_low,
+        open_high=open_high,
+        low_text="" if band.low is None else axis.text(band.low),
+        high_text="" if band.high is None else axis.text(band.high),
+        level=band.level,
+    )
+
+
+def _ticks(low: float, high: float) -> tuple[Tick, ...]:
+    """Return the ticks between two flows in the unit shown: 1 to 9 in each decade."""
+    decades = math.log10(high / low)
+    labelled = (1,) if decades > 3.5 else (1, 2, 5) if decades > 0.8 else tuple(range(1, 10))
+    ticks = []
+    for power in range(math.floor(math.log10(low)), math.ceil(math.log10(high)) + 1):
+        for digit in range(1, 10):
+            value = digit * 10.0**power
+            if low <= value <= high:
+                label = rounding.plain(value) if digit in labelled else ""
+                ticks.append(Tick(math.log10(value / low) / decades, label))
+    return tuple(ticks)
+
+
+def stagger(positions: Sequence[float], widths: Sequence[float], gap: float) -> tuple[int, ...]:
+    """Return the lane of each label so that no two labels of a lane touch.
+
+    Args:
+        positions: centre of each label, in any unit.
+        widths: width of each label, in the same unit.
+        gap: least distance between two labels of a lane.
+
+    Returns:
+        lane of each label, 0 nearest to the axis, in the order given.
+    """
+    lanes: list[float] = []
+    chosen = [0] * len(positions)
+    for place in sorted(range(len(positions)), key=lambda at: positions[at] - widths[at] / 2.0):
+        start = positions[place] - widths[place] / 2.0
+        free = [lane for lane, end in enumerate(lanes) if start >= end + gap]
+        lane = free[0] if free else len(lanes)
+        if lane == len(lanes):
+            lanes.append(0.0)
+        lanes[lane] = start + widths[place]
+        chosen[place] = lane
+    return tuple(chosen)

@@ -1,0 +1,211 @@
+"""The tables of the sheet, section by section."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from typing import TYPE_CHECKING
+
+from specsheet.fields import COMMON, JOB, TERMS, Entry
+from specsheet.findings import Origin
+from specsheet.quantity.value import Base, Quantity
+from specsheet.sheet import rounding, rows, words
+from specsheet.sheet.model import CITATION_JOINT, NOTHING, Cell, Row, Table
+from specsheet.sheet.units import Units
+from specsheet.tag import Tag
+
+if TYPE_CHECKING:
+    from specsheet.evaluate.result import Evaluation, Result
+
+#: terms from this one on describe the meter's response; those before it, the fluid
+_FIRST_OF_THE_METER = "inside_diameter"
+
+_ENTRIES: dict[str, Entry] = {item.path: item for item in (*COMMON, *JOB)}
+
+#: job entries printed with the base conditions; the rest of the job stands in the head
+_SITE = (
+    "job.altitude",
+    "job.atmospheric_pressure",
+    "job.base.temperature",
+    "job.base.pressure",
+    "job.combustion_temperature",
+)
+
+#: job entries printed where the yearly cost is
+_COST = ("job.energy_price", "job.currency", "job.hours_per_year", "job.efficiency")
+
+
+def points(tag: Tag) -> Table:
+    """Return the operating points as stated."""
+    stated = {key for point in tag.points for key in point.values if key != "name"}
+    known = [item for item in COMMON if item.section == "points" and item.key in stated]
+    lines = [rows.of_points(tag, item.key, item.label, item.symbol) for item in known]
+    for key in sorted(stated - {item.key for item in known}):
+        lines.append(rows.of_points(tag, key, words.from_key(key), ""))
+    return Table(
+        "points",
+        "Operating points",
+        tuple(point.name for point in tag.points),
+        tuple(lines),
+        f"Gauge pressures count from an atmosphere of {atmosphere(tag).text}.",
+    )
+
+
+def atmosphere(tag: Tag) -> Row:
+    """Return the atmospheric pressure: stated, assumed, or derived from the altitude."""
+    if "job.atmospheric_pressure" not in tag.given and tag.quantity("job.altitude") is not None:
+        text = rows.number(tag.atmospheric_pressure, "pressure", "pressure_absolute", "bar(a)")
+        return Row(
+            "job.atmospheric_pressure",
+            "Atmospheric pressure",
+            "",
+            (Cell(text, Origin.DERIVED),),
+            "bar(a)",
+            "ISO 2533:1975 (from memory)",
+        )
+    return rows.of_entry(tag, "job.atmospheric_pressure", "Atmospheric pressure")
+
+
+def by_point(evaluation: Evaluation, units: Units) -> list[Table]:
+    """Return the values at the operating points: of the fluid, then of the meter."""
+    names = tuple(point.name for point in evaluation.points)
+    keys = rows.ordered({key: None for point in evaluation.points for key in point.values})
+    order = list(TERMS)
+    border = order.index(_FIRST_OF_THE_METER)
+    fluid: list[Row] = []
+    meter: list[Row] = []
+    for key in keys:
+        results = [point.values.get(key) for point in evaluation.points]
+        if all(result is None or _typed(result) for result in results):
+            continue  # stands in the table of operating points already
+        note = f"at {evaluation.tag.base.name}" if key == "base_volume_flow" else ""
+        early = key in TERMS and order.index(key) < border
+        (fluid if early else meter).append(rows.of_results(key, results, units, note))
+    tables = (
+        Table("fluid_points", "Fluid at the operating points", names, tuple(fluid)),
+        Table("meter_points", "Meter at the operating points", names, tuple(meter)),
+    )
+    return [table for table in tables if table.rows]
+
+
+def _typed(result: Result) -> bool:
+    return result.origin is Origin.GIVEN and bool(result.text)
+
+
+def single(evaluation: Evaluation, units: Units) -> list[Table]:
+    """Return the tables whose rows have one value each."""
+    tag = evaluation.tag
+    profile = evaluation.profile
+    labels = {item.path: item for item in (profile.entries if profile else ())} | _ENTRIES
+    sections: tuple[tuple[str, str, tuple[Row, ...], Mapping[str, Result]], ...] = (
+        ("element", "Meter", _section(tag, "meter.", labels), evaluation.element),
+        ("fluid", "Fluid", _section(tag, "fluid.", labels), evaluation.fluid),
+        ("line", "Line", _section(tag, "line.", labels), evaluation.line),
+        ("design", "Design conditions", _section(tag, "design.", labels), {}),
+        ("base", "Site and base conditions", _site(tag), evaluation.base),
+        ("require", "The purchase demands", _section(tag, "require.", labels), {}),
+        ("summary", "Range and running cost", _cost(evaluation), evaluation.summary),
+    )
+    made = [
+        Table(key, title, (), (*stated, *_results(values, stated, units)))
+        for key, title, stated, values in sections
+    ]
+    return [table for table in made if table.rows]
+
+
+def _section(tag: Tag, prefix: str, labels: Mapping[str, Entry]) -> tuple[Row, ...]:
+    """Return what was stated or assumed in one section of the file, in the glossary's order."""
+    known = [path for path in labels if path.startswith(prefix)]
+    stated = [path for path in (*tag.given, *tag.assumed) if path.startswith(prefix)]
+    places = {path: place for place, path in enumerate(known)}
+    paths = sorted(dict.fromkeys(stated), key=lambda path: places.get(path, len(places)))
+    return tuple(_entry(tag, path, labels) for path in paths)
+
+
+def _entry(tag: Tag, path: str, labels: Mapping[str, Entry]) -> Row:
+    found = labels.get(path)
+    label = found.label if found else words.from_key(path)
+    return rows.of_entry(tag, path, label, found.symbol if found else "")
+
+
+def _site(tag: Tag) -> tuple[Row, ...]:
+    """Return the site's atmosphere and every base condition in use."""
+    lines = []
+    for path in _SITE:
+        if path == "job.atmospheric_pressure":
+            lines.append(atmosphere(tag))
+        elif tag.get(path) is not None:
+            lines.append(_entry(tag, path, _ENTRIES))
+    for base in _bases(tag):
+        text = f"{base.name}: {base.temperature - 273.15:g} °C, {base.pressure / 1000:g} kPa(a)"
+        lines.append(Row("base", "Base of the flow stated", "", (Cell(text, Origin.GIVEN),)))
+    return tuple(lines)
+
+
+def _bases(tag: Tag) -> list[Base]:
+    held = (value for point in tag.points for value in point.values.values())
+    found = (value.base for value in held if isinstance(value, Quantity) and value.base)
+    return [base for base in dict.fromkeys(found) if base != tag.base]
+
+
+def _cost(evaluation: Evaluation) -> tuple[Row, ...]:
+    if "yearly_energy" not in evaluation.summary and "yearly_cost" not in evaluation.summary:
+        return ()
+    tag = evaluation.tag
+    return tuple(_entry(tag, path, _ENTRIES) for path in _COST if tag.get(path) is not None)
+
+
+def _results(
+    values: Mapping[str, Result], stated: tuple[Row, ...], units: Units
+) -> tuple[Row, ...]:
+    """Return the rows of results, leaving out what the rows above echo already."""
+    echoed = {row.text for row in stated}
+    return tuple(
+        rows.of_results(key, (values[key],), units)
+        for key in rows.ordered(values)
+        if not (_typed(values[key]) and words.typed(values[key].text) in echoed)
+    )
+
+
+def budget(evaluation: Evaluation) -> Table | None:
+    """Return the uncertainty budget: standard uncertainty of the flow by contribution."""
+    if not evaluation.budget:
+        return None
+    width = max(len(line.relative) for line in evaluation.budget)
+    evaluated = [point for point in evaluation.points if "uncertainty" in point.values]
+    columns = evaluated if len(evaluated) == width else list(evaluation.points)[:width]
+    lines = [
+        Row(
+            line.key,
+            words.capital(line.label),
+            "",
+            tuple(
+                Cell(rounding.significant(100.0 * share, 2), line.origin) for share in line.relative
+            ),
+            "%",
+            line.source,
+        )
+        for line in evaluation.budget
+    ]
+    total = [point.values.get("uncertainty") for point in columns]
+    if any(result is not None for result in total):
+        lines.append(_total(total))
+    return Table(
+        "budget",
+        "Uncertainty of the flow",
+        tuple(point.name for point in columns),
+        tuple(lines),
+        "Contributions are standard uncertainties of the flow (k = 1); the last row is expanded "
+        "(k = 2). A figure marked typical is to be confirmed by the bidder.",
+    )
+
+
+def _total(results: list[Result | None]) -> Row:
+    cells = tuple(
+        Cell(rounding.significant(100.0 * float(result.value), 2), result.origin)
+        if result is not None and not isinstance(result.value, str)
+        else Cell(NOTHING)
+        for result in results
+    )
+    sources = dict.fromkeys(result.source for result in results if result and result.source)
+    source = CITATION_JOINT.join(sources)
+    return Row("uncertainty", "Expanded uncertainty, k = 2", "U", cells, "%", source)
