@@ -24,7 +24,8 @@ def main(arguments: Sequence[str] | None = None) -> int:
     parsed = build_parser().parse_args(arguments)
     command = import_module(f"specsheet.cli.commands.{parsed.module}")
     try:
-        return int(command.run(parsed))
+        status: int = command.run(parsed)
+        return int(status)
     except BrokenPipeError:
         # the reader of our output (head, less) has gone: not our failure, and nothing to say
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())

@@ -68,7 +68,9 @@ def build_parser() -> ArgumentParser:
 
     new = command("new", "write a commented tag file to fill in")
     new.add_argument("tag", help="tag number, for example FT-2104")
-    new.add_argument("--family", required=True, help="meter family; `specsheet families` lists them")
+    new.add_argument(
+        "--family", required=True, help="meter family; `specsheet families` lists them"
+    )
     new.add_argument("--folder", default=".", help="job folder, or folder of the file")
 
     derive = command("derive", "derive everything and write the sheet as text or JSON")
@@ -88,7 +90,9 @@ def build_parser() -> ArgumentParser:
     print_.add_argument("--strict", action="store_true", help="exit with 1 on a caution too")
 
     families = command("families", "list the meter families, or show one")
-    families.add_argument("family", nargs="?", help="key of a family, to show its entries and limits")
+    families.add_argument(
+        "family", nargs="?", help="key of a family, to show its entries and limits"
+    )
 
     command("schema", "write the JSON schema of the tag file")
 

@@ -62,14 +62,16 @@ def _words(parser: ArgumentParser) -> dict[str, list[str]]:
 
 
 def _bash(words: Mapping[str, list[str]]) -> str:
-    cases = "\n".join(f'            {name}) words="{" ".join(options)}" ;;'
-                      for name, options in words.items())
+    cases = "\n".join(
+        f'            {name}) words="{" ".join(options)}" ;;' for name, options in words.items()
+    )
     return _BASH.format(commands=" ".join(words), cases=cases)
 
 
 def _zsh(words: Mapping[str, list[str]]) -> str:
-    cases = "\n".join(f"            {name}) compadd -- {' '.join(options)} ;;"
-                      for name, options in words.items())
+    cases = "\n".join(
+        f"            {name}) compadd -- {' '.join(options)} ;;" for name, options in words.items()
+    )
     return _ZSH.format(commands=" ".join(words), cases=cases)
 
 

@@ -71,7 +71,7 @@ def _limit(limit: ProfileLimit) -> str:
     of = term(limit.quantity)
     unit = of.shown or KINDS[of.kind].shown
     bounds = [
-        f"{words} {quantity.from_si(bound, of.kind, unit):.4g} {'' if unit == '1' else unit}".strip()
+        f"{words} {quantity.from_si(bound, of.kind, unit):.4g} {unit}".removesuffix(" 1")
         for words, bound in (("at least", limit.low), ("at most", limit.high))
         if bound is not None
     ]
