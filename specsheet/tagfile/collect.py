@@ -9,8 +9,8 @@ from specsheet.fields import Entry
 from specsheet.quantity.value import Refusal
 from specsheet.tag import Value
 from specsheet.tagfile.known import Keys
-from specsheet.tagfile.lines import Lines, Place
 from specsheet.tagfile.problem import Problem
+from specsheet.tagfile.spans import Lines, Place
 from specsheet.tagfile.values import from_toml
 from specsheet.tagfile.words import came, did_you_mean, nearest, printable
 

@@ -13,7 +13,7 @@ from specsheet.tagfile.collect import Collector
 from specsheet.tagfile.known import job_sections
 from specsheet.tagfile.migrate import CURRENT
 from specsheet.tagfile.problem import Problem
-from specsheet.tagfile.source import read_text
+from specsheet.tagfile.source import BOM, read_text
 from specsheet.tagfile.syntax import newer, parse, schema_of
 
 JOB_FILE = "job.toml"
@@ -65,6 +65,7 @@ def load_job(path: str | Path) -> Job:
     text = read_text(path)
     if isinstance(text, Problem):
         return Job(str(path), folder, problems=(text,))
+    text = text.removeprefix(BOM)
     data = parse(text, str(path))
     if isinstance(data, Problem):
         return Job(str(path), folder, problems=(data,))

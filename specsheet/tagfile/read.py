@@ -20,7 +20,7 @@ from specsheet.tagfile.jobfile import NO_JOB, Job, find_job
 from specsheet.tagfile.known import job_defaults, tag_defaults, tag_sections
 from specsheet.tagfile.migrate import CURRENT, migrate
 from specsheet.tagfile.problem import Problem, Reading
-from specsheet.tagfile.source import checked, read_text
+from specsheet.tagfile.source import BOM, objection, read_text
 from specsheet.tagfile.syntax import newer, parse, schema_of
 from specsheet.tagfile.words import came, did_you_mean
 
@@ -54,16 +54,17 @@ def load(path: str | Path, job: Job | None = None) -> Reading:
 
 def loads(text: str, path: str = "", job: Job | None = None) -> Reading:
     """Read the text of a tag file; ``path`` is only its name in messages and in the tag."""
-    found = checked(text, path)
-    if isinstance(found, Problem):
-        return Reading(None, (found,))
-    data = parse(found, path)
+    refused = objection(text, path)
+    if refused:
+        return Reading(None, (refused,))
+    text = text.removeprefix(BOM)
+    data = parse(text, path)
     if isinstance(data, Problem):
         return Reading(None, (data,))
     schema = schema_of(data)
     if schema > CURRENT:
-        return Reading(None, (newer(found, path, schema),), schema)
-    return _read(migrate(data, schema), found, path, NO_JOB if job is None else job, schema)
+        return Reading(None, (newer(text, path, schema),), schema)
+    return _read(migrate(data, schema), text, path, NO_JOB if job is None else job, schema)
 
 
 def _read(data: dict[str, Any], text: str, path: str, job: Job, schema: int) -> Reading:

@@ -11,12 +11,12 @@ from specsheet.tagfile.problem import WHOLE_FILE, Problem
 #: a tag file takes a few thousand bytes; anything above this is not one
 LARGEST = 1_000_000
 
-_BOM = "\ufeff"
+BOM = "\ufeff"
 _WIDE_BOMS = {b"\xff\xfe": "UTF-16", b"\xfe\xff": "UTF-16"}
 
 
 def read_text(path: str | Path) -> str | Problem:
-    """Return the text of a file, with its line ends as they are and without a byte-order mark.
+    """Return the text of a file as it is, line ends and byte-order mark included.
 
     Never raises on what stands at ``path``: nothing, a directory, a device, a file that may not
     be read, is larger than :data:`LARGEST` bytes or is not UTF-8 gives a problem.
@@ -38,9 +38,8 @@ def read_text(path: str | Path) -> str | Problem:
     return _decode(raw, str(path))
 
 
-def checked(text: str, path: str) -> str | Problem:
-    """Return ``text`` without a byte-order mark, or the problem that makes parsing pointless."""
-    text = text.removeprefix(_BOM)
+def objection(text: str, path: str) -> Problem | None:
+    """Return the problem that makes parsing ``text`` pointless, if there is one."""
     if len(text) > LARGEST:
         return Problem(path, 1, WHOLE_FILE, _too_large(len(text)))
     place = text.find("\0")
@@ -48,10 +47,10 @@ def checked(text: str, path: str) -> str | Problem:
         line = text.count("\n", 0, place) + 1
         message = f"a NUL byte at character {place}: this is no text file; restore it from a copy"
         return Problem(path, line, WHOLE_FILE, message)
-    if not text.strip():
+    if not text.removeprefix(BOM).strip():
         message = 'the file is empty; "specsheet new TAG --family KEY" writes one to start from'
         return Problem(path, 1, WHOLE_FILE, message)
-    return text
+    return None
 
 
 def _refuse(status: os.stat_result) -> str:
@@ -75,7 +74,7 @@ def _decode(raw: bytes, path: str) -> str | Problem:
         message = f"is encoded as {wide}; UTF-8 was wanted: save it again as UTF-8"
         return Problem(path, 1, WHOLE_FILE, message)
     try:
-        return checked(raw.decode("utf-8"), path)
+        text = raw.decode("utf-8")
     except UnicodeDecodeError as error:
         line = raw.count(b"\n", 0, error.start) + 1
         message = (
@@ -83,3 +82,4 @@ def _decode(raw: bytes, path: str) -> str | Problem:
             "encoding it was written in and save it as UTF-8"
         )
         return Problem(path, line, WHOLE_FILE, message)
+    return objection(text, path) or text

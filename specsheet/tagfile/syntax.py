@@ -10,6 +10,7 @@ from typing import Any
 from specsheet.tagfile.collect import Collector
 from specsheet.tagfile.migrate import CURRENT
 from specsheet.tagfile.problem import WHOLE_FILE, Problem
+from specsheet.tagfile.source import BOM
 from specsheet.tagfile.words import Number
 
 _AT_LINE = re.compile(r" \(at line (\d+), column (\d+)\)$")
@@ -18,7 +19,7 @@ _AT_LINE = re.compile(r" \(at line (\d+), column (\d+)\)$")
 def parse(text: str, path: str) -> dict[str, Any] | Problem:
     """Return the TOML data of a text, its floats remembering how they were typed."""
     try:
-        return tomllib.loads(text, parse_float=Number)
+        return tomllib.loads(text.removeprefix(BOM), parse_float=Number)
     except tomllib.TOMLDecodeError as error:
         return _syntax(str(error), text, path)
     except RecursionError:
