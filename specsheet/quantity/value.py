@@ -42,7 +42,49 @@ class Quantity:
 
 
 @dataclass(frozen=True, slots=True)
+class NominalSize:
+    """A nominal pipe size.
+
+    Attributes:
+        dn: DN number (150); a name, not a dimension.
+        nps: NPS designator without the letters ("6", "1 1/2").
+        text: what was typed, as it is echoed.
+    """
+
+    dn: int
+    nps: str
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class StraightLength:
+    """A straight length of pipe, stated in inside diameters or as a length; one of them is None.
+
+    Attributes:
+        diameters: multiple of the inside diameter D [-]
+        metres: length [m]
+        text: what was typed, as it is echoed.
+    """
+
+    diameters: float | None
+    metres: float | None
+    text: str
+
+    def in_diameters(self, inside_diameter: float) -> float:
+        """Return the length as a multiple of the inside diameter [m], which is above zero."""
+        if self.diameters is not None:
+            return self.diameters
+        return (self.metres or 0.0) / inside_diameter
+
+
+@dataclass(frozen=True, slots=True)
 class Refusal:
-    """A text that is no acceptable quantity: what was wanted, what came, what to write instead."""
+    """A text that is no acceptable quantity.
+
+    Attributes:
+        message: what was wanted, what came, what to write instead.
+        write: the texts to write instead, each of them acceptable; empty where nobody can know.
+    """
 
     message: str
+    write: tuple[str, ...] = ()
