@@ -37,9 +37,25 @@ _SOURCES = (
     Source("iso5167-1", "ISO 5167-1:2003", "differential-pressure devices: general principles"),
     Source("iso5167-2", "ISO 5167-2:2003", "orifice plates", "published values"),
     Source("iso5167-4", "ISO 5167-4:2003", "Venturi tubes", "published values"),
+    # Meters that oscillate, induce, twist or turn
+    Source("iso12764", "ISO/TR 12764:1997", "vortex meters", "published values"),
+    Source("iso20456", "ISO 20456:2017", "electromagnetic meters", "published values"),
+    Source("iso10790", "ISO 10790:2015", "Coriolis meters"),
+    Source("mpms5.3", "API MPMS 5.3", "turbine meters: back pressure", "published values"),
+    Source("isa75.23", "ISA-RP75.23", "control valves: cavitation index"),
     # Uncertainty
     Source("iso5168", "ISO 5168:2005", "flow measurement: evaluation of uncertainties"),
     Source("gum", "JCGM 100:2008", "guide to the expression of uncertainty", "published values"),
+    # Properties of fluids
+    Source("iapws-if97", "IAPWS-IF97 (2007)", "water and steam for industry", "published values"),
+    Source("iapws-r12-08", "IAPWS R12-08", "viscosity of water", "published values"),
+    Source("iapws-r15-11", "IAPWS R15-11", "thermal conductivity of water", "published values"),
+    Source("coolprop", "CoolProp 8.0.0", "reference equations of state", "published values"),
+    Source("iso20765-2", "ISO 20765-2:2015", "natural gas: GERG-2008", "published values"),
+    Source("iso6976", "ISO 6976:2016", "calorific values from composition", "published values"),
+    Source("wilke", "Wilke (1950)", "viscosity of gas mixtures", "read"),
+    Source("perry8", "Perry's Handbook, 8th edition", "data of substances", "published values"),
+    Source("yoon-thodos", "Yoon and Thodos (1970)", "viscosity of gases", "published values"),
     # Base conditions
     Source("din1343", "DIN 1343:1990", "reference condition 0 degC, 101.325 kPa"),
     Source("iso13443", "ISO 13443:1996", "natural gas: reference conditions 15 degC, 101.325 kPa"),

@@ -85,10 +85,12 @@ _TERMS = (
     Term("yearly_cost", "Cost of the loss in a year", "", "dimensionless"),
     # Signals
     Term("signal_fraction", "Signal, share of span", "", "ratio"),
-    Term("signal_current", "Signal current, linear in Δp", "I", "current"),
+    Term("signal_current", "Signal current", "I", "current"),
     Term("signal_current_root", "Signal current, linear in flow", "I√", "current"),
     Term("frequency", "Frequency", "f", "frequency"),
     Term("pulse_rate", "Output pulses", "fp", "frequency"),
+    Term("pulse_volume", "Volume of one output pulse", "", "volume"),
+    Term("pulse_mass", "Mass of one output pulse", "", "mass"),
     Term("induced_voltage", "Induced voltage", "U", "voltage"),
     Term("transit_time_difference", "Transit-time difference", "Δt", "time", "ns"),
     Term("head", "Head", "h", "length"),

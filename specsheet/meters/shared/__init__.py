@@ -1,0 +1,1 @@
+"""What meters with a bore of their own have in common: size series, choice, output, response."""

@@ -1,0 +1,77 @@
+"""Choosing one size among several: every candidate is built, asked and held to the limits."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Mapping, Sequence
+from dataclasses import dataclass
+
+import numpy as np
+
+from specsheet.findings import Level
+from specsheet.meters.family import Array, Contribution, Element, Limit, Request, Stream
+from specsheet.meters.shared import limits as shared_limits
+
+
+@dataclass(frozen=True)
+class Trial:
+    """One candidate, tried.
+
+    Attributes:
+        element: the candidate.
+        values: its response at the operating points, shape (n,).
+        stops, cautions: sum of the shortfalls of the limits of each level [-].
+        broken: glossary keys of the limits that it breaks, worst first.
+    """
+
+    element: Element
+    values: Mapping[str, Array]
+    stops: float
+    cautions: float
+    broken: tuple[str, ...]
+
+
+@dataclass(frozen=True)
+class Rules:
+    """The functions of a family that a trial needs."""
+
+    at: Callable[[Element, Stream], Mapping[str, Array]]
+    limits: Callable[[Element, Request], tuple[Limit, ...]]
+    budget: Callable[[Element, Stream, Mapping[str, Array]], tuple[Contribution, ...]]
+
+
+def attempt(request: Request, element: Element, rules: Rules) -> Trial:
+    """Try one candidate at the operating points."""
+    values = dict(rules.at(element, request.stream))
+    parts = rules.budget(element, request.stream, values)
+    if parts:
+        with np.errstate(all="ignore"):
+            values["uncertainty"] = 2.0 * np.sqrt(sum(part.relative**2 for part in parts))
+    every = (
+        *rules.limits(element, request),
+        *shared_limits.of_profile(request),
+        *shared_limits.of_purchase(request),
+        *shared_limits.back_pressure(request),
+    )
+    found = [
+        (shared_limits.shortfall(limit, values), limit)
+        for limit in every
+        if limit.phase in ("", request.tag.phase)
+    ]
+    worst = sorted((pair for pair in found if pair[0] > 0.0), key=lambda pair: -pair[0])
+    return Trial(
+        element,
+        values,
+        sum(size for size, limit in found if limit.level is Level.STOP),
+        sum(size for size, limit in found if limit.level is Level.CAUTION),
+        tuple(dict.fromkeys(limit.key for _, limit in worst)),
+    )
+
+
+def best(trials: Sequence[Trial]) -> int:
+    """Return the index of the trial that breaks least; of equals the first.
+
+    The caller puts the candidates in the order in which it likes them. A stop outweighs any
+    caution.
+    """
+    scores = [(round(trial.stops, 9), round(trial.cautions, 9)) for trial in trials]
+    return scores.index(min(scores))

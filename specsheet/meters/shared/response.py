@@ -1,0 +1,106 @@
+"""What every meter with a bore of its own answers: velocities, Reynolds numbers, reducers."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+
+from specsheet.meters.family import Array, Derivation, Request, Stream
+from specsheet.meters.shared.sizes import Size, line_nominal, series
+from specsheet.methods import duct, reducer
+from specsheet.sources import MEMORY
+
+#: temperature of the stated dimensions [K]
+REFERENCE_TEMPERATURE = 293.15
+
+
+def numbers(request: Request, size: Size) -> dict[str, float]:
+    """Return the numbers that the functions of this module need, SI."""
+    typical = request.profile.typical
+    found = {
+        "pipe_diameter": request.pipe.inside_diameter,
+        "pipe_expansion": request.pipe.expansion,
+        "bore": size.bore,
+        "body_expansion": typical["body_expansion"].value if "body_expansion" in typical else 0.0,
+        "reducer_coefficient": 0.0,
+    }
+    if is_reduced(request, size):
+        ratio = min(size.bore / request.pipe.inside_diameter, 1.0)
+        angle = typical["reducer_angle"].value
+        found["reducer_coefficient"] = float(
+            reducer.contraction_coefficient(diameter_ratio=ratio, angle=angle)
+            + reducer.enlargement_coefficient(diameter_ratio=ratio, angle=angle)
+        )
+    return found
+
+
+def is_reduced(request: Request, size: Size) -> bool:
+    """Tell whether the meter is smaller than the line, so that it sits between reducers."""
+    return size.nominal < line_nominal(request, series(request.profile))
+
+
+def flow_values(of: Mapping[str, float], stream: Stream, *, gas: bool) -> dict[str, Array]:
+    """Return velocity and Reynolds number in pipe and meter, ρv² and the loss of the reducers."""
+    rise = stream.temperature - REFERENCE_TEMPERATURE
+    pipe = of["pipe_diameter"] * (1.0 + of["pipe_expansion"] * rise)
+    bore = of["bore"] * (1.0 + of["body_expansion"] * rise)
+    in_pipe = duct.velocity(volume_flow=stream.volume_flow, diameter=pipe)
+    in_meter = duct.velocity(volume_flow=stream.volume_flow, diameter=bore)
+    flux = stream.density * in_meter**2
+    values = {
+        "velocity": in_pipe,
+        "reynolds_number": _reynolds(stream, in_pipe, pipe),
+        "meter_velocity": in_meter,
+        "meter_reynolds_number": _reynolds(stream, in_meter, bore),
+        "dynamic_pressure": flux,
+        "reducer_loss": of["reducer_coefficient"] * flux / 2.0,
+    }
+    if gas:
+        values["mach_number"] = in_meter / stream.sound_speed
+    return values
+
+
+def _reynolds(stream: Stream, velocity: Array, diameter: Array) -> Array:
+    found: Array = duct.reynolds_number(
+        density=stream.density, velocity=velocity, diameter=diameter, viscosity=stream.viscosity
+    )
+    return found
+
+
+def pressure_behind(values: Mapping[str, Array], stream: Stream, loss: Array) -> Array:
+    """Return the static pressure behind the meter, still in its bore [Pa], absolute.
+
+    The pressure that the smaller bore turns into velocity comes back only in the expander, so it
+    counts against the liquid here; so does the whole loss of the reducers, to be safe.
+    """
+    speed_up = stream.density * (values["meter_velocity"] ** 2 - values["velocity"] ** 2) / 2.0
+    return stream.pressure - speed_up - values["reducer_loss"] - loss
+
+
+_REDUCER_SOURCE = f"Crane TP-410, gradual contraction and enlargement ({MEMORY})"
+
+DERIVATIONS = (
+    Derivation("velocity", "v = 4 qv / (π D²)", "continuity", ("volume_flow", "inside_diameter")),
+    Derivation(
+        "reynolds_number",
+        "ReD = ρ v D / μ",
+        "definition",
+        ("density", "velocity", "inside_diameter", "viscosity"),
+    ),
+    Derivation(
+        "meter_velocity", "vm = 4 qv / (π Dm²)", "continuity", ("volume_flow", "meter_bore")
+    ),
+    Derivation(
+        "meter_reynolds_number",
+        "Rem = ρ vm Dm / μ",
+        "definition",
+        ("density", "meter_velocity", "meter_bore", "viscosity"),
+    ),
+    Derivation("dynamic_pressure", "ρ vm²", "definition", ("density", "meter_velocity")),
+    Derivation("mach_number", "Ma = vm / c", "definition", ("meter_velocity", "sound_speed")),
+    Derivation(
+        "reducer_loss",
+        "(0.8 sin(θ/2) (1 - β²) + 2.6 sin(θ/2) (1 - β²)²) ρ vm² / 2, β = Dm / D",
+        _REDUCER_SOURCE,
+        ("density", "meter_velocity", "meter_bore", "inside_diameter"),
+    ),
+)
