@@ -132,7 +132,7 @@ def _points(raw: object, collector: Collector, sections: Any) -> tuple[Point, ..
     points: list[Point] = []
     for index, item in enumerate(raw):
         place = ("points", index)
-        name = _point_name(item, index)
+        name = point_name(item, index)
         if any(name == point.name for point in points):
             message = f'another point is named "{name}" already; give each its own name'
             collector.add((*place, "name"), f"points.{name}.name", message)
@@ -141,7 +141,7 @@ def _points(raw: object, collector: Collector, sections: Any) -> tuple[Point, ..
     return tuple(points)
 
 
-def _point_name(item: object, index: int) -> str:
+def point_name(item: object, index: int) -> str:
     """Return the name of a point; one without a name goes by its number."""
     name = item.get("name") if isinstance(item, dict) else None
     return name if isinstance(name, str) and name.strip() else str(index + 1)

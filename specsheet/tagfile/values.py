@@ -15,6 +15,7 @@ from specsheet.quantity.value import Refusal
 from specsheet.tag import Value
 from specsheet.tagfile.words import came, did_you_mean, listed, nearest, number_text, printable
 
+_NUMBER = re.compile(r"[+-]?(?:0|[1-9]\d*)(?:\.\d+)?(?:[eE][+-]?\d+)?", re.ASCII)
 _ISO_DATE = re.compile(r"\d{4}-\d{2}-\d{2}")
 
 
@@ -57,6 +58,11 @@ def to_toml(entry: Entry, text: str) -> Any | Refusal:
         braced = text if text[:1] in ("[", "{") else "{" + text + "}"
         return _literal(entry, braced)
     return text
+
+
+def is_number(text: str) -> bool:
+    """Tell whether a text is a decimal number as TOML writes one."""
+    return _NUMBER.fullmatch(text.strip()) is not None
 
 
 def _literal(entry: Entry, text: str) -> Any | Refusal:
