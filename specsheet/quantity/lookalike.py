@@ -2,12 +2,13 @@
 
 from __future__ import annotations
 
+import re
 import unicodedata
 
 _MINUS = dict.fromkeys("\u2010\u2011\u2012\u2013\u2014\u2015\u2212\ufe63\uff0d", "-")
 _NOTHING = dict.fromkeys("\u200b\u200c\u200d\u2060\ufeff\u00ad", "")
-_RAISED = zip("⁰¹²³⁴⁵⁶⁷⁸⁹⁻", "0123456789-", strict=True)
-_SUPERSCRIPT = {raised: f"^{level}" for raised, level in _RAISED}
+_RAISED = re.compile("[⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+")
+_LEVEL = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻", "0123456789-")
 _SUBSCRIPT = dict(zip("₀₁₂₃₄₅₆₇₈₉", "0123456789", strict=True))
 _FRACTION = {
     "¼": " 1/4",
@@ -46,7 +47,7 @@ _SIGN = {
 }
 #: same character in another shape; harmless to change in an echo
 _SHAPES = ("<wide>", "<narrow>", "<font>", "<square>", "<noBreak>")
-_MEANINGS = _SUPERSCRIPT | _SUBSCRIPT | _FRACTION | _SIGN
+_MEANINGS = _SUBSCRIPT | _FRACTION | _SIGN
 
 
 def _reshaped(character: str) -> str:
@@ -78,4 +79,5 @@ def plain(text: str) -> str:
     """
     if text.isascii():
         return text
+    text = _RAISED.sub(lambda run: "^" + run[0].translate(_LEVEL), text)
     return "".join(_MEANINGS.get(character, character) for character in text).strip()

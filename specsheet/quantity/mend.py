@@ -11,7 +11,7 @@ import re
 from collections.abc import Callable
 from typing import NamedTuple
 
-_N = r"[+-]?(?:[0-9]+(?:\.[0-9]+)?|\.[0-9]+)(?:[eE][+-]?[0-9]+)?"
+from specsheet.quantity.parse import NUMBER
 
 
 class Mend(NamedTuple):
@@ -29,11 +29,10 @@ _QUALIFIER = re.compile(
 _TOLERANCE = re.compile(r"([^±]*?)\s*(?:±|\+/-|\+-)\s*([0-9][0-9.,]*)\s*(.*)")
 _SIGNS = re.compile(r"([+-]+)\s*([0-9.].*)")
 _RANGE = re.compile(
-    rf"({_N})\s*([^0-9]*?)\s*(?:-|\.{{2,3}}|\bto\b|/(?=[0-9]))\s*({_N})(?:\s*(\D.*))?"
+    rf"({NUMBER})\s*([^0-9]*?)\s*(?:-|\.{{2,3}}|\bto\b|/(?=[0-9]))\s*({NUMBER})(?:\s*(\D.*))?"
 )
-_POWER = re.compile(
-    r"(?:(\S+?)\s*[x*]\s*)?10\s*(?:\^|\*\*|\^(?=-\^))\s*([+-]?\^?[0-9]+(?:\^[0-9]+)*)\s*(.*)"
-)
+_POWER = re.compile(r"(?:(\S+?)\s*[x*]\s*)?10\s*(?:\^|\*\*)\s*([+-]?[0-9]+)\s*(.*)")
+_TO_ONE = re.compile(r"(\S*[0-9])\s*:\s*1")
 _FRACTION = re.compile(r"(?:([0-9]+)[ -]+)?([0-9]+)/([1-9][0-9]*)\s*(\D.*)?")
 _POINT = re.compile(r"([+-]?[0-9]+)\.(?:\s+(.*)|([A-Za-z%].*))?")
 _BLOB = re.compile(
@@ -44,10 +43,6 @@ _GROUPS = r"[0-9]{1,3}(?:%s[0-9]{3})+"
 
 def _joined(number: str, unit: str | None) -> str:
     return f"{number} {unit.strip()}" if unit and unit.strip() else number
-
-
-def _empty(text: str) -> Mend | None:
-    return None if text else Mend("nothing was written")
 
 
 def _not_finite(text: str) -> Mend | None:
@@ -87,8 +82,13 @@ def _power(text: str) -> Mend | None:
     if match is None:
         return None
     mantissa, exponent, unit = match.groups()
-    number = f"{mantissa or 1}e{exponent.replace('^', '')}"
+    number = f"{mantissa or 1}e{exponent}"
     return Mend("a power of ten is written with e", (_joined(number, unit),))
+
+
+def _to_one(text: str) -> Mend | None:
+    match = _TO_ONE.fullmatch(text)
+    return None if match is None else Mend("a proportion is one number", (match[1],))
 
 
 def _fraction(text: str) -> Mend | None:
@@ -122,10 +122,12 @@ def _separators(text: str) -> Mend | None:
     if match is None:
         return None
     blob, exponent, unit = match.groups()
+    if not re.search("[,'_ ]|[.].*[.]", blob):
+        return None
     sign = blob[0] if blob[0] in "+-" else ""
     numbers = _without_separators(blob[len(sign) :])
     if not numbers:
-        return Mend("one number is wanted")
+        return Mend("one number is read, with a point as the decimal mark")
     why = "the decimal mark is a point, and figures are not grouped"
     return Mend(why, tuple(_joined(f"{sign}{n}{exponent or ''}", unit) for n in numbers))
 
@@ -149,12 +151,12 @@ def _without_separators(blob: str) -> tuple[str, ...]:
 
 
 _RULES: tuple[Callable[[str], Mend | None], ...] = (
-    _empty,
     _not_finite,
     _qualifier,
     _tolerance,
     _signs,
     _power,
+    _to_one,
     _fraction,
     _range,
     _bare_point,

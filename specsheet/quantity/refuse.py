@@ -17,6 +17,7 @@ from specsheet.quantity.parse import LONGEST, QUANTITY, parse
 from specsheet.quantity.table import SPELLINGS, find, fold, from_si, kinds_of, to_si, units
 from specsheet.quantity.unit import Unit
 from specsheet.quantity.value import Quantity, Refusal
+from specsheet.quantity.wording import join, quoted, refusal
 
 _REFERRED = re.compile(r"(.*)\(([ga])\)")
 
@@ -31,29 +32,12 @@ def refuse(text: str, kind: str, echo: str) -> Refusal:
     """
     why, offers = _reason(text, kind)
     write = tuple(dict.fromkeys(_accepted(offers, kind)))
-    message = f"{label(kind)} is wanted, but {shown_text(echo)} came: {why}"
-    if write:
-        message += f"; write {join(write)}"
-    return Refusal(message, write)
+    return refusal(label(kind), echo, why, write)
 
 
 def label(kind: str) -> str:
     """Return the words for a kind, without what stands behind a colon."""
     return KINDS[kind].label.partition(":")[0]
-
-
-def shown_text(text: str) -> str:
-    """Return a text in quotes, short and printable, for a message."""
-    if not text:
-        return "nothing"
-    short = text if len(text) <= 60 else text[:57] + "..."
-    return f'"{short}"' if short.isprintable() else ascii(short)
-
-
-def join(texts: Iterable[str]) -> str:
-    """Return "a", "a or b", "a, b or c"."""
-    *first, last = texts
-    return f"{', '.join(first)} or {last}" if first else last
 
 
 def _accepted(offers: Iterable[str], kind: str) -> list[str]:
@@ -76,7 +60,7 @@ def _reason(text: str, kind: str) -> tuple[str, tuple[str, ...]]:
     spelling = spaced or joined or ""
     unit = find(kind, spelling)
     if unit is not None:
-        return _out_of_bounds(number, unit), ()
+        return _out_of_bounds(number, unit), _vacuum(number, unit)
     if not spelling:
         return _missing_unit(number, kind)
     if not spelling[0].isalpha() and (habit := mend(text)) is not None:
@@ -121,10 +105,17 @@ def _out_of_bounds(number: str, unit: Unit) -> str:
     if low == SMALLEST:
         return "it must be above zero"
     if unit.kind == "pressure_absolute":
-        return "an absolute pressure is not below zero; a pressure under the atmosphere is (g)"
+        return "an absolute pressure is not below zero"
     if unit.kind == "pressure_gauge":
         return f"a full vacuum is about {_limit(-101325.0, unit)}"
     return f"the least value is {_limit(low, unit)}"
+
+
+def _vacuum(number: str, unit: Unit) -> tuple[str, ...]:
+    """Offer a negative absolute pressure as a gauge pressure, which it must be."""
+    if unit.kind != "pressure_absolute" or float(number) >= 0.0:
+        return ()
+    return (f"{number} {unit.name.removesuffix('(a)')}(g)",)
 
 
 def _limit(value: float, unit: Unit) -> str:
@@ -207,8 +198,8 @@ def _unknown(spelling: str, kind: str) -> str:
     foreign = next((character for character in spelling if not character.isascii()), "")
     if foreign:
         name = unicodedata.name(foreign, "a character without a name").lower()
-        return f"the unit {shown_text(spelling)} holds {shown_text(foreign)}, {name}; {_list(kind)}"
-    return f"the unit {shown_text(spelling)} is not known; {_list(kind)}"
+        return f"the unit {quoted(spelling)} holds {quoted(foreign)}, {name}; {_list(kind)}"
+    return f"the unit {quoted(spelling)} is not known; {_list(kind)}"
 
 
 def _list(kind: str) -> str:

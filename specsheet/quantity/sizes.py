@@ -8,12 +8,11 @@ straight = number "D"   |  a length with its unit
 from __future__ import annotations
 
 import re
-from difflib import get_close_matches
 
 from specsheet.quantity.lookalike import plain, tidy
 from specsheet.quantity.parse import NUMBER, parse
-from specsheet.quantity.refuse import join, shown_text
 from specsheet.quantity.value import NominalSize, Quantity, Refusal, StraightLength
+from specsheet.quantity.wording import refusal
 
 #: DN -> NPS, paired as in ASME B36.10M and ISO 6708 (from memory)
 SIZES: dict[int, str] = {
@@ -76,6 +75,7 @@ def _inches(text: str) -> float | None:
 _DN = re.compile(r"dn ?([0-9]+)", re.IGNORECASE)
 _NPS = re.compile(r"(nps ?)?([0-9./ -]*[0-9])( ?(?:in|inch|inches|\"))?", re.IGNORECASE)
 _STRAIGHT = re.compile(rf"({NUMBER}) ?(?:x ?)?D")
+_DIAMETERS = re.compile(rf"({NUMBER}) ?(?:d|DN|ID|diameters?|pipe diameters)")
 _BY_INCHES = {_inches(nps): dn for dn, nps in SIZES.items()}
 
 
@@ -123,14 +123,15 @@ def _refuse_size(echo: str, ready: str) -> Refusal:
         dn = round(length.value * 1000.0)
         write = (f"DN {dn}",) if dn in SIZES else ()
         return _size_refusal(echo, "a nominal size is a name, not a length", write)
+    from difflib import get_close_matches
+
     known = [f"DN {dn}" for dn in SIZES] + [f"NPS {nps}" for nps in SIZES.values()]
     near = tuple(get_close_matches(ready.upper(), known, n=2, cutoff=0.7))
     return _size_refusal(echo, 'it is read as "DN 150" or "NPS 6"', near)
 
 
 def _size_refusal(echo: str, why: str, write: tuple[str, ...]) -> Refusal:
-    message = f"a nominal size is wanted, but {shown_text(echo)} came: {why}"
-    return Refusal(f"{message}; write {join(write)}" if write else message, write)
+    return refusal("a nominal size", echo, why, write)
 
 
 def parse_straight(text: str) -> StraightLength | Refusal:
@@ -146,15 +147,17 @@ def parse_straight(text: str) -> StraightLength | Refusal:
     length = parse(ready, "length")
     if isinstance(length, Quantity):
         return StraightLength(None, length.value, echo)
-    number = re.fullmatch(rf"({NUMBER})(?: ?(?:d|DN|ID|diameters?|pipe diameters))?", ready)
-    if number is not None:
-        offers = (f"{number[1]} D", f"{number[1]} m")
-        bare = ready == number[1]
-        why = "D or the unit of a length is missing" if bare else "inside diameters are written D"
-        return _straight_refusal(echo, why, offers if bare else offers[:1])
+    if re.fullmatch(NUMBER, ready):
+        why = "D or the unit of a length is missing"
+        return _straight_refusal(echo, why, (f"{ready} D", f"{ready} m"))
+    if number := _DIAMETERS.fullmatch(ready):
+        return _straight_refusal(echo, "inside diameters are written D", (f"{number[1]} D",))
+    if number := re.fullmatch(r"(.*[0-9]) ?D", ready):
+        multiple = parse(number[1], "dimensionless")
+        offers = multiple.write if isinstance(multiple, Refusal) else ()
+        return _straight_refusal(echo, "one plain number is read", tuple(f"{n} D" for n in offers))
     return _straight_refusal(echo, 'it is read as "20 D" or "3.5 m"', length.write)
 
 
 def _straight_refusal(echo: str, why: str, write: tuple[str, ...]) -> Refusal:
-    message = f"a straight length is wanted, but {shown_text(echo)} came: {why}"
-    return Refusal(f"{message}; write {join(write)}" if write else message, write)
+    return refusal("a straight length", echo, why, write)

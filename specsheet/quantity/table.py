@@ -41,7 +41,7 @@ SPELLINGS: dict[str, dict[str, Unit]] = {
 _FOLDS = (
     (re.compile(r"\s*/\s*"), "/"),
     (re.compile(r"\s*([()])\s*"), r"\1"),
-    (re.compile(r"(?<=[A-Za-z])\^(-?)\^?(?=[1-9])"), r"\1"),
+    (re.compile(r"(?<=[A-Za-z])\^(?=-?[1-9])"), ""),
     (re.compile(r"(?<=[A-Za-z])[.*](?=[A-Za-z])"), " "),
     (re.compile(r"\bdeg (?=[CFR])"), "deg"),
     (re.compile(r"/\(([A-Za-z]+) ([A-Za-z]+)\)"), r"/\1/\2"),
