@@ -79,3 +79,30 @@ class Finding:
     point: str = ""
     source: str = ""
     reserve: Reserve | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class Limit:
+    """A limit of use, of the element as sized or of the line.
+
+    Attributes:
+        key: glossary key bounded: a value of ``at``, of the stream, or of the element.
+        low, high: bounds (SI), None where there is none.
+        level: level of the finding when it does not hold.
+        code: code of the finding.
+        message: what crossing it means and how to mend it.
+        source: citation.
+        phase: "liquid", "gas" or "" for both.
+        driver: glossary key of what would change the verdict: "mass_flow" for values of ``at``,
+            the key itself for a property of the stream, "" for the element.
+    """
+
+    key: str
+    low: float | None
+    high: float | None
+    level: Level
+    code: str
+    message: str
+    source: str
+    phase: str = ""
+    driver: str = "mass_flow"

@@ -4,6 +4,8 @@ Imports without numpy. Everything takes the tag as it is typed and never raises 
 stated: what is wrong becomes a finding.
 """
 
+from specsheet.line.pipe import Pipe
 from specsheet.line.piping import PipeResult, pipe_of
+from specsheet.line.velocity import velocity_limits
 
-__all__ = ["PipeResult", "pipe_of"]
+__all__ = ["Pipe", "PipeResult", "pipe_of", "velocity_limits"]

@@ -13,7 +13,8 @@ import numpy as np
 from numpy.typing import NDArray
 
 from specsheet.findings import Finding, Level, Origin
-from specsheet.findings import Given as Given  # every family takes it from here
+from specsheet.findings import Given as Given  # every family takes both from here
+from specsheet.findings import Limit as Limit
 from specsheet.line.pipe import Pipe
 from specsheet.packs import Profile
 from specsheet.tag import Tag
@@ -78,33 +79,6 @@ class Derivation:
     equation: str
     source: str
     inputs: tuple[str, ...] = ()
-
-
-@dataclass(frozen=True, slots=True)
-class Limit:
-    """A limit of use that belongs to the element as sized.
-
-    Attributes:
-        key: glossary key bounded: a value of ``at``, of the stream, or of the element.
-        low, high: bounds (SI), None where there is none.
-        level: level of the finding when it does not hold.
-        code: code of the finding.
-        message: what crossing it means and how to mend it.
-        source: citation.
-        phase: "liquid", "gas" or "" for both.
-        driver: glossary key of what would change the verdict: "mass_flow" for values of ``at``,
-            the key itself for a property of the stream, "" for the element.
-    """
-
-    key: str
-    low: float | None
-    high: float | None
-    level: Level
-    code: str
-    message: str
-    source: str
-    phase: str = ""
-    driver: str = "mass_flow"
 
 
 @dataclass(frozen=True, slots=True)
