@@ -1,6 +1,6 @@
 """What to say about spellings that are common in the trade but say too little.
 
-Keys are folded spellings in small letters.
+Keys are spellings in small letters without spaces.
 """
 
 from __future__ import annotations
@@ -106,5 +106,5 @@ ADVICE: dict[str, Advice] = {
     "vol%": Advice("names a basis, which the entry states already", ("%",)),
     "wt%": Advice("names a basis, which the entry states already", ("%",)),
     "mol%": Advice("names a basis, which the entry states already", ("%",)),
-    "% rh": Advice("is written %", ("%",)),
+    "%rh": Advice("is written %", ("%",)),
 }

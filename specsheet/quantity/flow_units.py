@@ -113,21 +113,37 @@ _HEAT_RATES = (
     unit("Gcal/h", 1e9 * CALORIE / HOUR),
 )
 
+_USUAL = (
+    *("kg/h", "t/h", "kg/s", "kg/min", "lb/h", "klb/h", "g/s", "t/d"),
+    *("m3/h", "L/min", "m3/s", "L/s", "gpm", "ft3/min", "bbl/d", "m3/d"),
+    *("Nm3/h", "Sm3/h", "m3/h(base)", "scfm", "MMSCFD", "NL/min", "Sm3/d", "scfh"),
+)
+
+
+def _usual_first(rows: list[Unit]) -> tuple[Unit, ...]:
+    rank = {name: place for place, name in enumerate(_USUAL)}
+    return tuple(sorted(rows, key=lambda row: rank.get(row.name, len(rank))))
+
+
 #: kind -> its units, the usual ones first
 FLOW_UNITS: dict[str, tuple[Unit, ...]] = {
-    "mass_flow": tuple(_products(_MASSES)),
-    "volume_flow": (
-        *_products(_VOLUMES),
-        unit("MGD", 1e6 * US_GALLON / DAY, "mgd"),
-        unit("Sv", 1e6),  # sverdrup, oceanographic transport
+    "mass_flow": _usual_first(_products(_MASSES)),
+    "volume_flow": _usual_first(
+        [
+            *_products(_VOLUMES),
+            unit("MGD", 1e6 * US_GALLON / DAY, "mgd"),
+            unit("Sv", 1e6),  # sverdrup, oceanographic transport
+        ]
     ),
-    "base_volume_flow": (
-        *_products(_NORMAL, base=NORMAL),
-        *_products(_STANDARD, base=STANDARD),
-        *_products(_CUSTOMARY, base=CUSTOMARY),
-        _customary("MSCFD", 1e3 * CUBIC_FOOT / DAY, "Mscfd", "Mscf/d"),
-        _customary("MMSCFD", 1e6 * CUBIC_FOOT / DAY, "MMscfd", "MMscf/d"),
-        *_products(_JOB, suffix="(base)"),
+    "base_volume_flow": _usual_first(
+        [
+            *_products(_NORMAL, base=NORMAL),
+            *_products(_STANDARD, base=STANDARD),
+            *_products(_CUSTOMARY, base=CUSTOMARY),
+            _customary("MSCFD", 1e3 * CUBIC_FOOT / DAY, "Mscfd", "Mscf/d"),
+            _customary("MMSCFD", 1e6 * CUBIC_FOOT / DAY, "MMscfd", "MMscf/d"),
+            *_products(_JOB, suffix="(base)"),
+        ]
     ),
     "energy_flow": _HEAT_RATES,
     "power": (*_HEAT_RATES, unit("mW", 1e-3), unit("hp", 550.0 * FOOT * POUND * GRAVITY)),

@@ -7,7 +7,7 @@ from __future__ import annotations
 
 import re
 import unicodedata
-from collections.abc import Iterable
+from collections.abc import Callable, Iterable
 
 from specsheet.fields import KINDS
 from specsheet.quantity.advice import ADVICE
@@ -18,6 +18,10 @@ from specsheet.quantity.table import SPELLINGS, find, fold, from_si, kinds_of, t
 from specsheet.quantity.unit import Unit
 from specsheet.quantity.value import Quantity, Refusal
 from specsheet.quantity.wording import join, quoted, refusal
+
+#: why a spelling is no unit of the kind, and the units that may have been meant
+_Problem = tuple[str, tuple[str, ...]]
+_Rule = Callable[[str, str], _Problem | None]
 
 _REFERRED = re.compile(r"(.*)\(([ga])\)")
 
@@ -49,7 +53,7 @@ def _accepted(offers: Iterable[str], kind: str) -> list[str]:
     return texts
 
 
-def _reason(text: str, kind: str) -> tuple[str, tuple[str, ...]]:
+def _reason(text: str, kind: str) -> _Problem:
     if len(text) > LONGEST:
         return f"it is longer than {LONGEST} characters", ()
     match = QUANTITY.fullmatch(text)
@@ -63,12 +67,11 @@ def _reason(text: str, kind: str) -> tuple[str, tuple[str, ...]]:
         return _out_of_bounds(number, unit), _vacuum(number, unit)
     if not spelling:
         return _missing_unit(number, kind)
-    if not spelling[0].isalpha() and (habit := mend(text)) is not None:
+    found = _first((_gauge_or_absolute, _advised, _of_another_kind, _case), spelling, kind)
+    if found is None and (habit := mend(text)) is not None:
         return habit
-    why, names = _unit_problem(spelling, kind)
-    if names or (habit := mend(text)) is None:
-        return why, tuple(f"{number} {name}" for name in names)
-    return habit
+    why, names = found or _nearest(spelling, kind)
+    return why, tuple(f"{number} {name}" for name in names)
 
 
 def _no_number(text: str, kind: str) -> str:
@@ -80,7 +83,7 @@ def _no_number(text: str, kind: str) -> str:
     )
 
 
-def _missing_unit(number: str, kind: str) -> tuple[str, tuple[str, ...]]:
+def _missing_unit(number: str, kind: str) -> _Problem:
     if kind == "ratio":
         hundredfold = f"{float(number) * 100:.12g}"
         offers = (f"{number} %", f"{hundredfold} %")
@@ -122,16 +125,16 @@ def _limit(value: float, unit: Unit) -> str:
     return f"{from_si(value, unit.kind, unit.name):.6g} {unit.name}"
 
 
-def _unit_problem(spelling: str, kind: str) -> tuple[str, tuple[str, ...]]:
-    """Return why a spelling is no unit of the kind, and the units that may have been meant."""
-    for rule in (_gauge_or_absolute, _advised, _of_another_kind, _case, _nearest):
+def _first(rules: Iterable[_Rule], spelling: str, kind: str) -> _Problem | None:
+    """Return what the first rule that applies to a spelling finds."""
+    for rule in rules:
         found = rule(spelling, kind)
         if found is not None:
             return found
-    return _unknown(spelling, kind), ()
+    return None
 
 
-def _gauge_or_absolute(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] | None:
+def _gauge_or_absolute(spelling: str, kind: str) -> _Problem | None:
     if kind == "pressure_difference":
         referred = find("pressure", spelling)
         if referred is None:
@@ -145,11 +148,11 @@ def _gauge_or_absolute(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] 
     return why, tuple(name for name in (f"{step.name}(g)", f"{step.name}(a)") if find(kind, name))
 
 
-def _advised(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] | None:
+def _advised(spelling: str, kind: str) -> _Problem | None:
     folded = fold(spelling)
     referred = _REFERRED.fullmatch(folded)
     stem, letter = (referred[1], f"({referred[2]})") if referred else (folded, "")
-    advice = ADVICE.get(stem.casefold())
+    advice = ADVICE.get(stem.casefold().replace(" ", ""))
     if advice is None:
         return None
     endings = (letter,) if letter else ("", "(g)", "(a)")
@@ -164,7 +167,7 @@ def _advised(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] | None:
     return None
 
 
-def _of_another_kind(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] | None:
+def _of_another_kind(spelling: str, kind: str) -> _Problem | None:
     others = kinds_of(spelling)
     if not others:
         return None
@@ -172,7 +175,7 @@ def _of_another_kind(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] | 
     return f"{spelling} is the unit of {labels}; {_list(kind)}", ()
 
 
-def _case(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] | None:
+def _case(spelling: str, kind: str) -> _Problem | None:
     folded = fold(spelling).casefold()
     tables = [SPELLINGS[kind]]
     if units(kind)[0].startswith("bar("):
@@ -185,13 +188,12 @@ def _case(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] | None:
     return "capital and small letters differ in a unit", tuple(names)
 
 
-def _nearest(spelling: str, kind: str) -> tuple[str, tuple[str, ...]] | None:
+def _nearest(spelling: str, kind: str) -> _Problem:
     from difflib import get_close_matches
 
     known = SPELLINGS[kind]
     close = get_close_matches(fold(spelling), known, n=3, cutoff=0.6)
-    names = dict.fromkeys(known[text].name for text in close if text)
-    return (_unknown(spelling, kind), tuple(names)) if names else None
+    return _unknown(spelling, kind), tuple(dict.fromkeys(known[text].name for text in close))
 
 
 def _unknown(spelling: str, kind: str) -> str:

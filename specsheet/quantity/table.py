@@ -50,6 +50,7 @@ _FOLDS = (
     (re.compile(r"/(?:day)\b"), "/d"),
     (re.compile(r" ?(?:\(gauge\)|\bgauge| g)$"), "(g)"),
     (re.compile(r" ?(?:\((?:abs|absolute)\)|\b(?:abs|absolute)| a)$"), "(a)"),
+    (re.compile(r"^([A-Za-z]+)-1$"), r"1/\1"),
     (re.compile(r" ([A-Za-z]+)-1\b"), r"/\1"),
     (re.compile(r" ([A-Za-z]+)-([23])\b"), r"/\1\2"),
     (re.compile(r"\s+"), " "),
