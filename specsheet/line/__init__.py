@@ -6,6 +6,17 @@ stated: what is wrong becomes a finding.
 
 from specsheet.line.pipe import Pipe
 from specsheet.line.piping import PipeResult, pipe_of
+from specsheet.line.rating import RatingResult, rate
+from specsheet.line.straight import StraightResult, straight
 from specsheet.line.velocity import velocity_limits
 
-__all__ = ["Pipe", "PipeResult", "pipe_of", "velocity_limits"]
+__all__ = [
+    "Pipe",
+    "PipeResult",
+    "RatingResult",
+    "StraightResult",
+    "pipe_of",
+    "rate",
+    "straight",
+    "velocity_limits",
+]

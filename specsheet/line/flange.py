@@ -98,11 +98,9 @@ def lowest_temperature(system: str) -> float:
     )
 
 
-def series(system: str) -> tuple[Rating, ...]:
-    """Return the ratings of a system to choose from, rising; Class 400 is left out as unusual."""
-    if system == CLASS:
-        return tuple(Rating(CLASS, float(number)) for number in classes() if number != 400)
-    return tuple(Rating(PN, number) for number in pressure_numbers() if number >= 10.0)
+def proposals() -> tuple[Rating, ...]:
+    """Return the classes to choose from, rising; Class 400 is left out as unusual."""
+    return tuple(Rating(CLASS, float(number)) for number in classes() if number != 400)
 
 
 def allowed(rating: Rating, material: Material | None, temperature: float) -> Allowed:
