@@ -1,9 +1,9 @@
 """Straight lengths: what the family's profile wants against what the line has.
 
-Table ``[straight]`` of a profile: ``source``, ``betas``, a list for each upstream fitting (under
-``upstream`` or straight in the table; "single bend" and "single_bend" are one), ``reduced`` lists
-with the additional uncertainty, ``downstream`` and ``downstream_reduced``; all in diameters. A
-list has one value for each diameter ratio, or one value for all.
+Table ``[straight]`` of a profile, all in diameters: ``source``; ``betas``; for each fitting either
+``fittings."single bend"`` with ``lengths`` and ``reduced``, or lists in ``upstream`` and ``reduced``,
+or a list right in the table ("single bend" and "single_bend" are one); ``downstream`` and
+``downstream_reduced``. A list has one value for each diameter ratio, or one value for all.
 """
 
 from __future__ import annotations
@@ -78,12 +78,13 @@ def straight(
     rules = profile.straight
     source = str(rules.get("source", ""))
     fitting = tag.text(_FITTING) or "single bend"
+    full, reduced = _upstream(rules, fitting)
     of = pipe_diameter if meter_diameter is None else meter_diameter
     sides = (
         _Side(
             "upstream",
-            _length(rules, "upstream", fitting, beta),
-            _length(rules, "reduced", fitting, beta),
+            _interpolated(rules, full, beta),
+            _interpolated(rules, reduced, beta),
             f" behind {_words(fitting)}{_assumed(tag)}",
         ),
         _Side(
@@ -153,15 +154,20 @@ def _stated(tag: Tag, entry: str) -> StraightLength | None:
     return read if isinstance(read, StraightLength) else None
 
 
-def _length(rules: Mapping[str, Any], group: str, fitting: str, beta: float | None) -> float | None:
-    tables = [rules.get(group), rules if group == "upstream" else None]
-    for table in tables:
-        if not isinstance(table, Mapping):
-            continue
-        for name in (fitting, fitting.replace(" ", "_")):
-            if name in table:
-                return _interpolated(rules, table[name], beta)
-    return None
+def _upstream(rules: Mapping[str, Any], fitting: str) -> tuple[Any, Any]:
+    """Return the lists of full and of reduced lengths of a fitting, None where there is none."""
+    names = (fitting, fitting.replace(" ", "_"))
+    row = _first(rules.get("fittings"), names)
+    if isinstance(row, Mapping):
+        return row.get("lengths"), row.get("reduced")
+    full = _first(rules.get("upstream"), names)
+    return _first(rules, names) if full is None else full, _first(rules.get("reduced"), names)
+
+
+def _first(table: Any, names: tuple[str, ...]) -> Any:
+    if not isinstance(table, Mapping):
+        return None
+    return next((table[name] for name in names if name in table), None)
 
 
 def _interpolated(rules: Mapping[str, Any], lengths: Any, beta: float | None) -> float | None:

@@ -116,6 +116,26 @@ def test_both_spellings_and_both_places_of_a_fitting(name, nested):
     assert result.values["upstream_length"].value == pytest.approx(25 * D)
 
 
+def test_a_table_by_fitting():
+    rules = {
+        "betas": [0.2, 0.6],
+        "fittings": {"single bend": {"lengths": [10, 30], "reduced": [5, 15]}},
+        "downstream": [5],
+    }
+    result = _straight('upstream_length = "12 D"\ndownstream_length = "5 D"', 0.4, rules)
+    assert result.values["upstream_length"].value == pytest.approx(20 * D)
+    assert [item.code for item in result.findings] == ["upstream-length-reduced"]
+
+
+def test_the_orifice_plate_behind_a_bend():
+    """ISO 5167-2:2003, table 3 (from memory): single bend, 22 D at 0.50, 42 D at 0.60; reduced 9."""
+    tag = line_tag(line='inside_diameter = "200 mm"\nupstream_length = "10 D"')
+    result = straight(tag, packs.profile("orifice_concentric"), 0.5, pipe_diameter=D)
+    assert result.values["upstream_length"].value == pytest.approx(22 * D)
+    assert result.values["downstream_length"].value == pytest.approx(6 * D)
+    assert result.additional_uncertainty == 0.005
+
+
 def test_lengths_in_bores_of_a_smaller_meter():
     """20 bores of 100 mm are 2 m, which are 10 diameters of the pipe."""
     line = 'upstream_length = "10 D"\ndownstream_length = "6 D"'
@@ -130,6 +150,7 @@ def test_every_profile_has_a_table_that_can_be_read():
         rules = packs.profile(key).straight
         tables = [value for value in rules.values() if isinstance(value, list)]
         nested = [rules.get(name, {}) for name in ("upstream", "reduced")]
+        nested += rules.get("fittings", {}).values()
         tables += [value for group in nested for value in group.values()]
         for lengths in tables:
             if lengths is not rules.get("betas"):
