@@ -100,7 +100,7 @@ class Document:
         """Remove an operating point and everything stated at it."""
         index = self._point(name)
         self._own_headers("points")
-        start, end = self._block(("points", index))
+        start, end = edit.block(self._text, ("points", index))
         blank = len(self._text[:start]) - len(self._text[:start].rstrip())
         head = self._text[: start - blank] + ("\n" if start > blank else "")
         self._apply(head + self._text[end:], lambda data: data["points"].pop(index))
@@ -243,19 +243,9 @@ class Document:
         if not any(s.header and s.place == (section, 0) for s in scan(self._text).statements):
             raise EditError(f"{section} are not written as [[{section}]]; do so by hand first")
 
-    def _block(self, place: Place) -> tuple[int, int]:
-        """Return the characters of a header's block and of the headers below it."""
-        found = [
-            span
-            for header, span in edit.sections(self._text, scan(self._text))
-            if header[: len(place)] == place
-        ]
-        return found[0][0], found[-1][1]
-
     def _swap(self, index: int) -> None:
-        first, second = self._block(("points", index)), self._block(("points", index + 1))
         text = self._text if self._text.endswith("\n") else self._text + "\n"
-        second = (second[0], second[1] + len(text) - len(self._text))
+        first, second = (edit.block(text, ("points", at)) for at in (index, index + 1))
         swapped = (
             text[: first[0]]
             + text[slice(*second)]

@@ -14,6 +14,9 @@ from collections.abc import Sequence
 from specsheet.tagfile.literal import key_text, value_text
 from specsheet.tagfile.spans import Place, Span, Spans, Statement, scan
 
+_COMMENT_LINES = re.compile(r"(?:[ \t]*\#[^\n]*(?:\n|$))*")
+_LINE_END = re.compile(r"[ \t]*(?:\r?\n)?")
+
 
 def replace_value(text: str, place: Place, value: object) -> str:
     """Return the text with the value at ``place``, which must be there, replaced."""
@@ -48,7 +51,8 @@ def insert_value(text: str, place: Place, value: object, order: Sequence[str]) -
         return _insert_line(text, above, _indent(text, siblings[-1]) + line)
     line = f"{key_text(key)} = {value_text(value)}"
     if header or not table:
-        above = _shown_below(text, spans, table, key) or (header.end if header else 0)
+        top = header.end if header else sections(text, spans)[0][1][1]
+        above = _shown_below(text, spans, table, key) or top
         return _insert_line(text, above, (_indent(text, header) if header else "") + line)
     if len(table) > 1:
         return insert_value(text, table, {key: value}, order)
@@ -70,16 +74,16 @@ def remove(text: str, place: Place) -> str:
 def insert_block(text: str, section: str, block: str, order: Sequence[str]) -> str:
     """Return the text with a whole section added, behind what comes before it in ``order``.
 
-    A section that is there already (``[[points]]``) is followed by the new one.
+    A section that is there already (``[[points]]``) is followed by the new one; one that is not
+    in ``order`` goes to the end.
     """
-    before = (*order[: order.index(section) + 1],) if section in order else tuple(order)
-    spans = scan(text)
-    blocks = [span for place, span in sections(text, spans) if not place or place[0] in before]
-    end = blocks[-1][1] if blocks else 0
-    head = text[:end]
+    later = order[order.index(section) + 1 :] if section in order else ()
+    blocks = sections(text, scan(text))
+    before = [span for place, span in blocks if not place or place[0] not in later]
+    head = text[: before[-1][1]]
     if head and not head.endswith("\n"):
         head += "\n"
-    return head + ("\n" if head else "") + block + text[end:]
+    return head + ("\n" if head else "") + block + text[before[-1][1] :]
 
 
 def sections(text: str, spans: Spans) -> list[tuple[Place, Span]]:
@@ -93,19 +97,28 @@ def sections(text: str, spans: Spans) -> list[tuple[Place, Span]]:
     places: list[Place] = [(), *(header.place for header in headers)]
     begins, ends = [0, *starts], [*starts, len(text)]
     return [
-        (
-            place,
-            (begin, max(begin, begin + len(text[begin:end].rstrip()) + _tail(text, begin, end))),
-        )
+        (place, (begin, _last_line(text, begin, end)))
         for place, begin, end in zip(places, begins, ends, strict=True)
     ]
 
 
-def _tail(text: str, begin: int, end: int) -> int:
-    """Return the length of the line end behind the last line of a block."""
+def block(text: str, place: Place) -> Span:
+    """Return the characters of one header and all that stands under it.
+
+    The comment lines right above and right below belong to it, a comment between blank lines
+    behind it does not.
+    """
+    spans = scan(text)
+    own = [item for item in spans.statements if item.table[: len(place)] == place]
+    comments = _COMMENT_LINES.match(text, own[-1].end)
+    return _block_start(text, spans, own[0]), comments.end() if comments else own[-1].end
+
+
+def _last_line(text: str, begin: int, end: int) -> int:
+    """Return the end of the last line of a block that is not blank."""
     stop = begin + len(text[begin:end].rstrip())
-    rest = re.match(r"[ \t]*(?:\r?\n)?", text[stop:end]) if stop > begin else None
-    return len(rest[0]) if rest else 0
+    rest = _LINE_END.match(text, stop, end)
+    return rest.end() if rest and stop > begin else begin
 
 
 def _block_start(text: str, spans: Spans, header: Statement) -> int:

@@ -2,15 +2,19 @@
 
 from __future__ import annotations
 
+import re
 import textwrap
 from collections.abc import Iterable
 
 from specsheet import packs
-from specsheet.fields import COMMON, KINDS, SECTIONS, Entry, Section
+from specsheet.fields import COMMON, SECTIONS, Entry, Section
 from specsheet.tagfile.literal import value_text
 from specsheet.tagfile.migrate import CURRENT
 
 _WIDTH = 100
+_COLUMN = 40  # of the help beside an entry
+_GLUE = "\x1f"  # stands for a space inside quotes while lines are broken
+_QUOTED = re.compile(r'"[^"]*"')
 _BARE_KINDS = ("boolean", "integer", "date", "list", "fractions", "units")
 
 #: what a new file holds besides the entries that every file must state
@@ -41,7 +45,8 @@ def new_text(tag: str, family: str) -> str:
 def _head(tag: str, title: str) -> str:
     shown = tag if tag.isprintable() else "new tag"
     return _comment(
-        f"{shown}: {title}. Fill in what is blank; take the # away from what you want to state. "
+        f"{shown}: {title}. Fill in what is blank; take the # away from what you want to "
+        "state. "
         'Quantities are written as number and unit, in quotes: "3.1 t/h", "7 bar(g)", "185 degC".'
     )
 
@@ -58,33 +63,40 @@ def _section(section: Section, entries: list[Entry], fixed: dict[str, str]) -> s
 
 def _lines(entries: Iterable[Entry], fixed: dict[str, str]) -> Iterable[str]:
     for entry in entries:
-        value = fixed.get(entry.path)
-        if value is None and entry.path == "points.name":
-            value = '"normal"'
-        if value is None and (entry.needed == "always" or entry.path in _USUAL):
-            value = '""'
         if entry.path in fixed:
-            yield f"{entry.key} = {value}\n"
-        elif value is not None:
-            yield _comment(_told(entry)) + f"{entry.key} = {value}\n"
+            yield f"{entry.key} = {fixed[entry.path]}\n"
+        elif entry.path == "points.name":
+            yield _comment(_told(entry)) + f'{entry.key} = "normal"\n'
+        elif entry.needed == "always" or entry.path in _USUAL:
+            yield _comment(f"{_told(entry)} {_examples(entry)}") + f'{entry.key} = ""\n'
         else:
-            yield _comment(_told(entry)) + f"# {entry.key} = {_example(entry)}\n"
+            yield _offered(entry)
+
+
+def _offered(entry: Entry) -> str:
+    """Return an entry behind a "#", its help on the same line where that fits, else above."""
+    line = f"# {entry.key} = {_example(entry)}"
+    beside = f"{line:{_COLUMN}}  # {_told(entry)}"
+    return f"{beside}\n" if len(beside) <= _WIDTH else _comment(_told(entry)) + f"{line}\n"
 
 
 def _told(entry: Entry) -> str:
     """Return the help of an entry with all a user must know to fill it in."""
-    parts = [f"{entry.label}: {entry.help[:1].lower()}{entry.help[1:]}"]
+    parts = [f"{entry.label}. {entry.help}"]
     if entry.needed and entry.needed != "always":
         parts.append(f"Needed {entry.needed}.")
     if entry.choices:
         parts.append(f"One of: {', '.join(entry.choices)}.")
-    elif entry.kind in KINDS or entry.kind == "nominal_size":
-        parts.append(f'For example "{entry.example}".' if entry.example else "")
     if entry.words:
         parts.append("Or: " + ", ".join(f'"{word}"' for word in entry.words) + ".")
-    if entry.default:
-        parts.append(f'If left out, "{entry.default}" is assumed.')
-    return " ".join(part for part in parts if part)
+    if entry.default and entry.default not in entry.words:
+        parts.append(f"Assumed if left out: {entry.default}.")
+    return " ".join(parts)
+
+
+def _examples(entry: Entry) -> str:
+    """Return the example of a blank entry; its choices are examples enough."""
+    return "" if entry.choices or not entry.example else f'For example "{entry.example}".'
 
 
 def _example(entry: Entry) -> str:
@@ -94,11 +106,12 @@ def _example(entry: Entry) -> str:
 
 
 def _comment(text: str) -> str:
+    kept = _QUOTED.sub(lambda match: match[0].replace(" ", _GLUE), text)
     lines = textwrap.wrap(
-        text,
+        kept,
         _WIDTH,
         initial_indent="# ",
         subsequent_indent="#   ",
         break_on_hyphens=False,
     )
-    return "".join(f"{line}\n" for line in lines)
+    return "".join(f"{line}\n" for line in lines).replace(_GLUE, " ")

@@ -13,7 +13,15 @@ from specsheet import quantity
 from specsheet.fields import KINDS, PLAIN_KINDS, Entry
 from specsheet.quantity.value import Refusal
 from specsheet.tag import Value
-from specsheet.tagfile.words import came, did_you_mean, listed, nearest, number_text, printable
+from specsheet.tagfile.words import (
+    Number,
+    came,
+    did_you_mean,
+    listed,
+    nearest,
+    number_text,
+    printable,
+)
 
 _NUMBER = re.compile(r"[+-]?(?:0|[1-9]\d*)(?:\.\d+)?(?:[eE][+-]?\d+)?", re.ASCII)
 _ISO_DATE = re.compile(r"\d{4}-\d{2}-\d{2}")
@@ -67,7 +75,7 @@ def is_number(text: str) -> bool:
 
 def _literal(entry: Entry, text: str) -> Any | Refusal:
     try:
-        return tomllib.loads(f"value = {text}")["value"]
+        return tomllib.loads(f"value = {text}", parse_float=Number)["value"]
     except (ValueError, RecursionError):
         return Refusal(_wanted(entry, _NAMES[entry.kind], text))
 

@@ -21,6 +21,9 @@ class Number(float):
         number.text = text.replace("_", "")
         return number
 
+    def __reduce__(self) -> tuple[type[Number], tuple[str]]:
+        return Number, (self.text,)
+
 
 def number_text(value: float) -> str:
     """Return a TOML number as it was typed."""
