@@ -186,11 +186,19 @@ class Window:
 
 @dataclass(frozen=True, slots=True)
 class Mark:
-    """One operating point on the ruler: its name, flow as text and position [0..1]."""
+    """One operating point on the ruler.
+
+    Attributes:
+        name: name of the point.
+        text: its flow in the ruler's unit.
+        position: [0..1]
+        inside: whether every window holds it.
+    """
 
     name: str
     text: str
     position: float
+    inside: bool
 
 
 @dataclass(frozen=True, slots=True)
@@ -203,6 +211,7 @@ class Ruler:
         ticks: rising.
         windows: tightest first.
         marks: in the order of the operating points.
+        usable: ends of the stretch that every window leaves open; None where there is none.
     """
 
     label: str
@@ -210,6 +219,7 @@ class Ruler:
     ticks: tuple[Tick, ...]
     windows: tuple[Window, ...]
     marks: tuple[Mark, ...]
+    usable: tuple[float, float] | None
 
 
 @dataclass(frozen=True, slots=True)

@@ -17,6 +17,9 @@ if TYPE_CHECKING:
 _ROOM = 1.6
 _REACH = 12.0
 
+#: a flow this close to the end of a window stands on it (an end solved for the point itself) [-]
+_TOUCH = 1e-6
+
 
 def build(evaluation: Evaluation, axis: FlowAxis) -> Ruler | None:
     """Return the ruler, None when no operating point has a flow."""
@@ -29,6 +32,9 @@ def build(evaluation: Evaluation, axis: FlowAxis) -> Ruler | None:
         return None
     low, high = _ends(list(flows.values()), evaluation.bands)
     span = math.log(high / low)
+    windows = tuple(_window(band, axis, low, high, span) for band in evaluation.bands)
+    start = max((window.low for window in windows), default=0.0)
+    end = min((window.high for window in windows), default=1.0)
 
     def position(flow: float) -> float:
         return math.log(flow / low) / span
@@ -37,8 +43,12 @@ def build(evaluation: Evaluation, axis: FlowAxis) -> Ruler | None:
         label=axis.label,
         unit=axis.printed_unit,
         ticks=_ticks(axis.shown(low), axis.shown(high)),
-        windows=tuple(_window(band, axis, low, high, span) for band in evaluation.bands),
-        marks=tuple(Mark(name, axis.text(flow), position(flow)) for name, flow in flows.items()),
+        windows=windows,
+        marks=tuple(
+            Mark(name, axis.text(flow), position(flow), _inside(flow, evaluation.bands))
+            for name, flow in flows.items()
+        ),
+        usable=(start, end) if start < end else None,
     )
 
 
@@ -48,6 +58,15 @@ def _ends(flows: list[float], bands: Sequence[Band]) -> tuple[float, float]:
     edges = [edge for band in bands for edge in (band.low, band.high) if edge is not None]
     near = [edge for edge in edges if smallest / _REACH <= edge <= largest * _REACH]
     return min([smallest, *near]) / _ROOM, max([largest, *near]) * _ROOM
+
+
+def _inside(flow: float, bands: Sequence[Band]) -> bool:
+    """Tell whether every window holds a flow; an end belongs to the window."""
+    return all(
+        (band.low is None or flow >= band.low * (1.0 - _TOUCH))
+        and (band.high is None or flow <= band.high * (1.0 + _TOUCH))
+        for band in bands
+    )
 
 
 def _window(band: Band, axis: FlowAxis, low: float, high: float, span: float) -> Window:

@@ -28,7 +28,7 @@ LADDERS = {
 SMALLEST, LARGEST = 0.01, 20000.0
 
 #: endings of the units of the two kinds of pressure that go together
-_ENDINGS = {"pressure_gauge": ("(g)", "g"), "pressure_absolute": ("(a)", "a")}
+_ENDINGS = {"pressure_gauge": "(g)", "pressure_absolute": "(a)"}
 
 #: kinds that take over the unit typed elsewhere on the tag
 _FOLLOWING = (
@@ -109,11 +109,8 @@ def _typed(tag: Tag) -> dict[str, str]:
 
 
 def _partner(unit: str, kind: str, other: str) -> str:
-    """Return the unit of the other kind of pressure with the same stem ("psig" -> "psia")."""
-    for ending, wanted in zip(_ENDINGS[kind], _ENDINGS[other], strict=True):
-        if unit.endswith(ending):
-            return unit.removesuffix(ending) + wanted
-    return ""
+    """Return the unit of the other kind of pressure with the same stem ("psi(g)": "psi(a)")."""
+    return unit.removesuffix(_ENDINGS[kind]) + _ENDINGS[other]
 
 
 def _quantities(tag: Tag) -> Iterable[Quantity]:

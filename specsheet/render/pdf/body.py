@@ -1,0 +1,265 @@
+"""The tables of the sheet: values by point, single values in two columns, limits, findings."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterable, Sequence
+
+from specsheet.findings import Level, Origin
+from specsheet.render.pdf import head, style
+from specsheet.render.pdf.grid import Column, Line, Ornament, Text, grid
+from specsheet.render.pdf.page import Frame, Page, Place
+from specsheet.sheet.model import Cell, FindingRow, LimitRow, Row, Sheet, Table
+
+#: a small glyph for each origin; the legend explains them
+GLYPHS = {Origin.GIVEN: "●", Origin.DERIVED: "○", Origin.ASSUMED: "□", Origin.TYPICAL: "◊"}
+
+_LABEL, _SYMBOL, _UNIT, _MARK, _SOURCE = 148.0, 36.0, 58.0, 13.0, 30.0
+_NARROWEST, _WIDEST = 52.0, 84.0
+
+
+def marks(origins: Iterable[Origin]) -> str:
+    """Return the glyphs of the origins."""
+    return "".join(GLYPHS[origin] for origin in origins)
+
+
+def numbers(sheet: Sheet, source: str) -> str:
+    """Return the numbers of the sources of a row ("[3]")."""
+    found = sheet.numbers(source)
+    return f"[{','.join(map(str, found))}]" if found else ""
+
+
+def chunks(names: Sequence[str], width: float) -> list[slice]:
+    """Return the operating points in portions that fit the width, as even as possible."""
+    room = width - (_LABEL + _SYMBOL + _UNIT + _MARK + _SOURCE)
+    most = max(1, int(room / _NARROWEST))
+    count = max(1, math.ceil(len(names) / most))
+    total = max(len(names), 1)
+    size = math.ceil(total / count)
+    return [slice(start, min(start + size, total)) for start in range(0, total, size)]
+
+
+def by_point(frame: Frame, sheet: Sheet, table: Table) -> None:
+    """Set a table with one column for each operating point, split where it is too wide."""
+    for part in chunks(table.columns, frame.width):
+        title = table.title
+        if part.start:
+            title = f"{table.title}: {table.columns[part][0]} to {table.columns[part][-1]}"
+        columns = point_columns(table.columns[part], frame.width)
+        lines = [Line(point_cells(sheet, row, part, sourced=True)) for row in table.rows]
+        grid(frame, frame.book.clean(title), columns, lines)
+    if table.note:
+        frame.y -= 3.0
+        frame.paragraph(table.note, style.QUIET)
+
+
+def point_columns(names: Sequence[str], width: float) -> list[Column]:
+    """Return the columns of a table by point; the same for every table of a sheet."""
+    rest = width - (_LABEL + _SYMBOL + _UNIT + _MARK + _SOURCE)
+    each = min(rest / max(len(names), 1), _WIDEST)
+    label = _LABEL + rest - each * len(names)
+    return [
+        Column("", label),
+        Column("", _SYMBOL, style.QUIET),
+        Column("", _UNIT, style.QUIET),
+        Column("", _MARK, style.QUIET),
+        *(Column(name, each, style.BODY, True) for name in names),
+        Column("", _SOURCE, style.SMALL, True),
+    ]
+
+
+def point_cells(
+    sheet: Sheet, row: Row, part: slice, sourced: bool = False, bold: bool = False
+) -> list[str | Text]:
+    """Return the cells of a row by point; the origin stands in each cell only where it varies."""
+    origins = row.origins
+    mixed = len(origins) > 1
+    shared = len(row.cells) == 1  # a value that does not depend on the point stands at each
+    shown = row.cells * (part.stop - part.start) if shared else row.cells[part]
+    texts = [_cell(cell, mixed) for cell in shown]
+    look = style.STRONG if bold else style.BODY
+    return [
+        Text(f"{row.label} ({row.note})" if row.note else row.label, look),
+        row.symbol,
+        row.unit,
+        "" if mixed else marks(origins),
+        *(Text(text, look) for text in texts),
+        numbers(sheet, row.source) if sourced else "",
+    ]
+
+
+def _cell(cell: Cell, mixed: bool) -> str:
+    return f"{marks((cell.origin,))} {cell.text}" if mixed and cell.origin else cell.text
+
+
+def singles(frame: Frame, sheet: Sheet, tables: Sequence[Table]) -> None:
+    """Set the tables of single values in two columns, each table into the emptier one."""
+    wide = (frame.width - style.GUTTER) / 2.0
+    columns = [
+        Frame(frame.book, frame.x + place * (wide + style.GUTTER), wide, frame.index, frame.y)
+        for place in range(2)
+    ]
+    for table in tables:
+        column = min(columns, key=lambda one: (one.index, -one.y))
+        grid(column, table.title, _single_columns(wide), _single_lines(sheet, table.rows))
+    lowest = max(columns, key=lambda one: (one.index, -one.y))
+    frame.index, frame.y = lowest.index, lowest.y
+
+
+def _single_columns(width: float) -> list[Column]:
+    rest = width - _MARK - _SOURCE
+    return [
+        Column("", _MARK, style.QUIET),
+        Column("", rest * 0.57),
+        Column("", rest * 0.43),
+        Column("", _SOURCE, style.SMALL, True),
+    ]
+
+
+def _single_lines(sheet: Sheet, rows: Sequence[Row]) -> list[Line]:
+    return [
+        Line(
+            [
+                marks(row.origins),
+                f"{row.label}  {row.symbol}".rstrip(),
+                f"{row.text} ({row.note})" if row.note else row.text,
+                numbers(sheet, row.source),
+            ]
+        )
+        for row in rows
+    ]
+
+
+def findings(frame: Frame, sheet: Sheet) -> None:
+    """Set the findings, worst first, each with its badge."""
+    rest = frame.width - 54.0 - 108.0 - _SOURCE
+    columns = [
+        Column("", 54.0),
+        Column("What is wrong and how to mend it", rest),
+        Column("Where", 108.0, style.QUIET),
+        Column("", _SOURCE, style.SMALL, True),
+    ]
+    grid(frame, "Findings", columns, [_finding(sheet, row) for row in sheet.findings])
+
+
+def _finding(sheet: Sheet, row: FindingRow) -> Line:
+    said = f"{row.message}\n{row.reserve}." if row.reserve else row.message
+    where = "\n".join(text for text in (row.point, row.field, row.code) if text)
+    return Line(["", said, where, numbers(sheet, row.source)], _badge(row.level))
+
+
+def _badge(level: Level) -> Ornament:
+    def draw(page: Page, x: float, y: float, _: float) -> None:
+        head.badge(page, x, y - 13.0, level)
+
+    return draw
+
+
+def limits(frame: Frame, sheet: Sheet) -> None:
+    """Set every limit looked at with value, bounds, verdict and reserve."""
+    rest = frame.width - (66.0 + 58.0 + 92.0 + 44.0 + 46.0 + 64.0 + _SOURCE)
+    columns = [
+        Column("Limit", rest),
+        Column("Tightest at", 66.0, style.QUIET),
+        Column("Value", 58.0, style.BODY, True),
+        Column("Allowed", 92.0, style.BODY),
+        Column("Verdict", 44.0, style.BODY),
+        Column("Reserve", 46.0, style.BODY, True),
+        Column("Flips at", 64.0, style.BODY, True),
+        Column("", _SOURCE, style.SMALL, True),
+    ]
+    grid(frame, "Limits checked", columns, [_limit(sheet, row) for row in sheet.limits])
+    if sheet.limits:
+        frame.y -= 3.0
+        frame.paragraph(
+            "Reserve: by how much the flow (or the driver named) can change before the verdict "
+            "changes; for a limit that does not hold, by how much it must change.",
+            style.QUIET,
+        )
+
+
+def _limit(sheet: Sheet, row: LimitRow) -> Line:
+    allowed = f"{row.allowed} {row.unit}".strip()
+    verdict: str | Text = "holds" if row.holds else Text(row.verdict.upper(), style.STRONG)
+    label = f"{row.label}  {row.symbol}".rstrip()
+    said = label if row.holds else f"{label}: {row.message}"
+    cells = [said, row.point, row.value, allowed, verdict, row.reserve, row.flips]
+    return Line([*cells, numbers(sheet, row.source)])
+
+
+def assumptions(frame: Frame, sheet: Sheet) -> None:
+    """List everything that nobody typed."""
+    columns = [
+        Column("", _MARK, style.QUIET),
+        Column("Nobody stated", 190.0),
+        Column("Assumed", frame.width - 190.0 - _MARK - _SOURCE),
+        Column("", _SOURCE, style.SMALL, True),
+    ]
+    lines = [
+        Line([GLYPHS[Origin.ASSUMED], row.label, _assumed(row), numbers(sheet, row.source)])
+        for row in sheet.assumptions
+    ]
+    grid(frame, "Assumptions", columns, lines)
+
+
+def _assumed(row: Row) -> str:
+    values = dict.fromkeys(cell.text for cell in row.cells if cell.origin is Origin.ASSUMED)
+    return f"{', '.join(values)} {row.unit}".strip()
+
+
+def clauses(frame: Frame, sheet: Sheet) -> None:
+    """Set notes and clauses: heading at the left, sentences at the right."""
+    columns = [
+        Column("", 92.0, style.SUBSECTION),
+        Column("", frame.width - 92.0),
+    ]
+    lines = [
+        Line([clause.title if place == 0 else "", sentence])
+        for clause in sheet.clauses
+        for place, sentence in enumerate(clause.sentences)
+    ]
+    if sheet.remarks:
+        lines.append(Line(["Remarks", sheet.remarks]))
+    grid(frame, "Notes and clauses", columns, lines)
+
+
+def reply(frame: Frame, sheet: Sheet) -> None:
+    """Set what the bidder must state, each with a place to write in."""
+    label, wide = 190.0, frame.width - 190.0 - 60.0
+    columns = [Column("The bidder states", label), Column("", wide), Column("Unit", 60.0)]
+
+    def place(name: str, words: str) -> Ornament:
+        def draw(page: Page, x: float, y: float, high: float) -> None:
+            left, bottom = x + label, y - high + 1.2
+            page.box(left, bottom, wide - 8.0, high - 2.4, edge=style.MIDDLE)
+            frame.book.places.append(
+                Place(name, words, frame.index, left, bottom, left + wide - 8.0, y - 1.2)
+            )
+
+        return draw
+
+    lines = [
+        Line(
+            [Text(item.label, style.BODY), Text("", style.SECTION), item.unit],
+            place(item.key, item.label),
+        )
+        for item in sheet.reply
+    ]
+    grid(frame, "Reply", columns, lines)
+
+
+def revisions(frame: Frame, sheet: Sheet) -> None:
+    """Set the revision block."""
+    columns = [
+        Column("Mark", 40.0, style.STRONG),
+        Column("Date", 66.0),
+        Column("What changed", frame.width - 40.0 - 66.0 - 3 * 58.0),
+        Column("By", 58.0),
+        Column("Checked", 58.0),
+        Column("Approved", 58.0),
+    ]
+    lines = [
+        Line([row.mark, row.date, row.text, row.by, row.checked, row.approved])
+        for row in sheet.revisions
+    ]
+    grid(frame, "Revisions", columns, lines)

@@ -1,0 +1,43 @@
+"""The order of things on the printed sheet."""
+
+from __future__ import annotations
+
+from specsheet.render.pdf import annex, body, document, head, ruler, style
+from specsheet.render.pdf.page import Book, Frame
+from specsheet.sheet.model import Sheet
+
+
+def to_bytes(sheet: Sheet) -> bytes:
+    """Return the sheet as a PDF document; equal sheets give equal bytes."""
+    canvas = document.open_canvas(sheet)
+    book = compose(sheet, canvas._doc)
+    return document.close(canvas, book, sheet)
+
+
+def compose(sheet: Sheet, pdf: object) -> Book:
+    """Return the pages of the sheet, without running heads and feet."""
+    book = Book(pdf, style.PAPERS.get(sheet.paper, style.PAPERS["A4"]))
+    frame = Frame(book, style.SIDE, book.size[0] - 2.0 * style.SIDE, 0, book.top(0))
+    head.band(frame, sheet)
+    head.details(frame, sheet)
+    head.verdict(frame, sheet)
+    if sheet.ruler is not None:
+        ruler.draw(frame, sheet.ruler)
+    head.legend(frame)
+    wide = [table for table in sheet.tables if table.columns]
+    for table in (sheet.points, *wide):
+        body.by_point(frame, sheet, table)
+    body.findings(frame, sheet)
+    body.limits(frame, sheet)
+    body.singles(frame, sheet, [table for table in sheet.tables if not table.columns])
+    if sheet.budget is not None:
+        body.by_point(frame, sheet, sheet.budget)
+    body.clauses(frame, sheet)
+    body.assumptions(frame, sheet)
+    head.cautions(frame, sheet)
+    body.reply(frame, sheet)
+    body.revisions(frame, sheet)
+    if sheet.annex or sheet.sources:
+        frame.turn()
+        annex.draw(frame, sheet)
+    return book

@@ -1,0 +1,194 @@
+"""Pages and frames: where the next thing goes, and the marks a page is made of.
+
+The origin is the lower left corner; y falls as the page fills. Marks are written straight as page
+content, in the order they are made, so equal sheets give equal bytes.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, field
+from typing import Any
+
+from reportlab.lib.rl_accel import escapePDF
+
+from specsheet.render.pdf import fonts, style, wrap
+from specsheet.render.pdf.style import Style
+
+_BOLD_STROKE = 0.035  # of the size: the stroke that makes a regular letter look bold
+
+
+@dataclass(frozen=True, slots=True)
+class Place:
+    """A place that the bidder fills in: page [0..], lower left and upper right corner [pt]."""
+
+    name: str
+    label: str
+    page: int
+    left: float
+    bottom: float
+    right: float
+    top: float
+
+
+@dataclass(frozen=True, slots=True)
+class Heading:
+    """A heading for the outline of the document."""
+
+    title: str
+    page: int
+    top: float
+
+
+class Page:
+    """One page: its content as it is written."""
+
+    def __init__(self, document: Any) -> None:
+        self._document = document
+        self.code: list[str] = []
+
+    def text(self, x: float, y: float, text: str, look: Style) -> None:
+        """Set one line with its left end at x and its baseline at y."""
+        if not text:
+            return
+        bold = f"2 Tr {look.size * _BOLD_STROKE:.3f} w {look.colour} RG" if look.bold else "0 Tr"
+        parts = [f"BT {look.colour} rg {bold} 1 0 0 1 {x:.2f} {y:.2f} Tm"]
+        font = fonts.font()
+        for subset, chunk in font.splitString(text, self._document):
+            name = font.getSubsetInternalName(subset, self._document)
+            parts.append(f"{name} {look.size:g} Tf ({escapePDF(chunk)}) Tj")
+        parts.append("ET")
+        self.code.append(" ".join(parts))
+
+    def right(self, x: float, y: float, text: str, look: Style) -> None:
+        """Set one line with its right end at x."""
+        self.text(x - fonts.width(text, look.size), y, text, look)
+
+    def middle(self, x: float, y: float, text: str, look: Style) -> None:
+        """Set one line with its middle at x."""
+        self.text(x - fonts.width(text, look.size) / 2.0, y, text, look)
+
+    def line(
+        self, x1: float, y1: float, x2: float, y2: float, colour: str, thick: float = 0.5
+    ) -> None:
+        """Draw a straight line."""
+        self.code.append(f"{colour} RG {thick:g} w {x1:.2f} {y1:.2f} m {x2:.2f} {y2:.2f} l S")
+
+    def box(
+        self, x: float, y: float, wide: float, high: float, fill: str = "", edge: str = ""
+    ) -> None:
+        """Draw a rectangle from its lower left corner, filled, edged or both."""
+        paint = "B" if fill and edge else "f" if fill else "S"
+        colours = (f"{fill} rg " if fill else "") + (f"{edge} RG 0.6 w " if edge else "")
+        self.code.append(f"{colours}{x:.2f} {y:.2f} {wide:.2f} {high:.2f} re {paint}")
+
+    def shape(self, corners: list[tuple[float, float]], fill: str, edge: str = "") -> None:
+        """Draw a closed polygon."""
+        path = " ".join(
+            f"{x:.2f} {y:.2f} {'m' if place == 0 else 'l'}" for place, (x, y) in enumerate(corners)
+        )
+        colours = f"{fill} rg " + (f"{edge} RG 0.8 w " if edge else "")
+        self.code.append(f"{colours}{path} h {'B' if edge else 'f'}")
+
+
+@dataclass
+class Book:
+    """The pages of one document.
+
+    Attributes:
+        document: the PDF document that the pages are written into.
+        size: width and height of the paper [pt].
+        pages: so far; made on demand.
+        headings: for the outline.
+        places: what the bidder fills in.
+        missing: characters without a glyph, in the order met.
+    """
+
+    document: Any
+    size: tuple[float, float]
+    pages: list[Page] = field(default_factory=list)
+    headings: list[Heading] = field(default_factory=list)
+    places: list[Place] = field(default_factory=list)
+    missing: dict[str, None] = field(default_factory=dict)
+
+    def page(self, index: int) -> Page:
+        """Return a page, made with all pages before it where it is new."""
+        while len(self.pages) <= index:
+            self.pages.append(Page(self.document))
+        return self.pages[index]
+
+    def top(self, index: int) -> float:
+        """Return where the text of a page starts."""
+        return self.size[1] - style.TOP - (style.RUNNING_HEAD if index else 0.0)
+
+    def clean(self, text: str) -> str:
+        """Return a text that can be printed; what had to be replaced is remembered."""
+        printable, missing = fonts.printable(text)
+        self.missing.update(dict.fromkeys(missing))
+        return printable
+
+
+@dataclass
+class Frame:
+    """A column of the book that fills from the top and goes on overleaf.
+
+    Attributes:
+        book: the book.
+        x, width: left edge and width [pt].
+        index: page.
+        y: where the next thing starts.
+    """
+
+    book: Book
+    x: float
+    width: float
+    index: int
+    y: float
+
+    @property
+    def page(self) -> Page:
+        """The page the frame stands on."""
+        return self.book.page(self.index)
+
+    @property
+    def room(self) -> float:
+        """Height left on this page."""
+        return self.y - style.FOOT
+
+    @property
+    def full(self) -> float:
+        """Height of an empty page after the first."""
+        return self.book.top(1) - style.FOOT
+
+    def turn(self) -> None:
+        """Go on overleaf."""
+        self.index += 1
+        self.y = self.book.top(self.index)
+        self.book.page(self.index)
+
+    def keep(self, height: float) -> bool:
+        """Turn the page where ``height`` does not fit; tell whether it was turned."""
+        if height <= self.room or self.y == self.book.top(self.index):
+            return False
+        self.turn()
+        return True
+
+    def skip(self, height: float) -> None:
+        """Leave a gap, none at the top of a page."""
+        if self.y != self.book.top(self.index):
+            self.y -= height
+
+    def heading(self, title: str) -> None:
+        """Set a section heading with its rule and put it into the outline."""
+        look = style.SECTION
+        self.book.headings.append(Heading(title, self.index, self.y))
+        self.page.text(self.x, self.y - look.size, title, look)
+        below = self.y - look.size - 4.0
+        self.page.line(self.x, below, self.x + self.width, below, style.ACCENT, 0.8)
+        self.y = below - 2.0
+
+    def paragraph(self, text: str, look: Style, indent: float = 0.0) -> None:
+        """Set wrapped text, line by line and overleaf where the page is full."""
+        for line in wrap.lines(self.book.clean(text), self.width - indent, look.size):
+            self.keep(look.leading)
+            self.page.text(self.x + indent, self.y - look.size, line, look)
+            self.y -= look.leading
