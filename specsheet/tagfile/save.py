@@ -45,10 +45,10 @@ def stamp(path: str | Path) -> Stamp | None:
     return Stamp(status.st_mtime_ns, status.st_size, status.st_ino)
 
 
-def save(path: str | Path, text: str) -> Stamp:
-    """Replace a file by ``text`` (UTF-8, line ends as they are), atomically; return its stamp.
+def save(path: str | Path, content: str | bytes) -> Stamp:
+    """Replace a file by bytes, or by text (UTF-8, line ends as they are); return its stamp.
 
-    The text is written beside the file, flushed to the disk and moved into its place, so that a
+    The content is written beside the file, flushed to the disk and moved into its place, so that a
     reader sees the old file or the new one and a failure leaves the old one. A symbolic link stays
     one (its target is replaced) and the mode of the file is kept.
 
@@ -58,7 +58,7 @@ def save(path: str | Path, text: str) -> Stamp:
     try:
         target = Path(os.path.realpath(path))
         mode = _mode(target)
-        _replace(target, text.encode("utf-8"), mode)
+        _replace(target, content if isinstance(content, bytes) else content.encode(), mode)
     except OSError as error:
         reason = _REASONS.get(error.errno or 0, error.strerror or str(error))
         raise SaveError(f"{path} was not saved: {reason}") from error
