@@ -8,6 +8,8 @@ straight = number "D"   |  a length with its unit
 from __future__ import annotations
 
 import re
+from bisect import bisect
+from collections.abc import Iterable
 
 from specsheet.quantity.lookalike import plain, tidy
 from specsheet.quantity.parse import NUMBER, parse
@@ -63,9 +65,12 @@ SIZES: dict[int, str] = {
 }
 
 
+_INCHES = re.compile(r"(?:([0-9]+)(?:[ -]+|$))?(?:([0-9]+)/([1-9][0-9]*))?")
+
+
 def _inches(text: str) -> float | None:
     """Return "1 1/2", "1-1/2", "3/4" or "1.5" as a number, or None."""
-    match = re.fullmatch(r"(?:([0-9]+)(?:[ -]+|$))?(?:([0-9]+)/([1-9][0-9]*))?", text)
+    match = _INCHES.fullmatch(text)
     if match is not None and text:
         whole, top, bottom = match.groups()
         return int(whole or 0) + (int(top) / int(bottom) if top else 0.0)
@@ -76,7 +81,7 @@ _DN = re.compile(r"dn ?([0-9]+)", re.IGNORECASE)
 _NPS = re.compile(r"(nps ?)?([0-9./ -]*[0-9])( ?(?:in|inch|inches|\"))?", re.IGNORECASE)
 _STRAIGHT = re.compile(rf"({NUMBER}) ?(?:x ?)?D")
 _DIAMETERS = re.compile(rf"({NUMBER}) ?(?:d|DN|ID|diameters?|pipe diameters)")
-_BY_INCHES = {_inches(nps): dn for dn, nps in SIZES.items()}
+_BY_INCHES = {inches: dn for dn, nps in SIZES.items() if (inches := _inches(nps)) is not None}
 
 
 def parse_size(text: str) -> NominalSize | Refusal:
@@ -95,8 +100,7 @@ def parse_size(text: str) -> NominalSize | Refusal:
         return _refuse_bare(echo, inches)
     dn = _BY_INCHES.get(inches)
     if dn is None:
-        near = sorted(_BY_INCHES, key=lambda known: abs((known or 0.0) - inches))[:2]
-        write = tuple(f"NPS {SIZES[_BY_INCHES[known]]}" for known in near)
+        write = tuple(f"NPS {SIZES[_BY_INCHES[known]]}" for known in _around(_BY_INCHES, inches))
         return _size_refusal(echo, f"NPS {match[2].strip()} is no listed size", write)
     return NominalSize(dn, SIZES[dn], echo)
 
@@ -104,10 +108,15 @@ def parse_size(text: str) -> NominalSize | Refusal:
 def _listed(dn: int, echo: str) -> NominalSize | Refusal:
     if dn in SIZES:
         return NominalSize(dn, SIZES[dn], echo)
-    near = sorted(SIZES, key=lambda known: abs(known - dn))[:2]
-    return _size_refusal(
-        echo, f"DN {dn} is no listed size", tuple(f"DN {known}" for known in sorted(near))
-    )
+    write = tuple(f"DN {known:g}" for known in _around(SIZES, dn))
+    return _size_refusal(echo, f"DN {dn} is no listed size", write)
+
+
+def _around(known: Iterable[float], wanted: float) -> list[float]:
+    """Return the next smaller and the next larger of the known sizes."""
+    sizes = sorted(known)
+    place = bisect(sizes, wanted)
+    return sizes[max(place - 1, 0) : place + 1]
 
 
 def _refuse_bare(echo: str, inches: float) -> Refusal:
