@@ -1,0 +1,33 @@
+"""A job: a folder with ``job.toml``, its tags in ``tags/`` and the replies in ``offers/``.
+
+* :func:`open_job`  a folder, ``job.toml`` or a tag file -> :class:`JobFolder`
+* :func:`scan`      files and folders -> every tag file in them, read, each job read once
+* :func:`current_revision`, :func:`next_mark`  where a document stands
+* :func:`file_stem` the name of the file of a tag
+"""
+
+from specsheet.job.folder import (
+    OFFERS,
+    TAGS,
+    JobFolder,
+    TagFile,
+    file_stem,
+    natural_order,
+    open_job,
+)
+from specsheet.job.revisions import current_revision, next_mark
+from specsheet.job.scan import Scan, scan
+
+__all__ = [
+    "OFFERS",
+    "TAGS",
+    "JobFolder",
+    "Scan",
+    "TagFile",
+    "current_revision",
+    "file_stem",
+    "natural_order",
+    "next_mark",
+    "open_job",
+    "scan",
+]

@@ -84,13 +84,20 @@ class Collector:
         known = (*keys, *beside)
         home = next((name for name, group in self._sections.items() if key in group), None)
         if home is not None and not nearest(key, known):
-            where = f"[{home}]" if home else "the top of the file, above all sections"
-            hint = f"it belongs to {where}"
+            hint = f"it belongs to {_home(home)}"
         elif known:
             hint = did_you_mean(key, known)
         else:
             hint = "nothing is known here"
         self.add((*place, key), join(field, key), f"unknown entry; {hint}")
+
+
+def _home(section: str) -> str:
+    """Return words for the place of a section in its file."""
+    if section in ("", "job"):
+        return "the top of the file, above all sections"
+    name = section.removeprefix("job.")
+    return f"[[{name}]]" if name in ("points", "revisions") else f"[{name}]"
 
 
 def blank(value: object) -> bool:

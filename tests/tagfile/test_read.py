@@ -215,7 +215,7 @@ ONE_PROBLEM = [
     ('"for inquiry"', "[]", 5, "status", "a list came"),
     ("service =", "servce =", 3, "servce", 'did you mean "service"?'),
     ("[design]", "[desing]", 31, "desing", 'did you mean "design"?'),
-    ("schedule =", "flow =", 15, "line.flow", "it belongs to [points]"),
+    ("schedule =", "flow =", 15, "line.flow", "it belongs to [[points]]"),
     ("schedule =", "qwxz =", 15, "line.qwxz", "known: size, schedule"),
     ('size = "size it"', 'bluf_width = "1 mm"', 35, "meter.bluf_width", '"bluff_width"'),
     ('"DN 150"', '"150"', 14, "line.size", ""),

@@ -1,0 +1,133 @@
+"""The folder of a job, and the tag files in it."""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Iterable
+from dataclasses import dataclass, replace
+from pathlib import Path
+
+from specsheet import tagfile
+from specsheet.tagfile import JOB_FILE, Job, Problem, Reading
+
+TAGS = "tags"
+OFFERS = "offers"
+
+_DIGITS = re.compile(r"(\d+)", re.ASCII)
+_UNSAFE = re.compile(r"[^A-Za-z0-9._-]+")
+
+
+@dataclass(frozen=True, slots=True)
+class TagFile:
+    """One tag file as it was read."""
+
+    path: Path
+    reading: Reading
+
+    @property
+    def name(self) -> str:
+        """The tag number; the name of the file where that could not be read."""
+        tag = self.reading.tag
+        return (tag.name if tag else "") or self.path.stem
+
+
+@dataclass(frozen=True, slots=True)
+class JobFolder:
+    """A job as it stands on the disk.
+
+    Attributes:
+        folder: the folder of the job; of the file, for a tag file that stands alone.
+        job: what ``job.toml`` states, with its problems; NO_JOB where there is none.
+        paths: the tag files, FT-2 before FT-10.
+        problems: what is wrong with the folder as such.
+    """
+
+    folder: Path
+    job: Job
+    paths: tuple[Path, ...]
+    problems: tuple[Problem, ...] = ()
+
+    def read(self) -> tuple[TagFile, ...]:
+        """Read every tag file. A tag number that a file before it has too is a problem."""
+        files = (TagFile(path, tagfile.load(path, self.job)) for path in self.paths)
+        return with_duplicates(files)
+
+    def find(self, name: str) -> TagFile | None:
+        """Return the file of a tag number, upper and lower case alike; None where none has it."""
+        wanted = name.casefold()
+        return next((file for file in self.read() if file.name.casefold() == wanted), None)
+
+    def offers(self, name: str) -> Path:
+        """Return the folder in which the replies for a tag are kept (it need not exist)."""
+        return self.folder / OFFERS / file_stem(name)
+
+
+def open_job(path: str | Path) -> JobFolder:
+    """Return the job at ``path``: its folder, its ``job.toml``, or one tag file.
+
+    A folder holds its tags in ``tags/``, or itself where there is no such folder. Nothing that
+    stands at ``path`` raises.
+    """
+    path = Path(path)
+    if path.name == JOB_FILE and not is_folder(path):
+        path = path.parent
+    elif not is_folder(path):
+        return JobFolder(path.parent, tagfile.find_job(path), (path,))
+    # the job of a folder is found as for a file in it, so that tags/ knows the job above
+    job = tagfile.find_job(path / JOB_FILE)
+    tags = path / TAGS if is_folder(path / TAGS) else path
+    try:
+        found = [item for item in tags.iterdir() if _is_tag_file(item)]
+    except OSError as error:
+        message = f"the folder cannot be listed: {error.strerror}"
+        return JobFolder(path, job, (), (Problem(str(tags), 1, "file", message),))
+    home = Path(job.folder) if job.folder else path
+    return JobFolder(home, job, tuple(sorted(found, key=lambda item: natural_order(item.name))))
+
+
+def with_duplicates(files: Iterable[TagFile]) -> tuple[TagFile, ...]:
+    """Return the files, a problem added to each whose tag number an earlier one has."""
+    first: dict[str, Path] = {}
+    found: list[TagFile] = []
+    for file in files:
+        tag = file.reading.tag
+        key = tag.name.casefold() if tag else ""
+        if key and key in first:
+            message = f'{first[key]} is tag "{file.name}" already; each tag needs its own number'
+            problem = Problem(str(file.path), 1, "tag", message)
+            problems = (*file.reading.problems, problem)
+            file = replace(file, reading=replace(file.reading, problems=problems))
+        elif key:
+            first[key] = file.path
+        found.append(file)
+    return tuple(found)
+
+
+def natural_order(name: str) -> tuple[tuple[int, str], ...]:
+    """Return a key that sorts names as people count: FT-2 before FT-10, a before B."""
+    parts = _DIGITS.split(name.casefold())
+    # every second part is a number; one of more than 18 digits counts by its first
+    return tuple(
+        (int(part[:18]), part) if place % 2 else (-1, part) for place, part in enumerate(parts)
+    )
+
+
+def file_stem(tag: str) -> str:
+    """Return the name, without its ending, of the file or folder of a tag.
+
+    Only letters, digits, full stop, hyphen and underscore are kept, so that a tag number can
+    neither leave its folder nor be a name that some system refuses.
+    """
+    return _UNSAFE.sub("-", tag).strip(".-")[:100] or "tag"
+
+
+def is_folder(path: Path) -> bool:
+    """Tell whether a folder stands at ``path``, whatever its name."""
+    try:
+        return path.is_dir()
+    except (OSError, ValueError):
+        return False
+
+
+def _is_tag_file(path: Path) -> bool:
+    return path.suffix == ".toml" and path.name != JOB_FILE and not path.name.startswith(".")
