@@ -7,7 +7,7 @@ from collections.abc import Mapping
 from datetime import date
 
 from specsheet.fields import TERMS, entry
-from specsheet.findings import Level
+from specsheet.findings import Level, Origin
 from specsheet.quantity.value import Quantity
 from specsheet.sheet.model import NOTHING
 
@@ -17,6 +17,10 @@ LEVELS = {
     Level.CAUTION: ("caution", "cautions"),
     Level.NOTE: ("note", "notes"),
 }
+
+#: mark of each origin, the same in every output, and the line that explains them
+MARKS = {Origin.GIVEN: "●", Origin.DERIVED: "○", Origin.ASSUMED: "□", Origin.TYPICAL: "◊"}
+LEGEND = "● given   ○ derived   □ assumed   ◊ typical, for the bidder to confirm"
 
 _NUMBER = re.compile(r"([-+−]?\d[\d .\u00a0\u202f]*(?:[eE][-+]?\d+)?)\s*(.*)", re.DOTALL)
 _WATER = re.compile(r"H2O")

@@ -10,9 +10,7 @@ from specsheet.render.pdf import head, style
 from specsheet.render.pdf.grid import Column, Line, Ornament, Text, grid
 from specsheet.render.pdf.page import Frame, Page, Place
 from specsheet.sheet.model import Cell, FindingRow, LimitRow, Row, Sheet, Table
-
-#: a small glyph for each origin; the legend explains them
-GLYPHS = {Origin.GIVEN: "●", Origin.DERIVED: "○", Origin.ASSUMED: "□", Origin.TYPICAL: "◊"}
+from specsheet.sheet.words import MARKS
 
 _LABEL, _SYMBOL, _UNIT, _MARK, _SOURCE = 148.0, 36.0, 58.0, 13.0, 30.0
 _NARROWEST, _WIDEST = 52.0, 84.0
@@ -20,7 +18,7 @@ _NARROWEST, _WIDEST = 52.0, 84.0
 
 def marks(origins: Iterable[Origin]) -> str:
     """Return the glyphs of the origins."""
-    return "".join(GLYPHS[origin] for origin in origins)
+    return "".join(MARKS[origin] for origin in origins)
 
 
 def numbers(sheet: Sheet, source: str) -> str:
@@ -196,7 +194,7 @@ def assumptions(frame: Frame, sheet: Sheet) -> None:
         Column("", _SOURCE, style.SMALL, True),
     ]
     lines = [
-        Line([GLYPHS[Origin.ASSUMED], row.label, _assumed(row), numbers(sheet, row.source)])
+        Line([MARKS[Origin.ASSUMED], row.label, _assumed(row), numbers(sheet, row.source)])
         for row in sheet.assumptions
     ]
     grid(frame, "Assumptions", columns, lines)

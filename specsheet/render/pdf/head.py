@@ -7,12 +7,10 @@ from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.page import Frame, Page
 from specsheet.render.pdf.style import Style
 from specsheet.sheet.model import Sheet
+from specsheet.sheet.words import LEGEND
 
 _COLUMNS = 4
 _BADGE = 44.0
-
-#: glyph of each origin, the same in every renderer
-LEGEND = "● given    ○ derived    □ assumed    ◊ typical, for the bidder to confirm"
 
 
 def band(frame: Frame, sheet: Sheet) -> None:
@@ -113,7 +111,7 @@ def badge(page: Page, x: float, y: float, level: Level | None) -> None:
 def legend(frame: Frame) -> None:
     """Explain the marks of origin and the numbers of the sources."""
     frame.skip(4.0)
-    frame.paragraph(f"{LEGEND}    [1] number of the source in the list at the end", style.QUIET)
+    frame.paragraph(f"{LEGEND}   [1] number of the source in the list at the end", style.QUIET)
 
 
 def cautions(frame: Frame, sheet: Sheet) -> None:

@@ -1,0 +1,89 @@
+"""The JSON of one evaluation: SI numbers under the glossary's keys (schema 1).
+
+Scripts depend on this form. A value that does not exist has no key: there is no null and no NaN.
+"""
+
+from __future__ import annotations
+
+import json
+import math
+from collections.abc import Mapping
+from typing import TYPE_CHECKING, Any
+
+from specsheet.fields import KINDS, TERMS
+from specsheet.findings import Finding
+from specsheet.sheet.rows import ordered
+
+if TYPE_CHECKING:
+    from specsheet.evaluate.result import Evaluation, Result
+
+SCHEMA = 1
+
+
+def text(evaluation: Evaluation) -> str:
+    """Return the JSON text, ended by a line break."""
+    made = json.dumps(document(evaluation), ensure_ascii=False, indent=2, allow_nan=False)
+    return f"{made}\n"
+
+
+def document(evaluation: Evaluation) -> dict[str, Any]:
+    """Return the JSON document as plain Python data."""
+    return {
+        "schema": SCHEMA,
+        "tag": evaluation.tag.name,
+        "family": evaluation.tag.family,
+        "points": [
+            {"name": point.name, "values": _values(point.values)} for point in evaluation.points
+        ],
+        "element": _values(evaluation.element),
+        "base": _values(evaluation.base),
+        "fluid": _values(evaluation.fluid),
+        "line": _values(evaluation.line),
+        "summary": _values(evaluation.summary),
+        "findings": [_finding(finding) for finding in evaluation.findings],
+    }
+
+
+def _values(values: Mapping[str, Result]) -> dict[str, Any]:
+    made = {key: _value(key, values[key]) for key in ordered(values)}
+    return {key: value for key, value in made.items() if value is not None}
+
+
+def _value(key: str, result: Result) -> dict[str, Any] | None:
+    held: dict[str, Any]
+    if isinstance(result.value, str):
+        held = {"value": result.value, "unit": ""}
+    elif math.isfinite(result.value):
+        held = {"value": float(result.value), "unit": si_unit(key)}
+    else:
+        return None
+    held["origin"] = str(result.origin)
+    if result.source:
+        held["source"] = result.source
+    return held
+
+
+def si_unit(key: str) -> str:
+    """Return the SI unit of a term's value; "1" for a plain number."""
+    kind = TERMS[key].kind if key in TERMS else "dimensionless"
+    return KINDS[kind].si if kind in KINDS else "1"
+
+
+def _finding(finding: Finding) -> dict[str, Any]:
+    held: dict[str, Any] = {
+        "level": str(finding.level),
+        "code": finding.code,
+        "field": finding.field,
+        "point": finding.point,
+        "message": finding.message,
+        "source": finding.source,
+    }
+    reserve = finding.reserve
+    if reserve and math.isfinite(reserve.at) and math.isfinite(reserve.fraction):
+        held["reserve"] = {
+            "driver": reserve.driver,
+            "at": float(reserve.at),
+            "unit": si_unit(reserve.driver),
+            "fraction": float(reserve.fraction),
+        }
+    return held
