@@ -1,6 +1,6 @@
 """A job: a folder with ``job.toml``, its tags in ``tags/`` and the replies in ``offers/``.
 
-* :func:`open_job`  a folder, ``job.toml`` or a tag file -> :class:`JobFolder`
+* :func:`open`      a folder, ``job.toml`` or a tag file -> :class:`JobFolder`
 * :func:`scan`      files and folders -> every tag file in them, read, each job read once
 * :func:`current_revision`, :func:`next_mark`  where a document stands
 * :func:`file_stem` the name of the file of a tag
@@ -13,8 +13,8 @@ from specsheet.job.folder import (
     TagFile,
     file_stem,
     natural_order,
-    open_job,
 )
+from specsheet.job.folder import open_job as open
 from specsheet.job.revisions import current_revision, next_mark
 from specsheet.job.scan import Scan, scan
 
@@ -28,6 +28,6 @@ __all__ = [
     "file_stem",
     "natural_order",
     "next_mark",
-    "open_job",
+    "open",
     "scan",
 ]

@@ -8,7 +8,7 @@ from pathlib import Path
 
 from specsheet import tagfile
 from specsheet.job.folder import JobFolder, TagFile, is_folder, open_job, with_duplicates
-from specsheet.tagfile import Job, Problem
+from specsheet.tagfile import Job, Problem, Reading
 
 
 @dataclass(frozen=True, slots=True)
@@ -22,6 +22,10 @@ class Scan:
 
     files: tuple[TagFile, ...]
     problems: tuple[Problem, ...]
+
+    def readings(self) -> tuple[Reading, ...]:
+        """Return the readings of all files, in order."""
+        return tuple(file.reading for file in self.files)
 
     @property
     def all_problems(self) -> tuple[Problem, ...]:

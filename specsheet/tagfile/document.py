@@ -7,15 +7,14 @@ change anything else unseen.
 from __future__ import annotations
 
 import copy
-import json
 from collections.abc import Callable
 from datetime import date
 from typing import Any
 
-from specsheet.fields import SECTIONS, Entry
-from specsheet.quantity.value import Refusal
+from specsheet.fields import SECTIONS
 from specsheet.tagfile import edit
-from specsheet.tagfile.known import job_sections, tag_sections
+from specsheet.tagfile.data import at, drop, put, same
+from specsheet.tagfile.leaf import entry_of, shown, typed
 from specsheet.tagfile.literal import value_text
 from specsheet.tagfile.migrate import CURRENT, renames
 from specsheet.tagfile.problem import Problem
@@ -23,11 +22,8 @@ from specsheet.tagfile.read import point_name
 from specsheet.tagfile.source import BOM
 from specsheet.tagfile.spans import Place, scan
 from specsheet.tagfile.syntax import parse, schema_of
-from specsheet.tagfile.values import is_number, to_toml
-from specsheet.tagfile.words import Number, number_text
 
 _ORDER = tuple(section.key for section in SECTIONS if section.key)
-_TABLE_KINDS = ("fractions", "units")
 
 
 class EditError(Exception):
@@ -37,6 +33,10 @@ class EditError(Exception):
 class Document:
     """The text of a file, edited by path ("line.size", "points.minimum.flow").
 
+    A point goes by its name, or by its number (from 1) where no point has that name; so the
+    second of two points of one name can be reached. Revisions go by number ("revisions.1.mark"),
+    the entries of ``job.toml`` by "job." ("job.base.pressure").
+
     Raises:
         EditError: the text is no TOML, or an edit cannot be made.
         KeyError: a path names an operating point that is not there.
@@ -45,7 +45,7 @@ class Document:
     def __init__(self, text: str) -> None:
         self._bom = BOM if text.startswith(BOM) else ""
         text = text.removeprefix(BOM)
-        self._crlf = "\r\n" in text
+        self._crlf = 0 < text.count("\n") == text.count("\r\n")
         self._text = text
         self._data = _parsed(text)
 
@@ -62,7 +62,7 @@ class Document:
 
     def get_text(self, path: str) -> str:
         """Return an entry as text, as a form shows it; "" where it is not stated."""
-        return _shown(self._at(self._place(path)))
+        return shown(at(self._data, self._place(path)))
 
     def set(self, path: str, text: str) -> None:
         """State ``text`` under an entry; a blank text removes it.
@@ -74,8 +74,7 @@ class Document:
             self.unset(path)
             return
         place = self._place(path)
-        entry = self._entry(path)
-        value = self._value(entry, path, text, self._at(place))
+        value = typed(entry_of(path, self._family()), path, text, at(self._data, place))
         if isinstance(value, dict) and place not in scan(self._text).values:
             self._set_table(place, value)
         else:
@@ -139,32 +138,9 @@ class Document:
 
     # -- how -------------------------------------------------------------------------------
 
-    def _value(self, entry: Entry | None, path: str, text: str, old: Any) -> Any:
-        leaf = entry is not None and entry.kind in _TABLE_KINDS and path != entry.path
-        number = leaf or isinstance(old, float | int)
-        plain = entry is None or leaf or entry.kind == "dimensionless"
-        if plain and number and not isinstance(old, bool) and is_number(text):
-            typed = text.strip()
-            return int(typed) if typed.lstrip("+-").isdigit() else Number(typed)
-        if plain or entry is None:
-            return text
-        value = to_toml(entry, text)
-        return text if isinstance(value, Refusal) else value
-
-    def _entry(self, path: str) -> Entry | None:
-        """Return the entry that a path, or the table around its last part, belongs to."""
+    def _family(self) -> str:
         family = self._data.get("family")
-        family = family if isinstance(family, str) else ""
-        parts = path.split(".")
-        if parts[0] in ("points", "revisions"):
-            return tag_sections(family)[parts[0]].get(parts[-1])
-        groups = job_sections() if parts[0] == "job" else tag_sections(family)
-        for length in (len(parts), len(parts) - 1):
-            section, _, key = ".".join(parts[:length]).rpartition(".")
-            found = groups.get(section, {}).get(key)
-            if found and (length == len(parts) or found.kind in _TABLE_KINDS):
-                return found
-        return None
+        return family if isinstance(family, str) else ""
 
     def _place(self, path: str) -> Place:
         parts = path.split(".")
@@ -181,33 +157,26 @@ class Document:
         return points if isinstance(points, list) else []
 
     def _point(self, name: str) -> int:
-        try:
-            return self.point_names().index(name)
-        except ValueError:
-            raise KeyError(f"there is no operating point {name}") from None
-
-    def _at(self, place: Place) -> Any:
-        found: Any = self._data
-        for part in place:
-            try:
-                found = found[part]
-            except (KeyError, IndexError, TypeError):
-                return None
-        return found
+        names = self.point_names()
+        if name in names:
+            return names.index(name)
+        if name.isascii() and name.isdigit() and 0 < int(name) <= len(names):
+            return int(name) - 1
+        raise KeyError(f"there is no operating point {name}")
 
     def _set(self, place: Place, value: Any) -> None:
         stated = place in scan(self._text).values
         if stated:
             text = edit.replace_value(self._text, place, value)
-        elif isinstance(self._at(place[:-1]), dict | None):
+        elif isinstance(at(self._data, place[:-1]), dict | None):
             text = edit.insert_value(self._text, place, value, _ORDER)
         else:
             raise EditError(f"{_path(place[:-1])} is no section; mend the file by hand first")
-        self._apply(text, lambda data: _put(data, place, value))
+        self._apply(text, lambda data: put(data, place, value))
 
     def _set_table(self, place: Place, value: dict[str, Any]) -> None:
         """Set a table that stands as a section of its own, or not at all."""
-        old = self._at(place)
+        old = at(self._data, place)
         if not isinstance(old, dict):
             self._set(place, value)
             return
@@ -217,14 +186,14 @@ class Document:
             self._unset((*place, key))
 
     def _unset(self, place: Place) -> None:
-        value = self._at(place)
+        value = at(self._data, place)
         if value is None:
             return
         if isinstance(value, dict) and place not in scan(self._text).values:
             for key in list(value):
                 self._unset((*place, key))
             return
-        self._apply(edit.remove(self._text, place), lambda data: _drop(data, place))
+        self._apply(edit.remove(self._text, place), lambda data: drop(data, place))
 
     def _rename(self, place: Place, key: str) -> None:
         def change(data: Any) -> None:
@@ -266,7 +235,7 @@ class Document:
         expected = copy.deepcopy(self._data)
         change(expected)
         found = _parsed(text)
-        if _normal(_pruned(found)) != _normal(_pruned(expected)):
+        if not same(found, expected):
             raise EditError("this layout cannot be edited here; mend the file by hand first")
         self._text, self._data = text, found
 
@@ -278,41 +247,5 @@ def _parsed(text: str) -> dict[str, Any]:
     return data
 
 
-def _put(data: Any, place: Place, value: Any) -> None:
-    for part in place[:-1]:
-        data = data[part] if isinstance(part, int) else data.setdefault(part, {})
-    data[place[-1]] = value
-
-
-def _drop(data: Any, place: Place) -> None:
-    for part in place[:-1]:
-        data = data[part]
-    del data[place[-1]]
-
-
-def _pruned(data: Any) -> Any:
-    """Return data without empty tables: removing the last entry may remove its table."""
-    if not isinstance(data, dict):
-        return data
-    pruned = {key: _pruned(value) for key, value in data.items()}
-    return {key: value for key, value in pruned.items() if value != {}}
-
-
-def _normal(data: Any) -> str:
-    return json.dumps(data, sort_keys=True, default=str)
-
-
 def _path(place: Place) -> str:
     return ".".join(str(part) for part in place)
-
-
-def _shown(value: Any) -> str:
-    if value is None:
-        return ""
-    if isinstance(value, list) and all(isinstance(v, str) and "," not in v for v in value):
-        return ", ".join(value)
-    if isinstance(value, dict):
-        return value_text(value)[2:-2]
-    if isinstance(value, str):
-        return value
-    return number_text(value) if isinstance(value, float) else value_text(value)

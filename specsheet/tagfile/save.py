@@ -23,7 +23,7 @@ _REASONS = {
 }
 
 
-class SaveError(Exception):
+class SaveError(OSError):
     """A file could not be saved. What stood there before is untouched; the message says why."""
 
 
@@ -59,6 +59,8 @@ def save(path: str | Path, content: str | bytes) -> Stamp:
         target = Path(os.path.realpath(path))
         mode = _mode(target)
         _replace(target, content if isinstance(content, bytes) else content.encode(), mode)
+    except SaveError:
+        raise
     except OSError as error:
         reason = _REASONS.get(error.errno or 0, error.strerror or str(error))
         raise SaveError(f"{path} was not saved: {reason}") from error

@@ -33,7 +33,7 @@ def folder(tmp_path: Path) -> Path:
 
 @pytest.mark.parametrize("place", ["", "job.toml", "tags"])
 def test_a_job_is_opened_by_folder_file_or_tags(folder: Path, place: str) -> None:
-    opened = job.open_job(folder / place)
+    opened = job.open(folder / place)
     assert opened.folder == folder
     assert opened.job.given["job.client"] == "Tidal Island Works"
     assert [path.name for path in opened.paths] == ["FT-2.toml", "ft-3.toml", "FT-10.toml"]
@@ -42,14 +42,14 @@ def test_a_job_is_opened_by_folder_file_or_tags(folder: Path, place: str) -> Non
 
 
 def test_every_tag_has_the_entries_of_the_job(folder: Path) -> None:
-    for file in job.open_job(folder).read():
+    for file in job.open(folder).read():
         assert file.reading.tag is not None
         assert file.reading.tag.folder == str(folder)
         assert file.reading.tag.text("job.client") == "Tidal Island Works"
 
 
 def test_one_tag_file_of_a_job(folder: Path) -> None:
-    opened = job.open_job(folder / "tags" / "FT-2.toml")
+    opened = job.open(folder / "tags" / "FT-2.toml")
     assert opened.job.folder == str(folder)
     (file,) = opened.read()
     assert file.name == "FT-2"
@@ -57,20 +57,20 @@ def test_one_tag_file_of_a_job(folder: Path) -> None:
 
 def test_one_tag_file_alone(tmp_path: Path) -> None:
     (tmp_path / "a.toml").write_text(tag_text("FT-1"))
-    (file,) = job.open_job(tmp_path / "a.toml").read()
+    (file,) = job.open(tmp_path / "a.toml").read()
     assert file.name == "FT-1"
     assert file.reading.problems == ()
 
 
 def test_a_folder_without_a_job(tmp_path: Path) -> None:
     (tmp_path / "a.toml").write_text(tag_text("FT-1"))
-    opened = job.open_job(tmp_path)
+    opened = job.open(tmp_path)
     assert opened.folder == tmp_path
     assert [file.name for file in opened.read()] == ["FT-1"]
 
 
 def test_find(folder: Path) -> None:
-    opened = job.open_job(folder)
+    opened = job.open(folder)
     found = opened.find("FT-3")
     assert found is not None
     assert found.path == folder / "tags" / "ft-3.toml"
@@ -79,7 +79,7 @@ def test_find(folder: Path) -> None:
 
 def test_the_same_tag_number_twice_is_a_problem_of_the_second(folder: Path) -> None:
     (folder / "tags" / "ft-9.toml").write_text(tag_text("ft-2"))
-    files = {file.path.name: file.reading for file in job.open_job(folder).read()}
+    files = {file.path.name: file.reading for file in job.open(folder).read()}
     assert files["FT-2.toml"].problems == ()
     (problem,) = files["ft-9.toml"].problems
     assert problem.field == "tag"
@@ -89,7 +89,7 @@ def test_the_same_tag_number_twice_is_a_problem_of_the_second(folder: Path) -> N
 
 def test_a_damaged_file_goes_by_its_name(folder: Path) -> None:
     (folder / "tags" / "ft-9.toml").write_bytes(b"\xff\xfe")
-    file = job.open_job(folder).find("FT-9")
+    file = job.open(folder).find("FT-9")
     assert file is not None
     assert file.reading.tag is None
     assert "UTF-16" in str(file.reading.problems[0])
@@ -100,7 +100,7 @@ def test_a_folder_that_cannot_be_listed(folder: Path, monkeypatch: pytest.Monkey
         raise PermissionError(13, "Permission denied")
 
     monkeypatch.setattr(Path, "iterdir", refuse)
-    opened = job.open_job(folder)
+    opened = job.open(folder)
     assert opened.paths == ()
     assert "cannot be listed: Permission denied" in str(opened.problems[0])
 
@@ -131,6 +131,6 @@ def test_file_stem(tag: str, stem: str) -> None:
 
 
 def test_offers_stay_in_their_folder(folder: Path) -> None:
-    opened = job.open_job(folder)
+    opened = job.open(folder)
     assert opened.offers("FT-2") == folder / "offers" / "FT-2"
     assert opened.offers("../x") == folder / "offers" / "x"

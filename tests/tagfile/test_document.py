@@ -279,6 +279,16 @@ def test_move_a_point_with_its_comment() -> None:
     assert document.point_names() == ("cold.start", "2", "normal")
 
 
+def test_two_points_of_one_name() -> None:
+    document = Document.parse(TEXT)
+    document.rename_point("cold.start", "normal")
+    document.set("points.2.flow", "0.5 t/h")
+    assert document.get_text("points.normal.flow") == "3.1 t/h"
+    document.rename_point("2", "winter")
+    assert document.point_names() == ("normal", "winter", "3")
+    assert document.get_text("points.winter.flow") == "0.5 t/h"
+
+
 def test_a_point_that_is_not_there() -> None:
     with pytest.raises(KeyError):
         Document.parse(TEXT).set("points.maximum.flow", "3 t/h")
@@ -299,6 +309,12 @@ def test_line_ends_and_mark_survive() -> None:
     assert after.startswith("\ufeff")
     assert after.count("\n") == after.count("\r\n")
     assert document.get_text("remarks") == "one\ntwo"
+
+
+def test_mixed_line_ends_stay_mixed() -> None:
+    document = Document.parse('tag = "A"\r\nservice = "B"\n')
+    document.set("tag", "C")
+    assert document.text() == 'tag = "C"\r\nservice = "B"\n'
 
 
 def test_a_text_without_a_last_line_end() -> None:
