@@ -33,7 +33,7 @@ def _opening(frame: Frame, title: str) -> None:
 
 def _working(frame: Frame, sheet: Sheet, working: Working) -> None:
     """Set one value: name, equation, numbers put in, result."""
-    parts = body.chunks(working.columns, frame.width)
+    parts = body.chunks(working.columns, frame.width, frame.book.column)
     room = frame.width - 12.0
     equation = wrap.lines(frame.book.clean(working.equation), room, style.BODY.size)
     rows = (len(working.inputs) + 1) * (style.BODY.leading + 3.6) * len(parts)

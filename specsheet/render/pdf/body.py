@@ -6,14 +6,17 @@ import math
 from collections.abc import Iterable, Sequence
 
 from specsheet.findings import Level, Origin
-from specsheet.render.pdf import head, style
+from specsheet.render.pdf import fonts, head, style
 from specsheet.render.pdf.grid import Column, Line, Ornament, Text, grid
 from specsheet.render.pdf.page import Frame, Page, Place
 from specsheet.sheet.model import Cell, FindingRow, LimitRow, Row, Sheet, Table
 from specsheet.sheet.words import MARKS
 
-_LABEL, _SYMBOL, _UNIT, _MARK, _SOURCE = 148.0, 36.0, 58.0, 13.0, 30.0
-_NARROWEST, _WIDEST = 52.0, 84.0
+_LABEL, _SYMBOL, _UNIT, _MARK, _SOURCE = 128.0, 30.0, 50.0, 13.0, 26.0
+_ROWS = _LABEL + _SYMBOL + _UNIT + _MARK + _SOURCE
+_NARROWEST, _WIDEST = 46.0, 84.0
+_WHERE = 150.0
+_LONGEST = 24  # letters of a value that decide the width of its column
 
 
 def marks(origins: Iterable[Origin]) -> str:
@@ -27,10 +30,24 @@ def numbers(sheet: Sheet, source: str) -> str:
     return f"[{','.join(map(str, found))}]" if found else ""
 
 
-def chunks(names: Sequence[str], width: float) -> list[slice]:
+def narrowest(sheet: Sheet) -> float:
+    """Return the width of a column that holds every value by point without breaking a number."""
+    tables = [table for table in (sheet.points, *sheet.tables, sheet.budget) if table]
+    words = {
+        word
+        for table in tables
+        if table.columns
+        for row in table.rows
+        for cell in row.cells
+        for word in cell.text[:_LONGEST].split(" ")
+    }
+    widest = max((fonts.width(word, style.STRONG.size) for word in words), default=0.0)
+    return max(_NARROWEST, widest + 8.0)
+
+
+def chunks(names: Sequence[str], width: float, column: float) -> list[slice]:
     """Return the operating points in portions that fit the width, as even as possible."""
-    room = width - (_LABEL + _SYMBOL + _UNIT + _MARK + _SOURCE)
-    most = max(1, int(room / _NARROWEST))
+    most = max(1, int((width - _ROWS) / column))
     count = max(1, math.ceil(len(names) / most))
     total = max(len(names), 1)
     size = math.ceil(total / count)
@@ -39,10 +56,11 @@ def chunks(names: Sequence[str], width: float) -> list[slice]:
 
 def by_point(frame: Frame, sheet: Sheet, table: Table) -> None:
     """Set a table with one column for each operating point, split where it is too wide."""
-    for part in chunks(table.columns, frame.width):
+    for part in chunks(table.columns, frame.width, frame.book.column):
         title = table.title
         if part.start:
-            title = f"{table.title}: {table.columns[part][0]} to {table.columns[part][-1]}"
+            ends = dict.fromkeys((table.columns[part][0], table.columns[part][-1]))
+            title = f"{table.title}: {' to '.join(ends)}"
         columns = point_columns(table.columns[part], frame.width)
         lines = [Line(point_cells(sheet, row, part, sourced=True)) for row in table.rows]
         grid(frame, frame.book.clean(title), columns, lines)
@@ -53,8 +71,8 @@ def by_point(frame: Frame, sheet: Sheet, table: Table) -> None:
 
 def point_columns(names: Sequence[str], width: float) -> list[Column]:
     """Return the columns of a table by point; the same for every table of a sheet."""
-    rest = width - (_LABEL + _SYMBOL + _UNIT + _MARK + _SOURCE)
-    each = min(rest / max(len(names), 1), _WIDEST)
+    rest = width - _ROWS
+    each = min(rest / len(names), _WIDEST)
     label = _LABEL + rest - each * len(names)
     return [
         Column("", label),
@@ -130,11 +148,11 @@ def _single_lines(sheet: Sheet, rows: Sequence[Row]) -> list[Line]:
 
 def findings(frame: Frame, sheet: Sheet) -> None:
     """Set the findings, worst first, each with its badge."""
-    rest = frame.width - 54.0 - 108.0 - _SOURCE
+    rest = frame.width - 54.0 - _WHERE - _SOURCE
     columns = [
         Column("", 54.0),
         Column("What is wrong and how to mend it", rest),
-        Column("Where", 108.0, style.QUIET),
+        Column("Where", _WHERE, style.QUIET),
         Column("", _SOURCE, style.SMALL, True),
     ]
     grid(frame, "Findings", columns, [_finding(sheet, row) for row in sheet.findings])
@@ -142,7 +160,8 @@ def findings(frame: Frame, sheet: Sheet) -> None:
 
 def _finding(sheet: Sheet, row: FindingRow) -> Line:
     said = f"{row.message}\n{row.reserve}." if row.reserve else row.message
-    where = "\n".join(text for text in (row.point, row.field, row.code) if text)
+    first = " · ".join(text for text in (row.point, row.code) if text)
+    where = "\n".join(text for text in (first, row.field) if text)
     return Line(["", said, where, numbers(sheet, row.source)], _badge(row.level))
 
 
@@ -216,6 +235,7 @@ def clauses(frame: Frame, sheet: Sheet) -> None:
         for clause in sheet.clauses
         for place, sentence in enumerate(clause.sentences)
     ]
+    lines += [Line([label, text]) for label, text in head.overlong(frame, sheet)]
     if sheet.remarks:
         lines.append(Line(["Remarks", sheet.remarks]))
     grid(frame, "Notes and clauses", columns, lines)
@@ -247,17 +267,24 @@ def reply(frame: Frame, sheet: Sheet) -> None:
 
 
 def revisions(frame: Frame, sheet: Sheet) -> None:
-    """Set the revision block."""
+    """Set the revision block, and a line to sign on for the last revision."""
+    each = 66.0
     columns = [
         Column("Mark", 40.0, style.STRONG),
         Column("Date", 66.0),
-        Column("What changed", frame.width - 40.0 - 66.0 - 3 * 58.0),
-        Column("By", 58.0),
-        Column("Checked", 58.0),
-        Column("Approved", 58.0),
+        Column("What changed", frame.width - 40.0 - 66.0 - 3 * each),
+        *(Column(title, each) for title in ("By", "Checked", "Approved")),
     ]
+
+    def sign(page: Page, x: float, y: float, high: float) -> None:
+        for place in range(3):
+            left = x + frame.width - (3 - place) * each
+            page.line(left, y - high + 5.0, left + each - 8.0, y - high + 5.0, style.GREY, 0.5)
+
     lines = [
         Line([row.mark, row.date, row.text, row.by, row.checked, row.approved])
         for row in sheet.revisions
     ]
+    blank = Text("\n", style.BODY)
+    lines.append(Line(["", "", Text("Signatures", style.QUIET), blank, "", ""], sign))
     grid(frame, "Revisions", columns, lines)

@@ -16,7 +16,8 @@ def to_bytes(sheet: Sheet) -> bytes:
 
 def compose(sheet: Sheet, pdf: object) -> Book:
     """Return the pages of the sheet, without running heads and feet."""
-    book = Book(pdf, style.PAPERS.get(sheet.paper, style.PAPERS["A4"]))
+    size = style.PAPERS.get(sheet.paper, style.PAPERS["A4"])
+    book = Book(pdf, size, body.narrowest(sheet))
     frame = Frame(book, style.SIDE, book.size[0] - 2.0 * style.SIDE, 0, book.top(0))
     head.band(frame, sheet)
     head.details(frame, sheet)
@@ -24,10 +25,11 @@ def compose(sheet: Sheet, pdf: object) -> Book:
     if sheet.ruler is not None:
         ruler.draw(frame, sheet.ruler)
     head.legend(frame)
-    wide = [table for table in sheet.tables if table.columns]
-    for table in (sheet.points, *wide):
-        body.by_point(frame, sheet, table)
+    body.by_point(frame, sheet, sheet.points)
     body.findings(frame, sheet)
+    for table in sheet.tables:
+        if table.columns:
+            body.by_point(frame, sheet, table)
     body.limits(frame, sheet)
     body.singles(frame, sheet, [table for table in sheet.tables if not table.columns])
     if sheet.budget is not None:

@@ -16,7 +16,7 @@ from reportlab.lib.utils import TimeStamp
 from reportlab.pdfgen.canvas import Canvas
 
 import specsheet
-from specsheet.render.pdf import fonts, style
+from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.page import Book
 from specsheet.sheet.model import Sheet
 
@@ -86,7 +86,9 @@ def _furnish(book: Book, sheet: Sheet) -> None:
     left, right = style.SIDE, book.size[0] - style.SIDE
     revision = f"revision {sheet.revision}" if sheet.revision else "no revision"
     day = sheet.date.isoformat() if sheet.date else ""
-    name = " · ".join(part for part in (sheet.tag[:40], revision[:30], day) if part)
+    name = " · ".join(
+        part for part in (wrap.shorten(sheet.tag, 40), wrap.shorten(revision, 30), day) if part
+    )
     room = (right - left) * 0.5
     secret = _cut(book.clean(sheet.confidentiality), room)
     for index, page in enumerate(book.pages):
@@ -96,7 +98,7 @@ def _furnish(book: Book, sheet: Sheet) -> None:
         page.right(right, 26.0, f"page {index + 1} of {len(book.pages)}", style.QUIET)
         if index:
             y = book.size[1] - style.TOP
-            page.text(left, y - 7.0, book.clean(sheet.tag[:40]), style.SECTION)
+            page.text(left, y - 7.0, book.clean(wrap.shorten(sheet.tag, 40)), style.SECTION)
             words = _cut(book.clean(sheet.title), room)
             page.right(right, y - 7.0, words, style.QUIET)
 

@@ -14,6 +14,8 @@ from specsheet.render.pdf.style import Style
 
 _PADDING = 3.6  # above and below the text of a row, together
 _BETWEEN = 6.0  # kept free at the right of each cell
+_TITLE = 34.0  # of the title and the headings
+_WHOLE = 0.4  # of a page: a table up to this height is not split
 
 
 class Column(NamedTuple):
@@ -59,14 +61,18 @@ def grid(
     """Set a table with its title, ``gap`` below what stands above; nothing without rows."""
     if not rows:
         return
-    first = _height(_cells(frame, columns, rows[0]))
+    cells = [_cells(frame, columns, row) for row in rows]
+    heights = [_height(row) for row in cells]
+    whole = _TITLE + sum(heights)
     frame.skip(gap)
-    frame.keep(34.0 + min(first, frame.full / 2.0))
+    frame.keep(whole if whole <= frame.full * _WHOLE else _TITLE + min(heights[0], frame.full / 2))
     if title:
         frame.heading(title)
     _headings(frame, columns)
-    for row in rows:
-        _row(frame, title, columns, row)
+    for row, held, height in zip(rows, cells, heights, strict=True):
+        if frame.room < height <= frame.full - _TITLE:
+            _overleaf(frame, title, columns)
+        _row(frame, title, columns, row, held)
 
 
 def _headings(frame: Frame, columns: Sequence[Column]) -> None:
@@ -101,12 +107,11 @@ def _height(cells: Sequence[_Set]) -> float:
     return max(len(cell.lines) for cell in cells) * _leading(cells) + _PADDING
 
 
-def _row(frame: Frame, title: str, columns: Sequence[Column], row: Line) -> None:
-    cells = _cells(frame, columns, row)
+def _row(
+    frame: Frame, title: str, columns: Sequence[Column], row: Line, cells: Sequence[_Set]
+) -> None:
     total = max(len(cell.lines) for cell in cells)
     leading = _leading(cells)
-    if _height(cells) <= frame.full - 40.0 and _height(cells) > frame.room:
-        _overleaf(frame, title, columns)
     done = 0
     while done < total:
         fits = int((frame.room - _PADDING) / leading)

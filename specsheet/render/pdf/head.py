@@ -6,10 +6,11 @@ from specsheet.findings import Level
 from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.page import Frame, Page
 from specsheet.render.pdf.style import Style
+from specsheet.render.pdf.wrap import shorten
 from specsheet.sheet.model import Sheet
 from specsheet.sheet.words import LEGEND
 
-_COLUMNS = 4
+_COLUMNS = 4  # of the details
 _BADGE = 44.0
 
 
@@ -20,12 +21,12 @@ def band(frame: Frame, sheet: Sheet) -> None:
     right = max((fonts.width(book.clean(text), look.size) for text, look in aside), default=0.0)
     room = frame.width - right - 44.0
     lines: list[tuple[str, Style]] = []
-    for text, look in ((sheet.tag, _tag_style(sheet.tag)), (sheet.title, style.TITLE)):
-        lines += [(line, look) for line in wrap.lines(book.clean(text), room, look.size)[:3]]
-    if sheet.service:
-        service = Style(9.0)
-        wrapped = wrap.lines(book.clean(sheet.service), room, service.size)
-        lines += [(line, service) for line in wrapped[:4]]
+    for text, look, most in _lines(sheet):
+        wrapped = wrap.lines(book.clean(text), room, look.size) if text else ()
+        lines += [(line, look) for line in wrapped[:most]]
+        if len(wrapped) > most:
+            lines[-1] = (f"{lines[-1][0]} …", look)
+            book.overlong.append(text)
     height = sum(look.leading for _, look in lines) + 14.0
     frame.page.box(frame.x, frame.y - height, frame.width, height, fill=style.TINT)
     frame.page.box(frame.x, frame.y - height, 4.0, height, fill=style.ACCENT)
@@ -40,17 +41,24 @@ def band(frame: Frame, sheet: Sheet) -> None:
     frame.y -= height + 8.0
 
 
-def _tag_style(tag: str) -> Style:
-    """Return a smaller size for a tag number that would not fit the band on one line."""
-    return style.TAG if len(tag) <= 20 else Style(13.0, True, style.ACCENT)
+def _lines(sheet: Sheet) -> tuple[tuple[str, Style, int], ...]:
+    """Return the texts of the band with their styles and the most lines each may take."""
+    tag = style.TAG if len(sheet.tag) <= 20 else Style(13.0, True, style.ACCENT)
+    return (sheet.tag, tag, 2), (sheet.title, style.TITLE, 2), (sheet.service, Style(9.0), 3)
+
+
+def overlong(frame: Frame, sheet: Sheet) -> list[tuple[str, str]]:
+    """Return the texts that the band had to cut, with their labels, to be printed in full."""
+    texts = (("Tag", sheet.tag), ("Meter", sheet.title), ("Service", sheet.service))
+    return [(label, text) for label, text in texts if text in frame.book.overlong]
 
 
 def _aside(sheet: Sheet) -> list[tuple[str, Style]]:
     lines: list[tuple[str, Style]] = []
     if sheet.status:
-        lines.append((sheet.status[:40].upper(), Style(9.0, True)))
+        lines.append((shorten(sheet.status.upper(), 32), Style(9.0, True)))
     if sheet.revision:
-        lines.append((f"Revision {sheet.revision[:20]}", style.BODY))
+        lines.append((f"Revision {shorten(sheet.revision, 20)}", style.BODY))
     if sheet.date is not None:
         lines.append((sheet.date.isoformat(), style.BODY))
     return lines

@@ -97,17 +97,21 @@ class Book:
     Attributes:
         document: the PDF document that the pages are written into.
         size: width and height of the paper [pt].
+        column: width of a column of values by operating point [pt].
         pages: so far; made on demand.
         headings: for the outline.
         places: what the bidder fills in.
+        overlong: texts that the band at the top had to cut; they are printed in full further on.
         missing: characters without a glyph, in the order met.
     """
 
     document: Any
     size: tuple[float, float]
+    column: float
     pages: list[Page] = field(default_factory=list)
     headings: list[Heading] = field(default_factory=list)
     places: list[Place] = field(default_factory=list)
+    overlong: list[str] = field(default_factory=list)
     missing: dict[str, None] = field(default_factory=dict)
 
     def page(self, index: int) -> Page:

@@ -23,7 +23,9 @@ def draw(frame: Frame, ruler: Ruler) -> None:
     """Draw the ruler across the frame."""
     left = frame.x + _GUTTER
     long = frame.width - _GUTTER - 8.0
-    names = [frame.book.clean(f"{mark.name[:_LONGEST]} {mark.text}") for mark in ruler.marks]
+    names = [
+        frame.book.clean(f"{wrap.shorten(mark.name, _LONGEST)} {mark.text}") for mark in ruler.marks
+    ]
     widths = [fonts.width(name, _NAME.size) for name in names]
     centres = [
         min(max(left + mark.position * long, left + wide / 2), left + long - wide / 2)
@@ -39,12 +41,16 @@ def draw(frame: Frame, ruler: Ruler) -> None:
     axis = top - body
     page = frame.page
     _usable(page, ruler, left, long, top, axis)
+    for mark, lane in zip(ruler.marks, lanes, strict=True):
+        x = left + mark.position * long
+        page.line(x, axis, x, top + lane * _LABEL_LANE + 0.5, style.INK, 0.7)
     for place, window in enumerate(ruler.windows):
         words = frame.book.clean(window.label)
         _window(page, window, words, frame.x, left, long, top - 4.0 - place * _LANE)
     _axis(frame, ruler, left, long, axis)
     for mark, name, centre, lane in zip(ruler.marks, names, centres, lanes, strict=True):
-        _mark(page, mark, name, centre, left + mark.position * long, top + lane * _LABEL_LANE, axis)
+        _named(page, name, centre, top + lane * _LABEL_LANE)
+        _mark(page, mark, left + mark.position * long, axis)
     frame.y = axis - _AXIS
 
 
@@ -71,10 +77,15 @@ def _window(
         if is_open:  # the limit leaves this end open: cut the bar to an arrow
             for edge in (y, y - _BAR):
                 page.shape([(tip, y - _BAR / 2), (tip, edge), (tip + into, edge)], style.WHITE)
+    base = y - _BAR + 1.2
     if not window.open_low and window.low_text:
-        page.right(start - 2.5, y - _BAR + 1.2, window.low_text, _END)
+        wide = fonts.width(window.low_text, _END.size)
+        page.box(start - wide - 3.5, base - 1.0, wide + 2.0, _END.size, fill=style.WHITE)
+        page.text(start - wide - 2.5, base, window.low_text, _END)
     if not window.open_high and window.high_text:
-        page.text(end + 2.5, y - _BAR + 1.2, window.high_text, _END)
+        wide = fonts.width(window.high_text, _END.size)
+        page.box(end + 1.5, base - 1.0, wide + 2.0, _END.size, fill=style.WHITE)
+        page.text(end + 2.5, base, window.high_text, _END)
 
 
 def _axis(frame: Frame, ruler: Ruler, left: float, long: float, y: float) -> None:
@@ -93,12 +104,15 @@ def _axis(frame: Frame, ruler: Ruler, left: float, long: float, y: float) -> Non
     page.right(frame.x + _GUTTER - 10.0, y - 13.0, words, Style(7.0, True))
 
 
-def _mark(
-    page: Page, mark: Mark, name: str, centre: float, x: float, y: float, axis: float
-) -> None:
-    """Draw one operating point: a pin from its name to the axis, hollow outside a window."""
-    page.line(x, axis, x, y + 0.5, style.INK, 0.7)
+def _named(page: Page, name: str, centre: float, y: float) -> None:
+    """Set the name of a point over the pins that pass behind it."""
+    wide = fonts.width(name, _NAME.size)
+    page.box(centre - wide / 2 - 1.5, y + 0.8, wide + 3.0, _NAME.size + 0.8, fill=style.WHITE)
     page.middle(centre, y + 2.5, name, _NAME)
+
+
+def _mark(page: Page, mark: Mark, x: float, axis: float) -> None:
+    """Draw an operating point on the axis: filled where every window holds it, else hollow."""
     size = 3.4
     corners = [(x, axis + size), (x + size, axis), (x, axis - size), (x - size, axis)]
     page.shape(corners, style.ACCENT if mark.inside else style.WHITE, style.ACCENT)

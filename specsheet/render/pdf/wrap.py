@@ -50,3 +50,8 @@ def _pieces(word: str, room: float, size: float) -> list[str]:
         piece += letter
         used += wide
     return [*pieces, piece]
+
+
+def shorten(text: str, letters: int) -> str:
+    """Return a text of no more than so many letters, ended by an ellipsis where it is cut."""
+    return text if len(text) <= letters else f"{text[: letters - 1]}…"

@@ -58,7 +58,7 @@ def _values(sheet: Sheet, values: Table, width: int) -> list[str]:
     for start in range(0, count, most):
         part = slice(start, min(start + most, count))
         names = values.columns[part]
-        more = f": {names[0]} to {names[-1]}" if start else ""
+        more = f": {' to '.join(dict.fromkeys((names[0], names[-1])))}" if start else ""
         rows = [_row(sheet, row, part) for row in values.rows]
         if names:
             rows.insert(0, ["", "", "", *names, "", ""])
