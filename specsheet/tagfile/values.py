@@ -226,7 +226,7 @@ def _quantity(entry: Entry, raw: object) -> Value | Refusal:
         return quantity.parse(typed, entry.kind)
     unit = entry.example.partition(" ")[2]
     return Refusal(
-        f"{KINDS[entry.kind].label} with its unit was wanted, {came(raw)} came; "
+        f"{KINDS[entry.kind].label}, with its unit, was wanted, {came(raw)} came; "
         f'write {entry.key} = "{typed} {unit}" (if {unit} is meant)'
     )
 

@@ -261,6 +261,40 @@ def test_one_problem_never_loses_the_rest(
     assert len(reading.tag.points) == 2
 
 
+@pytest.mark.parametrize(
+    ("key", "text", "value"),
+    [
+        ("flow", "0 t/h", 0.0),
+        ("flow", "1e30 t/h", 1e33 / 3600),
+        ("temperature", "-273.15 degC", None),
+        ("temperature", "-273.1 degC", 0.05),
+        ("temperature", "-500 degF", None),
+        ("temperature", "9999 degC", 10272.15),
+        ("flow", "-3 t/h", None),
+        ("flow", "inf t/h", None),
+        ("flow", "1e999 t/h", None),
+        ("flow", "3 bar", None),
+        ("flow", "3", None),
+        ("flow", "t/h", None),
+        ("pressure", "-1 bar(a)", None),
+        ("pressure", "7 m3/h", None),
+    ],
+)
+def test_numbers_nobody_meant(key: str, text: str, value: float | None) -> None:
+    """What the grammar reads is left for the evaluation to judge; what it refuses is named."""
+    old = {"flow": "3.1 t/h", "temperature": "185 degC", "pressure": "7.0 bar(g)"}[key]
+    reading = tagfile.loads(STEAM.replace(f'"{old}"', f'"{text}"'))
+    assert reading.tag is not None
+    read = reading.tag.points[1].quantity(key)
+    if value is None:
+        assert read is None
+        assert [problem.field for problem in reading.problems] == [f"points.normal.{key}"]
+    else:
+        assert read is not None
+        assert read.value == pytest.approx(value)
+        assert reading.problems == ()
+
+
 def test_problems_stand_in_the_order_of_the_file() -> None:
     text = STEAM.replace('"1.5 %"', "1.5").replace('"gas"', '"vapour"').replace("flow", "fluw")
     assert [int(line.split(":")[1]) for line in problems(text)] == [10, 18, 20, 24, 26, 38]
