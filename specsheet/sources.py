@@ -36,7 +36,18 @@ _SOURCES = (
     # Differential-pressure metering
     Source("iso5167-1", "ISO 5167-1:2003", "differential-pressure devices: general principles"),
     Source("iso5167-2", "ISO 5167-2:2003", "orifice plates", "published values"),
+    Source("iso5167-3", "ISO 5167-3:2003", "nozzles and Venturi nozzles", "published values"),
     Source("iso5167-4", "ISO 5167-4:2003", "Venturi tubes", "published values"),
+    Source("iso5167-5", "ISO 5167-5:2016", "cone meters", "published values"),
+    Source("iso5167-6", "ISO 5167-6:2019", "wedge meters", "published values"),
+    Source("isotr15377", "ISO/TR 15377:1998", "plates beyond ISO 5167", "published values"),
+    Source("isotr9464", "ISO/TR 9464:2008", "guidelines for the use of ISO 5167:2003"),
+    Source("isotr11583", "ISO/TR 11583:2012", "wet gas in Venturi tubes", "published values"),
+    Source("iso9300", "ISO 9300:2005", "critical flow Venturi nozzles"),
+    Source("iso3966", "ISO 3966:2008", "Pitot static tubes", "published values"),
+    Source("iso5802", "ISO 5802:2001", "fans: tests in situ, traverses", "published values"),
+    Source("vdi3513", "VDI/VDE 3513-1", "variable-area meters"),
+    Source("miller", "Miller, Flow Measurement Engineering Handbook, 3rd ed.", "segmental plates"),
     # Meters that oscillate, induce, twist or turn
     Source("iso12764", "ISO/TR 12764:1997", "vortex meters", "published values"),
     Source("iso20456", "ISO 20456:2017", "electromagnetic meters", "published values"),
@@ -55,6 +66,9 @@ _SOURCES = (
     Source("iso6976", "ISO 6976:2016", "calorific values from composition", "published values"),
     Source("wilke", "Wilke (1950)", "viscosity of gas mixtures", "read"),
     Source("perry8", "Perry's Handbook, 8th edition", "data of substances", "published values"),
+    Source("wilson", "Wilson (1968)", "vapour-liquid ratios from critical constants"),
+    Source("mason-saxena", "Mason and Saxena (1958)", "thermal conductivity of gas mixtures"),
+    Source("grunberg", "Grunberg and Nissan (1949)", "viscosity of liquid mixtures"),
     Source("yoon-thodos", "Yoon and Thodos (1970)", "viscosity of gases", "published values"),
     # Base conditions
     Source("din1343", "DIN 1343:1990", "reference condition 0 degC, 101.325 kPa"),

@@ -1,0 +1,286 @@
+"""Mixtures by multi-fluid equations of state with the phase imposed, and the phase checked.
+
+The phase is never left to a blind search: that one is slow, and silently reports one phase inside
+the two-phase region of wet gases. The state is computed for the phase stated; whether that phase
+is the true one is decided by :mod:`specsheet.fluid.mixture_phase`.
+"""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Mapping
+from dataclasses import dataclass
+from functools import lru_cache
+from typing import Any
+
+from specsheet.findings import Finding
+from specsheet.fluid import calorific, library, limits, mixture_phase, mixture_transport, names
+from specsheet.fluid.calorific import Composition
+from specsheet.fluid.errors import translate
+from specsheet.fluid.model import Condition, Method, Refused, bar, both, caution, note, stop
+from specsheet.fluid.phases import GAS, LIQUID, TWO_PHASE
+from specsheet.fluid.state import Property, State
+from specsheet.quantity.value import Base
+from specsheet.sources import cite
+
+_EQUATION = "multi-fluid equation of state"
+_SOURCE = cite("coolprop") + ", mixing rules of " + cite("iso20765-2")
+_MOLAR = Method("molar mass of the composition", cite("iso6976"), 0.0001)
+#: components of ISO 20765-2, within whose scope the equation is at its best
+_GERG = frozenset(
+    (
+        "methane",
+        "nitrogen",
+        "carbon_dioxide",
+        "ethane",
+        "propane",
+        "n_butane",
+        "isobutane",
+        "n_pentane",
+        "isopentane",
+        "n_hexane",
+        "n_heptane",
+        "n_octane",
+        "n_nonane",
+        "n_decane",
+        "hydrogen",
+        "oxygen",
+        "carbon_monoxide",
+        "water",
+        "hydrogen_sulfide",
+        "helium",
+        "argon",
+    )
+)
+#: dry air as a mixture, where it stands among the components (ISO 6976, rounded to three gases)
+AIR: Composition = (("nitrogen", 0.7812), ("oxygen", 0.2096), ("argon", 0.0092))
+
+
+@lru_cache(maxsize=32)
+def state_of(composition: Composition, phase: str) -> Any:
+    """Return the one state object of a composition and imposed phase, under the lock of the room.
+
+    Raises:
+        ValueError: a pair of components has no mixing parameters and the phase is liquid.
+    """
+    module = library.fluids()
+    table = names.substances()
+    if phase == GAS:
+        estimate_pairs(composition)
+    state = module.AbstractState("HEOS", "&".join(table[key].equation for key, _ in composition))
+    state.set_mole_fractions([fraction for _, fraction in composition])
+    state.specify_phase(module.iphase_gas if phase == GAS else module.iphase_liquid)
+    return state
+
+
+@lru_cache(maxsize=256)
+def estimate_pairs(composition: Composition) -> tuple[tuple[str, str], ...]:
+    """Give pairs without mixing parameters the linear rule; return those pairs."""
+    module = library.fluids()
+    table = names.substances()
+    keys = [key for key, _ in composition]
+    found = []
+    for i, first in enumerate(keys):
+        for second in keys[i + 1 :]:
+            if not _known_pair(table[first].cas, table[second].cas):
+                module.apply_simple_mixing_rule(table[first].cas, table[second].cas, "linear")
+                _ESTIMATED.add(frozenset((table[first].cas, table[second].cas)))
+            if frozenset((table[first].cas, table[second].cas)) in _ESTIMATED:
+                found.append((first, second))
+    return tuple(found)
+
+
+#: pairs (CAS numbers) that got the linear rule in this process
+_ESTIMATED: set[frozenset[str]] = set()
+
+
+def _known_pair(first: str, second: str) -> bool:
+    """Tell whether a pair has mixing parameters; the library keeps them in one order only."""
+    for one, other in ((first, second), (second, first)):
+        try:
+            library.fluids().get_mixture_binary_pair_data(one, other, "gammaT")
+        except library.ERRORS:
+            continue
+        return True
+    return False
+
+
+@dataclass(frozen=True, slots=True)
+class Mixture:
+    """A mixture; ``phase`` is the one stated, fractions are by mole and sum to one."""
+
+    composition: Composition
+    phase: str
+    combustion_temperature: float = 288.15
+
+    @property
+    def name(self) -> str:
+        """What the sheet calls it: its main components."""
+        return _name(self.composition)
+
+    def state(self, condition: Condition) -> State:
+        """Return the state in the stated phase, with the true phase beside it."""
+        temperature, pressure = both(condition)
+        findings = self._range().check(temperature, pressure, self.name)
+        state = self._updated(temperature, pressure)
+        verdict = mixture_phase.decide(self.composition, self.phase, temperature, pressure, state)
+        values = self._properties(state, temperature, pressure)
+        values.update(verdict.values)
+        return State(
+            temperature,
+            pressure,
+            verdict.phase,
+            values,
+            (*findings, *self._pairs(), *verdict.findings),
+        )
+
+    def base(self, base: Base) -> State:
+        """Return the state at base; a gas is taken as gas there even below its dew point."""
+        self._range().check(base.temperature, base.pressure, self.name)
+        state = self._updated(base.temperature, base.pressure)
+        values = self._properties(state, base.temperature, base.pressure)
+        if self.phase != GAS:
+            return self._liquid_base(base, values)
+        density = values["density"].value
+        values.update(
+            calorific.by_volume(self.composition, density, self.combustion_temperature, base)
+        )
+        verdict = mixture_phase.decide(
+            self.composition, GAS, base.temperature, base.pressure, state
+        )
+        findings: tuple[Finding, ...] = ()
+        if verdict.phase != GAS:
+            text = (
+                "Some of the gas would condense at the base condition; its volume there is that of "
+                "a hypothetical gas, as ISO 6976 has it."
+            )
+            findings = (note("base-hypothetical", "", text, cite("iso6976")),)
+        return State(base.temperature, base.pressure, GAS, values, findings)
+
+    def _liquid_base(self, base: Base, values: dict[str, Property]) -> State:
+        """Return the liquid at base; without a density where it boils there."""
+        bubble = mixture_phase.bubble_pressure(self.composition, base.temperature)
+        if bubble is None or bubble < base.pressure:
+            return State(base.temperature, base.pressure, LIQUID, values)
+        text = (
+            f"The liquid boils at the base condition (bubble pressure {bar(bubble)}), so a volume "
+            "of it there has no meaning: state its flow by mass."
+        )
+        findings = (note("base-gas", "", text),)
+        return State(base.temperature, base.pressure, TWO_PHASE, {}, findings)
+
+    def constants(self) -> Mapping[str, Property]:
+        """Return molar mass and calorific values by mass."""
+        return {
+            "molar_mass": _MOLAR(calorific.molar_mass(self.composition)),
+            **calorific.by_mass(self.composition, self.combustion_temperature),
+        }
+
+    def _range(self) -> limits.Range:
+        return _range(self.composition)
+
+    def _pairs(self) -> tuple[Finding, ...]:
+        pairs = estimate_pairs(self.composition) if self.phase == GAS else ()
+        if not pairs:
+            return ()
+        table = names.substances()
+        text = ", ".join(f"{table[a].name} with {table[b].name}" for a, b in pairs[:3])
+        more = f" and {len(pairs) - 3} more" if len(pairs) > 3 else ""
+        return (
+            caution(
+                "mixture-pair-estimated",
+                "fluid.mixture",
+                f"No mixing parameters are known for {text}{more}; a linear rule stands in. That "
+                "is good to some 0.1 % for a gas at a few bar and worse near its dew point.",
+                _SOURCE,
+            ),
+        )
+
+    def _updated(self, temperature: float, pressure: float) -> Any:
+        """Return the state object at the state, checked."""
+        try:
+            state = state_of(self.composition, self.phase)
+            state.update(library.fluids().PT_INPUTS, pressure, temperature)
+            sound = _sane(state, self.phase, temperature)
+        except library.ERRORS as error:
+            state_of.cache_clear()
+            raise Refused(translate(error, self.name, temperature, pressure)) from None
+        if sound:
+            return state
+        state_of.cache_clear()
+        raise Refused(
+            stop(
+                "phase-disagrees",
+                "fluid.phase",
+                f"No {self.phase} of this composition exists at {temperature - 273.15:.4g} °C and "
+                f"{pressure / 1e5:.4g} bar(a). Correct the phase, the pressure or the temperature.",
+            )
+        )
+
+    def _properties(self, state: Any, temperature: float, pressure: float) -> dict[str, Property]:
+        """Return all properties of the state object as it stands."""
+        density, sound = state.rhomass(), state.speed_sound()
+        plain, fast, warm = _methods(self.composition, self.phase)
+        values = {
+            "density": plain(density),
+            "sound_speed": fast(sound),
+            "heat_capacity": warm(state.cpmass()),
+        }
+        if self.phase == GAS:
+            values["compressibility"] = plain(state.compressibility_factor())
+            values["isentropic_exponent"] = fast(density * sound * sound / pressure)
+            values.update(
+                mixture_transport.gas(self.composition, temperature, state.rhomolar(), density)
+            )
+        else:
+            values.update(
+                mixture_transport.liquid(self.composition, temperature, pressure, density)
+            )
+        return values
+
+
+@lru_cache(maxsize=256)
+def _name(composition: Composition) -> str:
+    table = names.substances()
+    ranked = sorted(composition, key=lambda item: -item[1])
+    listed = [table[key].name for key, _ in ranked[:3]]
+    more = f" and {len(ranked) - 3} more" if len(ranked) > 3 else ""
+    return "mixture of " + ", ".join(listed) + more
+
+
+@lru_cache(maxsize=256)
+def _range(composition: Composition) -> limits.Range:
+    """Return the limits: of the equation within its components, wide enough for ISO 20765-2."""
+    table = names.substances()
+    if all(key in _GERG for key, _ in composition):
+        return limits.Range(60.0, 700.0, 70e6, cite("iso20765-2"), above=300.0)
+    weighty = [table[key] for key, fraction in composition if fraction >= 0.01]
+    return limits.Range(
+        60.0,
+        max(item.highest_temperature for item in weighty),
+        max(item.highest_pressure for item in weighty),
+        _SOURCE,
+        above=100.0,
+    )
+
+
+@lru_cache(maxsize=256)
+def _methods(composition: Composition, phase: str) -> tuple[Method, Method, Method]:
+    """Return the methods of density, sound speed and heat capacity, with honest uncertainties."""
+    known = all(key in _GERG for key, _ in composition)
+    factor = (1.0 if known else 3.0) * (1.0 if phase == GAS else 3.0)
+    plain = Method(_EQUATION, _SOURCE, 0.002 * factor)
+    fast = Method(_EQUATION, _SOURCE, 0.005 * factor)
+    warm = Method(_EQUATION, _SOURCE, 0.02 * factor)
+    return plain, fast, warm
+
+
+def _sane(state: Any, phase: str, temperature: float) -> bool:
+    """Tell whether an imposed state is one: finite, stable, and of the density of its phase."""
+    density, heat, sound = state.rhomolar(), state.cpmolar(), state.speed_sound()
+    if not all(math.isfinite(value) and value > 0.0 for value in (density, heat, sound)):
+        return False
+    reducing = state.rhomolar_reducing()
+    if phase == GAS:
+        return bool(density < 0.9 * reducing or temperature > state.T_reducing())
+    return bool(density > 1.2 * reducing)

@@ -1,0 +1,264 @@
+"""Pure substances (and air) by their reference equations of state."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Mapping
+from dataclasses import dataclass
+from functools import cache
+from typing import Any
+
+from specsheet.findings import Finding
+from specsheet.fluid import calorific, library, limits, names, transport
+from specsheet.fluid.errors import translate
+from specsheet.fluid.model import Condition, Method, Refused, bar, note, stop
+from specsheet.fluid.phases import GAS, LIQUID, SUPERCRITICAL, TWO_PHASE
+from specsheet.fluid.state import Property, State
+from specsheet.quantity.value import Base
+from specsheet.sources import cite
+
+#: a stated temperature this near to saturation is taken as saturated [K]
+SNAP = 0.05
+
+_EQUATION = "reference equation of state"
+_SOURCE = cite("coolprop")
+_PLAIN = Method(_EQUATION, _SOURCE, 0.002)
+_SOUND = Method(_EQUATION, _SOURCE, 0.01)
+_HEAT = Method(_EQUATION, _SOURCE, 0.02)
+_KAPPA = Method("ρc²/p of the real gas, " + _EQUATION, _SOURCE, 0.02)
+_SATURATION = Method(_EQUATION + ", saturation line", _SOURCE, 0.005)
+_MOLAR = Method("molar mass", _SOURCE, 0.0)
+
+
+@cache
+def state_of(equation: str) -> Any:
+    """Return the one state object of an equation; callers hold the lock of the room."""
+    return library.fluids().AbstractState("HEOS", equation)
+
+
+def renew(equation: str) -> None:
+    """Forget state objects after a failure: their contents cannot be trusted any more."""
+    del equation
+    state_of.cache_clear()
+
+
+@dataclass(frozen=True, slots=True)
+class Pure:
+    """A pure substance; ``phase`` is the one stated."""
+
+    key: str
+    phase: str
+    combustion_temperature: float = 288.15
+
+    @property
+    def substance(self) -> names.Substance:
+        """The substance with its constants."""
+        return names.substances()[self.key]
+
+    @property
+    def name(self) -> str:
+        """What the sheet calls it."""
+        return self.substance.name
+
+    def state(self, condition: Condition) -> State:
+        """Return the state; with one of temperature and pressure missing, the saturated one."""
+        temperature, pressure = condition.temperature, condition.pressure
+        if temperature is None or pressure is None:
+            return self._saturated(condition, ())
+        findings = self._range().check(temperature, pressure, self.name)
+        boiling = self.boiling(pressure)
+        if boiling is not None and abs(temperature - boiling) <= SNAP:
+            return self._saturated(Condition(None, pressure), (*findings, self._snapped()))
+        module, state = library.fluids(), state_of(self.substance.equation)
+        self._update(state, module.PT_INPUTS, pressure, temperature, temperature, pressure)
+        phase = self._phase(module, state)
+        return State(
+            temperature,
+            pressure,
+            phase,
+            self._properties(state, phase, temperature, pressure, boiling),
+            findings,
+        )
+
+    def base(self, base: Base) -> State:
+        """Return the state at base; none of a density for a vapour that is liquid there."""
+        found = self.state(Condition(base.temperature, base.pressure))
+        if self.phase and found.phase in (GAS, LIQUID) and found.phase != self.phase:
+            text = (
+                f"{self.name} is a {found.phase} at the base condition, so a volume of the "
+                f"{self.phase} at base has no meaning: state its flow by mass."
+            )
+            findings = (note(f"base-{found.phase}", "", text),)
+            return State(base.temperature, base.pressure, found.phase, {}, findings)
+        density = found.value("density")
+        if density is None or self.phase != GAS:
+            return found
+        composition = ((self.key, 1.0),)
+        extra = calorific.by_volume(composition, density, self.combustion_temperature, base)
+        return State(
+            base.temperature,
+            base.pressure,
+            found.phase,
+            {**found.properties, **extra},
+            found.findings,
+        )
+
+    def constants(self) -> Mapping[str, Property]:
+        """Return molar mass and calorific values by mass."""
+        composition = ((self.key, 1.0),)
+        return {
+            "molar_mass": _MOLAR(self.substance.molar_mass),
+            **calorific.by_mass(composition, self.combustion_temperature),
+        }
+
+    def boiling(self, pressure: float) -> float | None:
+        """Return the boiling temperature [K] at a pressure [Pa]; None off the saturation line."""
+        item = self.substance
+        if not 0.0 < pressure < 0.999 * item.critical_pressure:
+            return None
+        return _boiling(item.equation, pressure)
+
+    def vapour_pressure(self, temperature: float) -> float | None:
+        """Return the vapour pressure [Pa] at a temperature [K]; None off the saturation line."""
+        item = self.substance
+        if not item.lowest_temperature <= temperature < 0.9995 * item.critical_temperature:
+            return None
+        return _vapour_pressure(item.equation, temperature)
+
+    def _range(self) -> limits.Range:
+        item = self.substance
+        return limits.Range(
+            item.lowest_temperature,
+            item.highest_temperature,
+            item.highest_pressure,
+            _SOURCE,
+            above=0.1 * item.highest_temperature,
+        )
+
+    def _update(
+        self,
+        state: Any,
+        inputs: Any,
+        first: float,
+        second: float,
+        temperature: float,
+        pressure: float,
+    ) -> None:
+        try:
+            state.update(inputs, first, second)
+            density = state.rhomass()
+        except library.ERRORS as error:
+            renew(self.substance.equation)
+            raise Refused(translate(error, self.name, temperature, pressure)) from None
+        if not (math.isfinite(density) and density > 0.0):
+            renew(self.substance.equation)
+            raise Refused(translate(ValueError(), self.name, temperature, pressure))
+
+    def _phase(self, module: Any, state: Any) -> str:
+        """Return the phase found; a dense fluid above both critical values is supercritical."""
+        found = state.phase()
+        if found in (module.iphase_liquid, module.iphase_supercritical_liquid):
+            return LIQUID
+        if found in (module.iphase_gas, module.iphase_supercritical_gas):
+            return GAS
+        if found == module.iphase_twophase:
+            return TWO_PHASE
+        return GAS if state.rhomass() < 0.7 * state.rhomass_critical() else SUPERCRITICAL
+
+    def _snapped(self) -> Finding:
+        return note(
+            "on-saturation",
+            "temperature",
+            f"Pressure and temperature lie on the saturation line within {SNAP} K: the state is "
+            f"taken as saturated {self.phase}.",
+            _SOURCE,
+        )
+
+    def _saturated(self, condition: Condition, findings: tuple[Finding, ...]) -> State:
+        """Return the saturated state at the pressure or the temperature that is stated."""
+        module, state = library.fluids(), state_of(self.substance.equation)
+        gas = self.phase == GAS
+        quality = 1.0 if gas else 0.0
+        temperature, pressure = self._saturation(condition)
+        self._update(state, module.PQ_INPUTS, pressure, quality, temperature, pressure)
+        phase = GAS if gas else LIQUID
+        values = self._properties(state, phase, temperature, pressure, temperature)
+        return State(temperature, pressure, phase, values, findings)
+
+    def _saturation(self, condition: Condition) -> tuple[float, float]:
+        if condition.pressure is not None:
+            temperature = self.boiling(condition.pressure)
+            if temperature is not None:
+                return temperature, condition.pressure
+            field, came = "pressure", bar(condition.pressure)
+        elif condition.temperature is not None:
+            pressure = self.vapour_pressure(condition.temperature)
+            if pressure is not None:
+                return condition.temperature, pressure
+            field, came = "temperature", f"{condition.temperature - 273.15:.4g} °C"
+        else:
+            raise Refused(
+                stop(
+                    "conditions-missing",
+                    "pressure",
+                    "Neither pressure nor temperature is stated: state both.",
+                )
+            )
+        raise Refused(
+            stop(
+                "saturation-none",
+                field,
+                f"Only the {field} is stated, which gives a saturated state; {self.name} has none "
+                f"at {came}. State pressure and temperature.",
+                _SOURCE,
+            )
+        )
+
+    def _properties(
+        self, state: Any, phase: str, temperature: float, pressure: float, boiling: float | None
+    ) -> dict[str, Property]:
+        """Return all properties of the state object as it stands."""
+        density, sound = state.rhomass(), state.speed_sound()
+        values = {
+            "density": _PLAIN(density),
+            "sound_speed": _SOUND(sound),
+            "heat_capacity": _HEAT(state.cpmass()),
+            "specific_enthalpy": _HEAT(state.hmass()),
+        }
+        values.update(transport.pure(self.substance, state, phase, temperature, density))
+        if phase != LIQUID:
+            values["compressibility"] = _PLAIN(state.compressibility_factor())
+            values["isentropic_exponent"] = _KAPPA(density * sound * sound / pressure)
+        if boiling is not None:
+            margin = boiling - temperature if phase == LIQUID else temperature - boiling
+            values["saturation_temperature"] = _SATURATION(boiling)
+            values["saturation_margin"] = _SATURATION(margin)
+        vapour = self.vapour_pressure(temperature)
+        if vapour is not None:
+            values["vapour_pressure"] = _SATURATION(vapour)
+        return {key: item for key, item in values.items() if math.isfinite(item.value)}
+
+
+@cache
+def _saturation_state(equation: str) -> Any:
+    return library.fluids().AbstractState("HEOS", equation)
+
+
+def _boiling(equation: str, pressure: float) -> float | None:
+    state = _saturation_state(equation)
+    try:
+        state.update(library.fluids().PQ_INPUTS, pressure, 0.0)
+        return float(state.T())
+    except library.ERRORS:
+        _saturation_state.cache_clear()
+        return None
+
+
+def _vapour_pressure(equation: str, temperature: float) -> float | None:
+    state = _saturation_state(equation)
+    try:
+        state.update(library.fluids().QT_INPUTS, 0.0, temperature)
+        return float(state.p())
+    except library.ERRORS:
+        _saturation_state.cache_clear()
+        return None

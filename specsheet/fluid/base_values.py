@@ -1,0 +1,112 @@
+"""The fluid at base conditions, and what the user states about it there."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import replace
+
+from specsheet.findings import Finding, Level
+from specsheet.fluid.evaluate import Outcome
+from specsheet.fluid.given_values import given
+from specsheet.fluid.model import Fluid, caution
+from specsheet.fluid.phases import GAS
+from specsheet.fluid.state import Property, State
+from specsheet.quantity.value import Base
+from specsheet.tag import Tag
+
+_DENSITY = "fluid.base_density"
+_VOLUME_KEYS = ("gross_calorific_value", "net_calorific_value")
+#: what a consumer finds among the constants, at the job's own base
+_OWN = ("gross_calorific_value", "net_calorific_value", "wobbe_index", "relative_density")
+
+
+def bases_of(tag: Tag) -> tuple[Base, ...]:
+    """Return the job's own base condition and every other one that a flow is stated at."""
+    stated = [
+        quantity.base
+        for point in tag.points
+        if (quantity := point.quantity("flow")) is not None and quantity.base is not None
+    ]
+    return tuple(dict.fromkeys((tag.base, *stated)))
+
+
+def constants(tag: Tag, fluid: Fluid) -> dict[str, Property]:
+    """Return the properties that depend on no state, stated ones first."""
+    values = dict(fluid.constants())
+    molar = tag.si("fluid.molar_mass")
+    if molar is not None and molar > 0.0:
+        values["molar_mass"] = given(molar, 0.001)
+    conductivity = tag.si("fluid.electrical_conductivity")
+    if conductivity is not None:
+        values["electrical_conductivity"] = given(conductivity, 0.05)
+    return values
+
+
+def apply(
+    tag: Tag, fluid: Fluid, base: Base, outcome: Outcome
+) -> tuple[State, tuple[Finding, ...]]:
+    """Return the state at a base with the stated values in place, and the findings."""
+    found = outcome.state or State(base.temperature, base.pressure, fluid.phase, {})
+    findings = [*found.findings, *outcome.findings]
+    values = dict(found.properties)
+    density = tag.si(_DENSITY)
+    if density is not None and density > 0.0:
+        findings = [item for item in findings if item.level is not Level.STOP]
+        findings += _differs(base, tag.base, density, values.get("density"))
+        values["density"] = given(_moved(density, tag.base, base, fluid.phase), 0.002)
+    _calorific(tag, base, values)
+    said = tuple(_softened(item, base, tag.base) for item in findings)
+    return replace(found, properties=values), said
+
+
+def _moved(density: float, own: Base, base: Base, phase: str) -> float:
+    """Return a density stated at the job's base, at another base [kg/m3] (ideal gas)."""
+    if phase != GAS or base == own:
+        return density
+    return density * base.pressure / own.pressure * own.temperature / base.temperature
+
+
+def _differs(base: Base, own: Base, stated: float, computed: Property | None) -> list[Finding]:
+    if base != own or computed is None or abs(stated / computed.value - 1.0) <= 0.01:
+        return []
+    difference = 100.0 * (stated / computed.value - 1.0)
+    text = (
+        f"The stated density at base {stated:.4g} kg/m3 is {abs(difference):.3g} % "
+        f"{'above' if difference > 0 else 'below'} the computed {computed.value:.4g} kg/m3. The "
+        "stated one is used: confirm it, or leave it out."
+    )
+    return [caution("base-density-given-differs", _DENSITY, text, computed.source)]
+
+
+def _calorific(tag: Tag, base: Base, values: dict[str, Property]) -> None:
+    """Put calorific values stated at the job's base in place, moved to this base by density."""
+    density = values.get("density")
+    for key in _VOLUME_KEYS:
+        stated = tag.si(f"fluid.{key}")
+        if stated is None or stated <= 0.0:
+            continue
+        if base != tag.base:
+            stated *= base.pressure / tag.base.pressure * tag.base.temperature / base.temperature
+        values[key] = given(stated, 0.005)
+        if density is not None:
+            values[f"{key}_mass"] = given(stated / density.value, 0.005)
+
+
+def _softened(finding: Finding, base: Base, own: Base) -> Finding:
+    """Return a finding about a base condition: it stops no point, and its field is the base's."""
+    field = finding.field
+    if field and "." not in field:
+        field = f"job.base.{field}" if base == own else ""
+    level = Level.CAUTION if finding.level is Level.STOP else finding.level
+    return replace(
+        finding, level=level, field=field, message=f"At base ({base.name}): {finding.message}"
+    )
+
+
+def at_own_base(tag: Tag, bases: Mapping[Base, State]) -> dict[str, Property]:
+    """Return the values by volume at the job's own base, and stated calorific values by mass."""
+    own = bases.get(tag.base)
+    if own is None:
+        return {}
+    keys = (*_OWN, *(f"{key}_mass" for key in _VOLUME_KEYS))
+    return {key: own.properties[key] for key in keys if key in own.properties}

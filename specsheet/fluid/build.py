@@ -1,0 +1,113 @@
+"""From a tag to its fluid: which backend, with which data; what is missing is a finding."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from dataclasses import dataclass
+
+from specsheet.findings import Finding
+from specsheet.fluid import composition, names
+from specsheet.fluid.backends import given as given_backend
+from specsheet.fluid.backends.given import Given
+from specsheet.fluid.backends.mixture import Mixture
+from specsheet.fluid.backends.pure import Pure
+from specsheet.fluid.backends.water import Water
+from specsheet.fluid.model import Fluid, stop
+from specsheet.tag import Point, Tag
+
+
+@dataclass(frozen=True, slots=True)
+class Built:
+    """The fluid of a tag, or None with the findings that say why."""
+
+    fluid: Fluid | None
+    findings: tuple[Finding, ...] = ()
+
+
+def fluid_of(tag: Tag) -> Built:
+    """Return the fluid a tag states."""
+    kind = tag.text("fluid.kind")
+    builder = _BUILDERS.get(kind)
+    if builder is None:
+        wanted = ", ".join(_BUILDERS)
+        came = f"{kind!r} came" if kind else "none came"
+        text = f"A kind of fluid was wanted ({wanted}), {came}."
+        return Built(None, (stop("fluid-kind", "fluid.kind", text),))
+    return builder(tag)
+
+
+def _combustion(tag: Tag) -> float:
+    stated = tag.si("job.combustion_temperature")
+    return 288.15 if stated is None else stated
+
+
+def _substance(tag: Tag) -> Built:
+    text = tag.text("fluid.substance")
+    if not text:
+        message = "A substance was wanted, none came: state fluid.substance."
+        return Built(None, (stop("substance-missing", "fluid.substance", message),))
+    item = names.find(text)
+    if item is None:
+        return Built(None, (unknown("fluid.substance", text),))
+    if item.key == "water":
+        return Built(Water(tag.phase))
+    return Built(Pure(item.key, tag.phase, _combustion(tag)))
+
+
+def unknown(field: str, text: str) -> Finding:
+    """Return the finding for a name that names no substance, with the nearest ones."""
+    near = names.nearest(text)
+    hint = f" Did you mean {' or '.join(near)}?" if near else ""
+    return stop(
+        "substance-unknown",
+        field,
+        f"No substance is called {text!r}.{hint} Otherwise state density and viscosity at each "
+        "point with fluid.kind given, or add the substance to the folder fluids of the job.",
+    )
+
+
+def _mixture(tag: Tag) -> Built:
+    read = composition.read(
+        tag.table("fluid.mixture"), tag.text("fluid.basis") or "mole", tag.flag("fluid.normalise")
+    )
+    if read.composition is None:
+        return Built(None, read.findings)
+    found = read.composition
+    if len(found) == 1:
+        key = found[0][0]
+        lone = Water(tag.phase) if key == "water" else Pure(key, tag.phase, _combustion(tag))
+        return Built(lone, read.findings)
+    return Built(Mixture(found, tag.phase, combustion_temperature=_combustion(tag)), read.findings)
+
+
+def _given(tag: Tag) -> Built:
+    rows = tuple(row for point in tag.points if (row := _row(tag, point)) is not None)
+    return Built(Given(tag.phase, rows, tag.si("fluid.molar_mass")))
+
+
+def _row(tag: Tag, point: Point) -> given_backend.Row | None:
+    """Return what a point states; None where pressure or temperature is missing."""
+    pressure, temperature = point.quantity("pressure"), point.quantity("temperature")
+    if pressure is None or temperature is None:
+        return None
+    density, viscosity = point.quantity("density"), point.quantity("viscosity")
+    factor = point.quantity("compressibility")
+    dynamic = None
+    if viscosity is not None and viscosity.kind == "dynamic_viscosity":
+        dynamic = viscosity.value
+    elif viscosity is not None and density is not None:
+        dynamic = viscosity.value * density.value
+    return given_backend.Row(
+        temperature.value,
+        tag.absolute(pressure),
+        None if density is None else density.value,
+        dynamic,
+        None if factor is None else factor.value,
+    )
+
+
+_BUILDERS: dict[str, Callable[[Tag], Built]] = {
+    "substance": _substance,
+    "mixture": _mixture,
+    "given": _given,
+}

@@ -1,0 +1,94 @@
+"""One state, cached by fluid and condition, with every failure turned into a finding."""
+
+from __future__ import annotations
+
+import math
+import threading
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass, replace
+from functools import lru_cache
+
+from specsheet.findings import Finding
+from specsheet.fluid import library
+from specsheet.fluid.errors import translate
+from specsheet.fluid.model import Condition, Fluid, Refused, stop
+from specsheet.fluid.phases import disagreement
+from specsheet.fluid.state import State
+from specsheet.quantity.value import Base
+
+#: the state objects of the fluid library must not be used by two threads at once
+LOCK = threading.RLock()
+
+
+@dataclass(frozen=True, slots=True)
+class Outcome:
+    """A state, or the findings that say why there is none."""
+
+    state: State | None
+    findings: tuple[Finding, ...] = ()
+
+
+def state(fluid: Fluid, condition: Condition) -> Outcome:
+    """Return the state of a fluid, its phase checked against the one stated."""
+    for value, field, unit in (
+        (condition.temperature, "temperature", "K"),
+        (condition.pressure, "pressure", "Pa"),
+    ):
+        if value is not None and not (math.isfinite(value) and value > 0.0):
+            return Outcome(
+                None,
+                (
+                    stop(
+                        "fluid-limit",
+                        field,
+                        f"An absolute {field} above zero was wanted, {value:g} {unit} came.",
+                    ),
+                ),
+            )
+    with LOCK:
+        return _state(fluid, condition)
+
+
+@lru_cache(maxsize=4096)
+def _state(fluid: Fluid, condition: Condition) -> Outcome:
+    outcome = _guarded(
+        lambda: fluid.state(condition),
+        fluid.name,
+        condition.temperature or 0.0,
+        condition.pressure or 0.0,
+    )
+    found = outcome.state
+    if found is None or not fluid.phase:
+        return outcome
+    wet = condition.dryness is not None and found.value("dryness_fraction") is not None
+    wrong = None if wet else disagreement(fluid.phase, found)
+    if wrong is None:
+        return outcome
+    return Outcome(replace(found, findings=(*found.findings, wrong)), ())
+
+
+def base(fluid: Fluid, condition: Base) -> Outcome:
+    """Return the state of a fluid at a base condition."""
+    with LOCK:
+        return _base(fluid, condition)
+
+
+@lru_cache(maxsize=1024)
+def _base(fluid: Fluid, condition: Base) -> Outcome:
+    return _guarded(
+        lambda: fluid.base(condition), fluid.name, condition.temperature, condition.pressure
+    )
+
+
+def _guarded(call: Callable[[], State], name: str, temperature: float, pressure: float) -> Outcome:
+    try:
+        return Outcome(call())
+    except Refused as refused:
+        return Outcome(None, (refused.finding,))
+    except library.ERRORS as error:
+        return Outcome(None, (translate(error, name, temperature, pressure),))
+
+
+def states(fluid: Fluid, conditions: Sequence[Condition]) -> tuple[Outcome, ...]:
+    """Return the states of a fluid at any conditions, in their order (for what-if questions)."""
+    return tuple(state(fluid, condition) for condition in conditions)

@@ -1,0 +1,73 @@
+"""The stated phase against the computed one: what is said when they disagree."""
+
+from __future__ import annotations
+
+from specsheet.findings import Finding
+from specsheet.fluid.model import bar, caution, celsius, stop
+from specsheet.fluid.state import State
+
+LIQUID = "liquid"
+GAS = "gas"
+TWO_PHASE = "two_phase"
+SUPERCRITICAL = "supercritical"
+SOLID = "solid"
+UNVERIFIED = "unverified"
+
+
+def disagreement(stated: str, state: State) -> Finding | None:
+    """Return the finding for a stated phase that the state contradicts, or None."""
+    found = state.phase
+    if found == SOLID:
+        return stop(
+            "frozen",
+            "temperature",
+            f"The fluid is frozen at {celsius(state.temperature)}: raise the temperature or check "
+            "the fluid.",
+        )
+    if stated == LIQUID and found in (GAS, TWO_PHASE):
+        return _flashing(state)
+    if stated == GAS and found in (LIQUID, TWO_PHASE):
+        return _condensing(state)
+    if found == UNVERIFIED:
+        return caution(
+            "phase-unverified",
+            "fluid.phase",
+            f"Whether all of the fluid is {stated} at {celsius(state.temperature)} and "
+            f"{bar(state.pressure)} could not be decided; the values hold for the phase stated. "
+            "Check the dew or bubble point by other means.",
+        )
+    return None
+
+
+def _flashing(state: State) -> Finding:
+    """Return the stop for a stated liquid that boils."""
+    where = f"at {celsius(state.temperature)} and {bar(state.pressure)}"
+    vapour = state.value("vapour_pressure")
+    if vapour is not None and state.pressure <= vapour:
+        return stop(
+            "flashing",
+            "pressure",
+            f"Liquid is stated, but {where} the fluid boils: its vapour pressure is {bar(vapour)}. "
+            "Raise the pressure above it, lower the temperature, or state gas.",
+        )
+    amount = "is partly gas" if state.phase == TWO_PHASE else "is a gas"
+    return stop(
+        "phase-disagrees",
+        "fluid.phase",
+        f"Liquid is stated, but {where} the fluid {amount}. Correct the phase, the pressure or the "
+        "temperature.",
+    )
+
+
+def _condensing(state: State) -> Finding:
+    """Return the stop for a stated gas that is liquid or drops liquid."""
+    where = f"at {celsius(state.temperature)} and {bar(state.pressure)}"
+    limit = state.value("saturation_temperature") or state.value("dew_temperature")
+    edge = "" if limit is None else f"; it is all gas above {celsius(limit)}"
+    amount = "is partly liquid" if state.phase == TWO_PHASE else "is a liquid"
+    return stop(
+        "phase-disagrees",
+        "fluid.phase",
+        f"Gas is stated, but {where} the fluid {amount}{edge}. Correct the phase, the pressure or "
+        "the temperature.",
+    )

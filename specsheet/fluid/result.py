@@ -1,0 +1,91 @@
+"""The fluid of one tag: its state at every point and base condition, stated values first."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import replace
+
+from specsheet.findings import Finding, Level
+from specsheet.fluid import base_values, evaluate, given_values
+from specsheet.fluid.build import fluid_of
+from specsheet.fluid.model import Condition, Fluid
+from specsheet.fluid.state import FluidResult, Property, State
+from specsheet.quantity.value import Base
+from specsheet.tag import Point, Tag
+
+
+def derive(tag: Tag) -> FluidResult:
+    """Return the fluid of a tag. Never raises on what a user states: every doubt is a finding."""
+    built = fluid_of(tag)
+    fluid = built.fluid
+    name = tag.text("fluid.name")
+    if fluid is None:
+        return FluidResult(
+            name, tuple(None for _ in tag.points), {}, findings=_sorted(built.findings)
+        )
+    with evaluate.LOCK:
+        constants = base_values.constants(tag, fluid)
+        points, findings = _points(tag, fluid, constants)
+        bases, base_findings = _bases(tag, fluid)
+    return FluidResult(
+        name or fluid.name,
+        points,
+        bases,
+        {**constants, **base_values.at_own_base(tag, bases)},
+        _sorted((*built.findings, *findings, *base_findings)),
+    )
+
+
+def condition_of(tag: Tag, point: Point) -> Condition:
+    """Return where the fluid is wanted at an operating point."""
+    pressure, temperature = point.quantity("pressure"), point.quantity("temperature")
+    dryness = point.quantity("dryness_fraction")
+    return Condition(
+        None if temperature is None else temperature.value,
+        None if pressure is None else tag.absolute(pressure),
+        None if dryness is None else dryness.value,
+    )
+
+
+def _points(
+    tag: Tag, fluid: Fluid, constants: Mapping[str, Property]
+) -> tuple[tuple[State | None, ...], tuple[Finding, ...]]:
+    molar = constants.get("molar_mass")
+    states: list[State | None] = []
+    findings: list[Finding] = []
+    for point in tag.points:
+        outcome = evaluate.state(fluid, condition_of(tag, point))
+        found = outcome.state
+        if found is not None:
+            molar_mass = None if molar is None else molar.value
+            found = given_values.apply(tag, point, found, molar_mass)
+            found = replace(found, findings=tuple(_at(point, item) for item in found.findings))
+            findings += found.findings
+        findings += [_at(point, item) for item in outcome.findings]
+        states.append(found)
+    return tuple(states), tuple(findings)
+
+
+def _at(point: Point, finding: Finding) -> Finding:
+    """Return a finding with the path of its entry at a point; a path in full stays."""
+    field = finding.field
+    if field and "." not in field:
+        field = f"points.{point.name}.{field}"
+    return replace(finding, field=field, point=point.name)
+
+
+def _bases(tag: Tag, fluid: Fluid) -> tuple[Mapping[Base, State], tuple[Finding, ...]]:
+    bases: dict[Base, State] = {}
+    findings: list[Finding] = []
+    for base in base_values.bases_of(tag):
+        outcome = evaluate.base(fluid, base)
+        found, said = base_values.apply(tag, fluid, base, outcome)
+        bases[base] = replace(found, findings=said)
+        findings += said
+    return bases, tuple(findings)
+
+
+def _sorted(findings: tuple[Finding, ...]) -> tuple[Finding, ...]:
+    """Return the findings worst first, each once, otherwise in the order they came."""
+    order = (Level.STOP, Level.CAUTION, Level.NOTE)
+    return tuple(sorted(dict.fromkeys(findings), key=lambda item: order.index(item.level)))
