@@ -4,6 +4,9 @@ Imports without numpy. Everything takes the tag as it is typed and never raises 
 stated: what is wrong becomes a finding.
 """
 
+from specsheet.line.assess import LineResult, assess
+from specsheet.line.cautions import CautionResult, cautions
+from specsheet.line.compatibility import MaterialResult, materials
 from specsheet.line.pipe import Pipe
 from specsheet.line.piping import PipeResult, pipe_of
 from specsheet.line.rating import RatingResult, rate
@@ -11,10 +14,16 @@ from specsheet.line.straight import StraightResult, straight
 from specsheet.line.velocity import velocity_limits
 
 __all__ = [
+    "CautionResult",
+    "LineResult",
+    "MaterialResult",
     "Pipe",
     "PipeResult",
     "RatingResult",
     "StraightResult",
+    "assess",
+    "cautions",
+    "materials",
     "pipe_of",
     "rate",
     "straight",

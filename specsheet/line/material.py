@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import re
 from dataclasses import dataclass
-from functools import cache
+from functools import cache, lru_cache
 from itertools import pairwise
 
 from specsheet.packs import table
@@ -84,7 +84,7 @@ def _named() -> tuple[tuple[Material, tuple[str, ...]], ...]:
     return tuple(found)
 
 
-@cache
+@lru_cache(maxsize=4096)
 def find_material(text: str) -> Material | None:
     """Return the material that a text names, or None.
 

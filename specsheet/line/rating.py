@@ -30,6 +30,8 @@ _PROPOSE = "propose"
 _FLANGED = ("flanged", "wafer")
 #: largest DN that ASME B16.5 covers, and that it covers in Class 2500 (the latter from memory)
 _LARGEST_DN, _LARGEST_DN_2500 = 600, 300
+#: temperature above which the graphite note is printed [K]
+_NEAR_GRAPHITE = 673.15
 
 
 @dataclass(frozen=True, slots=True)
@@ -65,7 +67,7 @@ def rate(tag: Tag, fluid: FluidResult | None = None, *, nominal: int = 0) -> Rat
     if chosen is None and not refused:
         chosen, origin = _propose(demands, material, line, findings), Origin.DERIVED
     if chosen is None:
-        return RatingResult({}, _general_notes(tag, material_text, None), tuple(findings))
+        return RatingResult({}, _general_notes(tag, material_text, None, demands), tuple(findings))
     source = "line.rating" if wanted is None and line is not None else standard(chosen.system)
     values = {"flange_rating": Given(str(chosen), origin, source)}
     decisive = _decisive(demands)
@@ -79,7 +81,7 @@ def rate(tag: Tag, fluid: FluidResult | None = None, *, nominal: int = 0) -> Rat
     findings.extend(_size(chosen, nominal))
     findings.extend(_cold(tag, chosen, material))
     findings.extend(_test(tag, chosen, material, demands))
-    notes = (*_general_notes(tag, material_text, material), *_test_notes(chosen, material))
+    notes = (*_general_notes(tag, material_text, material, demands), *_test_notes(chosen, material))
     return RatingResult(values, notes, tuple(dict.fromkeys(findings)))
 
 
@@ -245,9 +247,12 @@ def _test_notes(rating: Rating, material: Material | None) -> tuple[str, ...]:
     )
 
 
-def _general_notes(tag: Tag, material_text: str, material: Material | None) -> tuple[str, ...]:
+def _general_notes(
+    tag: Tag, material_text: str, material: Material | None, demands: Demands
+) -> tuple[str, ...]:
     notes = [f"The rating is that of flanges of {material_text}."]
-    if material is not None and material.group == "1.1":
+    hottest = max((demand.temperature for demand in demands.every), default=0.0)
+    if material is not None and material.group == "1.1" and hottest > _NEAR_GRAPHITE:
         notes.append(
             "Carbon steel turns to graphite in long service above 425 °C (ASME B16.5, note 1 to "
             "table 2-1.1)."

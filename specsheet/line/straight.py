@@ -1,7 +1,7 @@
 """Straight lengths: what the family's profile wants against what the line has.
 
 Table ``[straight]`` of a profile, all in diameters: ``source``; ``betas``; for each fitting either
-``fittings."single bend"`` with ``lengths`` and ``reduced``, or lists in ``upstream`` and ``reduced``,
+``fittings."single bend"`` with ``lengths`` and ``reduced``, or lists in ``upstream``, ``reduced``,
 or a list right in the table ("single bend" and "single_bend" are one); ``downstream`` and
 ``downstream_reduced``. A list has one value for each diameter ratio, or one value for all.
 """
@@ -85,7 +85,7 @@ def straight(
             "upstream",
             _interpolated(rules, full, beta),
             _interpolated(rules, reduced, beta),
-            f" behind {_words(fitting)}{_assumed(tag)}",
+            f" after {_words(fitting)}{_assumed(tag)}",
         ),
         _Side(
             "downstream",
@@ -113,7 +113,7 @@ def straight(
 
 
 def _words(fitting: str) -> str:
-    return "no fitting" if fitting == "none" else f"a fitting of the kind {fitting!r}"
+    return "no fitting" if fitting == "none" else f'the fitting "{fitting}"'
 
 
 def _assumed(tag: Tag) -> str:
@@ -129,7 +129,7 @@ def _judge(
     cited = f" ({source})" if source else ""
     stated = _stated(tag, side.entry)
     if stated is None:
-        message = f"{side.name.capitalize()}: {wanted} wanted{cited}; the line states none."
+        message = f"{side.name.capitalize()}: {wanted} wanted{cited}; what is there is not stated."
         code = f"{side.name}-length-not-stated"
         return message, (Finding(Level.NOTE, code, side.entry, message, source=source),), 0.0
     there = stated.in_diameters(pipe_diameter) * pipe_diameter / of

@@ -194,7 +194,7 @@ def test_test_pressure(test, code):
         (DESIGN, 'end_connection = "hygienic"', "flange rating does not apply"),
         (DESIGN, "", "Bolting"),
         (DESIGN, "", "30 bar(g), 1.5 times"),
-        (DESIGN, "", "425 °C"),
+        ('pressure = "12 bar(g)"\ntemperature = "410 degC"', "", "425 °C"),
     ],
 )
 def test_what_the_rating_does_not_cover_is_noted(design, require, words):

@@ -128,7 +128,7 @@ def test_a_table_by_fitting():
 
 
 def test_the_orifice_plate_behind_a_bend():
-    """ISO 5167-2:2003, table 3 (from memory): single bend, 22 D at 0.50, 42 D at 0.60; reduced 9."""
+    """ISO 5167-2:2003, table 3 (from memory): single bend, 22 D at 0.50; reduced 9 D."""
     tag = line_tag(line='inside_diameter = "200 mm"\nupstream_length = "10 D"')
     result = straight(tag, packs.profile("orifice_concentric"), 0.5, pipe_diameter=D)
     assert result.values["upstream_length"].value == pytest.approx(22 * D)

@@ -1,0 +1,146 @@
+"""Wetted materials against the service: short notes with their source, never a guarantee."""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Iterator, Mapping, Sequence
+from dataclasses import dataclass
+from functools import cache, lru_cache
+from typing import Any
+
+from specsheet.findings import Finding, Level
+from specsheet.fluid.state import FluidResult
+from specsheet.line.cautions import dangers
+from specsheet.line.material import find_material
+from specsheet.line.service import Service, service_facts
+from specsheet.packs import Profile, table
+from specsheet.tag import Tag
+
+_CELSIUS = 273.15
+_ORDER = ("avoid", "conditional", "suited")
+_CLOSING = (
+    "These are notes, no guarantee: a materials engineer chooses for the true composition, "
+    "temperature and traces; local codes come first."
+)
+_AS_LINE = "as the line"
+
+
+@dataclass(frozen=True, slots=True)
+class MaterialResult:
+    """What is said of the wetted materials.
+
+    Attributes:
+        notes: one sentence for each rule that holds, the worst first, and a closing one.
+        findings: a caution for a stated material that is to be avoided.
+    """
+
+    notes: tuple[str, ...]
+    findings: tuple[Finding, ...] = ()
+
+
+@dataclass(frozen=True, slots=True)
+class _Part:
+    """A wetted part: its name, the text of its material, and the entry that states it, or ""."""
+
+    name: str
+    text: str
+    entry: str = ""
+
+
+def materials(
+    tag: Tag, profile: Profile | None, fluid: FluidResult | None = None
+) -> MaterialResult:
+    """Return the notes on the materials that the fluid touches.
+
+    Args:
+        tag: the tag; ``require.body_material`` and ``line.material`` count as wetted.
+        profile: the family's profile with its wetted parts, or None.
+        fluid: states at the operating points, where saturation decides temperature or pressure.
+    """
+    service = service_facts(tag, fluid)
+    words = service.words | dangers(service)
+    lines: dict[str, list[str]] = {verdict: [] for verdict in _ORDER}
+    findings: list[Finding] = []
+    parts = tuple(_parts(tag, profile))
+    for index, rule in enumerate(table("compatibility")["rule"]):
+        hit = [part for part in parts if index in _rules_about(part.text)]
+        if not hit or not _holds(rule, service, words):
+            continue
+        verdict, text, source = rule["verdict"], rule["text"], rule["source"]
+        lines[verdict].append(f"{_named(hit)}: {verdict}; {text} ({source}).")
+        findings.extend(
+            Finding(
+                Level.CAUTION,
+                "material-avoid",
+                part.entry,
+                f'"{part.text}" is stated, but {text}. Choose another, or have a materials '
+                "engineer confirm it.",
+                source=source,
+            )
+            for part in hit
+            if part.entry and verdict == "avoid"
+        )
+    notes = [line for verdict in _ORDER for line in lines[verdict]]
+    return MaterialResult((*notes, _CLOSING), tuple(dict.fromkeys(findings)))
+
+
+def _parts(tag: Tag, profile: Profile | None) -> Iterator[_Part]:
+    line = tag.text("line.material")
+    if line:
+        yield _Part("pipe", line, "line.material" if "line.material" in tag.given else "")
+    body = tag.text("require.body_material")
+    if body:
+        yield _Part("body", body, "require.body_material")
+    if profile is not None:
+        for name, choices in profile.wetted.items():
+            for text in choices:
+                yield _Part(name, line if text == _AS_LINE else text)
+
+
+def _named(parts: Sequence[_Part]) -> str:
+    by_text: dict[str, list[str]] = {}
+    for part in parts:
+        names = by_text.setdefault(part.text, [])
+        if part.name not in names:
+            names.append(part.name)
+    listed = "; ".join(f"{text} ({', '.join(names)})" for text, names in by_text.items())
+    return listed[0].upper() + listed[1:]
+
+
+def _holds(rule: Mapping[str, Any], service: Service, words: frozenset[str]) -> bool:
+    """Tell whether the service is one the rule is about; an unknown fact holds no bound."""
+    concerned = any(word == "any" or word in words or service.has(word) for word in rule["when"])
+    return concerned and all(
+        (
+            "phase" not in rule or rule["phase"] == service.phase,
+            "above" not in rule
+            or (service.hottest is not None and service.hottest - _CELSIUS > rule["above"]),
+            "below" not in rule
+            or (service.coldest is not None and service.coldest - _CELSIUS < rule["below"]),
+            "chlorides_above" not in rule
+            or (service.chlorides is not None and service.chlorides > rule["chlorides_above"]),
+        )
+    )
+
+
+@lru_cache(maxsize=4096)
+def _rules_about(text: str) -> frozenset[int]:
+    """Return the indices of the rules that concern a material."""
+    rules = table("compatibility")["rule"]
+    return frozenset(index for index, rule in enumerate(rules) if _touches(rule, text))
+
+
+def _touches(rule: Mapping[str, Any], text: str) -> bool:
+    material = find_material(text)
+    spoken = f"{text} {material.name if material else ''}".lower()
+    if any(_word(word).search(spoken) for word in rule.get("except", ())):
+        return False
+    return any(
+        (material is not None and material.kind == word) or _word(word).search(spoken)
+        for word in rule["materials"]
+    )
+
+
+@cache
+def _word(word: str) -> re.Pattern[str]:
+    return re.compile(rf"(?<![a-z0-9]){re.escape(word)}(?![a-z0-9])")
