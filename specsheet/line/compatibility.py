@@ -62,10 +62,12 @@ def materials(
     lines: dict[str, list[str]] = {verdict: [] for verdict in _ORDER}
     findings: list[Finding] = []
     parts = tuple(_parts(tag, profile))
-    for index, rule in enumerate(table("compatibility")["rule"]):
-        hit = [part for part in parts if index in _rules_about(part.text)]
-        if not hit or not _holds(rule, service, words):
+    rules = table("compatibility")["rule"]
+    for index in sorted(set().union(*(_rules_about(part.text) for part in parts))):
+        rule = rules[index]
+        if not _holds(rule, service, words):
             continue
+        hit = [part for part in parts if index in _rules_about(part.text)]
         verdict, text, source = rule["verdict"], rule["text"], rule["source"]
         lines[verdict].append(f"{_named(hit)}: {verdict}; {text} ({source}).")
         findings.extend(
