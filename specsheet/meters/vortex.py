@@ -10,7 +10,6 @@ from collections.abc import Mapping
 
 import numpy as np
 
-from specsheet.fields import term
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.family import (
     Array,
@@ -24,7 +23,7 @@ from specsheet.meters.family import (
     Stream,
 )
 from specsheet.meters.shared import output, response, sizes
-from specsheet.meters.shared.choice import Rules, Trial, attempt, best
+from specsheet.meters.shared.choice import Rules, choose
 from specsheet.methods import back_pressure, signal, vortex
 from specsheet.sources import PRACTICE, cite
 
@@ -36,30 +35,7 @@ def size(request: Request) -> Element:
     found = sizes.candidates(request)
     largest_first = tuple(reversed(found.sizes))
     rules = Rules(at, limits, budget)
-    trials = [attempt(request, _build(request, item), rules) for item in largest_first]
-    index = best(trials)
-    element = trials[index].element
-    notes = dict(element.notes)
-    if found.free:
-        notes["element"] = (*notes["element"], _reason(largest_first, trials, index))
-    return Element(
-        element.numbers,
-        element.values,
-        notes,
-        (*found.findings, *element.findings),
-        element.choices,
-    )
-
-
-def _reason(tried: tuple[sizes.Size, ...], trials: list[Trial], index: int) -> str:
-    """Say in a sentence why this size was chosen."""
-    text = f"{tried[index].text} is the largest size that breaks no limit at any operating point"
-    if trials[index].stops or trials[index].cautions:
-        text = f"{tried[index].text} breaks the limits least; none holds them all"
-    if index:
-        broken = ", ".join(term(key).label for key in trials[index - 1].broken)
-        text += f"; {tried[index - 1].text} would break: {broken}"
-    return f"{text}."
+    return choose(request, found, largest_first, _build, rules, "the largest size")
 
 
 def _build(request: Request, item: sizes.Size) -> Element:
@@ -97,6 +73,7 @@ def _build(request: Request, item: sizes.Size) -> Element:
         **{name: figure.value for name, figure in typical.items()},
         "bluff_width": bluff,
         "k_factor": factor,
+        "averaging_time": tag.si("meter.averaging_time") or 10.0,
         "reading_error": typical[f"{tag.phase or 'liquid'}_error"].value,
     }
     return Element(

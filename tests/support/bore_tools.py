@@ -76,7 +76,7 @@ def request(
         for name, flow in zip(names, flows, strict=True)
     )
     entries = {"tag": "FT-1", "family": family, "fluid.phase": phase, "line.material": "steel"}
-    entries |= {key.replace("__", "."): value for key, value in given.items()}
+    entries |= {key.replace("__", "."): item for key, item in given.items() if item is not None}
     pipe = Pipe(diameter, 6e-3, 12e-6, 5e-5, f"DN {nominal}" if nominal else "", nominal, "steel")
     tag = Tag(given=entries, points=points)
     return Request(tag, packs.profile(family), pipe, names, stream(flows, fluid), 1, 2, 0)

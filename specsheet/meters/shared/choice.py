@@ -3,13 +3,15 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
+from specsheet.fields import term
 from specsheet.findings import Level
 from specsheet.meters.family import Array, Contribution, Element, Limit, Request, Stream
 from specsheet.meters.shared import limits as shared_limits
+from specsheet.meters.shared.sizes import Candidates, Size
 
 
 @dataclass(frozen=True)
@@ -75,3 +77,44 @@ def best(trials: Sequence[Trial]) -> int:
     """
     scores = [(round(trial.stops, 9), round(trial.cautions, 9)) for trial in trials]
     return scores.index(min(scores))
+
+
+def choose(
+    request: Request,
+    found: Candidates,
+    order: Sequence[Size],
+    build: Callable[[Request, Size], Element],
+    rules: Rules,
+    liking: str,
+) -> Element:
+    """Return the best candidate, with a note that says why, where the program may choose.
+
+    Args:
+        request: the tag's request.
+        found: the sizes in question, with what is wrong with what the user stated.
+        order: the same sizes, the most liked first.
+        build: builds the element of one size.
+        rules: the family's functions.
+        liking: how the order came about ("the largest size").
+    """
+    trials = [attempt(request, build(request, size), rules) for size in order]
+    index = best(trials)
+    element = trials[index].element
+    notes = dict(element.notes)
+    if found.free:
+        reason = _reason(order, trials, index, liking)
+        notes["element"] = (*notes.get("element", ()), reason)
+    return replace(element, notes=notes, findings=(*found.findings, *element.findings))
+
+
+def _reason(order: Sequence[Size], trials: Sequence[Trial], index: int, liking: str) -> str:
+    """Say in a sentence why this size was chosen."""
+    chosen = trials[index]
+    if chosen.stops or chosen.cautions:
+        text = f"{order[index].text} breaks the limits least; no size holds them all"
+    else:
+        text = f"{order[index].text} is {liking} that holds every limit at every operating point"
+    if index:
+        broken = ", ".join(term(key).label for key in trials[index - 1].broken)
+        text += f"; {order[index - 1].text} would break: {broken}"
+    return f"{text}."

@@ -56,7 +56,6 @@ def output(request: Request, *, by_mass: bool = False) -> Output:
             "upper_range_mass": mass,
             "upper_range_volume": volume,
             "pulse": pulse,
-            "averaging_time": _averaging_time(request),
         },
         choices={"range_by": base, "pulse_by": counted, "flow_kind": kind},
         values={
@@ -143,11 +142,6 @@ def _pulse(request: Request, full: float) -> tuple[float, Origin]:
         return stated.value, Origin.GIVEN
     highest = request.profile.typical["highest_pulse_rate"].value
     return signal.round_up(value=full / highest, series=signal.DECADES), Origin.DERIVED
-
-
-def _averaging_time(request: Request) -> float:
-    stated = request.tag.quantity("meter.averaging_time")
-    return 10.0 if stated is None else stated.value
 
 
 def _say(key: str, value: float) -> str:

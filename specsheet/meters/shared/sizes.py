@@ -8,7 +8,7 @@ from dataclasses import dataclass, replace
 from specsheet import quantity
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.family import Given, Request
-from specsheet.packs import Profile
+from specsheet.packs import Profile, Typical
 from specsheet.quantity.value import Refusal
 
 FREE = "size it"
@@ -159,3 +159,10 @@ def size_findings(request: Request, size: Size) -> tuple[Finding, ...]:
             "before it, which spoil the profile. Take the line's size or a smaller one.",
         ),
     )
+
+
+def stated_or_typical(stated: float | None, typical: Typical) -> Given:
+    """Return what the user stated of the meter, else the figure usual for the family."""
+    if stated is not None:
+        return Given(stated, Origin.GIVEN)
+    return Given(typical.value, Origin.TYPICAL, typical.source)

@@ -1,0 +1,1 @@
+"""Wetted parts of an electromagnetic meter: liner, electrodes, earthing."""
