@@ -21,6 +21,8 @@ _BAR = 1e5
 _PSI = 6894.757293168361
 _CELSIUS = 273.15
 CLASS, PN = "Class", "PN"
+#: kinds of material that stay tough in the cold
+TOUGH = ("austenitic", "nickel")
 
 
 @dataclass(frozen=True, slots=True)
@@ -110,10 +112,14 @@ def allowed(rating: Rating, material: Material | None, temperature: float) -> Al
         rating: class or PN.
         material: of the flange; None where it is not known.
         temperature: [K]
+
+    Below the lowest temperature of B16.5, metals that stay tough keep the rating they have there
+    (ASME B16.5: no greater than at -29 °C; from memory); for the others nothing is said.
     """
     if material is None:
         return Allowed(None, reason="the flange material is not known")
-    if temperature < lowest_temperature(rating.system):
+    tough = rating.system == CLASS and material.kind in TOUGH
+    if temperature < lowest_temperature(rating.system) and not tough:
         floor = lowest_temperature(rating.system) - _CELSIUS
         reason = f"the ratings hold from {floor:.0f} degC up"
         return Allowed(None, standard(rating.system), reason)

@@ -10,6 +10,7 @@ from specsheet.fluid.state import FluidResult
 from specsheet.line.demand import Demand, Demands, demands_of
 from specsheet.line.flange import (
     CLASS,
+    TOUGH,
     Allowed,
     Rating,
     allowed,
@@ -79,7 +80,7 @@ def rate(tag: Tag, fluid: FluidResult | None = None, *, nominal: int = 0) -> Rat
         findings.extend(_check(chosen, material, demand))
     findings.extend(_mating(chosen, line))
     findings.extend(_size(chosen, nominal))
-    findings.extend(_cold(tag, chosen, material))
+    findings.extend(_cold(tag, chosen, material, demands))
     findings.extend(_test(tag, chosen, material, demands))
     notes = (*_general_notes(tag, material_text, material, demands), *_test_notes(chosen, material))
     return RatingResult(values, notes, tuple(dict.fromkeys(findings)))
@@ -199,21 +200,28 @@ def _size(rating: Rating, nominal: int) -> Iterator[Finding]:
         yield Finding(Level.CAUTION, "rating-size", _WANTED, message, source=source)
 
 
-def _cold(tag: Tag, rating: Rating, material: Material | None) -> Iterator[Finding]:
+def _cold(
+    tag: Tag, rating: Rating, material: Material | None, demands: Demands
+) -> Iterator[Finding]:
+    """Yield one finding where the metal can get colder than the ratings reach."""
     floor = lowest_temperature(rating.system)
-    for entry in ("design.minimum_temperature", "design.ambient_minimum"):
-        stated = tag.si(entry)
-        if stated is None or stated >= floor:
-            continue
-        tough = material is not None and material.kind in ("austenitic", "nickel")
-        level = Level.NOTE if tough else Level.CAUTION
-        message = (
-            f"{tag.text(entry)} is below {floor - 273.15:.0f} degC, down to which the ratings of "
-            f"{standard(rating.system)} hold: the material must be qualified for it (impact tests, "
-            "low-temperature grade) by the piping code."
-        )
-        yield Finding(level, "rating-cold", entry, message, source=standard(rating.system))
+    stated = {
+        entry: value
+        for entry in ("design.minimum_temperature", "design.ambient_minimum")
+        if (value := tag.si(entry)) is not None
+    }
+    stated |= {f"points.{point.name}.temperature": point.temperature for point in demands.points}
+    entry = min(stated, key=lambda name: stated[name], default="")
+    if not entry or stated[entry] >= floor:
         return
+    tough = material is not None and material.kind in TOUGH
+    message = (
+        f"{stated[entry] - 273.15:.4g} degC is below {floor - 273.15:.0f} degC, down to which the "
+        f"ratings of {standard(rating.system)} hold: the material must be qualified for it (impact "
+        "tests, low-temperature grade) by the piping code."
+    )
+    level = Level.NOTE if tough else Level.CAUTION
+    yield Finding(level, "rating-cold", entry, message, source=standard(rating.system))
 
 
 def _test(

@@ -199,3 +199,15 @@ def test_test_pressure(test, code):
 )
 def test_what_the_rating_does_not_cover_is_noted(design, require, words):
     assert any(words in note for note in _rated(design, require).notes)
+
+
+def test_tough_metal_keeps_its_rating_in_the_cold():
+    """ASME B16.5: below -29 degC no greater than there (from memory); 15.9 bar(g) for group 2.3."""
+    point = 'pressure = "8 bar(g)"\ntemperature = "-150 degC"'
+    design = 'pressure = "15 bar(g)"\ntemperature = "40 degC"'
+    result = _rated(design, material="stainless steel 316L", point=point)
+    assert result.values["flange_rating"].value == "Class 150"
+    assert _codes(result) == ["rating-cold"]
+    assert result.findings[0].level is Level.NOTE
+    brittle = _rated(design, material="carbon steel", point=point)
+    assert "rating-not-proposed" in _codes(brittle)
