@@ -18,8 +18,8 @@ from specsheet.line.dimensions import (
 from specsheet.quantity.value import Quantity, Refusal
 from specsheet.tag import Tag
 
-#: DN whose outside diameter differs by more than 2 % between ASME and EN 10220, series 1 [mm]
-_OTHER_SERIES = {65: 76.1}
+#: DN whose outside diameter differs by more than 1 % between ASME and EN 10220, series 1 [mm]
+_OTHER_SERIES = {65: 76.1, 125: 139.7}
 _DISAGREE = 0.01
 _UNLINED = ("", "none", "no", "unlined")
 

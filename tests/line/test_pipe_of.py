@@ -114,10 +114,13 @@ def test_a_lining_without_thickness_is_said():
     assert _codes(result) == ["lining-thickness-missing"]
 
 
-def test_dn_65_is_two_pipes():
-    """73.0 mm by ASME B36.10M, 76.1 mm by EN 10220 (from memory)."""
-    assert "two-series" in _codes(pipe_of(line_tag(line='size = "DN 65"\nschedule = "40"')))
-    assert "two-series" not in _codes(pipe_of(line_tag(line='size = "NPS 2 1/2"\nschedule = "40"')))
+@pytest.mark.parametrize(
+    ("size", "said"), [("DN 65", True), ("DN 125", True), ("DN 150", False), ("NPS 2 1/2", False)]
+)
+def test_some_dn_are_two_pipes(size, said):
+    """73.0 and 141.3 mm by ASME B36.10M, 76.1 and 139.7 mm by EN 10220 (from memory)."""
+    result = pipe_of(line_tag(line=f'size = "{size}"\nschedule = "40"'))
+    assert ("two-series" in _codes(result)) is said
 
 
 @pytest.mark.parametrize(
