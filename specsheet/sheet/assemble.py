@@ -3,12 +3,23 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
+from dataclasses import replace
 from typing import TYPE_CHECKING
 
 from specsheet.fields import KINDS
 from specsheet.findings import Origin
 from specsheet.sheet import annex, axis, limits, ruler, tables, words
-from specsheet.sheet.model import Clauses, Detail, Request, RevisionRow, Row, Sheet, citations
+from specsheet.sheet.model import (
+    Cell,
+    Clauses,
+    Detail,
+    Request,
+    RevisionRow,
+    Row,
+    Sheet,
+    Table,
+    citations,
+)
 from specsheet.sheet.rows import of_entry
 from specsheet.sheet.units import Units
 from specsheet.tag import Tag
@@ -75,7 +86,7 @@ def build(evaluation: Evaluation) -> Sheet:
         limits=checked,
         budget=budget,
         findings=findings,
-        assumptions=_assumptions(tag, every),
+        assumptions=_assumptions(tag, (points, *others), budget),
         clauses=_clauses(evaluation),
         cautions=(*evaluation.notes.get(_CAUTIONS, ()), STANDING_CAUTION),
         revisions=_revisions(tag),
@@ -93,17 +104,28 @@ def _head(evaluation: Evaluation) -> tuple[Detail, ...]:
     return tuple(line for line in lines if line.text)
 
 
-def _assumptions(tag: Tag, every: Iterable[Row]) -> tuple[Row, ...]:
-    """Return all assumed values: the ones that stand in a table, then the rest of the defaults."""
+def _assumptions(tag: Tag, made: Iterable[Table], budget: Table | None) -> tuple[Row, ...]:
+    """Return all assumed values: those that stand in a table, then the rest of the defaults."""
     met: dict[str, Row] = {}
-    for row in every:
-        if Origin.ASSUMED in row.origins:
-            met.setdefault(row.key, row)
+    for table in made:
+        for row in table.rows:
+            if Origin.ASSUMED in row.origins:
+                met.setdefault(row.key, _only_assumed(row, row.label))
     site = {"job.atmospheric_pressure"} if tag.quantity("job.altitude") is not None else set()
     for path in tag.assumed:
-        if path not in met and path not in site and path not in _HOUSEKEEPING:
+        silent = path in site or path in _HOUSEKEEPING or not tables.matters(tag, path)
+        if path not in met and not silent:
             met[path] = of_entry(tag, path, words.label(path))
+    for row in budget.rows if budget else ():
+        if Origin.ASSUMED in row.origins:
+            met[f"budget.{row.key}"] = _only_assumed(row, f"Contribution: {row.label}")
     return tuple(row for row in met.values() if row.origins)
+
+
+def _only_assumed(row: Row, label: str) -> Row:
+    """Return a row as one line of the list: its assumed values, each once."""
+    texts = dict.fromkeys(cell.text for cell in row.cells if cell.origin is Origin.ASSUMED)
+    return replace(row, label=label, cells=(Cell(", ".join(texts), Origin.ASSUMED),))
 
 
 def _clauses(evaluation: Evaluation) -> tuple[Clauses, ...]:

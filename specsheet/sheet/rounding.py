@@ -98,11 +98,11 @@ def to_step(value: float, smallest: float) -> str:
 
 
 def plain(value: float) -> str:
-    """Return a stated bound or default with the digits it has, no more than six."""
+    """Return a bound or a tick with the digits it has, no more than four."""
     if not math.isfinite(value):
         return NOTHING
-    text = f"{value:.6g}"
-    return significant(value, 6) if "e" in text else group(text)
+    text = significant(value, 4)
+    return text.rstrip("0").rstrip(".") if "." in text and "·" not in text else text
 
 
 def group(text: str) -> str:

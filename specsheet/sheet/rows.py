@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
+from functools import lru_cache
 from typing import TYPE_CHECKING
 
 from specsheet import quantity
@@ -59,20 +60,20 @@ def of_results(key: str, results: Sequence[Result | None], units: Units, note: s
     """
     term = TERMS.get(key)
     present = [result for result in results if result is not None]
-    typed = [result.text for result in present if result.origin is Origin.GIVEN and result.text]
+    typed = [result.text for result in present if echoes(result, key)]
     if typed and len(typed) == len(present):
         cells, unit = _as_typed([result.text if result else "" for result in results])
     else:
         numbers = [r.value for r in present if isinstance(r.value, float | int)]
         internal = unit_of(key, numbers, units) if numbers else ""
         cells = [_cell_text(result, key, internal) for result in results]
-        unit = words.unit(internal)
+        unit = units.currency if key == "yearly_cost" else words.unit(internal)
     return Row(
         key=key,
         label=term.label if term else words.from_key(key),
         symbol=term.symbol if term else "",
         cells=tuple(
-            _EMPTY if result is None or text == NOTHING else Cell(text, result.origin)
+            _EMPTY if result is None or text == NOTHING else Cell(text, origin(result, key))
             for result, text in zip(results, cells, strict=True)
         ),
         unit=unit,
@@ -83,13 +84,32 @@ def of_results(key: str, results: Sequence[Result | None], units: Units, note: s
     )
 
 
+def echoes(result: Result, key: str) -> bool:
+    """Tell whether a value is echoed as typed: given, and typed as the kind it is printed as.
+
+    A gauge pressure typed is no absolute pressure, a kinematic viscosity no dynamic one.
+    """
+    return result.origin is Origin.GIVEN and _is_of(result.text, kind_of(key))
+
+
+@lru_cache(maxsize=4_000)
+def _is_of(text: str, kind: str) -> bool:
+    return bool(text) and kind in KINDS and isinstance(quantity.parse(text, kind), Quantity)
+
+
+def origin(result: Result, key: str) -> Origin:
+    """Return the origin that is printed: a number typed as another kind has been converted."""
+    converted = result.text and not isinstance(result.value, str) and not echoes(result, key)
+    return Origin.DERIVED if result.origin is Origin.GIVEN and converted else result.origin
+
+
 def _cell_text(result: Result | None, key: str, unit: str) -> str:
     if result is None:
         return NOTHING
     if isinstance(result.value, str):
         given = result.origin is Origin.GIVEN
         return (result.value if given else result.value.replace("_", " ")) or NOTHING
-    if result.origin is Origin.GIVEN and result.text:
+    if echoes(result, key):
         digits, typed_unit = words.split(result.text)
         return digits if typed_unit == words.unit(unit) else f"{digits} {typed_unit}".strip()
     return number(float(result.value), key, kind_of(key), unit)

@@ -15,7 +15,7 @@ if TYPE_CHECKING:
 
 #: room left and right of the operating points, and how far a window may draw the axis out [-]
 _ROOM = 1.6
-_REACH = 12.0
+_REACH = 4.0
 
 #: a flow this close to the end of a window stands on it (an end solved for the point itself) [-]
 _TOUCH = 1e-6

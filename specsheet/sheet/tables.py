@@ -71,11 +71,12 @@ def by_point(evaluation: Evaluation, units: Units) -> list[Table]:
     keys = rows.ordered({key: None for point in evaluation.points for key in point.values})
     order = list(TERMS)
     border = order.index(_FIRST_OF_THE_METER)
+    stated = _kinds_stated(evaluation.tag)
     fluid: list[Row] = []
     meter: list[Row] = []
     for key in keys:
         results = [point.values.get(key) for point in evaluation.points]
-        if all(result is None or _typed(result) for result in results):
+        if key in stated or all(result is None or rows.echoes(result, key) for result in results):
             continue  # stands in the table of operating points already
         note = f"at {evaluation.tag.base.name}" if key == "base_volume_flow" else ""
         early = key in TERMS and order.index(key) < border
@@ -87,8 +88,10 @@ def by_point(evaluation: Evaluation, units: Units) -> list[Table]:
     return [table for table in tables if table.rows]
 
 
-def _typed(result: Result) -> bool:
-    return result.origin is Origin.GIVEN and bool(result.text)
+def _kinds_stated(tag: Tag) -> set[str]:
+    """Return the kinds of pressure that every point states: they are not derived back."""
+    kinds = [held.kind for point in tag.points if (held := point.quantity("pressure"))]
+    return set(kinds) if len(set(kinds)) == 1 and len(kinds) == len(tag.points) else set()
 
 
 def single(evaluation: Evaluation, units: Units) -> list[Table]:
@@ -106,7 +109,7 @@ def single(evaluation: Evaluation, units: Units) -> list[Table]:
         ("summary", "Range and running cost", _cost(evaluation), evaluation.summary),
     )
     made = [
-        Table(key, title, (), (*stated, *_results(values, stated, units)))
+        Table(key, title, (), (*stated, *_results(tag, values, stated, units)))
         for key, title, stated, values in sections
     ]
     return [table for table in made if table.rows]
@@ -117,8 +120,19 @@ def _section(tag: Tag, prefix: str, labels: Mapping[str, Entry]) -> tuple[Row, .
     known = [path for path in labels if path.startswith(prefix)]
     stated = [path for path in (*tag.given, *tag.assumed) if path.startswith(prefix)]
     places = {path: place for place, path in enumerate(known)}
+    stated = [path for path in stated if path in tag.given or matters(tag, path)]
     paths = sorted(dict.fromkeys(stated), key=lambda path: places.get(path, len(places)))
     return tuple(_entry(tag, path, labels) for path in paths)
+
+
+def matters(tag: Tag, path: str) -> bool:
+    """Tell whether a default has any effect on this tag."""
+    if path == "fluid.basis":
+        return tag.text("fluid.kind") == "mixture"
+    if path == "fluid.energy_basis":
+        flows = (point.quantity("flow") for point in tag.points)
+        return any(flow is not None and flow.kind == "energy_flow" for flow in flows)
+    return True
 
 
 def _entry(tag: Tag, path: str, labels: Mapping[str, Entry]) -> Row:
@@ -155,14 +169,17 @@ def _cost(evaluation: Evaluation) -> tuple[Row, ...]:
 
 
 def _results(
-    values: Mapping[str, Result], stated: tuple[Row, ...], units: Units
+    tag: Tag, values: Mapping[str, Result], stated: tuple[Row, ...], units: Units
 ) -> tuple[Row, ...]:
-    """Return the rows of results, leaving out what the rows above echo already."""
-    echoed = {row.text for row in stated}
+    """Return the rows of results, leaving out given values that the rows above echo already."""
+    held = [tag.quantity(row.key) for row in stated]
+    echoed = {(one.kind, one.value) for one in held if one is not None}
     return tuple(
         rows.of_results(key, (values[key],), units)
         for key in rows.ordered(values)
-        if not (_typed(values[key]) and words.typed(values[key].text) in echoed)
+        if not (
+            values[key].origin is Origin.GIVEN and (rows.kind_of(key), values[key].value) in echoed
+        )
     )
 
 

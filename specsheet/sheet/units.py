@@ -55,6 +55,7 @@ class Units:
             if kind in KINDS and kind != "base_volume_flow" and unit in quantity.units(kind)
         }
         self._typed = _typed(tag)
+        self.currency = tag.text("job.currency")
 
     def chosen(self, kind: str) -> str:
         """Return the unit the job or the user's own typing asks for, "" for none.

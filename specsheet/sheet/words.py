@@ -22,7 +22,9 @@ LEVELS = {
 MARKS = {Origin.GIVEN: "●", Origin.DERIVED: "○", Origin.ASSUMED: "□", Origin.TYPICAL: "◊"}
 LEGEND = "● given   ○ derived   □ assumed   ◊ typical, for the bidder to confirm"
 
-_NUMBER = re.compile(r"([-+−]?\d[\d .\u00a0\u202f]*(?:[eE][-+]?\d+)?)\s*(.*)", re.DOTALL)
+_NUMBER = re.compile(
+    r"([-+−]?\d+(?:[ \u00a0\u202f]\d{3})*(?:\.\d+)?(?:[eE][-+]?\d+)?)\s*(.*)", re.DOTALL
+)
 _WATER = re.compile(r"H2O")
 
 
@@ -105,6 +107,11 @@ def label(key: str) -> str:
 def symbol(key: str) -> str:
     """Return the glossary's symbol of a term, "" where it has none."""
     return TERMS[key].symbol if key in TERMS else ""
+
+
+def named(text: str, sign: str) -> str:
+    """Return a label with its symbol behind it, where the label does not end in it already."""
+    return text if text.endswith(sign) else f"{text}  {sign}"
 
 
 def count(number: int, level: Level) -> str:

@@ -9,8 +9,8 @@ from specsheet.findings import Level, Origin
 from specsheet.render.pdf import fonts, head, style
 from specsheet.render.pdf.grid import Column, Line, Ornament, Text, grid
 from specsheet.render.pdf.page import Frame, Page, Place
-from specsheet.sheet.model import Cell, FindingRow, LimitRow, Row, Sheet, Table
-from specsheet.sheet.words import MARKS
+from specsheet.sheet.model import FindingRow, LimitRow, Row, Sheet, Table
+from specsheet.sheet.words import MARKS, named
 
 _LABEL, _SYMBOL, _UNIT, _MARK, _SOURCE = 128.0, 30.0, 50.0, 13.0, 26.0
 _ROWS = _LABEL + _SYMBOL + _UNIT + _MARK + _SOURCE
@@ -45,24 +45,23 @@ def narrowest(sheet: Sheet) -> float:
     return max(_NARROWEST, widest + 8.0)
 
 
-def chunks(names: Sequence[str], width: float, column: float) -> list[slice]:
-    """Return the operating points in portions that fit the width, as even as possible."""
-    most = max(1, int((width - _ROWS) / column))
-    count = max(1, math.ceil(len(names) / most))
-    total = max(len(names), 1)
-    size = math.ceil(total / count)
+def portions(count: int, most: int) -> list[slice]:
+    """Return ``count`` columns in portions of no more than ``most``, as even as possible."""
+    total = max(count, 1)
+    size = math.ceil(total / math.ceil(total / most))
     return [slice(start, min(start + size, total)) for start in range(0, total, size)]
 
 
 def by_point(frame: Frame, sheet: Sheet, table: Table) -> None:
     """Set a table with one column for each operating point, split where it is too wide."""
-    for part in chunks(table.columns, frame.width, frame.book.column):
+    most = max(1, int((frame.width - _ROWS) / frame.book.column))
+    for part in portions(len(table.columns), most):
         title = table.title
         if part.start:
             ends = dict.fromkeys((table.columns[part][0], table.columns[part][-1]))
             title = f"{table.title}: {' to '.join(ends)}"
         columns = point_columns(table.columns[part], frame.width)
-        lines = [Line(point_cells(sheet, row, part, sourced=True)) for row in table.rows]
+        lines = [_point_line(sheet, row, part) for row in table.rows]
         grid(frame, frame.book.clean(title), columns, lines)
     if table.note:
         frame.y -= 3.0
@@ -84,32 +83,36 @@ def point_columns(names: Sequence[str], width: float) -> list[Column]:
     ]
 
 
-def point_cells(
-    sheet: Sheet, row: Row, part: slice, sourced: bool = False, bold: bool = False
-) -> list[str | Text]:
-    """Return the cells of a row by point; the origin stands in each cell only where it varies."""
-    origins = row.origins
-    mixed = len(origins) > 1
-    shared = len(row.cells) == 1  # a value that does not depend on the point stands at each
-    shown = row.cells * (part.stop - part.start) if shared else row.cells[part]
-    texts = [_cell(cell, mixed) for cell in shown]
-    look = style.STRONG if bold else style.BODY
+def values(row: Row, part: slice) -> list[str]:
+    """Return the cells of a row at some of the points; their origins only where they vary.
+
+    A value that does not depend on the point stands at each.
+    """
+    mixed = len(row.origins) > 1
+    shown = row.cells * (part.stop - part.start) if len(row.cells) == 1 else row.cells[part]
     return [
-        Text(f"{row.label} ({row.note})" if row.note else row.label, look),
-        row.symbol,
-        row.unit,
-        "" if mixed else marks(origins),
-        *(Text(text, look) for text in texts),
-        numbers(sheet, row.source) if sourced else "",
+        f"{marks((cell.origin,))} {cell.text}" if mixed and cell.origin else cell.text
+        for cell in shown
     ]
 
 
-def _cell(cell: Cell, mixed: bool) -> str:
-    return f"{marks((cell.origin,))} {cell.text}" if mixed and cell.origin else cell.text
+def _point_line(sheet: Sheet, row: Row, part: slice) -> Line:
+    return Line(
+        [
+            f"{row.label} ({row.note})" if row.note else row.label,
+            row.symbol,
+            row.unit,
+            marks(row.origins) if len(row.origins) == 1 else "",
+            *values(row, part),
+            numbers(sheet, row.source),
+        ]
+    )
 
 
-def singles(frame: Frame, sheet: Sheet, tables: Sequence[Table]) -> None:
+def singles(frame: Frame, sheet: Sheet) -> None:
     """Set the tables of single values in two columns, each table into the emptier one."""
+    tables = [table for table in sheet.tables if not table.columns]
+    tables.append(Table("assumptions", "Assumptions: nobody stated", (), sheet.assumptions))
     wide = (frame.width - style.GUTTER) / 2.0
     columns = [
         Frame(frame.book, frame.x + place * (wide + style.GUTTER), wide, frame.index, frame.y)
@@ -137,7 +140,7 @@ def _single_lines(sheet: Sheet, rows: Sequence[Row]) -> list[Line]:
         Line(
             [
                 marks(row.origins),
-                f"{row.label}  {row.symbol}".rstrip(),
+                named(row.label, row.symbol),
                 f"{row.text} ({row.note})" if row.note else row.text,
                 numbers(sheet, row.source),
             ]
@@ -198,30 +201,10 @@ def limits(frame: Frame, sheet: Sheet) -> None:
 def _limit(sheet: Sheet, row: LimitRow) -> Line:
     allowed = f"{row.allowed} {row.unit}".strip()
     verdict: str | Text = "holds" if row.holds else Text(row.verdict.upper(), style.STRONG)
-    label = f"{row.label}  {row.symbol}".rstrip()
+    label = named(row.label, row.symbol)
     said = label if row.holds else f"{label}: {row.message}"
     cells = [said, row.point, row.value, allowed, verdict, row.reserve, row.flips]
     return Line([*cells, numbers(sheet, row.source)])
-
-
-def assumptions(frame: Frame, sheet: Sheet) -> None:
-    """List everything that nobody typed."""
-    columns = [
-        Column("", _MARK, style.QUIET),
-        Column("Nobody stated", 190.0),
-        Column("Assumed", frame.width - 190.0 - _MARK - _SOURCE),
-        Column("", _SOURCE, style.SMALL, True),
-    ]
-    lines = [
-        Line([MARKS[Origin.ASSUMED], row.label, _assumed(row), numbers(sheet, row.source)])
-        for row in sheet.assumptions
-    ]
-    grid(frame, "Assumptions", columns, lines)
-
-
-def _assumed(row: Row) -> str:
-    values = dict.fromkeys(cell.text for cell in row.cells if cell.origin is Origin.ASSUMED)
-    return f"{', '.join(values)} {row.unit}".strip()
 
 
 def clauses(frame: Frame, sheet: Sheet) -> None:

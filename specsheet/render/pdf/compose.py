@@ -31,11 +31,10 @@ def compose(sheet: Sheet, pdf: object) -> Book:
         if table.columns:
             body.by_point(frame, sheet, table)
     body.limits(frame, sheet)
-    body.singles(frame, sheet, [table for table in sheet.tables if not table.columns])
+    body.singles(frame, sheet)
     if sheet.budget is not None:
         body.by_point(frame, sheet, sheet.budget)
     body.clauses(frame, sheet)
-    body.assumptions(frame, sheet)
     head.cautions(frame, sheet)
     body.reply(frame, sheet)
     body.revisions(frame, sheet)

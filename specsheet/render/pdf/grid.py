@@ -15,7 +15,8 @@ from specsheet.render.pdf.style import Style
 _PADDING = 3.6  # above and below the text of a row, together
 _BETWEEN = 6.0  # kept free at the right of each cell
 _TITLE = 34.0  # of the title and the headings
-_WHOLE = 0.4  # of a page: a table up to this height is not split
+_WHOLE = 0.26  # of a page: a table up to this height is not split
+_START = 4  # rows of a longer table that stand on its first page at least
 
 
 class Column(NamedTuple):
@@ -46,7 +47,7 @@ class Line(NamedTuple):
 
 
 class _Set(NamedTuple):
-    """One cell ready to be set: its lines, its style, left edge, width and side."""
+    """One cell ready to be set: lines, style, left edge in the frame, width and side."""
 
     lines: tuple[str, ...]
     look: Style
@@ -64,8 +65,9 @@ def grid(
     cells = [_cells(frame, columns, row) for row in rows]
     heights = [_height(row) for row in cells]
     whole = _TITLE + sum(heights)
+    start = _TITLE + min(sum(heights[:_START]), frame.full / 2.0)
     frame.skip(gap)
-    frame.keep(whole if whole <= frame.full * _WHOLE else _TITLE + min(heights[0], frame.full / 2))
+    frame.keep(whole if whole <= frame.full * _WHOLE else start)
     if title:
         frame.heading(title)
     _headings(frame, columns)
@@ -89,7 +91,7 @@ def _headings(frame: Frame, columns: Sequence[Column]) -> None:
 
 def _cells(frame: Frame, columns: Sequence[Column], row: Line) -> list[_Set]:
     made = []
-    x = frame.x
+    x = 0.0
     for column, cell in zip(columns, row.cells, strict=True):
         text, look = cell if isinstance(cell, Text) else (cell, column.look)
         room = max(column.width - _BETWEEN, look.size)
@@ -144,6 +146,6 @@ def _draw(frame: Frame, cells: Sequence[_Set], start: int, count: int) -> None:
         for place, line in enumerate(cell.lines[start : start + count]):
             y = baseline - place * leading
             if cell.right:
-                frame.page.right(cell.x + cell.width - _BETWEEN, y, line, cell.look)
+                frame.page.right(frame.x + cell.x + cell.width - _BETWEEN, y, line, cell.look)
             else:
-                frame.page.text(cell.x, y, line, cell.look)
+                frame.page.text(frame.x + cell.x, y, line, cell.look)

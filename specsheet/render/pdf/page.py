@@ -159,6 +159,11 @@ class Frame:
         return self.y - style.FOOT
 
     @property
+    def top(self) -> float:
+        """Where the frame starts on this page."""
+        return self.book.top(self.index)
+
+    @property
     def full(self) -> float:
         """Height of an empty page after the first."""
         return self.book.top(1) - style.FOOT
@@ -171,14 +176,14 @@ class Frame:
 
     def keep(self, height: float) -> bool:
         """Turn the page where ``height`` does not fit; tell whether it was turned."""
-        if height <= self.room or self.y == self.book.top(self.index):
+        if height <= self.room or self.y == self.top:
             return False
         self.turn()
         return True
 
     def skip(self, height: float) -> None:
         """Leave a gap, none at the top of a page."""
-        if self.y != self.book.top(self.index):
+        if self.y != self.top:
             self.y -= height
 
     def heading(self, title: str) -> None:
@@ -196,3 +201,42 @@ class Frame:
             self.keep(look.leading)
             self.page.text(self.x + indent, self.y - look.size, line, look)
             self.y -= look.leading
+
+
+@dataclass
+class Columns(Frame):
+    """A frame that fills the columns of a page from left to right before it goes on overleaf.
+
+    Attributes:
+        lefts: left edges of the columns [pt].
+        start: where the columns start on the page they begin on.
+        begun: the page they begin on.
+        place: column that is being filled.
+    """
+
+    lefts: tuple[float, ...] = ()
+    start: float = 0.0
+    begun: int = 0
+    place: int = 0
+
+    @classmethod
+    def of(cls, frame: Frame, count: int) -> Columns:
+        """Return columns of equal width below what the frame holds so far."""
+        wide = (frame.width - (count - 1) * style.GUTTER) / count
+        lefts = tuple(frame.x + place * (wide + style.GUTTER) for place in range(count))
+        return cls(frame.book, lefts[0], wide, frame.index, frame.y, lefts, frame.y, frame.index)
+
+    @property
+    def top(self) -> float:
+        """Where the columns start on this page."""
+        return self.start if self.index == self.begun else self.book.top(self.index)
+
+    def turn(self) -> None:
+        """Go on in the next column, or overleaf."""
+        if self.place + 1 < len(self.lefts):
+            self.place += 1
+            self.y = self.top
+        else:
+            self.place = 0
+            super().turn()
+        self.x = self.lefts[self.place]

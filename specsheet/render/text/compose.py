@@ -8,7 +8,7 @@ from specsheet.findings import Level, Origin
 from specsheet.render.text import ruler
 from specsheet.render.text.layout import heading, table, wrapped
 from specsheet.sheet.model import Row, Sheet, Table
-from specsheet.sheet.words import LEGEND, MARKS
+from specsheet.sheet.words import LEGEND, MARKS, named
 
 _NARROWEST = 80
 _SIGNS = {Level.STOP: "× STOP", Level.CAUTION: "! CAUTION", Level.NOTE: "  NOTE"}
@@ -159,7 +159,7 @@ def _prose(sheet: Sheet, width: int) -> list[str]:
 def _annex(sheet: Sheet, width: int) -> list[str]:
     lines = heading("Calculation annex", width) if sheet.annex else []
     for working in sheet.annex:
-        name = f"{working.label} {working.symbol}".rstrip()
+        name = named(working.label, working.symbol)
         lines += wrapped(f"{name} {_numbers(sheet, working.source)}".rstrip(), width)
         lines += [f"  {line}" for line in wrapped(working.equation or "–", width - 2)]
         if not working.inputs:

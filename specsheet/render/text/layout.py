@@ -7,6 +7,8 @@ import unicodedata
 from collections.abc import Sequence
 
 _BETWEEN = 2
+_LONGEST_WORD = 26  # longer words may be broken to make a table fit
+_NARROWEST = 6
 
 
 def clean(text: str) -> str:
@@ -63,10 +65,19 @@ def _widths(rows: Sequence[Sequence[str]], width: int) -> list[int]:
         max((len(line) for row in rows for line in clean(row[place]).split("\n")), default=0)
         for place in range(len(rows[0]))
     ]
+    least = [
+        min(_LONGEST_WORD, max(len(word) for row in rows for word in clean(row[place]).split(" ")))
+        for place in range(len(rows[0]))
+    ]
     room = width - _BETWEEN * (len(widths) - 1)
-    while sum(widths) > room and max(widths) > 8:
-        widest = widths.index(max(widths))
-        widths[widest] -= 1
+    while sum(widths) > room:
+        spare = [wide - short for wide, short in zip(widths, least, strict=True)]
+        if max(spare) > 0:
+            widths[max(range(len(widths)), key=lambda at: (spare[at] > 0, widths[at]))] -= 1
+        elif max(widths) > _NARROWEST:
+            widths[widths.index(max(widths))] -= 1
+        else:
+            break
     return widths
 
 

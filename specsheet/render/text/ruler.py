@@ -6,7 +6,7 @@ from specsheet.render.text.layout import clean, heading
 from specsheet.sheet.model import Ruler, Window
 from specsheet.sheet.ruler import stagger
 
-_GUTTER = 20
+_GUTTER = 26
 
 
 def draw(ruler: Ruler, width: int) -> list[str]:
@@ -61,4 +61,6 @@ def _labels(ruler: Ruler, long: int) -> list[str]:
 
 
 def _line(words: str, line: list[str]) -> str:
-    return f"{clean(words)[:_GUTTER]:>{_GUTTER}}  {''.join(line)}".rstrip()
+    shown = clean(words)
+    shown = shown if len(shown) <= _GUTTER else f"{shown[: _GUTTER - 1]}…"
+    return f"{shown:>{_GUTTER}}  {''.join(line)}".rstrip()
