@@ -1,0 +1,134 @@
+"""The form's end of the worker: one process, one request at a time, the newest text wins."""
+
+from __future__ import annotations
+
+import asyncio
+import contextlib
+import sys
+from collections.abc import Callable
+from typing import Protocol
+
+from specsheet.tui.protocol import (
+    HEADER,
+    Answer,
+    Derive,
+    Failed,
+    Print,
+    Request,
+    frame,
+    unpack,
+)
+
+COMMAND = (sys.executable, "-m", "specsheet.tui.worker")
+
+#: a request that takes longer than this [s] counts as a crash
+PATIENCE = 60.0
+
+#: how often one request is sent before the form is told that it cannot be answered
+ATTEMPTS = 2
+
+
+class Evaluator(Protocol):
+    """What the form needs of an evaluator; tests put in their own."""
+
+    def listen(self, listener: Callable[[Answer], None]) -> None:
+        """Hand every answer that is not stale to ``listener``, in the form's own loop."""
+
+    def derive(self, text: str, path: str) -> None:
+        """Ask for the sheet of a text; an older request that waits is dropped."""
+
+    def print(self, text: str, path: str, folder: str) -> int:
+        """Ask for a PDF in a folder; return the number of the request."""
+
+    async def close(self) -> None:
+        """End the worker."""
+
+
+class WorkerEvaluator:
+    """An evaluator in a process of its own."""
+
+    def __init__(self, command: tuple[str, ...] = COMMAND, patience: float = PATIENCE) -> None:
+        self._command = command
+        self._patience = patience
+        self._listener: Callable[[Answer], None] = lambda _: None
+        self._number = 0
+        self._newest = 0
+        self._waiting: list[Request] = []
+        self._process: asyncio.subprocess.Process | None = None
+        self._task: asyncio.Task[None] | None = None
+
+    def listen(self, listener: Callable[[Answer], None]) -> None:
+        """Hand every answer that is not stale to ``listener``."""
+        self._listener = listener
+
+    def derive(self, text: str, path: str) -> None:
+        """Ask for the sheet of a text; an older request that waits is dropped."""
+        self._number += 1
+        self._newest = self._number
+        self._waiting = [item for item in self._waiting if isinstance(item, Print)]
+        self._ask(Derive(self._number, text, path))
+
+    def print(self, text: str, path: str, folder: str) -> int:
+        """Ask for a PDF in a folder; printing goes before deriving."""
+        self._number += 1
+        self._ask(Print(self._number, text, path, folder))
+        return self._number
+
+    async def close(self) -> None:
+        """End the worker."""
+        if self._task is not None:
+            self._task.cancel()
+            with contextlib.suppress(asyncio.CancelledError):
+                await self._task
+        await self._stop()
+
+    def _ask(self, request: Request) -> None:
+        self._waiting.append(request)
+        if self._task is None or self._task.done():
+            self._task = asyncio.get_running_loop().create_task(self._work())
+
+    async def _work(self) -> None:
+        while self._waiting:
+            self._waiting.sort(key=lambda item: not isinstance(item, Print))
+            request = self._waiting.pop(0)
+            answer = await self._answer(request)
+            stale = isinstance(request, Derive) and request.number != self._newest
+            if not stale:
+                self._listener(answer)
+
+    async def _answer(self, request: Request) -> Answer:
+        for _ in range(ATTEMPTS):
+            try:
+                async with asyncio.timeout(self._patience):
+                    return await self._exchange(request)
+            except (OSError, EOFError, asyncio.IncompleteReadError, TimeoutError):
+                await self._stop()
+        return Failed(
+            request.number, "the calculation stopped twice on this tag; your edits are safe"
+        )
+
+    async def _exchange(self, request: Request) -> Answer:
+        process = self._process
+        if process is None:
+            process = await asyncio.create_subprocess_exec(
+                *self._command,
+                stdin=asyncio.subprocess.PIPE,
+                stdout=asyncio.subprocess.PIPE,
+                stderr=asyncio.subprocess.DEVNULL,
+            )
+            self._process = process
+        assert process.stdin is not None
+        assert process.stdout is not None
+        process.stdin.write(frame(request))
+        await process.stdin.drain()
+        (size,) = HEADER.unpack(await process.stdout.readexactly(HEADER.size))
+        answer: Answer = unpack(await process.stdout.readexactly(size))
+        return answer
+
+    async def _stop(self) -> None:
+        process, self._process = self._process, None
+        if process is None:
+            return
+        with contextlib.suppress(ProcessLookupError):
+            process.kill()
+        await process.wait()

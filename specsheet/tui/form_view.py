@@ -1,0 +1,373 @@
+"""The look of the form: sections at the top, entries, and beside or below what they come to."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from typing import ClassVar
+
+from textual.app import ComposeResult
+from textual.binding import Binding, BindingType
+from textual.containers import Container, Vertical
+from textual.widget import Widget
+
+from specsheet.fields import SECTIONS
+from specsheet.findings import Level
+from specsheet.tui import form, readout
+from specsheet.tui.address import LISTS, Address
+from specsheet.tui.commands import FORM
+from specsheet.tui.compat import CalmScreen
+from specsheet.tui.evaluator import Evaluator
+from specsheet.tui.fields import ChoiceEditor, Editor, TextEditor
+from specsheet.tui.frame import Frame, footer, scale
+from specsheet.tui.lines import Bar, Column, Line, Lines
+from specsheet.tui.pages import GridPage, Page, SectionPage, address_in
+from specsheet.tui.protocol import Answer, Derived, Failed, Printed
+from specsheet.tui.readout import Item
+from specsheet.tui.session import Session
+
+_PANES = ("findings", "derived", "ruler")
+_MOVES = (
+    ("enter,down", "go(1)"),
+    ("up", "go(-1)"),
+    ("tab", "along(1)"),
+    ("shift+tab", "along(-1)"),
+)
+
+
+def _bindings() -> list[BindingType]:
+    moves: list[BindingType] = [
+        Binding(keys, action, show=False, priority=True) for keys, action in _MOVES
+    ]
+    commands = [
+        Binding(command.keys, command.action, command.title, show=False, priority=command.moves)
+        for command in FORM
+    ]
+    return [*moves, *commands, Binding("escape", "revert", show=False)]
+
+
+class FormView(CalmScreen):
+    """What the form shows and how the focus moves in it."""
+
+    HORIZONTAL_BREAKPOINTS = [  # noqa: RUF012 (as Textual declares it)
+        (0, "-tiny"),
+        (60, "-narrow"),
+        (110, "-wide"),
+    ]
+    VERTICAL_BREAKPOINTS = [  # noqa: RUF012
+        (0, "-flat"),
+        (16, "-low"),
+        (36, "-high"),
+    ]
+    BINDINGS: ClassVar[list[BindingType]] = _bindings()
+
+    def __init__(self, session: Session, evaluator: Evaluator, *, greeting: str = "") -> None:
+        super().__init__()
+        self.session = session
+        self.evaluator = evaluator
+        self.frame = Frame(message=greeting)
+        self.pages: dict[str, Page] = {}
+        self.section = "fluid" if session.get(Address("tag")) else ""
+        self._last_editor: Editor | None = None
+        self._shown_pane = "findings"
+        self._items: tuple[Item, ...] = ()
+
+    def compose(self) -> ComposeResult:
+        """Lay out the frame; the pages come when they are first looked at."""
+        yield Bar(id="title")
+        yield Bar(id="scale")
+        with Container(id="body"):
+            with Vertical(id="left"):
+                yield Vertical(id="pages")
+                yield Column(((), ()), classes="detail")
+            with Vertical(id="side"):
+                yield Bar(id="derived-head")
+                yield Lines(id="derived")
+                yield Bar(id="findings-head")
+                yield Lines(id="findings")
+        with Vertical(id="below"):
+            yield Bar(id="ruler-head")
+            yield Lines(id="ruler")
+        yield Bar(id="summary")
+        yield Bar(id="foot")
+        yield Bar(id="too-small")
+
+    def on_mount(self) -> None:
+        """Draw the frame at once and the first page right after."""
+        self.evaluator.listen(self.take)
+        self.query_one("#foot", Bar).set_line(footer(FORM))
+        told = "The terminal is too small; 60 x 16 is the least. Nothing is lost."
+        self.query_one("#too-small", Bar).set_line(((told, "head"),))
+        self._show_pane(self._shown_pane)
+        self._draw_frame()
+        self.call_after_refresh(self._begin)
+
+    async def _begin(self) -> None:
+        await self.open_section(self.section)
+        self.request()
+
+    # What is shown
+
+    @property
+    def editors(self) -> list[Editor]:
+        """Every editor that is mounted."""
+        return [editor for page in self.pages.values() for editor in page.editors]
+
+    @property
+    def page(self) -> Page:
+        """The page on the screen."""
+        return self.pages[self.section]
+
+    @property
+    def editor(self) -> Editor | None:
+        """The editor that has the focus, or had it before a pane took it."""
+        focused = self.focused
+        if isinstance(focused, TextEditor | ChoiceEditor):
+            return focused
+        return self._last_editor if self._last_editor in list(self.page.editors) else None
+
+    async def open_section(self, section: str, address: Address | None = None) -> None:
+        """Show a section with the focus on an address, or on its first editor."""
+        if section not in self.pages:
+            self.pages[section] = (GridPage if section in LISTS else SectionPage)(section)
+            await self.query_one("#pages").mount(self.pages[section])
+        self.section = section
+        for key, page in self.pages.items():
+            page.display = key == section
+        await self.page.sync(self.session, self.notes())
+        target = self.page.editor(address) if address is not None else None
+        first = next(iter(self.page.editors), None)
+        chosen = target or first
+        self.set_focus(chosen if isinstance(chosen, Widget) else None)
+        self._draw_frame()
+        if chosen is None:
+            self._draw_detail()
+
+    async def go_to(self, address: Address) -> None:
+        """Show an address, wherever it stands."""
+        section = address.section
+        page = self.pages.get(section)
+        if page is not None:
+            page.everything = page.everything or page.editor(address) is None
+        await self.open_section(section, address)
+        if self.page.editor(address) is None:
+            self.page.everything = True
+            await self.open_section(section, address)
+
+    async def refresh_form(self) -> None:
+        """Bring page, frame and panes up to date with the session."""
+        if self.section in self.pages:
+            await self.page.sync(self.session, self.notes())
+        self._draw_frame()
+        self._draw_detail()
+        self._draw_panes()
+
+    def request(self) -> None:
+        """Ask for the values of the present text; the screen goes on at once."""
+        text = self.session.text_to_derive()
+        if text is None:
+            self.frame.state = "cannot be derived until the refused entry is mended"
+            self.frame.sheet = None
+        else:
+            self.frame.state = "deriving"
+            self.evaluator.derive(text, str(self.session.path))
+        self._draw_panes()
+
+    def take(self, answer: Answer) -> None:
+        """Show what the evaluator answered."""
+        if isinstance(answer, Printed):
+            self.say(f"printed {answer.target}")
+        elif isinstance(answer, Failed) and answer.number in self.frame.prints:
+            self.say(f"not printed: {answer.message}")
+        elif isinstance(answer, Failed):
+            self.frame.state = f"out of date: {answer.message}"
+            self._draw_panes()
+        elif isinstance(answer, Derived):
+            self.frame.sheet, self.frame.troubles = answer.sheet, answer.troubles
+            self.frame.state = ""
+            self.call_later(self.refresh_form)
+
+    def say(self, message: str) -> None:
+        """Say something in the summary line until the next edit or move."""
+        self.frame.message = message
+        self._draw_frame()
+
+    def notes(self) -> Mapping[Address, Item]:
+        """Return the worst thing to say about each address."""
+        found: dict[Address, Item] = {}
+        for item in reversed(self._collect()):
+            address = form.address_of(self.session, item.field) if item.field else None
+            if address is not None:
+                found[address] = item
+        return found
+
+    def _collect(self) -> tuple[Item, ...]:
+        refused = [
+            Item(Level.STOP, str(address), self.session.name(address), f"not stored: {told.reason}")
+            for address, told in self.session.refused.items()
+        ]
+        self._items = readout.items(self.frame.sheet, self.frame.troubles, refused)
+        return self._items
+
+    def _draw_frame(self) -> None:
+        session = self.session
+        self.query_one("#title", Bar).set_line(*self.frame.title(session))
+        self.query_one("#scale", Bar).set_line(scale(self.section, self._items))
+        self.query_one("#summary", Bar).set_line(self.frame.summary(self._items))
+
+    def _draw_detail(self) -> None:
+        detail = self.query_one(".detail", Column)
+        width = max(20, detail.size.width - 2)
+        text, tone = self._detail()
+        parts = readout.wrap(text, width)[: 2 if self.has_class("-low") else 3]
+        detail.set_lines([((f" {part}", tone),) for part in parts])
+
+    def _detail(self) -> tuple[str, str]:
+        editor = self.editor
+        if editor is None:
+            section = next(s for s in SECTIONS if s.key == self.section)
+            return f"{section.title}: {section.help}", "dim"
+        refused = self.session.refusal(address_in(editor))
+        if refused:
+            return refused, "stop"
+        note = self.notes().get(address_in(editor))
+        if note is not None:
+            return note.message, note.level.value
+        entry = editor.row.entry
+        example = f" For example: {entry.example}" if entry.example else ""
+        return f"{entry.label}. {entry.help}{example}", "dim"
+
+    def _draw_panes(self) -> None:
+        self._collect()
+        for pane in _PANES:
+            self._draw_pane(pane)
+        self._draw_frame()
+
+    def _draw_pane(self, pane: str) -> None:
+        lines = self.query_one(f"#{pane}", Lines)
+        width = max(30, lines.size.width - 2)
+        owners: list[int] = []
+        content: list[Line]
+        if pane == "findings":
+            content, owners = readout.finding_lines(self._items, width)
+            content = content or [((self.frame.quiet, "dim"),)]
+        elif pane == "ruler":
+            content = readout.ruler_lines(self.frame.sheet, width)
+        else:
+            sheet = self.frame.sheet
+            content = readout.derived(sheet, width) if sheet else [((self.frame.quiet, "dim"),)]
+        lines.set_content(content, owners)
+        title = {"findings": "Findings", "derived": "Derived", "ruler": "Range"}[pane]
+        extra = readout.counts(self._items) if pane == "findings" else self.frame.state
+        if pane == "derived" and not extra:
+            extra = readout.LEGEND
+        head = self.query_one(f"#{pane}-head", Bar)
+        head.set_line(self.frame.rule(title, extra, head.size.width, lines.has_focus))
+
+    # Keys
+
+    def check_action(
+        self,
+        action: str,
+        parameters: tuple[object, ...],  # noqa: ARG002 (the signature is Textual's)
+    ) -> bool | None:
+        """Leave the keys of movement to whatever is no editor."""
+        editing = isinstance(self.focused, TextEditor | ChoiceEditor)
+        if action in ("go", "along"):
+            return editing
+        if action == "section":
+            return editing or self.focused is None
+        return True
+
+    def action_go(self, step: int) -> None:
+        """Go to the next row, or the one before; at the end stay."""
+        order = [e for e in self.page.editors if self.editor and e.index == self.editor.index]
+        self._focus_next(order, step)
+
+    def action_along(self, step: int) -> None:
+        """Go to the next editor: along the points in a grid, else the next row."""
+        editor = self.editor
+        if isinstance(self.page, GridPage) and editor is not None:
+            target = self.page.next_along(editor, step)
+            self.set_focus(target or editor)
+        else:
+            self._focus_next(list(self.page.editors), step)
+
+    def action_across(self, step: int) -> None:
+        """Go to the same entry of the next operating point."""
+        if isinstance(self.page, GridPage) and self.editor is not None:
+            self.set_focus(self.page.beside(self.editor, step) or self.editor)
+
+    def _focus_next(self, order: list[Editor], step: int) -> None:
+        if self.editor in order:
+            place = order.index(self.editor) + step
+            self.set_focus(order[max(0, min(len(order) - 1, place))])
+
+    async def action_section(self, step: int) -> None:
+        """Go to the next section, or the one before."""
+        keys = [section.key for section in SECTIONS]
+        await self.open_section(keys[(keys.index(self.section) + step) % len(keys)])
+
+    def action_pane(self, step: int) -> None:
+        """Move the focus round form and panes."""
+        ring = ("form", *_PANES)
+        here = self.focused.id if isinstance(self.focused, Lines) else "form"
+        pane = ring[(ring.index(here or "form") + step) % len(ring)]
+        if pane == "form":
+            self.set_focus(self.editor or next(iter(self.page.editors), None))
+        else:
+            self._show_pane(pane)
+            self.query_one(f"#{pane}", Lines).focus()
+
+    def action_side(self) -> None:
+        """Show the next pane below the form, without leaving the field."""
+        place = _PANES.index(self._shown_pane)
+        self._show_pane(_PANES[(place + 1) % len(_PANES)])
+
+    async def action_next_finding(self) -> None:
+        """Go to the entry of the next finding, round the list."""
+        lines = self.query_one("#findings", Lines)
+        for _ in self._items:
+            lines.cycle()
+            address = form.address_of(self.session, self._items[lines.cursor].field)
+            if address is not None:
+                await self.go_to(address)
+                self.say(self._items[lines.cursor].message)
+                return
+        self.say("no finding points at an entry")
+
+    async def on_lines_chosen(self, message: Lines.Chosen) -> None:
+        """Go to the entry that a finding is about."""
+        item = self._items[message.item]
+        address = form.address_of(self.session, item.field) if item.field else None
+        if address is None:
+            self.say("this finding is about no single entry")
+        else:
+            await self.go_to(address)
+
+    def _show_pane(self, pane: str) -> None:
+        self._shown_pane = pane
+        for name in _PANES:
+            self.set_class(name == pane, f"-{name}")
+        self.call_after_refresh(self._draw_panes)
+
+    # Events
+
+    def on_descendant_focus(self) -> None:
+        """Point at the row, tell about its entry."""
+        focused = self.focused
+        if isinstance(focused, TextEditor | ChoiceEditor):
+            self._last_editor = focused
+            self.frame.message = ""
+            self.page.mark_here(focused)
+            self._draw_detail()
+            self._draw_frame()
+        else:
+            self._draw_panes()
+
+    def on_resize(self) -> None:
+        """Break all texts anew."""
+        self.call_after_refresh(self._redraw)
+
+    def _redraw(self) -> None:
+        self._draw_detail()
+        self._draw_panes()

@@ -1,0 +1,99 @@
+"""What travels between the form and its worker: framed pickles of plain data.
+
+The worker is started by the form itself and talks to nobody else, so its pickles can be trusted.
+"""
+
+from __future__ import annotations
+
+import pickle
+import struct
+from dataclasses import dataclass
+from typing import Any, BinaryIO
+
+from specsheet.sheet.model import Sheet
+
+#: length of the frame that follows, in bytes
+HEADER = struct.Struct(">I")
+
+
+@dataclass(frozen=True, slots=True)
+class Derive:
+    """Ask for the sheet of a tag file's text; ``path`` tells where its job stands."""
+
+    number: int
+    text: str
+    path: str
+
+
+@dataclass(frozen=True, slots=True)
+class Print:
+    """Ask for a PDF of a tag file's text in ``folder``; the tag gives it its name."""
+
+    number: int
+    text: str
+    path: str
+    folder: str
+
+
+@dataclass(frozen=True, slots=True)
+class Trouble:
+    """One entry of the file that could not be used."""
+
+    field: str
+    message: str
+
+
+@dataclass(frozen=True, slots=True)
+class Derived:
+    """The answer to :class:`Derive`.
+
+    Attributes:
+        number: number of the request.
+        sheet: the finished sheet; None where nothing could be read.
+        troubles: entries that could not be used.
+    """
+
+    number: int
+    sheet: Sheet | None
+    troubles: tuple[Trouble, ...] = ()
+
+
+@dataclass(frozen=True, slots=True)
+class Printed:
+    """The answer to :class:`Print`: where the PDF stands."""
+
+    number: int
+    target: str
+
+
+@dataclass(frozen=True, slots=True)
+class Failed:
+    """The answer to a request that broke: words for the user."""
+
+    number: int
+    message: str
+
+
+Request = Derive | Print
+Answer = Derived | Printed | Failed
+
+
+def frame(message: Request | Answer) -> bytes:
+    """Return a message as it is sent."""
+    body = pickle.dumps(message)
+    return HEADER.pack(len(body)) + body
+
+
+def unpack(body: bytes) -> Any:
+    """Return the message of a frame without its header."""
+    return pickle.loads(body)
+
+
+def receive(stream: BinaryIO) -> Any:
+    """Return the next message of a blocking stream, or None at its end."""
+    header = stream.read(HEADER.size)
+    if len(header) < HEADER.size:
+        return None
+    (size,) = HEADER.unpack(header)
+    body = stream.read(size)
+    return unpack(body) if len(body) == size else None

@@ -1,0 +1,207 @@
+"""What the panes say: a sheet, its findings and its ruler as lines of text in named tones."""
+
+from __future__ import annotations
+
+import textwrap
+from collections.abc import Sequence
+from dataclasses import dataclass
+
+from specsheet.findings import Level, Origin
+from specsheet.render.text.layout import heading
+from specsheet.render.text.ruler import draw
+from specsheet.sheet.model import Row, Sheet, Table
+from specsheet.tui.glyphs import LEVEL_LETTERS, ORIGIN_LETTERS
+from specsheet.tui.protocol import Trouble
+
+Line = tuple[tuple[str, str], ...]
+
+#: what the letters beside derived values mean
+LEGEND = "g given  a assumed  t typical"
+
+_LABEL = 32
+_LEAST_LABEL = 20
+_GAP = 2
+
+
+@dataclass(frozen=True, slots=True)
+class Item:
+    """One thing to say about the tag, ready for the list of findings.
+
+    Attributes:
+        level: how bad it is.
+        field: path it is about, or "".
+        place: words for where ("Pressure, normal").
+        message: the sentence, with reserve and source where there are any.
+    """
+
+    level: Level
+    field: str
+    place: str
+    message: str
+
+
+def derived(sheet: Sheet, width: int) -> list[Line]:
+    """Return all tables of a sheet as lines of ``width`` cells."""
+    tables = [sheet.points, *sheet.tables]
+    if sheet.budget is not None:
+        tables.append(sheet.budget)
+    lines: list[Line] = []
+    for table in tables:
+        if table.rows:
+            lines += ([()] if lines else []) + _table(table, width)
+    if sheet.limits:
+        lines += [(), (("Limits", "head"),), *_limits(sheet, width)]
+    if sheet.assumptions:
+        lines += [(), (("Assumed, because nothing was stated", "head"),)]
+        lines += [_single(row, width, _LEAST_LABEL) for row in sheet.assumptions]
+    for clauses in sheet.clauses:
+        lines += [(), ((clauses.title, "head"),)]
+        for sentence in clauses.sentences:
+            lines += [((part, "text"),) for part in wrap(sentence, width)]
+    return lines
+
+
+def _table(table: Table, width: int) -> list[Line]:
+    lines: list[Line] = []
+    if table.columns:
+        label, column = _columns(table, width)
+        lines.append(_heading(table, label, column))
+        lines += [_multiple(row, label, column) for row in table.rows]
+    else:
+        lines.append(((table.title, "head"),))
+        label = min(_LABEL, max(_LEAST_LABEL, width // 2))
+        lines += [_single(row, width, label) for row in table.rows]
+    if table.note:
+        lines += [((part, "dim"),) for part in wrap(table.note, width)]
+    return lines
+
+
+def _columns(table: Table, width: int) -> tuple[int, int]:
+    """Return the width of the label and of one column: labels give way first."""
+    texts = [cell.text for row in table.rows for cell in row.cells] + list(table.columns)
+    column = max(len(text) for text in texts) + _GAP + 1
+    room = width - column * len(table.columns)
+    return max(_LEAST_LABEL, min(_LABEL + 6, room)), column
+
+
+def _heading(table: Table, label: int, column: int) -> Line:
+    names = "".join(f"{name[: column - _GAP]:>{column - 1}} " for name in table.columns)
+    return ((f"{_cut(table.title, label):<{label}}", "head"), (names, "label"))
+
+
+def _multiple(row: Row, label: int, column: int) -> Line:
+    unit = f" {row.unit}" if row.unit else ""
+    words = _cut(row.label, label - len(unit) - 1)
+    head = f"{words}{unit}"
+    pieces = [(words, "label"), (unit, "dim"), (" " * (label - len(head)), "text")]
+    for cell in row.cells:
+        pieces.append((f"{cell.text:>{column - 1}}", "text"))
+        pieces.append((_letter(cell.origin), "dim"))
+    if len(row.cells) == 1 and row.note:
+        pieces.append((f" {row.note}", "dim"))
+    return tuple(pieces)
+
+
+def _single(row: Row, width: int, label: int) -> Line:
+    origin = row.cells[0].origin if row.cells else None
+    text = _cut(row.text, max(8, width - label - 3))
+    note = f"  {row.note}" if row.note else ""
+    return (
+        (f"{_cut(row.label, label - 1):<{label}}", "label"),
+        (text, "text"),
+        (f" {_letter(origin)}", "dim"),
+        (note, "dim"),
+    )
+
+
+def _limits(sheet: Sheet, width: int) -> list[Line]:
+    lines: list[Line] = []
+    for limit in sheet.limits:
+        tone = "good" if limit.holds else limit.level.value
+        letter = " " if limit.holds else LEVEL_LETTERS[limit.level]
+        reserve = f", reserve {limit.reserve}" if limit.reserve else ""
+        text = (
+            f"{limit.label}: {limit.value} {limit.unit}".rstrip()
+            + f" at {limit.point}, {limit.allowed}{reserve}: {limit.verdict}"
+        )
+        parts = wrap(text, width - 2)
+        lines.append(((f"{letter} ", tone), (parts[0], "text")))
+        lines += [(("  ", tone), (part, "text")) for part in parts[1:]]
+    return lines
+
+
+def _letter(origin: Origin | None) -> str:
+    return " " if origin is None else ORIGIN_LETTERS[origin]
+
+
+def _cut(text: str, width: int) -> str:
+    return text if len(text) <= width else text[: max(0, width - 1)] + "…"
+
+
+def wrap(text: str, width: int) -> list[str]:
+    """Return a text in lines of at most ``width`` cells; never no line."""
+    return textwrap.wrap(text, max(10, width)) or [""]
+
+
+def items(
+    sheet: Sheet | None, troubles: Sequence[Trouble], refused: Sequence[Item]
+) -> tuple[Item, ...]:
+    """Return everything there is to say: what was refused, could not be read, was found."""
+    said = list(refused)
+    said += [Item(Level.STOP, item.field, item.field, item.message) for item in troubles]
+    if sheet is not None:
+        for row in sheet.findings:
+            reserve = f" Reserve: {row.reserve}." if row.reserve else ""
+            source = f" [{row.source}]" if row.source else ""
+            place = row.field or row.point
+            said.append(Item(row.level, row.field, place, f"{row.message}{reserve}{source}"))
+        said += [Item(Level.NOTE, "", "caution of the service", text) for text in sheet.cautions]
+    return tuple(said)
+
+
+def finding_lines(found: Sequence[Item], width: int) -> tuple[list[Line], list[int]]:
+    """Return the findings as wrapped lines, and the item that each line belongs to."""
+    lines: list[Line] = []
+    owners: list[int] = []
+    for number, item in enumerate(found):
+        place = f"{item.place}: " if item.place else ""
+        for row, part in enumerate(wrap(f"{place}{item.message}", width - 2)):
+            letter = LEVEL_LETTERS[item.level] if row == 0 else " "
+            lines.append(((f"{letter} ", item.level.value), (part, "text")))
+            owners.append(number)
+    return lines, owners
+
+
+def ruler_lines(sheet: Sheet | None, width: int) -> list[Line]:
+    """Return the range ruler, or the words for why there is none."""
+    if sheet is None or sheet.ruler is None:
+        return [(("The ruler appears as soon as one operating point can be derived.", "dim"),)]
+    texts = draw(sheet.ruler, width)[len(heading("", width)) :]
+    windows = len(sheet.ruler.windows)
+    lanes = len(texts) - windows - 2
+    tones = ["head"] * lanes + ["accent"] * windows + ["text", "label"]
+    return [((text, tone),) for text, tone in zip(texts, tones, strict=True)]
+
+
+def counts(found: Sequence[Item]) -> str:
+    """Return how many findings there are of each level ("stop 1, caution 2")."""
+    numbers = [(level, sum(item.level is level for item in found)) for level in Level]
+    return ", ".join(f"{level.value} {number}" for level, number in numbers if number)
+
+
+def worst(found: Sequence[Item]) -> Level | None:
+    """Return the worst level met."""
+    present = {item.level for item in found}
+    return next((level for level in Level if level in present), None)
+
+
+def summary(sheet: Sheet | None, found: Sequence[Item]) -> str:
+    """Return the state of the tag in one line: findings by level and the tightest reserve."""
+    told = counts(found) or "no findings"
+    if sheet is None:
+        return told
+    tight = next((limit for limit in sheet.limits if limit.reserve), None)
+    if tight is None:
+        return told
+    flips = f" ({tight.flips})" if tight.flips else ""
+    return f"{told}; reserve {tight.reserve}{flips} to {tight.label.lower()} at {tight.point}"

@@ -1,0 +1,67 @@
+"""What stands in the file -> the text in a field, and back to a verdict on what was typed."""
+
+from __future__ import annotations
+
+import json
+from collections.abc import Mapping
+from datetime import date
+
+from specsheet import quantity
+from specsheet.fields import Entry
+from specsheet.quantity.value import Refusal
+from specsheet.tagfile.known import tag_sections
+from specsheet.tagfile.values import from_text
+from specsheet.tagfile.words import number_text
+
+_FRACTIONS = "fractions"
+
+
+def entry_at(family: str, path: str) -> Entry | None:
+    """Return the entry that a path belongs to in a tag of that family; None for an unknown key.
+
+    A leaf of a table entry ("fluid.mixture.methane") belongs to the table's entry.
+    """
+    sections = tag_sections(family)
+    section, _, key = path.rpartition(".")
+    found = sections.get(section, {}).get(key)
+    if found is None and section.count("."):
+        found = entry_at(family, ".".join(path.split(".")[:2]))
+        return found if found is not None and found.kind == _FRACTIONS else None
+    return found
+
+
+def shown(raw: object) -> str:
+    """Return a TOML value as the text of a field."""
+    if raw is None:
+        return ""
+    if isinstance(raw, bool):
+        return "yes" if raw else "no"
+    if isinstance(raw, date):
+        return raw.isoformat()
+    if isinstance(raw, list):
+        texts = [item if isinstance(item, str) else str(item) for item in raw]
+        if any("," in text or text.startswith("[") for text in texts):
+            return json.dumps(texts, ensure_ascii=False)
+        return ", ".join(texts)
+    if isinstance(raw, Mapping):
+        return ", ".join(f"{key} = {shown(value)}" for key, value in raw.items())
+    return number_text(raw) if isinstance(raw, float) else str(raw)
+
+
+def refusal(entry: Entry | None, path: str, text: str) -> str:
+    """Return why ``text`` cannot be stored at a path of an entry, or "" when it can."""
+    if entry is None:
+        return ""
+    if entry.path != path:
+        return _fraction_refusal(text)
+    found = from_text(entry, text)
+    return found.message if isinstance(found, Refusal) else ""
+
+
+def _fraction_refusal(text: str) -> str:
+    try:
+        float(text)
+    except ValueError:
+        found = quantity.parse(text, "ratio")
+        return found.message if isinstance(found, Refusal) else ""
+    return ""
