@@ -1,0 +1,177 @@
+"""A meter family out of a differential-pressure device."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from functools import partial
+
+import numpy as np
+
+from specsheet.findings import Finding, Level, Origin
+from specsheet.meters.dp import budget, sizing, transmitter
+from specsheet.meters.dp.derivations import COMMON
+from specsheet.meters.dp.device import Device
+from specsheet.meters.dp.response import respond
+from specsheet.meters.family import Element, Family, Given, Limit, Request
+from specsheet.sources import PRACTICE, cite
+
+
+def family(device: Device) -> Family:
+    """Return the family of a device."""
+    return Family(
+        key=device.key,
+        size=partial(size, device),
+        at=partial(respond, device),
+        limits=partial(limits, device),
+        budget=partial(budget.contributions, device),
+        derivations=(*COMMON, *device.derivations),
+        signal="differential_pressure",
+    )
+
+
+def size(device: Device, request: Request) -> Element:
+    """Size or rate the device for a tag; what is wrong with it becomes a finding."""
+    task = sizing.task(device, request)
+    sized = sizing.solve(task)
+    bare = task.element(sized.size, sized.span)
+    second, remarks = sizing.second_range(task, bare)
+    numbers = {**bare.numbers, "second_range": second, "machined": sized.machined}
+    values = {**sizing.given_values(task, sized), **task.prepared.values}
+    if second:
+        values["second_range"] = Given(second, Origin.DERIVED, PRACTICE)
+    element = Element(numbers, values, {}, (), task.choices)
+    described = device.describe(request, element)
+    top = sizing.upper_flow(task, element)
+    legs = transmitter.legs(request, sized.span, numbers.get("tapping_distance", 0.0))
+    values = {
+        **values,
+        **described.values,
+        **legs.values,
+        "upper_range_flow": Given(top, Origin.DERIVED, cite("iso5167-1")),
+    }
+    return Element(
+        numbers={**numbers, "upper_range_flow": top},
+        values=values,
+        notes=_notes(request, described.notes, legs.notes),
+        findings=(
+            *task.prepared.findings,
+            *sized.findings,
+            *remarks,
+            *described.findings,
+            *legs.findings,
+            *_unchecked(task.numbers),
+        ),
+        choices=task.choices,
+    )
+
+
+def _notes(
+    request: Request, described: Mapping[str, tuple[str, ...]], tappings: tuple[str, ...]
+) -> dict[str, tuple[str, ...]]:
+    output = request.tag.text("meter.output_characteristic")
+    notes = dict(described)
+    notes["installation"] = (*notes.get("installation", ()), *tappings)
+    if output == "linear in flow":
+        notes["output"] = (
+            "The transmitter extracts the square root: its output is linear in flow.",
+        )
+    elif output:
+        notes["output"] = (
+            "The transmitter's output is linear in differential pressure; the receiver extracts "
+            "the square root, once.",
+        )
+    return notes
+
+
+def _unchecked(numbers: Mapping[str, float]) -> tuple[Finding, ...]:
+    """Return a caution where a calibrated coefficient came without its uncertainty."""
+    if np.isnan(numbers["calibrated_coefficient"]):
+        return ()
+    if np.isfinite(numbers["calibrated_uncertainty"]):
+        return ()
+    return (
+        Finding(
+            Level.CAUTION,
+            "calibration-uncertainty-missing",
+            "meter.discharge_coefficient_uncertainty",
+            "a calibrated coefficient is stated without its uncertainty; that of the published "
+            "coefficient is used. State the one on the certificate",
+        ),
+    )
+
+
+def limits(device: Device, element: Element, request: Request) -> tuple[Limit, ...]:
+    """Return the device's own limits and those of the transmitter."""
+    cut_off = element.numbers["cut_off"]
+    found = [
+        *device.limits(element, request),
+        Limit(
+            key="signal_fraction",
+            low=None,
+            high=1.0 + 1e-9,
+            level=Level.STOP,
+            code="above-range",
+            message="the differential pressure is above the upper range value: the transmitter "
+            "does not show it; widen the range or the bore",
+            source=f"meter.{sizing.RANGE}",
+        ),
+    ]
+    if cut_off:
+        found.append(
+            Limit(
+                key="signal_fraction",
+                low=cut_off * cut_off,
+                high=None,
+                level=Level.CAUTION,
+                code="below-cut-off",
+                message="the flow is below the low-flow cut-off: the output shows none; lower the "
+                "cut-off, or add a second transmitter",
+                source="meter.low_cut_off",
+            )
+        )
+    return tuple(found)
+
+
+def standard_limits(
+    *,
+    source: str,
+    diameter: tuple[float | None, float | None],
+    ratio: tuple[float | None, float | None],
+    reynolds: tuple[float | None, float | None],
+    pressure_ratio: float | None = 0.75,
+    bore: tuple[str, float | None] = ("bore_diameter", None),
+) -> tuple[Limit, ...]:
+    """Return the limits of use that every standardised device has.
+
+    Args:
+        source: citation with the clause.
+        diameter: smallest and largest D [m].
+        ratio: smallest and largest β [-].
+        reynolds: smallest and largest ReD [-].
+        pressure_ratio: smallest p2/p1 of a gas [-].
+        bore: glossary key and smallest value of the machined dimension [m].
+    """
+
+    def limit(
+        key: str,
+        low: float | None,
+        high: float | None,
+        what: str,
+        driver: str = "",
+        phase: str = "",
+    ) -> Limit:
+        code = f"{key.replace('_', '-')}-limit"
+        return Limit(key, low, high, Level.CAUTION, code, what, source, phase, driver)
+
+    outside = "outside this the stated uncertainty of the coefficient does not hold"
+    found = [
+        limit("inside_diameter_hot", *diameter, f"{outside}; calibrate, or choose another line"),
+        limit("diameter_ratio", *ratio, f"{outside}; choose another range", ""),
+        limit("reynolds_number", *reynolds, f"{outside}; calibrate there", "mass_flow"),
+    ]
+    if pressure_ratio is not None:
+        text = "below this the expansibility equation does not hold; choose a lower range"
+        found.append(limit("pressure_ratio", pressure_ratio, None, text, "mass_flow", "gas"))
+    if bore[1] is not None:
+        found.append(limit(bore[0], bore[1], None, f"{outside}; choose a lower range"))
+    return tuple(found)

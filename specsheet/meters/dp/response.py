@@ -1,0 +1,177 @@
+"""The response of a differential-pressure device to a stream, and the flow from its signal."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+
+import numpy as np
+
+from specsheet.meters.dp.device import Device, Lanes
+from specsheet.meters.family import Array, Element, Stream
+from specsheet.methods import iso5167_1 as equation
+from specsheet.methods import signal
+
+
+def lanes_of(device: Device, element: Element, stream: Stream) -> Lanes:
+    """Return the lanes of a stream: hot diameters and Reynolds number."""
+    numbers = element.numbers
+    inside = equation.grown(
+        length=numbers["inside_diameter"],
+        expansion=numbers["pipe_expansion"],
+        temperature=stream.temperature,
+    )
+    size = equation.grown(
+        length=numbers["size"],
+        expansion=numbers["element_expansion"],
+        temperature=stream.temperature,
+    )
+    return Lanes(
+        diameter_ratio=device.shape.ratio(size / inside),
+        inside_diameter=inside,
+        reynolds_number=equation.reynolds_number(
+            mass_flow=stream.mass_flow, diameter=inside, viscosity=stream.viscosity
+        ),
+        mass_flow=stream.mass_flow,
+        density=stream.density,
+        numbers=numbers,
+        choices=element.choices,
+    )
+
+
+def coefficient(device: Device, lanes: Lanes) -> Array:
+    """Return C: the calibrated one where it is stated, else that of the standard."""
+    calibrated = lanes.numbers.get("calibrated_coefficient", np.nan)
+    if np.isfinite(calibrated):
+        return np.full(lanes.mass_flow.shape, calibrated)
+    return device.coefficient(lanes)
+
+
+def drop(
+    device: Device, lanes: Lanes, stream: Stream, discharge_coefficient: Array
+) -> tuple[Array, Array]:
+    """Return Δp [Pa] and ε [-] of the lanes; NaN where the flow would choke."""
+    bare = equation.incompressible_differential_pressure(
+        mass_flow=lanes.mass_flow * device.over_reading(lanes),
+        discharge_coefficient=discharge_coefficient,
+        diameter_ratio=lanes.diameter_ratio,
+        inside_diameter=lanes.inside_diameter,
+        density=stream.density,
+    )
+    exponent = stream.isentropic_exponent
+    if np.isnan(exponent).all():
+        return bare, np.ones_like(bare)
+
+    def epsilon(ratio: Array) -> Array:
+        expanded = device.expansibility(lanes.diameter_ratio, ratio, exponent)
+        return np.where(np.isnan(exponent), 1.0, expanded)
+
+    pressure = equation.differential_pressure(
+        incompressible=bare, pressure=stream.pressure, expansibility=epsilon
+    )
+    return pressure, np.sqrt(bare / pressure)
+
+
+def respond(device: Device, element: Element, stream: Stream) -> Mapping[str, Array]:
+    """Return everything the device does at n conditions, by glossary key; arrays of shape (n,)."""
+    with np.errstate(all="ignore"):
+        lanes = lanes_of(device, element, stream)
+        c = coefficient(device, lanes)
+        pressure, epsilon = drop(device, lanes, stream, c)
+        loss = device.loss(lanes, c) * pressure
+        area = np.pi / 4.0 * lanes.inside_diameter**2
+        velocity = stream.volume_flow / area
+        throat = velocity / lanes.diameter_ratio**2
+        values = {
+            "velocity": velocity,
+            "reynolds_number": lanes.reynolds_number,
+            "diameter_ratio": lanes.diameter_ratio,
+            "throat_velocity": throat,
+            "throat_reynolds_number": lanes.reynolds_number / lanes.diameter_ratio,
+            "discharge_coefficient": c,
+            "expansibility": epsilon,
+            "differential_pressure": pressure,
+            "pressure_ratio": 1.0 - pressure / stream.pressure,
+            "pressure_loss": loss,
+            "pressure_loss_coefficient": loss / (0.5 * stream.density * velocity**2),
+            "dynamic_pressure": stream.density * velocity**2,
+            "back_pressure_margin": stream.pressure - pressure - stream.vapour_pressure,
+            **signals(element.numbers, pressure),
+        }
+        if np.isnan(stream.vapour_pressure).all():
+            del values["back_pressure_margin"]
+        return values
+
+
+def signals(numbers: Mapping[str, float], differential_pressure: Array) -> dict[str, Array]:
+    """Return the transmitter's output: share of span, current linear in Δp and in flow.
+
+    Below the cut-off the root output rests at 4 mA.
+
+    Args:
+        numbers: of the element: "range" [Pa], "cut_off" (share of flow) [-].
+        differential_pressure: [Pa], shape (n,).
+    """
+    share = differential_pressure / numbers["range"]
+    root = np.sqrt(share)
+    shown = np.where(root < numbers.get("cut_off", 0.0), 0.0, root)
+    return {
+        "signal_fraction": share,
+        "signal_current": signal.current(fraction=share),
+        "signal_current_root": signal.current(fraction=shown),
+    }
+
+
+def flow_from(
+    device: Device, element: Element, stream: Stream, differential_pressure: Array
+) -> Array:
+    """Return the mass flow [kg/s] that gives a measured Δp [Pa] at the stream's conditions.
+
+    The flow of ``stream`` is the first guess; arrays of shape (n,).
+    """
+    with np.errstate(all="ignore"):
+        lanes = lanes_of(device, element, stream)
+        ratio = differential_pressure / stream.pressure
+        exponent = stream.isentropic_exponent
+        expanded = device.expansibility(lanes.diameter_ratio, ratio, exponent)
+        epsilon = np.where(np.isnan(exponent), 1.0, expanded)
+
+        def step(mass_flow: Array) -> Array:
+            at = lanes.with_flow(mass_flow)
+            return equation.mass_flow(
+                discharge_coefficient=coefficient(device, at),
+                expansibility=epsilon,
+                diameter_ratio=at.diameter_ratio,
+                inside_diameter=at.inside_diameter,
+                differential_pressure=differential_pressure,
+                density=stream.density,
+            ) / device.over_reading(at)
+
+        found: Array = equation.fixed_point(step, stream.mass_flow)
+        return found
+
+
+def ratio_for(device: Device, lanes: Lanes, stream: Stream, differential_pressure: Array) -> Array:
+    """Return β [-] that gives Δp [Pa] at the lanes' flow; NaN where none does.
+
+    Args:
+        device: the device.
+        lanes: the flow; its diameter ratio is the first guess, shape (n,).
+        stream: the conditions, shape (n,).
+        differential_pressure: [Pa], shape (n,).
+    """
+    with np.errstate(all="ignore"):
+        drop_ratio = differential_pressure / stream.pressure
+        exponent = stream.isentropic_exponent
+        area = np.pi / 4.0 * lanes.inside_diameter**2
+        speed = lanes.mass_flow / (area * np.sqrt(2.0 * differential_pressure * stream.density))
+
+        def step(invariant: Array) -> Array:
+            beta = equation.ratio_of_invariant(invariant=invariant)
+            at = lanes.with_ratio(beta)
+            expanded = device.expansibility(beta, drop_ratio, exponent)
+            epsilon = np.where(np.isnan(exponent), 1.0, expanded)
+            return speed * device.over_reading(at) / (coefficient(device, at) * epsilon)
+
+        guess = lanes.diameter_ratio**2 / np.sqrt(1.0 - lanes.diameter_ratio**4)
+        beta: Array = equation.ratio_of_invariant(invariant=equation.fixed_point(step, guess))
+        return beta

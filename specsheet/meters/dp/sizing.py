@@ -1,0 +1,292 @@
+"""Bore and range of a differential-pressure device: sized where free, rated where given."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass, replace
+
+import numpy as np
+from numpy.typing import NDArray
+
+from specsheet.findings import Finding, Level, Origin
+from specsheet.meters.dp import transmitter
+from specsheet.meters.dp.device import Bounds, Device, Lanes, Prepared
+from specsheet.meters.dp.response import flow_from, lanes_of, ratio_for, respond
+from specsheet.meters.family import Array, Element, Given, Request, Stream
+from specsheet.methods import iso5167_1 as equation
+from specsheet.sources import PRACTICE, cite
+
+#: step to which a machined dimension is rounded up [m]
+STEP = 1e-5
+
+RANGE = "differential_pressure_range"
+UNCERTAINTIES = ("pipe_diameter_uncertainty", "bore_uncertainty")
+
+
+@dataclass(frozen=True)
+class Task:
+    """What is to be sized, with the numbers that do not depend on the result.
+
+    Attributes:
+        device, request: what and for whom.
+        prepared: what the device read from its own entries.
+        bounds: within what the sizing may move.
+        numbers, choices: of the element, but for "size" and "range".
+        lead: index of the point that gives the largest Δp.
+        flow: flow at the upper range value, where that is free to choose [kg/s].
+    """
+
+    device: Device
+    request: Request
+    prepared: Prepared
+    bounds: Bounds
+    numbers: Mapping[str, float]
+    choices: Mapping[str, str]
+    lead: int
+    flow: float
+
+    def conditions(self, count: int) -> Stream:
+        """Return the leading point ``count`` times, at the flow of the upper range value."""
+        index: NDArray[np.intp] = np.full(count, self.lead, dtype=np.intp)
+        stream = self.request.stream.take(index)
+        return stream.with_flow(np.full(count, self.flow))
+
+    def element(self, size: float, span: float) -> Element:
+        """Return a bare element of an effective dimension [m] and a range [Pa]."""
+        numbers = {**self.numbers, "size": size, "range": span}
+        return Element(numbers=numbers, values={}, choices=self.choices)
+
+
+@dataclass(frozen=True)
+class Sized:
+    """What came out: effective and machined dimension [m], range [Pa], where each comes from."""
+
+    size: float
+    machined: float
+    span: float
+    size_origin: Origin
+    span_origin: Origin
+    findings: tuple[Finding, ...] = ()
+
+
+def task(device: Device, request: Request) -> Task:
+    """Collect what the sizing needs."""
+    prepared = device.prepare(request)
+    stream = request.stream
+    lead = int(np.argmax(stream.mass_flow**2 / stream.density))
+    margin = request.tag.si("meter.margin") or 0.0
+    keys = (*transmitter.ERRORS, *UNCERTAINTIES)
+    numbers = {
+        "inside_diameter": request.pipe.inside_diameter,
+        "pipe_expansion": request.pipe.expansion,
+        "element_expansion": request.pipe.expansion,
+        "cut_off": request.tag.si("meter.low_cut_off") or 0.0,
+        "calibrated_coefficient": _or_nan(request, "discharge_coefficient"),
+        "calibrated_uncertainty": _or_nan(request, "discharge_coefficient_uncertainty"),
+        **{key: request.tag.si(f"meter.{key}") or 0.0 for key in UNCERTAINTIES},
+        **transmitter.error_numbers(request),
+        **prepared.numbers,
+    }
+    choices = {**transmitter.origins(request, keys), **prepared.choices}
+    bounds = device.bounds(request, prepared)
+    target = request.tag.si("meter.target_diameter_ratio")
+    if target is not None:
+        bounds = replace(bounds, target=target)
+    flow = float(stream.mass_flow[lead]) * (1.0 + margin)
+    return Task(device, request, prepared, bounds, numbers, choices, lead, flow)
+
+
+def _or_nan(request: Request, key: str) -> float:
+    value = request.tag.si(f"meter.{key}")
+    return np.nan if value is None else value
+
+
+def solve(of: Task) -> Sized:
+    """Size or rate: bore and range each given or free."""
+    shape, tag = of.device.shape, of.request.tag
+    given = tag.si(f"meter.{shape.entry}")
+    span = tag.si(f"meter.{RANGE}")
+    if given is not None and given > 0.0:
+        size = shape.effective(given, of.numbers)
+        if span is None:
+            return _range_for(of, size, given)
+        return Sized(size, given, span, Origin.GIVEN, tag.origin(f"meter.{RANGE}"))
+    if span is None:
+        return _both(of)
+    ratio = float(_ratios(of, np.array([span]))[0])
+    sized = _machine(of, ratio, span, Origin.GIVEN)
+    if np.isfinite(ratio):
+        return sized
+    return replace(sized, findings=(_impossible(of, span),))
+
+
+def _ratios(of: Task, spans: Array) -> Array:
+    """Return β for each upper range value, NaN where none gives it."""
+    stream = of.conditions(spans.size)
+    return ratio_for(of.device, _guess(of, stream), stream, spans)
+
+
+def _guess(of: Task, stream: Stream) -> Lanes:
+    inside = of.numbers["inside_diameter"]
+    share = of.device.shape.share(np.array([of.bounds.target]))
+    return lanes_of(of.device, of.element(inside * float(share[0]), 1.0), stream)
+
+
+def _machine(of: Task, ratio: float, span: float, span_origin: Origin) -> Sized:
+    """Turn β at operating temperature into a dimension at 20 °C, rounded up to the step."""
+    bounds = of.bounds
+    beta = ratio if np.isfinite(ratio) else bounds.largest
+    temperature = float(of.request.stream.temperature[of.lead])
+    inside = equation.grown(
+        length=of.numbers["inside_diameter"],
+        expansion=of.numbers["pipe_expansion"],
+        temperature=temperature,
+    )
+    hot = inside * float(of.device.shape.share(np.array([beta]))[0])
+    cold = hot / equation.grown(
+        length=1.0, expansion=of.numbers["element_expansion"], temperature=temperature
+    )
+    exact = of.device.shape.machined(cold, of.numbers)
+    machined = round(float(np.ceil(round(exact / STEP, 6))) * STEP, 9)
+    size = of.device.shape.effective(machined, of.numbers)
+    return Sized(size, machined, span, Origin.DERIVED, span_origin)
+
+
+def _range_for(of: Task, size: float, given: float) -> Sized:
+    """Choose the preferred range that holds the largest Δp of a given bore."""
+    stream = of.request.stream
+    grown = of.flow / float(stream.mass_flow[of.lead])
+    lanes = stream.with_flow(stream.mass_flow * grown)
+    found = respond(of.device, of.element(size, 1.0), lanes)["differential_pressure"]
+    top = float(np.nanmax(found)) if np.isfinite(found).any() else np.nan
+    findings: tuple[Finding, ...] = ()
+    if not np.isfinite(found).all():
+        findings = (
+            Finding(
+                Level.STOP,
+                "differential-pressure-impossible",
+                f"meter.{of.device.shape.entry}",
+                f"the stated {of.device.shape.label} cannot pass the largest flow: the gas would "
+                f"choke; state a larger {of.device.shape.label}, or let it be sized",
+            ),
+        )
+    span = transmitter.next_range(top) if np.isfinite(top) else float(transmitter.SERIES[-1])
+    return Sized(size, given, span, Origin.GIVEN, Origin.DERIVED, findings)
+
+
+def _both(of: Task) -> Sized:
+    """Choose the preferred range whose β comes nearest to the target within all bounds."""
+    bounds, spans = of.bounds, transmitter.SERIES
+    ratios = _ratios(of, spans)
+    stream = of.conditions(spans.size)
+    lanes = _guess(of, stream).with_ratio(ratios)
+    with np.errstate(all="ignore"):
+        loss = of.device.loss(lanes, of.device.coefficient(lanes)) * spans
+        back = float(of.request.stream.mass_flow[of.lead]) / of.flow
+        size = lanes.inside_diameter * of.device.shape.share(ratios)
+        broken = (
+            ((ratios < bounds.smallest) | (ratios > bounds.largest)).astype(float)
+            + (size < bounds.smallest_bore)
+            + (spans > bounds.largest_differential)
+            + (~np.isnan(stream.isentropic_exponent))
+            * (spans > bounds.largest_drop * stream.pressure)
+            + (loss * back * back > _largest_loss(of.request))
+            + (spans >= stream.pressure - np.nan_to_num(stream.vapour_pressure))
+        )
+        score = np.where(np.isnan(ratios), np.inf, abs(ratios - bounds.target) + 10.0 * broken)
+    index = int(np.argmin(score))
+    sized = _machine(of, float(ratios[index]), float(spans[index]), Origin.DERIVED)
+    if score[index] < 10.0:
+        return sized
+    return replace(sized, findings=(_no_match(of, float(spans[index])),))
+
+
+def _largest_loss(request: Request) -> float:
+    stated = (request.tag.si("meter.maximum_loss"), request.tag.si("require.pressure_loss"))
+    return min((value for value in stated if value is not None), default=float("inf"))
+
+
+def _impossible(of: Task, span: float) -> Finding:
+    label = of.device.shape.label
+    return Finding(
+        Level.STOP,
+        f"{of.device.shape.entry.replace('_', '-')}-impossible",
+        f"meter.{RANGE}",
+        f"no {label} gives {span / 100.0:.4g} mbar at the largest flow; the values printed are for "
+        f"the largest usual {label}. State another range, or let the range be sized",
+        source=cite("iso5167-1"),
+    )
+
+
+def _no_match(of: Task, span: float) -> Finding:
+    return Finding(
+        Level.CAUTION,
+        "sizing-compromise",
+        f"meter.{of.device.shape.entry}",
+        f"no preferred range meets diameter ratio, pressure ratio and permitted loss together; "
+        f"{span / 100.0:.4g} mbar comes nearest. Allow more loss or choose another line size",
+        source=PRACTICE,
+    )
+
+
+def second_range(of: Task, bare: Element) -> tuple[float, tuple[Finding, ...]]:
+    """Return the range of a second, stacked transmitter [Pa] (0 for none), and what to say."""
+    tag = of.request.tag
+    stated = tag.si("meter.second_range")
+    if stated is not None:
+        return stated, ()
+    values = respond(of.device, bare, of.request.stream)
+    pressure = values["differential_pressure"]
+    if not np.isfinite(pressure).any():
+        return 0.0, ()
+    lowest, span = float(np.nanmin(pressure)), bare.numbers["range"]
+    proposal = transmitter.next_range(float(np.sqrt(lowest * span)))
+    if tag.text("meter.second_range") == "propose":
+        return (proposal, ()) if proposal < span else (0.0, ())
+    parts = transmitter.contributions(bare.numbers, bare.choices, np.array([lowest]))
+    share = 2.0 * float(np.sqrt(sum(part.relative[0] ** 2 for part in parts))) if parts else 0.0
+    if share <= 0.01 or proposal >= span:
+        return 0.0, ()
+    return 0.0, (
+        Finding(
+            Level.NOTE,
+            "second-transmitter",
+            "meter.second_range",
+            f"at the smallest flow the transmitter alone adds {share * 100.0:.2g} % (k = 2); a "
+            f"second transmitter of {proposal / 100.0:.4g} mbar on the same taps would reach lower",
+            source=PRACTICE,
+        ),
+    )
+
+
+def upper_flow(of: Task, element: Element) -> float:
+    """Return the flow at the upper range value, at the leading point's conditions [kg/s]."""
+    stream = of.conditions(1)
+    span = np.array([element.numbers["range"]])
+    return float(flow_from(of.device, element, stream, span)[0])
+
+
+def given_values(of: Task, sized: Sized) -> dict[str, Given]:
+    """Return the dimensions and the range, as they are printed."""
+    device, numbers = of.device, of.numbers
+    temperature = float(of.request.stream.temperature[of.request.normal])
+    inside = equation.grown(
+        length=numbers["inside_diameter"],
+        expansion=numbers["pipe_expansion"],
+        temperature=temperature,
+    )
+    hot = equation.grown(
+        length=sized.size, expansion=numbers["element_expansion"], temperature=temperature
+    )
+    grown = hot / sized.size
+    ratio = float(device.shape.ratio(np.array([hot / inside]))[0])
+    clause = cite("iso5167-1")
+    values = {
+        device.shape.term: Given(sized.machined, sized.size_origin, device.source),
+        "diameter_ratio": Given(ratio, Origin.DERIVED, device.source),
+        "inside_diameter_hot": Given(inside, Origin.DERIVED, clause),
+        RANGE: Given(sized.span, sized.span_origin, PRACTICE),
+    }
+    if device.shape.hot_term:
+        values[device.shape.hot_term] = Given(sized.machined * grown, Origin.DERIVED, clause)
+    return values

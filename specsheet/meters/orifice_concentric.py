@@ -1,0 +1,228 @@
+"""Concentric square-edged orifice plate (ISO 5167-2:2003)."""
+
+from __future__ import annotations
+
+import math
+
+import numpy as np
+
+from specsheet.findings import Level, Origin
+from specsheet.meters.dp import plate
+from specsheet.meters.dp.build import family, standard_limits
+from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
+from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
+from specsheet.methods import iso5167_1, iso5167_2, orifice_plate
+from specsheet.methods.iso5167_1 import reynolds_number
+from specsheet.sources import cite
+
+_SOURCE = cite("iso5167-2", "5.3.2.1")
+
+
+def _coefficient(lanes: Lanes) -> Array:
+    found: Array = iso5167_2.discharge_coefficient(
+        diameter_ratio=lanes.diameter_ratio,
+        reynolds_number=lanes.reynolds_number,
+        inside_diameter=lanes.inside_diameter,
+        taps=lanes.choices["taps"],
+    )
+    return found
+
+
+def _coefficient_uncertainty(lanes: Lanes) -> Array:
+    found: Array = iso5167_2.coefficient_uncertainty(
+        diameter_ratio=lanes.diameter_ratio,
+        reynolds_number=lanes.reynolds_number,
+        inside_diameter=lanes.inside_diameter,
+    )
+    return found
+
+
+def _expansibility(ratio: Array, drop: Array, exponent: Array) -> Array:
+    found: Array = iso5167_2.expansibility(
+        diameter_ratio=ratio, pressure_drop_ratio=drop, isentropic_exponent=exponent
+    )
+    return found
+
+
+def _expansibility_uncertainty(ratio: Array, drop: Array, exponent: Array) -> Array:  # noqa: ARG001
+    found: Array = iso5167_2.expansibility_uncertainty(
+        pressure_drop_ratio=drop, isentropic_exponent=exponent
+    )
+    return found
+
+
+def _loss(lanes: Lanes, coefficient: Array) -> Array:
+    found: Array = iso5167_1.loss_ratio(
+        discharge_coefficient=coefficient, diameter_ratio=lanes.diameter_ratio
+    )
+    return found
+
+
+def _prepare(request: Request) -> Prepared:
+    read = plate.prepare(request)
+    taps = request.tag.text("meter.taps") or "flange"
+    thickness = request.tag.si("meter.plate_thickness") or 0.0
+    distance = {
+        "corner": thickness,
+        "flange": 2.0 * 0.0254 + thickness,
+    }.get(taps, 1.5 * request.pipe.inside_diameter)
+    return Prepared(
+        {**read.numbers, "tapping_distance": distance},
+        {"taps": taps},
+        read.values,
+        read.findings,
+    )
+
+
+def _bounds(request: Request, prepared: Prepared) -> Bounds:  # noqa: ARG001
+    return Bounds(smallest=0.1, largest=0.75, smallest_bore=0.0125)
+
+
+def _describe(request: Request, element: Element) -> Described:
+    common = plate.describe(request, element)
+    thickness = float(common.values["plate_thickness"].value)
+    inside = float(element.values["inside_diameter_hot"].value)
+    edge = orifice_plate.edge_thickness(inside_diameter=inside, thickness=thickness)
+    values = {
+        **common.values,
+        "edge_thickness": Given(edge, Origin.DERIVED, cite("iso5167-2", "5.1.5")),
+    }
+    bevelled = thickness > edge
+    if bevelled:
+        values["bevel_angle"] = Given(
+            math.radians(45.0), Origin.DERIVED, cite("iso5167-2", "5.1.6")
+        )
+    roughness = request.pipe.roughness
+    if np.isfinite(roughness):
+        # The uniform equivalent roughness is about π times the arithmetical mean deviation Ra.
+        mean = roughness / math.pi / inside
+        values["relative_roughness"] = Given(mean, Origin.DERIVED, cite("iso5167-1", "7.1.5"))
+    notes = {"element": (*_make(element, bevelled), *common.notes["element"])}
+    return Described(values, notes, common.findings)
+
+
+def _make(element: Element, bevelled: bool) -> tuple[str, ...]:
+    taps = {
+        "corner": "corner tappings, in the corner of pipe and plate",
+        "flange": "flange tappings, 25.4 mm from each face of the plate",
+    }.get(element.choices["taps"], "D and D/2 tappings, from the upstream face")
+    bevel = "bevel the downstream side at 45° (±15°)" if bevelled else "no bevel is needed"
+    return (
+        f"Concentric square-edged plate, {taps}.",
+        "Upstream edge sharp: radius not above 0.0004 d, no burr; upstream face flat within "
+        f"0.5 %, Ra below 0.0001 d; {bevel}.",
+    )
+
+
+def _limits(element: Element, request: Request) -> tuple[Limit, ...]:
+    ratio = float(element.values["diameter_ratio"].value)
+    inside = float(element.values["inside_diameter_hot"].value)
+    clause = cite("iso5167-2", "5.3.1")
+    lowest = iso5167_2.smallest_reynolds_number(
+        diameter_ratio=ratio, inside_diameter=inside, taps=element.choices["taps"]
+    )
+    found = [
+        *standard_limits(
+            source=clause,
+            diameter=(0.05, 1.0),
+            ratio=(0.1, 0.75),
+            reynolds=(lowest, None),
+            bore=("bore_diameter", 0.0125),
+        ),
+        Limit(
+            "differential_pressure",
+            None,
+            2.5e5,
+            Level.CAUTION,
+            "differential-pressure-limit",
+            "above 250 kPa the standard gives no uncertainty; choose a lower range",
+            clause,
+        ),
+        *plate.bending_limits(),
+    ]
+    if np.isfinite(request.pipe.roughness):
+        found.append(_roughness(ratio, inside, request))
+    return tuple(found)
+
+
+def _roughness(ratio: float, inside: float, request: Request) -> Limit:
+    highest = float(
+        np.max(
+            reynolds_number(
+                mass_flow=request.stream.mass_flow,
+                diameter=inside,
+                viscosity=request.stream.viscosity,
+            )
+        )
+    )
+    return Limit(
+        "relative_roughness",
+        None,
+        iso5167_2.largest_roughness(diameter_ratio=ratio, reynolds_number=highest),
+        Level.CAUTION,
+        "pipe-roughness",
+        "the pipe may be rougher than the coefficient allows: ask for a smooth or honed upstream "
+        "length of 10 D, and state line.roughness as measured",
+        f"{cite('iso5167-2', '5.3.1, table 1')} (from memory)",
+        driver="",
+    )
+
+
+_DERIVATIONS = (
+    Derivation(
+        "discharge_coefficient",
+        "C = 0.5961 + 0.0261 β² - 0.216 β⁸ + 0.000521 (10⁶β/ReD)^0.7 + (0.0188 + 0.0063 A) β^3.5 "
+        "(10⁶/ReD)^0.3 + (0.043 + 0.080 e^(-10 L1) - 0.123 e^(-7 L1)) (1 - 0.11 A) β⁴/(1 - β⁴) "
+        "- 0.031 (M'2 - 0.8 M'2^1.1) β^1.3 [+ 0.011 (0.75 - β)(2.8 - D/25.4 mm) for D < 71.12 mm]; "
+        "A = (19 000 β/ReD)^0.8, M'2 = 2 L'2/(1 - β)",
+        _SOURCE,
+        ("diameter_ratio", "reynolds_number", "inside_diameter_hot"),
+    ),
+    Derivation(
+        "expansibility",
+        "ε = 1 - (0.351 + 0.256 β⁴ + 0.93 β⁸) (1 - (p2/p1)^(1/κ))",
+        cite("iso5167-2", "5.3.2.2"),
+        ("diameter_ratio", "pressure_ratio", "isentropic_exponent"),
+    ),
+    Derivation(
+        "pressure_loss",
+        "ϖ = Δp (sqrt(1 - β⁴(1 - C²)) - C β²) / (sqrt(1 - β⁴(1 - C²)) + C β²)",
+        cite("iso5167-2", "5.4.1"),
+        ("differential_pressure", "discharge_coefficient", "diameter_ratio"),
+    ),
+    Derivation(
+        "bore_diameter",
+        "mass-flow equation solved for β, d20 = β D / (1 + αd (t - 20 °C)), rounded up to 0.01 mm; "
+        "with a drain hole d = dm (1 + 0.55 (dk/dm)²)",
+        cite("iso5167-1", "annex A"),
+        ("mass_flow", "differential_pressure_range", "inside_diameter_hot", "density"),
+    ),
+    Derivation(
+        "edge_thickness", "0.005 D to 0.02 D", cite("iso5167-2", "5.1.5"), ("inside_diameter_hot",)
+    ),
+    Derivation(
+        "relative_roughness",
+        "Ra/D with Ra = k/π",
+        cite("iso5167-1", "7.1.5"),
+        ("inside_diameter_hot",),
+    ),
+    *plate.DERIVATIONS,
+)
+
+FAMILY = family(
+    Device(
+        key="orifice_concentric",
+        source=_SOURCE,
+        coefficient=_coefficient,
+        coefficient_uncertainty=_coefficient_uncertainty,
+        expansibility=_expansibility,
+        expansibility_uncertainty=_expansibility_uncertainty,
+        loss=_loss,
+        bounds=_bounds,
+        limits=_limits,
+        describe=_describe,
+        derivations=_DERIVATIONS,
+        prepare=_prepare,
+        shape=Shape(effective=plate.with_hole, machined=plate.without_hole),
+    )
+)

@@ -1,0 +1,32 @@
+"""The registry: key of a family -> its module, imported only when it is asked for."""
+
+from __future__ import annotations
+
+from functools import cache
+from importlib import import_module
+
+from specsheet.meters.family import Family
+
+#: key -> module; a test holds it to the folder and to the profiles
+MODULES = {
+    key: f"specsheet.meters.{key}"
+    for key in (
+        # Differential pressure
+        "orifice_concentric",
+        "venturi_tube",
+        # Oscillating
+        "vortex",
+        # Electromagnetic
+        "magnetic",
+    )
+}
+
+
+@cache
+def family(key: str) -> Family | None:
+    """Return a family by its key, or None where there is none of that name."""
+    module = MODULES.get(key)
+    if module is None:
+        return None
+    found: Family = import_module(module).FAMILY
+    return found

@@ -1,0 +1,169 @@
+"""Classical Venturi tube: as cast, machined or welded convergent (ISO 5167-4:2003)."""
+
+from __future__ import annotations
+
+import math
+
+import numpy as np
+
+from specsheet.findings import Finding, Level
+from specsheet.line.material import find_material
+from specsheet.meters.dp.build import family, standard_limits
+from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
+from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
+from specsheet.methods import iso5167_3, iso5167_4
+from specsheet.methods.iso5167_4 import VENTURIS, Venturi
+from specsheet.sources import PRACTICE, cite
+
+_SOURCE = cite("iso5167-4", "5.5")
+
+#: usual coefficients in the trade, below the standard's (common practice, no source)
+_BAND = (0.93, 0.97)
+
+
+def _make_of(construction: str) -> Venturi:
+    return VENTURIS.get(construction, VENTURIS["machined convergent"])
+
+
+def _coefficient(lanes: Lanes) -> Array:
+    make = _make_of(lanes.choices["construction"])
+    return np.full(lanes.mass_flow.shape, make.discharge_coefficient)
+
+
+def _coefficient_uncertainty(lanes: Lanes) -> Array:
+    make = _make_of(lanes.choices["construction"])
+    return np.full(lanes.mass_flow.shape, make.uncertainty)
+
+
+def _expansibility(ratio: Array, drop: Array, exponent: Array) -> Array:
+    found: Array = iso5167_3.expansibility(
+        diameter_ratio=ratio, pressure_drop_ratio=drop, isentropic_exponent=exponent
+    )
+    return found
+
+
+def _expansibility_uncertainty(ratio: Array, drop: Array, exponent: Array) -> Array:  # noqa: ARG001
+    found: Array = iso5167_4.expansibility_uncertainty(
+        diameter_ratio=ratio, pressure_drop_ratio=drop
+    )
+    return found
+
+
+def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not depend on it
+    found: Array = iso5167_4.loss_ratio(
+        diameter_ratio=lanes.diameter_ratio, divergent_angle=lanes.numbers["divergent_angle"]
+    )
+    return found
+
+
+def _prepare(request: Request) -> Prepared:
+    tag = request.tag
+    construction = tag.text("meter.construction") or "machined convergent"
+    angle = tag.si("meter.divergent_angle") or math.radians(7.0)
+    material = find_material(tag.text("meter.throat_material"))
+    temperature = float(request.stream.temperature[request.normal])
+    numbers = {"divergent_angle": angle, "tapping_distance": _tapping_distance(request)}
+    if material is not None:
+        numbers["element_expansion"] = material.expansion(temperature)
+    values = {"divergent_angle": Given(angle, tag.origin("meter.divergent_angle"))}
+    return Prepared(numbers, {"construction": construction}, values)
+
+
+def _tapping_distance(request: Request) -> float:
+    """Return the usual distance of the tappings: half a pipe upstream, the cone, half a throat.
+
+    For β = 0.6 and a convergent of 21°: 0.5 D + 0.4 D / (2 tan 10.5°) + 0.3 D.
+    """
+    cone = 0.4 / (2.0 * math.tan(math.radians(10.5)))
+    return (0.8 + cone) * request.pipe.inside_diameter
+
+
+def _bounds(request: Request, prepared: Prepared) -> Bounds:  # noqa: ARG001
+    make = _make_of(prepared.choices["construction"])
+    return Bounds(*make.ratio, largest_differential=1e6)
+
+
+def _describe(request: Request, element: Element) -> Described:  # noqa: ARG001
+    construction = element.choices["construction"]
+    make = _make_of(construction)
+    notes = {
+        "element": (
+            f"Classical Venturi tube, {construction}: entrance cylinder of D, convergent of 21° "
+            "(±1°), cylindrical throat of length d, divergent of 7° to 15°.",
+            "At least four tappings in each plane, joined by a ring or triple-T.",
+            "Measure the throat in four directions; no diameter may differ by more than 0.1 %.",
+        )
+    }
+    low, high = _BAND
+    band = Finding(
+        Level.NOTE,
+        "coefficient-band",
+        "meter.discharge_coefficient",
+        f"the standard's coefficient is {make.discharge_coefficient:g}; the trade often meets "
+        f"{low:g} to {high:g} below the standard's Reynolds numbers ({PRACTICE}). Have the tube "
+        "calibrated where it matters",
+        source=PRACTICE,
+    )
+    return Described({}, notes, (band,))
+
+
+def _limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
+    make = _make_of(element.choices["construction"])
+    return standard_limits(
+        source=cite("iso5167-4", make.clause),
+        diameter=make.diameter,
+        ratio=make.ratio,
+        reynolds=make.reynolds,
+    )
+
+
+_DERIVATIONS = (
+    Derivation(
+        "discharge_coefficient",
+        "C = 0.984 as cast, 0.995 machined convergent, 0.985 welded sheet iron",
+        _SOURCE,
+    ),
+    Derivation(
+        "expansibility",
+        "ε² = κ τ^(2/κ)/(κ - 1) · (1 - β⁴)/(1 - β⁴ τ^(2/κ)) · (1 - τ^((κ-1)/κ))/(1 - τ), τ = p2/p1",
+        cite("iso5167-4", "5.6"),
+        ("diameter_ratio", "pressure_ratio", "isentropic_exponent"),
+    ),
+    Derivation(
+        "pressure_loss",
+        "ϖ = Δp (0.218 - 0.42 β + 0.38 β²) at 7°, Δp (0.436 - 0.86 β + 0.59 β²) at 15°, linear "
+        "between",
+        "handbook fit (from memory)",
+        ("differential_pressure", "diameter_ratio", "divergent_angle"),
+    ),
+    Derivation(
+        "throat_diameter",
+        "mass-flow equation solved for β, d20 = β D / (1 + αd (t - 20 °C)), rounded up to 0.01 mm",
+        cite("iso5167-1", "annex A"),
+        ("mass_flow", "differential_pressure_range", "inside_diameter_hot", "density"),
+    ),
+    Derivation(
+        "throat_diameter_hot",
+        "d = d20 (1 + αd (t - 20 °C))",
+        cite("iso5167-1"),
+        ("throat_diameter", "temperature"),
+    ),
+)
+
+FAMILY = family(
+    Device(
+        key="venturi_tube",
+        source=_SOURCE,
+        coefficient=_coefficient,
+        coefficient_uncertainty=_coefficient_uncertainty,
+        expansibility=_expansibility,
+        expansibility_uncertainty=_expansibility_uncertainty,
+        loss=_loss,
+        bounds=_bounds,
+        limits=_limits,
+        describe=_describe,
+        derivations=_DERIVATIONS,
+        prepare=_prepare,
+        shape=Shape("throat", "throat_diameter", "throat_diameter_hot", "throat"),
+    )
+)
