@@ -11,7 +11,7 @@ from hypothesis import strategies as st
 
 from specsheet.fields import TERMS
 from specsheet.findings import Level, Origin
-from specsheet.meters.shared.limits import of_profile, shortfall
+from specsheet.meters.shared.limits import of_physics, of_profile, shortfall
 from specsheet.meters.vortex import FAMILY
 
 
@@ -162,7 +162,8 @@ def test_bore_stated_alone_is_rated():
 def test_each_limit_flips_when_crossed(key, flow, fluid, phase):
     request = tools.request("vortex", [flow] * 3, fluid, phase=phase, meter__size="DN 100")
     element = FAMILY.size(request)
-    of_key = [limit for limit in of_profile(request) if limit.key == key]
+    every = (*of_profile(request), *of_physics(request))
+    of_key = [limit for limit in every if limit.key == key]
     factors = np.geomspace(0.2, 5.0, 41)
     held = []
     for factor in factors:

@@ -21,7 +21,7 @@ class Trial:
     Attributes:
         element: the candidate.
         values: its response at the operating points, shape (n,).
-        stops, cautions: sum of the shortfalls of the limits of each level [-].
+        stops, cautions, notes: sum of the shortfalls of the limits of each level [-].
         broken: glossary keys of the limits that it breaks, worst first.
     """
 
@@ -29,6 +29,7 @@ class Trial:
     values: Mapping[str, Array]
     stops: float
     cautions: float
+    notes: float
     broken: tuple[str, ...]
 
 
@@ -52,7 +53,7 @@ def attempt(request: Request, element: Element, rules: Rules) -> Trial:
         *rules.limits(element, request),
         *shared_limits.of_profile(request),
         *shared_limits.of_purchase(request),
-        *shared_limits.back_pressure(request),
+        *shared_limits.of_physics(request),
     )
     found = [
         (shared_limits.shortfall(limit, values), limit)
@@ -63,8 +64,10 @@ def attempt(request: Request, element: Element, rules: Rules) -> Trial:
     return Trial(
         element,
         values,
-        sum(size for size, limit in found if limit.level is Level.STOP),
-        sum(size for size, limit in found if limit.level is Level.CAUTION),
+        *(
+            sum(size for size, limit in found if limit.level is level)
+            for level in (Level.STOP, Level.CAUTION, Level.NOTE)
+        ),
         tuple(dict.fromkeys(limit.key for _, limit in worst)),
     )
 
@@ -73,9 +76,11 @@ def best(trials: Sequence[Trial]) -> int:
     """Return the index of the trial that breaks least; of equals the first.
 
     The caller puts the candidates in the order in which it likes them. A stop outweighs any
-    caution.
+    caution, a caution any note.
     """
-    scores = [(round(trial.stops, 9), round(trial.cautions, 9)) for trial in trials]
+    scores = [
+        (round(trial.stops, 9), round(trial.cautions, 9), round(trial.notes, 9)) for trial in trials
+    ]
     return scores.index(min(scores))
 
 
@@ -110,7 +115,7 @@ def choose(
 def _reason(order: Sequence[Size], trials: Sequence[Trial], index: int, liking: str) -> str:
     """Say in a sentence why this size was chosen."""
     chosen = trials[index]
-    if chosen.stops or chosen.cautions:
+    if chosen.stops or chosen.cautions or chosen.notes:
         text = f"{order[index].text} breaks the limits least; no size holds them all"
     else:
         text = f"{order[index].text} is {liking} that holds every limit at every operating point"

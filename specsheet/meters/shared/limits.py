@@ -41,11 +41,11 @@ def of_purchase(request: Request) -> tuple[Limit, ...]:
     )
 
 
-def back_pressure(request: Request) -> tuple[Limit, ...]:
-    """Return the limit on the back pressure of a liquid."""
-    if request.tag.phase != "liquid":
-        return ()
-    return (Limit("back_pressure_margin", 0.0, None, Level.STOP, "cavitation", "", ""),)
+def of_physics(request: Request) -> tuple[Limit, ...]:
+    """Return the limits that hold for every family: no cavitation, no fast gas."""
+    if request.tag.phase == "liquid":
+        return (Limit("back_pressure_margin", 0.0, None, Level.STOP, "cavitation", "", ""),)
+    return (Limit("mach_number", None, 0.3, Level.CAUTION, "mach-number-high", "", ""),)
 
 
 def shortfall(limit: Limit, values: Mapping[str, Array]) -> float:

@@ -20,6 +20,8 @@ def numbers(request: Request, size: Size) -> dict[str, float]:
         "pipe_diameter": request.pipe.inside_diameter,
         "pipe_expansion": request.pipe.expansion,
         "bore": size.bore,
+        "tubes": 1.0,
+        "connection": size.bore,
         "body_expansion": typical["body_expansion"].value if "body_expansion" in typical else 0.0,
         "reducer_coefficient": 0.0,
     }
@@ -39,12 +41,17 @@ def is_reduced(request: Request, size: Size) -> bool:
 
 
 def flow_values(of: Mapping[str, float], stream: Stream, *, gas: bool) -> dict[str, Array]:
-    """Return velocity and Reynolds number in pipe and meter, ρv² and the loss of the reducers."""
+    """Return velocity and Reynolds number in pipe and meter, ρv² and the loss of the reducers.
+
+    A meter of several tubes has ``tubes`` of them, of diameter ``bore``; the reducers end at its
+    ``connection``.
+    """
     rise = stream.temperature - REFERENCE_TEMPERATURE
     pipe = of["pipe_diameter"] * (1.0 + of["pipe_expansion"] * rise)
     bore = of["bore"] * (1.0 + of["body_expansion"] * rise)
     in_pipe = duct.velocity(volume_flow=stream.volume_flow, diameter=pipe)
-    in_meter = duct.velocity(volume_flow=stream.volume_flow, diameter=bore)
+    in_meter = duct.velocity(volume_flow=stream.volume_flow / of["tubes"], diameter=bore)
+    at_flange = duct.velocity(volume_flow=stream.volume_flow, diameter=of["connection"])
     flux = stream.density * in_meter**2
     values = {
         "velocity": in_pipe,
@@ -52,7 +59,7 @@ def flow_values(of: Mapping[str, float], stream: Stream, *, gas: bool) -> dict[s
         "meter_velocity": in_meter,
         "meter_reynolds_number": _reynolds(stream, in_meter, bore),
         "dynamic_pressure": flux,
-        "reducer_loss": of["reducer_coefficient"] * flux / 2.0,
+        "reducer_loss": of["reducer_coefficient"] * stream.density * at_flange**2 / 2.0,
     }
     if gas:
         values["mach_number"] = in_meter / stream.sound_speed

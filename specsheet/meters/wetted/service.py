@@ -22,7 +22,8 @@ class Service:
         hottest, coldest: of the design and every operating point [K]
         lowest_pressure: of the design and every operating point, absolute [Pa]
         abrasive: solids that wear.
-        aggressive: corrosive, strongly acid or alkaline.
+        corrosive: stated as a hazard.
+        aggressive: corrosive, strongly acid or alkaline, or not water at all.
         acid, alkaline: which of the two.
         chlorides: enough of them to attack stainless steel.
         potable: for drinking water.
@@ -33,6 +34,7 @@ class Service:
     coldest: float
     lowest_pressure: float
     abrasive: bool
+    corrosive: bool
     aggressive: bool
     acid: bool
     alkaline: bool
@@ -50,6 +52,7 @@ def service(request: Request) -> Service:
     aqueous = tag.text("fluid.kind") in ("seawater", "slurry", "") or (
         tag.text("fluid.substance") == "water"
     )
+    corrosive = "corrosive" in tag.words("fluid.hazards")
     lining = tag.text("line.lining").strip().lower()
     pipe = tag.text("line.material").lower()
     return Service(
@@ -57,7 +60,8 @@ def service(request: Request) -> Service:
         coldest=_lowest(stream.temperature, tag.si("design.minimum_temperature")),
         lowest_pressure=_lowest(stream.pressure, tag.si("design.minimum_pressure")),
         abrasive=is_slurry(request),
-        aggressive=acid or alkaline or "corrosive" in tag.words("fluid.hazards") or not aqueous,
+        corrosive=corrosive,
+        aggressive=acid or alkaline or corrosive or not aqueous,
         acid=acid,
         alkaline=alkaline,
         chlorides=tag.text("fluid.kind") == "seawater"
