@@ -39,12 +39,15 @@ class Model:
         family, element: the meter.
         gas: whether the stream is a gas.
         efficiency: of the pump or compressor that makes up the loss [-].
+        additional: uncertainty of the flow by short straight lengths, added arithmetically to the
+            expanded uncertainty as ISO 5167-1 has it [-].
     """
 
     family: Family
     element: Element
     gas: bool
     efficiency: float
+    additional: float = 0.0
 
     def __call__(self, stream: Stream) -> Response:
         """Return the response to a stream of shape (n,). Impossible states give NaN."""
@@ -61,7 +64,8 @@ class Model:
             if contributions:
                 relative = np.stack([item.relative for item in contributions])
                 freedom = np.array([item.freedom for item in contributions])
-                values["uncertainty"] = gum.combine(relative=relative, freedom=freedom).expanded
+                combined = gum.combine(relative=relative, freedom=freedom)
+                values["uncertainty"] = combined.expanded + self.additional
         return Response(values, contributions)
 
     def _lost_power(self, stream: Stream, loss: Array) -> Array:

@@ -48,9 +48,11 @@ def evaluate(tag: Tag) -> Evaluation:
     family = registry.family(tag.family)
     if profile is None or family is None:
         findings.append(_no_family(tag, profile))
-    elif pipe.pipe is not None and points.names:
+    if profile is not None and family is not None and pipe.pipe is not None and points.names:
         request = _request(tag, profile, pipe.pipe, points)
         evaluation = _with_meter(evaluation, family, request, state, points, findings)
+    else:
+        evaluation = _without_meter(evaluation, pipe.pipe, state, findings)
     return _finished(evaluation, findings)
 
 
@@ -96,8 +98,21 @@ def _with_meter(
     """Return the evaluation with the meter in the line; adds to ``findings``."""
     tag = request.tag
     element = family.size(request)
-    gas = tag.phase == "gas"
-    model = Model(family, element, gas, tag.si("job.efficiency") or 1.0)
+    beside = line.assess(
+        tag,
+        request.profile,
+        request.pipe,
+        state,
+        beta=_number(element, "diameter_ratio"),
+        meter_diameter=_number(element, "meter_bore"),
+    )
+    model = Model(
+        family,
+        element,
+        gas=tag.phase == "gas",
+        efficiency=tag.si("job.efficiency") or 1.0,
+        additional=beside.additional_uncertainty,
+    )
     stream, count = request.stream, len(request.names)
     swept = _swept(request, element)
     grid = scaled(stream)
@@ -111,6 +126,7 @@ def _with_meter(
     derivations = (*COMMON_DERIVATIONS, *family.derivations)
     totals = summary.summarise(request, at_points, checked.bands)
     findings.extend(element.findings)
+    findings.extend(beside.findings)
     findings.extend(checked.findings)
     findings.extend(summary.check_turndown(request, totals))
     return replace(
@@ -119,7 +135,8 @@ def _with_meter(
             tag, state, points, at_points, {item.key: item for item in derivations}
         ),
         element=_printed(element.values),
-        notes=element.notes,
+        line={**evaluation.line, **_printed(beside.values)},
+        notes={**element.notes, **beside.notes},
         summary=totals,
         checks=checked.checks,
         bands=checked.bands,
@@ -129,11 +146,28 @@ def _with_meter(
     )
 
 
+def _without_meter(
+    evaluation: Evaluation, pipe: line.Pipe | None, state: FluidResult, findings: list[Finding]
+) -> Evaluation:
+    """Return the evaluation with what the line alone can say; adds to ``findings``."""
+    beside = line.assess(evaluation.tag, evaluation.profile, pipe, state)
+    findings.extend(beside.findings)
+    return replace(
+        evaluation,
+        line={**evaluation.line, **_printed(beside.values)},
+        notes=beside.notes,
+    )
+
+
+def _number(element: Element, key: str) -> float | None:
+    found = element.values.get(key)
+    return None if found is None or isinstance(found.value, str) else found.value
+
+
 def _swept(request: Request, element: Element) -> Stream:
     """Return the range at the conditions of the normal point, from below to above it."""
     flows = request.stream.mass_flow
-    top = element.values.get("upper_range_flow")
-    highest = max(float(flows.max()), float(top.value) if top is not None else 0.0)
+    highest = max(float(flows.max()), _number(element, "upper_range_flow") or 0.0)
     range_ = np.geomspace(0.3 * float(flows.min()), 1.3 * highest, _SWEEP_LANES)
     lanes = request.stream.take(np.full(_SWEEP_LANES, request.normal))
     return lanes.with_flow(range_)
