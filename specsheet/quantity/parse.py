@@ -36,20 +36,29 @@ def parse(text: str, kind: str) -> Quantity | Refusal:
     Raises:
         KeyError: there is no such kind (a mistake of ours, not of the user).
     """
-    known = SPELLINGS[kind]
     echo = tidy(text)
     ready = plain(echo)
-    match = QUANTITY.fullmatch(ready) if len(ready) <= LONGEST else None
-    if match is not None:
-        number, spaced, joined = match.groups()
-        spelling = spaced or joined or ""
-        unit = known.get(spelling) or find(kind, spelling)
-        if unit is not None and (value := _value(number, unit)) is not None:
-            return Quantity(value, unit.kind, unit.name, echo, unit.base)
+    found = read(ready, kind, echo)
+    if found is not None:
+        return found
     # Imported here because most texts are accepted and start-up pays for every module.
     from specsheet.quantity.refuse import refuse
 
     return refuse(ready, kind, echo)
+
+
+def read(text: str, kind: str, echo: str) -> Quantity | None:
+    """Return the quantity of a text whose characters are plain already, or None."""
+    known = SPELLINGS[kind]
+    match = QUANTITY.fullmatch(text) if len(text) <= LONGEST else None
+    if match is None:
+        return None
+    number, spaced, joined = match.groups()
+    spelling = spaced or joined or ""
+    unit = known.get(spelling) or find(kind, spelling)
+    if unit is None or (value := _value(number, unit)) is None:
+        return None
+    return Quantity(value, unit.kind, unit.name, echo, unit.base)
 
 
 def _value(number: str, unit: Unit) -> float | None:

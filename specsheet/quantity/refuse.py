@@ -13,15 +13,18 @@ from specsheet.fields import KINDS
 from specsheet.quantity.advice import ADVICE
 from specsheet.quantity.limits import SMALLEST, bounds
 from specsheet.quantity.mend import mend
-from specsheet.quantity.parse import LONGEST, QUANTITY, parse
+from specsheet.quantity.parse import LONGEST, QUANTITY, read
 from specsheet.quantity.table import SPELLINGS, find, fold, from_si, kinds_of, to_si, units
 from specsheet.quantity.unit import Unit
-from specsheet.quantity.value import Quantity, Refusal
+from specsheet.quantity.value import Refusal
 from specsheet.quantity.wording import join, quoted, refusal
 
 #: why a spelling is no unit of the kind, and the units that may have been meant
 _Problem = tuple[str, tuple[str, ...]]
 _Rule = Callable[[str, str], _Problem | None]
+
+#: how many bad habits in one text are mended, one after the other
+_HABITS = 3
 
 _REFERRED = re.compile(r"(.*)\(([ga])\)")
 
@@ -35,7 +38,7 @@ def refuse(text: str, kind: str, echo: str) -> Refusal:
         echo: the text as it is echoed.
     """
     why, offers = _reason(text, kind)
-    write = tuple(dict.fromkeys(_accepted(offers, kind)))
+    write = tuple(dict.fromkeys(_accepted(offers, kind, _HABITS)))
     return refusal(label(kind), echo, why, write)
 
 
@@ -44,12 +47,14 @@ def label(kind: str) -> str:
     return KINDS[kind].label.partition(":")[0]
 
 
-def _accepted(offers: Iterable[str], kind: str) -> list[str]:
+def _accepted(offers: Iterable[str], kind: str, depth: int) -> list[str]:
     """Return the offers that are read; for one that is not, what it is mended to."""
     texts: list[str] = []
     for offer in offers:
-        read = parse(offer, kind)
-        texts.extend((offer,) if isinstance(read, Quantity) else read.write)
+        if read(offer, kind, offer) is not None:
+            texts.append(offer)
+        elif depth:
+            texts.extend(_accepted(_reason(offer, kind)[1], kind, depth - 1))
     return texts
 
 

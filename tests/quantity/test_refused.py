@@ -251,6 +251,16 @@ def test_message_is_printable() -> None:
     assert read.message.isprintable()
 
 
+@pytest.mark.parametrize(
+    "text", ["1-" * 99, "1," * 99, "~" * 199, "1 a " * 49, "1/" * 99, "+-" * 99]
+)
+def test_hostile_text_is_refused_with_few_offers(text: str) -> None:
+    """Habits are mended a few deep only, so that a long text cannot multiply its offers."""
+    read = parse(text, "flow")
+    assert isinstance(read, Refusal)
+    assert len(read.write) <= 32
+
+
 _NUMBERS = ["1", "5", "1.5", ",", ".", "-", "+", "±", "~", "/", "x10^", "³", "½", "NaN", "'", "_"]
 _WORDS = [" ", "e", "to ", ":", "*", "(", ")", "bar", "(g)", "kg/h", "m3/h", "%", "degC", "inH2O"]
 _PIECES = st.sampled_from([*_NUMBERS, *_WORDS])
