@@ -32,13 +32,18 @@ class Command:
         """The keys as people write them."""
         return self.shown or self.keys.replace(",", " or ").replace("ctrl+", "Ctrl+").upper()
 
+    @property
+    def foot_key(self) -> str:
+        """The first key in its shortest form, for the footer."""
+        return self.key_text.partition(" or ")[0].replace("Ctrl+", "^")
+
 
 FORM: tuple[Command, ...] = (
     Command("help_entry", "f1", "Help on this entry", "What it means, an example.", "Help"),
     Command("choose", "f4", "Choose from a list", "Choices, families, substances.", "Choose"),
     Command("save", "ctrl+s", "Save", "Write the tag file.", "Save", "Ctrl+S"),
     Command("save_as", "f12", "Save under another name", "", "", "F12"),
-    Command("undo", "ctrl+z", "Undo the last edit", "", "Undo", "Ctrl+Z"),
+    Command("undo", "ctrl+z", "Undo the last edit", "", "", "Ctrl+Z"),
     Command("redo", "ctrl+y,ctrl+r", "Redo", "", "", "Ctrl+Y or Ctrl+R"),
     Command(
         "find", "ctrl+f", "Find an entry", "By its words, path or help.", "Find", "Ctrl+F", True

@@ -69,6 +69,7 @@ class TextEditor(Field, Editor):
 
     def on_blur(self) -> None:
         """Commit: the value includes every key typed before the focus moved."""
+        self.cursor_position = 0  # a long text shows its beginning again
         if self.changed:
             self.post_message(Committed(self))
 

@@ -117,16 +117,32 @@ def component(text: str) -> tuple[str, str] | str:
     return name, fraction
 
 
+def example(entry: Entry) -> str:
+    """Return the example of an entry as it is typed into its field, without the file's quotes."""
+    if entry.kind == "boolean":
+        return {"true": "yes", "false": "no"}.get(entry.example, "")
+    return entry.example.strip("[]").replace('"', "") if entry.kind == "list" else entry.example
+
+
+def beside(session: Session, row: Row) -> str:
+    """Return the words beside a field: a hint while it is empty, the title of a family."""
+    text = text_in(session, row)
+    if not text:
+        return hint(session, row)
+    known = row.entry.path == "family" and text in packs.family_keys()
+    return packs.profile(text).title if known else ""
+
+
 def hint(session: Session, row: Row) -> str:
     """Return the words beside an empty field: needed, what is assumed, or an example."""
     entry = row.entry
     if row.adds:
         return _sum_of_fractions(session)
     if is_needed(entry, session.get(Address("fluid.kind"))):
-        return f"needed, e.g. {entry.example}" if entry.example else "needed"
+        return f"needed, e.g. {example(entry)}" if entry.example else "needed"
     if entry.default:
         return f"assumed: {entry.default}"
-    return f"e.g. {entry.example}" if entry.example else ""
+    return f"e.g. {example(entry)}" if entry.example else ""
 
 
 def _sum_of_fractions(session: Session) -> str:

@@ -178,7 +178,7 @@ class FormEditing(FormView):
         entry = editor.row.entry
         told = [entry.help, ""]
         told += [f"Needed: {entry.needed}"] if entry.needed else []
-        told += [f"Example: {entry.example}"] if entry.example else []
+        told += [f"Example: {form.example(entry)}"] if entry.example else []
         told += [f"Choices: {', '.join(editor.row.choices)}"] if editor.row.choices else []
         told += [f"Or the words: {', '.join(entry.words)}"] if entry.words else []
         told += [f"Assumed when nothing is stated: {entry.default}"] if entry.default else []
@@ -186,7 +186,7 @@ class FormEditing(FormView):
         refused = self.session.refusal(address_in(editor))
         told += ["", f"Refused: {refused}"] if refused else []
         note = self.notes().get(address_in(editor))
-        told += ["", f"{note.level.value}: {note.message}"] if note else []
+        told += ["", f"{note.letter}: {note.message}"] if note else []
         symbol = f" ({entry.symbol})" if entry.symbol else ""
         self.app.push_screen(Tell(f"{entry.label}{symbol}", told))
 

@@ -205,8 +205,14 @@ class FormView(CalmScreen):
             Item(Level.STOP, str(address), self.session.name(address), f"not stored: {told.reason}")
             for address, told in self.session.refused.items()
         ]
-        self._items = readout.items(self.frame.sheet, self.frame.troubles, refused)
+        self._items = readout.items(
+            self.frame.sheet, self.frame.troubles, refused, self._name_of_field
+        )
         return self._items
+
+    def _name_of_field(self, field: str) -> str:
+        address = form.address_of(self.session, field) if field else None
+        return field if address is None else self.session.name(address)
 
     def _draw_frame(self) -> None:
         session = self.session
@@ -231,9 +237,9 @@ class FormView(CalmScreen):
             return refused, "stop"
         note = self.notes().get(address_in(editor))
         if note is not None:
-            return note.message, note.level.value
+            return note.message, note.tone
         entry = editor.row.entry
-        example = f" For example: {entry.example}" if entry.example else ""
+        example = f" For example: {form.example(entry)}" if entry.example else ""
         return f"{entry.label}. {entry.help}{example}", "dim"
 
     def _draw_panes(self) -> None:

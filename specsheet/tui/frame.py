@@ -94,8 +94,7 @@ def scale(section: str, items: Sequence[Item]) -> Line:
 
 def _worst_in(section: str, items: Sequence[Item]) -> Level | None:
     levels = {i.level for i in items if i.field and form.section_of(i.field) == section}
-    levels.discard(Level.NOTE)
-    return next((level for level in Level if level in levels), None)
+    return next((level for level in (Level.STOP, Level.CAUTION) if level in levels), None)
 
 
 def footer(commands: Sequence[Command]) -> Line:
@@ -103,5 +102,5 @@ def footer(commands: Sequence[Command]) -> Line:
     pieces: list[tuple[str, str]] = []
     for command in commands:
         if command.foot:
-            pieces += [(f" {command.key_text}", "accent"), (f" {command.foot} ", "dim")]
+            pieces += [(f" {command.foot_key}", "accent"), (f" {command.foot} ", "dim")]
     return tuple(pieces)

@@ -147,9 +147,8 @@ class SectionPage(Page):
             return ((f"{_BAD} {refused}", "stop"),)
         note = self._notes.get(row.address)
         if note is not None and not row.adds:
-            return ((f"{LEVEL_LETTERS[note.level]} {note.message}", note.level.value),)
-        stated = bool(form.text_in(session, row))
-        return () if stated else ((form.hint(session, row), "dim"),)
+            return ((f"{note.letter} {note.message}", note.tone),)
+        return ((form.beside(session, row), "dim"),)
 
 
 class GridPage(Page):

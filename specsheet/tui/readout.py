@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import textwrap
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
 from specsheet.findings import Level, Origin
@@ -14,6 +14,9 @@ from specsheet.tui.glyphs import LEVEL_LETTERS, ORIGIN_LETTERS
 from specsheet.tui.protocol import Trouble
 
 Line = tuple[tuple[str, str], ...]
+
+#: worst first; standing cautions go before mere notes
+_ORDER = (Level.STOP, Level.CAUTION, None, Level.NOTE)
 
 #: what the letters beside derived values mean
 LEGEND = "g given  a assumed  t typical"
@@ -28,16 +31,26 @@ class Item:
     """One thing to say about the tag, ready for the list of findings.
 
     Attributes:
-        level: how bad it is.
+        level: how bad it is; None for a standing caution of the service.
         field: path it is about, or "".
         place: words for where ("Pressure, normal").
         message: the sentence, with reserve and source where there are any.
     """
 
-    level: Level
+    level: Level | None
     field: str
     place: str
     message: str
+
+    @property
+    def letter(self) -> str:
+        """The sign before it."""
+        return "!" if self.level is None else LEVEL_LETTERS[self.level]
+
+    @property
+    def tone(self) -> str:
+        """The name of its colour."""
+        return "caution" if self.level is None else self.level.value
 
 
 def derived(sheet: Sheet, width: int) -> list[Line]:
@@ -144,19 +157,29 @@ def wrap(text: str, width: int) -> list[str]:
 
 
 def items(
-    sheet: Sheet | None, troubles: Sequence[Trouble], refused: Sequence[Item]
+    sheet: Sheet | None,
+    troubles: Sequence[Trouble],
+    refused: Sequence[Item],
+    name: Callable[[str], str],
 ) -> tuple[Item, ...]:
-    """Return everything there is to say: what was refused, could not be read, was found."""
+    """Return everything there is to say, worst first.
+
+    Args:
+        sheet: the sheet, None where nothing could be derived.
+        troubles: entries of the file that could not be read.
+        refused: texts that are not in the file.
+        name: the words for a field ("points.normal.flow" -> "Flow, normal").
+    """
     said = list(refused)
-    said += [Item(Level.STOP, item.field, item.field, item.message) for item in troubles]
+    said += [Item(Level.STOP, item.field, name(item.field), item.message) for item in troubles]
     if sheet is not None:
         for row in sheet.findings:
-            reserve = f" Reserve: {row.reserve}." if row.reserve else ""
+            reserve = f" {row.reserve}" if row.reserve else ""
             source = f" [{row.source}]" if row.source else ""
-            place = row.field or row.point
+            place = name(row.field) or row.point
             said.append(Item(row.level, row.field, place, f"{row.message}{reserve}{source}"))
-        said += [Item(Level.NOTE, "", "caution of the service", text) for text in sheet.cautions]
-    return tuple(said)
+        said += [Item(None, "", "safety", text) for text in sheet.cautions]
+    return tuple(sorted(said, key=lambda item: _ORDER.index(item.level)))
 
 
 def finding_lines(found: Sequence[Item], width: int) -> tuple[list[Line], list[int]]:
@@ -166,8 +189,8 @@ def finding_lines(found: Sequence[Item], width: int) -> tuple[list[Line], list[i
     for number, item in enumerate(found):
         place = f"{item.place}: " if item.place else ""
         for row, part in enumerate(wrap(f"{place}{item.message}", width - 2)):
-            letter = LEVEL_LETTERS[item.level] if row == 0 else " "
-            lines.append(((f"{letter} ", item.level.value), (part, "text")))
+            letter = item.letter if row == 0 else " "
+            lines.append(((f"{letter} ", item.tone), (part, "text")))
             owners.append(number)
     return lines, owners
 
@@ -179,7 +202,9 @@ def ruler_lines(sheet: Sheet | None, width: int) -> list[Line]:
     texts = draw(sheet.ruler, width)[len(heading("", width)) :]
     windows = len(sheet.ruler.windows)
     lanes = len(texts) - windows - 2
-    tones = ["head"] * lanes + ["accent"] * windows + ["text", "label"]
+    # The scale goes right below the points: a low pane still shows both.
+    texts = [*texts[:lanes], *texts[-2:], *texts[lanes:-2]]
+    tones = ["head"] * lanes + ["text", "label"] + ["accent"] * windows
     return [((text, tone),) for text, tone in zip(texts, tones, strict=True)]
 
 
