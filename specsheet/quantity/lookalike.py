@@ -63,13 +63,13 @@ def _reshaped(character: str) -> str:
 
 
 def tidy(text: str) -> str:
-    """Return the text to echo: spaces, dashes and full-width characters plain, ends stripped.
+    """Return the text to echo: dashes and full-width characters plain, single spaces.
 
     Signs with a meaning of their own (°, ³, µ) stay as typed.
     """
     if text.isascii():
-        return text.strip()
-    return "".join(map(_reshaped, text)).strip()
+        return " ".join(text.split())
+    return " ".join("".join(map(_reshaped, text)).split())
 
 
 def plain(text: str) -> str:

@@ -32,6 +32,8 @@ _RANGE = re.compile(
     rf"({NUMBER})(?:\s*|\s*([^0-9\s][^0-9]*?)\s+)(?:-|\.{{2,3}}|to\b|/(?=[0-9]))\s*({NUMBER})"
     r"(?:\s*(\D.*))?"
 )
+_TIGHT_RANGE = re.compile(rf"({NUMBER})([A-Za-z%()]+)-({NUMBER})\s*([A-Za-z%].*)")
+_EXPONENT = re.compile(rf"({NUMBER})\s*[eE]\s*([+-]?[0-9]+)(?:\s*(\D.*))?")
 _POWER = re.compile(r"(?:(\S+?)\s*[x*]\s*)?10\s*(?:\^|\*\*)\s*([+-]?[0-9]+)\s*(.*)")
 _TO_ONE = re.compile(r"(\S*[0-9])\s*:\s*1")
 _FRACTION = re.compile(r"(?:([0-9]+)[ -]+)?([0-9]+)/(2|4|8|16|32|64)(?![0-9])\s*(\D.*)?")
@@ -87,6 +89,15 @@ def _power(text: str) -> Mend | None:
     return Mend("a power of ten is written with e", (_joined(number, unit),))
 
 
+def _exponent(text: str) -> Mend | None:
+    match = _EXPONENT.fullmatch(text)
+    if match is None:
+        return None
+    mantissa, exponent, unit = match.groups()
+    offer = _joined(f"{mantissa}e{exponent}", unit)
+    return Mend("an exponent stands directly after its number", (offer,))
+
+
 def _to_one(text: str) -> Mend | None:
     match = _TO_ONE.fullmatch(text)
     return None if match is None else Mend("a proportion is one number", (match[1],))
@@ -102,7 +113,7 @@ def _fraction(text: str) -> Mend | None:
 
 
 def _range(text: str) -> Mend | None:
-    match = _RANGE.fullmatch(text)
+    match = _RANGE.fullmatch(text) or _TIGHT_RANGE.fullmatch(text)
     if match is None:
         return None
     low, unit, high, last = match.groups()
@@ -157,6 +168,7 @@ _RULES: tuple[Callable[[str], Mend | None], ...] = (
     _tolerance,
     _signs,
     _power,
+    _exponent,
     _to_one,
     _fraction,
     _range,

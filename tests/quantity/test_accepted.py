@@ -311,6 +311,7 @@ def test_union_yields_its_member(text: str, union: str, kind: str, unit: str) ->
         ("\ufeff3.10 t/h", "3.10 t/h"),
         ("36 m³/h", "36 m³/h"),
         ("1.50E2 kg/h", "1.50E2 kg/h"),
+        ("3.10\t t/h\n", "3.10 t/h"),
     ],
 )
 def test_what_was_typed_is_echoed(typed: str, echo: str) -> None:

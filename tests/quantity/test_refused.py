@@ -17,6 +17,10 @@ from specsheet.quantity.lookalike import tidy
 
 # text, kind wanted, part of the message
 REFUSED = [
+    ("5 E3 kg/h", "flow", "write 5e3 kg/h"),
+    ("1.5E 3 kg/h", "flow", "write 1.5e3 kg/h"),
+    ("3bar(g)-5bar(g)", "pressure", "write 3 bar(g) or 5 bar(g)"),
+    ("3bar-5bar", "pressure", "write 3 bar(g), 3 bar(a), 5 bar(g) or 5 bar(a)"),
     ("1,5 bar(g)", "pressure", "write 1.5 bar(g)"),
     ("1,5 t/h", "flow", "write 1.5 t/h"),
     ("0,5 %", "ratio", "write 0.5 %"),
