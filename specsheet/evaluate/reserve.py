@@ -17,7 +17,10 @@ from specsheet.meters.family import Array, Limit, Stream
 
 #: flow factors that the search looks at; 1 is among them
 FACTORS = np.geomspace(0.01, 100.0, 81)
-_ROUNDS = 4
+#: two rounds of twelve cuts narrow a step of the grid to 0.07 %, within which a smooth margin is
+#: interpolated to 1e-7
+_ROUNDS = 2
+_CUTS = np.linspace(0.0, 1.0, 14)[1:-1]
 
 
 @dataclass(frozen=True)
@@ -97,23 +100,26 @@ def _close_in(
     bracket: tuple[Array, Array],
     ends: tuple[Array, Array],
 ) -> Array:
-    """Narrow each bracket by interpolation and bisection in turn; return the factors."""
+    """Narrow each bracket by cutting it into sections; return the factors.
+
+    Sections instead of interpolation, since some values jump (an error that steps up below a
+    Reynolds number) and a jump defeats interpolation.
+    """
     (low, high), (at_low, at_high) = bracket, ends
-    conditions = stream.take(flips.point)
-    for turn in range(_ROUNDS):
-        middle = (
-            0.5 * (low + high)
-            if turn == 1  # guards against a step, where interpolation creeps
-            else low - at_low * (high - low) / (at_high - at_low)
-        )
-        lanes = conditions.with_flow(conditions.mass_flow * np.exp(middle))
+    rows = np.arange(low.size)
+    conditions = stream.take(np.repeat(flips.point, _CUTS.size))
+    for _ in range(_ROUNDS):
+        cuts = low[:, None] + (high - low)[:, None] * _CUTS
+        lanes = conditions.with_flow(conditions.mass_flow * np.exp(cuts.ravel()))
         values = model(lanes).values
-        found = np.empty(middle.size)
-        for index, limit in enumerate(limits):
+        found = np.empty(cuts.shape)
+        for index in np.unique(flips.limit):
             mine = flips.limit == index
-            if mine.any():
-                found[mine] = margin(limit, values[limit.key][mine])
-        same = (found >= 0.0) == (at_low >= 0.0)
-        low, at_low = np.where(same, middle, low), np.where(same, found, at_low)
-        high, at_high = np.where(same, high, middle), np.where(same, at_high, found)
+            key = limits[index].key
+            found[mine] = margin(limits[index], values[key].reshape(cuts.shape)[mine])
+        edges = np.column_stack([low, cuts, high])
+        margins = np.column_stack([at_low, found, at_high])
+        step = np.argmax((margins[:, 1:] >= 0.0) != (margins[:, :1] >= 0.0), axis=1)
+        low, high = edges[rows, step], edges[rows, step + 1]
+        at_low, at_high = margins[rows, step], margins[rows, step + 1]
     return np.exp(low - at_low * (high - low) / (at_high - at_low))
