@@ -156,3 +156,14 @@ TERMS: dict[str, Term] = {term.key: term for term in _TERMS}
 def term(key: str) -> Term:
     """Return the term of that key; KeyError when the glossary lacks it (a mistake of ours)."""
     return TERMS[key]
+
+
+#: names of persons that begin a label and keep their capital inside a sentence
+_NAMES = ("Mach", "Reynolds", "Strouhal", "Wobbe")
+
+
+def in_sentence(key: str) -> str:
+    """Return the label of a term as it stands inside a sentence."""
+    label = TERMS[key].label
+    keep = label[:2].isupper() or label.startswith(_NAMES)
+    return label if keep else label[0].lower() + label[1:]

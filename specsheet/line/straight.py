@@ -105,6 +105,9 @@ def straight(
             )
             continue
         values[f"{side.name}_length"] = Given(side.wanted * of, Origin.DERIVED, source)
+        if side.wanted == 0.0:
+            notes.append(f"{side.name.capitalize()}: no straight length wanted ({source}).")
+            continue
         note, found, extra = _judge(tag, side, of, pipe_diameter, source)
         notes.append(note)
         findings.extend(found)

@@ -90,6 +90,7 @@ def _build(request: Request, item: sizes.Size) -> Element:
         findings=(
             *sizes.size_findings(request, item),
             *signals.findings,
+            *response.vapour_pressure_findings(request),
             *_fluid_findings(request),
         ),
         choices={

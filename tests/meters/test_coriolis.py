@@ -11,6 +11,7 @@ from hypothesis import strategies as st
 
 from specsheet.fields import TERMS
 from specsheet.findings import Origin
+from specsheet.line.straight import straight
 from specsheet.meters.coriolis import FAMILY
 from specsheet.meters.shared.limits import of_physics, of_profile, shortfall
 
@@ -99,7 +100,7 @@ def test_smaller_meter_where_the_zero_stability_outweighs():
     """Zero stability 0.005 % of nominal flow: base error 0.1 % holds down to 1/20 of it."""
     element = FAMILY.size(liquid([0.06, 0.3, 0.6]))
     assert element.values["meter_size"].value == "DN 25"
-    assert any("DN 40 would break: Error expected" in text for text in element.notes["element"])
+    assert any("DN 40 would break: error expected" in text for text in element.notes["element"])
 
 
 def test_demanded_loss_outweighs_the_note_on_zero_stability():
@@ -163,6 +164,13 @@ def test_pressure_effect():
 )
 def test_tube_material(more, metal):
     assert FAMILY.size(liquid(**more)).values["tube_material"].value == metal
+
+
+def test_no_straight_lengths_are_asked_for():
+    request = liquid()
+    found = straight(request.tag, request.profile, None, pipe_diameter=0.05)
+    assert found.findings == ()
+    assert found.values["upstream_length"].value == 0.0
 
 
 def test_bubbles_and_toxic_fluid():

@@ -209,6 +209,14 @@ def test_stated_range_below_the_largest_flow_is_found():
     assert "range-exceeded" in [finding.code for finding in element.findings]
 
 
+def test_liquid_without_vapour_pressure_is_found():
+    unknown = tools.request("vortex", [2.0, 8.0, 20.0], tools.water(3, vapour_pressure=np.nan))
+    assert "vapour-pressure-missing" in {item.code for item in FAMILY.size(unknown).findings}
+    assert "vapour-pressure-missing" not in {
+        item.code for item in FAMILY.size(steam_request()).findings
+    }
+
+
 def test_bubbles_and_solids_are_found():
     some = tools.quantity(0.005, "ratio", "%")
     element = FAMILY.size(water_request(fluid__bubbles=some, fluid__abrasive=True))

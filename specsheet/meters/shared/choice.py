@@ -7,7 +7,7 @@ from dataclasses import dataclass, replace
 
 import numpy as np
 
-from specsheet.fields import term
+from specsheet.fields.terms import in_sentence
 from specsheet.findings import Level
 from specsheet.meters.family import Array, Contribution, Element, Limit, Request, Stream
 from specsheet.meters.shared import limits as shared_limits
@@ -120,6 +120,6 @@ def _reason(order: Sequence[Size], trials: Sequence[Trial], index: int, liking: 
     else:
         text = f"{order[index].text} is {liking} that holds every limit at every operating point"
     if index:
-        broken = ", ".join(term(key).label for key in trials[index - 1].broken)
+        broken = ", ".join(in_sentence(key) for key in trials[index - 1].broken)
         text += f"; {order[index - 1].text} would break: {broken}"
     return f"{text}."

@@ -4,6 +4,9 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 
+import numpy as np
+
+from specsheet.findings import Finding, Level
 from specsheet.meters.family import Array, Derivation, Request, Stream
 from specsheet.meters.shared.sizes import Size, line_nominal, series
 from specsheet.methods import duct, reducer
@@ -81,6 +84,22 @@ def pressure_behind(values: Mapping[str, Array], stream: Stream, loss: Array) ->
     """
     speed_up = stream.density * (values["meter_velocity"] ** 2 - values["velocity"] ** 2) / 2.0
     return stream.pressure - speed_up - values["reducer_loss"] - loss
+
+
+def vapour_pressure_findings(request: Request) -> tuple[Finding, ...]:
+    """Return a caution where a liquid has no vapour pressure, so that flashing goes unchecked."""
+    unknown = np.isnan(request.stream.vapour_pressure)
+    if request.tag.phase != "liquid" or not unknown.any():
+        return ()
+    return (
+        Finding(
+            Level.CAUTION,
+            "vapour-pressure-missing",
+            "points.vapour_pressure",
+            "the vapour pressure is not known, so flashing and cavitation cannot be checked; state "
+            "it at each point",
+        ),
+    )
 
 
 _REDUCER_SOURCE = f"Crane TP-410, gradual contraction and enlargement ({MEMORY})"
