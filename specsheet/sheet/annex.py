@@ -6,7 +6,7 @@ from collections.abc import Mapping
 from typing import TYPE_CHECKING
 
 from specsheet.findings import Origin
-from specsheet.sheet import rows
+from specsheet.sheet import rows, tables
 from specsheet.sheet.model import Row, Working
 from specsheet.sheet.units import Units
 
@@ -26,10 +26,11 @@ def build(evaluation: Evaluation, units: Units) -> tuple[Working, ...]:
 
 def _keys(evaluation: Evaluation) -> list[str]:
     """Return the keys of all values that are derived somewhere, or have a derivation."""
+    stated = tables.pressures_stated(evaluation.tag)
     found = {item.key: None for item in evaluation.derivations}
     for values in _places(evaluation):
         for key, result in values.items():
-            if result.origin is Origin.DERIVED:
+            if result.origin is Origin.DERIVED and key not in stated:
                 found[key] = None
     return list(found)
 

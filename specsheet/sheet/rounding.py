@@ -39,22 +39,22 @@ KIND_DIGITS = {"ratio": 3, "thermal_conductivity": 3}
 
 #: smallest step worth printing, in SI, by glossary key: what a workshop or a transmitter resolves
 KEY_STEPS = {
-    "bore_diameter": 1e-5,
-    "bore_diameter_hot": 1e-5,
-    "throat_diameter": 1e-5,
-    "throat_diameter_hot": 1e-5,
-    "inside_diameter": 1e-5,
-    "inside_diameter_hot": 1e-5,
-    "meter_bore": 1e-5,
     "plate_thickness": 1e-4,
     "edge_thickness": 1e-4,
-    "bluff_width": 1e-5,
     "upstream_length": 1e-3,
     "downstream_length": 1e-3,
 }
 
-#: the same by kind; a temperature is resolved to a tenth of a kelvin
-KIND_STEPS = {"temperature": 0.1, "temperature_difference": 0.1, "current": 1e-5}
+#: the same by kind; a temperature is resolved to a tenth of a kelvin, a length to 0.01 mm
+KIND_STEPS = {
+    "temperature": 0.1,
+    "temperature_difference": 0.1,
+    "current": 1e-5,
+    "length": 1e-5,
+}
+
+#: below this many steps a value keeps its significant digits
+FEW_STEPS = 50.0
 
 
 def digits(key: str, kind: str) -> int:
@@ -97,11 +97,11 @@ def to_step(value: float, smallest: float) -> str:
     return group(text if float(text) != 0.0 else text.lstrip("-"))
 
 
-def plain(value: float) -> str:
-    """Return a bound or a tick with the digits it has, no more than four."""
+def plain(value: float, count: int = DIGITS) -> str:
+    """Return a bound, a tick or a stated value with the digits it has, no more than ``count``."""
     if not math.isfinite(value):
         return NOTHING
-    text = significant(value, 4)
+    text = significant(value, count)
     return text.rstrip("0").rstrip(".") if "." in text and "·" not in text else text
 
 

@@ -20,12 +20,15 @@ if TYPE_CHECKING:
 
 _EMPTY = Cell(NOTHING)
 
+#: digits of a given value whose text is not at hand: enough for anything a user types
+_STATED = 8
+
 
 def number(value: float, key: str, kind: str, unit: str) -> str:
     """Return an SI value rounded to significance in ``unit`` (no unit in the text)."""
     shown = quantity.from_si(value, kind, unit)
     smallest = rounding.step(key, kind)
-    if smallest is None:
+    if smallest is None or abs(value) < rounding.FEW_STEPS * smallest:
         return rounding.significant(shown, rounding.digits(key, kind))
     scale_kind = "temperature_difference" if kind == "temperature" else kind
     scale_unit = unit if kind != "temperature" or unit in quantity.units(scale_kind) else "K"
@@ -110,9 +113,12 @@ def _cell_text(result: Result | None, key: str, unit: str) -> str:
         given = result.origin is Origin.GIVEN
         return (result.value if given else result.value.replace("_", " ")) or NOTHING
     if echoes(result, key):
-        digits, typed_unit = words.split(result.text)
-        return digits if typed_unit == words.unit(unit) else f"{digits} {typed_unit}".strip()
-    return number(float(result.value), key, kind_of(key), unit)
+        figures, typed_unit = words.split(result.text)
+        return figures if typed_unit == words.unit(unit) else f"{figures} {typed_unit}".strip()
+    if origin(result, key) is Origin.DERIVED:
+        return number(float(result.value), key, kind_of(key), unit)
+    digits = _STATED if result.origin is Origin.GIVEN else rounding.DIGITS
+    return rounding.plain(quantity.from_si(float(result.value), kind_of(key), unit), digits)
 
 
 def _as_typed(texts: Sequence[str]) -> tuple[list[str], str]:

@@ -71,7 +71,7 @@ def by_point(evaluation: Evaluation, units: Units) -> list[Table]:
     keys = rows.ordered({key: None for point in evaluation.points for key in point.values})
     order = list(TERMS)
     border = order.index(_FIRST_OF_THE_METER)
-    stated = _kinds_stated(evaluation.tag)
+    stated = pressures_stated(evaluation.tag)
     fluid: list[Row] = []
     meter: list[Row] = []
     for key in keys:
@@ -88,7 +88,7 @@ def by_point(evaluation: Evaluation, units: Units) -> list[Table]:
     return [table for table in tables if table.rows]
 
 
-def _kinds_stated(tag: Tag) -> set[str]:
+def pressures_stated(tag: Tag) -> set[str]:
     """Return the kinds of pressure that every point states: they are not derived back."""
     kinds = [held.kind for point in tag.points if (held := point.quantity("pressure"))]
     return set(kinds) if len(set(kinds)) == 1 and len(kinds) == len(tag.points) else set()

@@ -2,10 +2,11 @@
 
 from __future__ import annotations
 
-from specsheet.render.pdf import body, style, wrap
+from specsheet.render.pdf import style, wrap
 from specsheet.render.pdf.grid import Column, Line, Text, grid
 from specsheet.render.pdf.page import Columns, Frame
 from specsheet.render.pdf.style import Style
+from specsheet.render.shared import mark, numbers, portions, values
 from specsheet.sheet.model import Row, Sheet, Working
 from specsheet.sheet.words import named
 
@@ -50,7 +51,7 @@ def _working(frame: Columns, sheet: Sheet, working: Working) -> None:
     rows = (len(working.inputs) + 2) * (style.BODY.leading + 3.6) * len(parts)
     frame.skip(10.0)
     frame.keep(min(30.0 + len(equation) * _SMALL.leading + rows, frame.full))
-    cited = body.numbers(sheet, working.source)
+    cited = numbers(sheet, working.source)
     name = frame.book.clean(named(working.label, working.symbol))
     for line in wrap.lines(name, frame.width - 40.0, style.SUBSECTION.size):
         frame.page.text(frame.x, frame.y - 8.0, line, style.SUBSECTION)
@@ -72,7 +73,7 @@ def _working(frame: Columns, sheet: Sheet, working: Working) -> None:
 def _parts(frame: Frame, working: Working) -> list[slice]:
     """Return the operating points in portions that fit the frame."""
     most = max(1, int((frame.width - _LABEL - _UNIT) / _value(frame)))
-    return body.portions(len(working.columns), most)
+    return portions(len(working.columns), most)
 
 
 def _value(frame: Frame) -> float:
@@ -91,9 +92,9 @@ def _columns(frame: Frame, names: tuple[str, ...]) -> list[Column]:
 
 def _line(row: Row, part: slice, bold: bool = False) -> Line:
     look = _SMALL_STRONG if bold else _SMALL
-    label = Text(f"{body.marks(row.origins)} {named(row.label, row.symbol)}", look)
-    values = (Text(text, look) for text in body.values(row, part))
-    return Line([label, row.unit, *values])
+    label = Text(f"{mark(row)} {named(row.label, row.symbol)}".strip(), look)
+    cells = [Text(text, look) for text in values(row, part)]
+    return Line([label, row.unit, *cells])
 
 
 def _methods(frame: Frame, sheet: Sheet, workings: list[Working]) -> None:
@@ -108,7 +109,7 @@ def _methods(frame: Frame, sheet: Sheet, workings: list[Working]) -> None:
             [
                 named(working.label, working.symbol),
                 working.equation or "–",
-                body.numbers(sheet, working.source),
+                numbers(sheet, working.source),
             ]
         )
         for working in workings

@@ -3,12 +3,14 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Iterable, Sequence
+from collections.abc import Sequence
 
 from specsheet.findings import Level, Origin
+from specsheet.render import shared
 from specsheet.render.pdf import fonts, head, style
 from specsheet.render.pdf.grid import Column, Line, Ornament, Text, grid
 from specsheet.render.pdf.page import Frame, Page, Place
+from specsheet.render.shared import mark, marks, numbers, portions, values
 from specsheet.sheet.model import FindingRow, LimitRow, Row, Sheet, Table
 from specsheet.sheet.words import MARKS, named
 
@@ -17,17 +19,6 @@ _ROWS = _LABEL + _SYMBOL + _UNIT + _MARK + _SOURCE
 _NARROWEST, _WIDEST = 46.0, 84.0
 _WHERE = 150.0
 _LONGEST = 24  # letters of a value that decide the width of its column
-
-
-def marks(origins: Iterable[Origin]) -> str:
-    """Return the glyphs of the origins."""
-    return "".join(MARKS[origin] for origin in origins)
-
-
-def numbers(sheet: Sheet, source: str) -> str:
-    """Return the numbers of the sources of a row ("[3]")."""
-    found = sheet.numbers(source)
-    return f"[{','.join(map(str, found))}]" if found else ""
 
 
 def narrowest(sheet: Sheet) -> float:
@@ -45,21 +36,11 @@ def narrowest(sheet: Sheet) -> float:
     return max(_NARROWEST, widest + 8.0)
 
 
-def portions(count: int, most: int) -> list[slice]:
-    """Return ``count`` columns in portions of no more than ``most``, as even as possible."""
-    total = max(count, 1)
-    size = math.ceil(total / math.ceil(total / most))
-    return [slice(start, min(start + size, total)) for start in range(0, total, size)]
-
-
 def by_point(frame: Frame, sheet: Sheet, table: Table) -> None:
     """Set a table with one column for each operating point, split where it is too wide."""
     most = max(1, int((frame.width - _ROWS) / frame.book.column))
     for part in portions(len(table.columns), most):
-        title = table.title
-        if part.start:
-            ends = dict.fromkeys((table.columns[part][0], table.columns[part][-1]))
-            title = f"{table.title}: {' to '.join(ends)}"
+        title = shared.title(table, part)
         columns = point_columns(table.columns[part], frame.width)
         lines = [_point_line(sheet, row, part) for row in table.rows]
         grid(frame, frame.book.clean(title), columns, lines)
@@ -83,26 +64,13 @@ def point_columns(names: Sequence[str], width: float) -> list[Column]:
     ]
 
 
-def values(row: Row, part: slice) -> list[str]:
-    """Return the cells of a row at some of the points; their origins only where they vary.
-
-    A value that does not depend on the point stands at each.
-    """
-    mixed = len(row.origins) > 1
-    shown = row.cells * (part.stop - part.start) if len(row.cells) == 1 else row.cells[part]
-    return [
-        f"{marks((cell.origin,))} {cell.text}" if mixed and cell.origin else cell.text
-        for cell in shown
-    ]
-
-
 def _point_line(sheet: Sheet, row: Row, part: slice) -> Line:
     return Line(
         [
-            f"{row.label} ({row.note})" if row.note else row.label,
+            shared.label(row),
             row.symbol,
             row.unit,
-            marks(row.origins) if len(row.origins) == 1 else "",
+            mark(row),
             *values(row, part),
             numbers(sheet, row.source),
         ]
@@ -111,14 +79,14 @@ def _point_line(sheet: Sheet, row: Row, part: slice) -> Line:
 
 def singles(frame: Frame, sheet: Sheet) -> None:
     """Set the tables of single values in two columns, each table into the emptier one."""
-    tables = [table for table in sheet.tables if not table.columns]
-    tables.append(Table("assumptions", "Assumptions: nobody stated", (), sheet.assumptions))
     wide = (frame.width - style.GUTTER) / 2.0
     columns = [
         Frame(frame.book, frame.x + place * (wide + style.GUTTER), wide, frame.index, frame.y)
         for place in range(2)
     ]
-    for table in tables:
+    for table in sheet.tables:
+        if table.columns:
+            continue
         column = min(columns, key=lambda one: (one.index, -one.y))
         grid(column, table.title, _single_columns(wide), _single_lines(sheet, table.rows))
     lowest = max(columns, key=lambda one: (one.index, -one.y))
@@ -205,6 +173,21 @@ def _limit(sheet: Sheet, row: LimitRow) -> Line:
     said = label if row.holds else f"{label}: {row.message}"
     cells = [said, row.point, row.value, allowed, verdict, row.reserve, row.flips]
     return Line([*cells, numbers(sheet, row.source)])
+
+
+def assumptions(frame: Frame, sheet: Sheet) -> None:
+    """List everything that nobody typed, two to a line, read down the left half first."""
+    half = frame.width / 2.0
+    one = [
+        Column("", _MARK, style.QUIET),
+        Column("Nobody stated", half * 0.54 - _MARK),
+        Column("Assumed", half * 0.46),
+    ]
+    entries = [[MARKS[Origin.ASSUMED], row.label, row.text] for row in sheet.assumptions]
+    count = math.ceil(len(entries) / 2)
+    right = [*entries[count:], ["", "", ""]]
+    lines = [Line([*entries[place], *right[place]]) for place in range(count)]
+    grid(frame, "Assumptions", [*one, *one], lines)
 
 
 def clauses(frame: Frame, sheet: Sheet) -> None:

@@ -32,6 +32,7 @@ def compose(sheet: Sheet, pdf: object) -> Book:
             body.by_point(frame, sheet, table)
     body.limits(frame, sheet)
     body.singles(frame, sheet)
+    body.assumptions(frame, sheet)
     if sheet.budget is not None:
         body.by_point(frame, sheet, sheet.budget)
     body.clauses(frame, sheet)

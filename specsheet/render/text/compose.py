@@ -2,9 +2,11 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable
+from collections.abc import Sequence
 
 from specsheet.findings import Level, Origin
+from specsheet.render import shared
+from specsheet.render.shared import mark, numbers, portions
 from specsheet.render.text import ruler
 from specsheet.render.text.layout import heading, table, wrapped
 from specsheet.sheet.model import Row, Sheet, Table
@@ -52,45 +54,30 @@ def _values(sheet: Sheet, values: Table, width: int) -> list[str]:
     """Return a table of values; one with many operating points in portions."""
     if not values.rows:
         return []
-    count = max(len(values.columns), 1)
-    most = max(1, (width - 47) // 11)
     lines: list[str] = []
-    for start in range(0, count, most):
-        part = slice(start, min(start + most, count))
-        names = values.columns[part]
-        more = f": {' to '.join(dict.fromkeys((names[0], names[-1])))}" if start else ""
-        rows = [_row(sheet, row, part) for row in values.rows]
-        if names:
-            rows.insert(0, ["", "", "", *names, "", ""])
-        at_right = (False, False, False, *(True,) * (part.stop - part.start), False, False)
-        if not values.columns:
-            rows = [[row[0], row[1], f"{row[3]} {row[2]}".strip(), *row[4:]] for row in rows]
-            at_right = (False,) * 5
-        lines += heading(f"{values.title}{more}", width)
-        lines += table(rows, width, at_right)
+    for part in portions(len(values.columns), (width - 47) // 11):
+        lines += heading(shared.title(values, part), width)
+        if values.columns:
+            rows = [_row(sheet, row, part) for row in values.rows]
+            lines += _by_point(rows, values.columns[part], width)
+        else:
+            lines += table([_single(sheet, row) for row in values.rows], width, (False,) * 5)
     return [*lines, *(wrapped(values.note, width) if values.note else ())]
 
 
-def _row(sheet: Sheet, row: Row, part: slice, sourced: bool = True) -> list[str]:
-    mixed = len(row.origins) > 1
-    shown = row.cells * (part.stop - part.start) if len(row.cells) == 1 else row.cells[part]
-    texts = [
-        f"{MARKS[cell.origin]} {cell.text}" if mixed and cell.origin else cell.text
-        for cell in shown
-    ]
-    mark = "" if mixed else _marks(row.origins)
-    source = _numbers(sheet, row.source) if sourced else ""
-    label = f"{row.label} ({row.note})" if row.note else row.label
-    return [label, row.symbol, row.unit, *texts, mark, source]
+def _by_point(rows: list[list[str]], names: Sequence[str], width: int) -> list[str]:
+    at_right = (False, False, False, *(True,) * len(names), False, False)
+    return table([["", "", "", *names, "", ""], *rows], width, at_right)
 
 
-def _marks(origins: Iterable[Origin]) -> str:
-    return "".join(MARKS[origin] for origin in origins)
+def _row(sheet: Sheet, row: Row, part: slice) -> list[str]:
+    source = numbers(sheet, row.source)
+    cells = shared.values(row, part)
+    return [shared.label(row), row.symbol, row.unit, *cells, mark(row), source]
 
 
-def _numbers(sheet: Sheet, source: str) -> str:
-    found = sheet.numbers(source)
-    return f"[{','.join(map(str, found))}]" if found else ""
+def _single(sheet: Sheet, row: Row) -> list[str]:
+    return [shared.label(row), row.symbol, row.text, mark(row), numbers(sheet, row.source)]
 
 
 def _limits(sheet: Sheet, width: int) -> list[str]:
@@ -106,7 +93,7 @@ def _limits(sheet: Sheet, width: int) -> list[str]:
             row.verdict if row.holds else row.verdict.upper(),
             row.reserve,
             row.flips,
-            _numbers(sheet, row.source),
+            numbers(sheet, row.source),
         ]
         for row in sheet.limits
     ]
@@ -121,7 +108,7 @@ def _findings(sheet: Sheet, width: int) -> list[str]:
         said = " ".join(
             part for part in (row.message, f"{row.reserve}." * bool(row.reserve)) if part
         )
-        source = _numbers(sheet, row.source)
+        source = numbers(sheet, row.source)
         body = [*wrapped(said, width - 12), *wrapped(f"({where}) {source}".rstrip(), width - 12)]
         lines += _hanging(_SIGNS[row.level], body)
     return lines
@@ -160,15 +147,14 @@ def _annex(sheet: Sheet, width: int) -> list[str]:
     lines = heading("Calculation annex", width) if sheet.annex else []
     for working in sheet.annex:
         name = named(working.label, working.symbol)
-        lines += wrapped(f"{name} {_numbers(sheet, working.source)}".rstrip(), width)
+        lines += wrapped(f"{name} {numbers(sheet, working.source)}".rstrip(), width)
         lines += [f"  {line}" for line in wrapped(working.equation or "–", width - 2)]
         if not working.inputs:
             continue
-        whole = slice(0, max(len(working.columns), 1))
-        rows = [["", "", "", *working.columns, "", ""]] if working.columns else []
-        rows += [_row(sheet, row, whole, False) for row in (*working.inputs, working.result)]
-        at_right = (False, False, False, *(True,) * whole.stop, False, False)
-        lines += [f"  {line}" for line in table(rows, width - 2, at_right)]
+        for part in portions(len(working.columns), (width - 49) // 11):
+            names = working.columns[part] or ("",)
+            rows = [[*_row(sheet, row, part)[:-1], ""] for row in (*working.inputs, working.result)]
+            lines += [f"  {line}".rstrip() for line in _by_point(rows, names, width - 2)]
     return lines
 
 

@@ -1,0 +1,64 @@
+"""Speed and memory of printing: milliseconds a sheet, growth in proportion, peak memory."""
+
+from __future__ import annotations
+
+import time
+import tracemalloc
+
+import pytest
+
+from specsheet import sheet
+from specsheet.render import pdf
+from tests.sheet import samples
+
+pytestmark = pytest.mark.benchmark
+
+#: budget for one warm sheet with its annex [s]
+BUDGET = 0.030
+
+
+def seconds(repeats: int, count: int) -> float:
+    """Shortest time of ``repeats`` runs for printing ``count`` sheets [s]."""
+    made = [sheet.build(samples.evaluation(given={"tag": f"FT-{place}"})) for place in range(count)]
+    best = float("inf")
+    for _ in range(repeats):
+        start = time.perf_counter()
+        for one in made:
+            pdf.to_bytes(one)
+        best = min(best, time.perf_counter() - start)
+    return best
+
+
+def test_one_sheet_stays_within_its_budget() -> None:
+    pdf.to_bytes(sheet.build(samples.evaluation()))
+    assert seconds(10, 1) < BUDGET
+
+
+def test_time_grows_in_proportion_to_the_number_of_sheets() -> None:
+    seconds(1, 2)
+    assert seconds(3, 40) / seconds(3, 10) < 6.0
+
+
+def test_time_grows_in_proportion_to_the_length_of_a_text() -> None:
+    def once(words: int) -> float:
+        text = " ".join(f"w{place}" for place in range(words))
+        made = sheet.build(samples.evaluation(given={"remarks": text}))
+        start = time.perf_counter()
+        pdf.to_bytes(made)
+        return time.perf_counter() - start
+
+    once(100)
+    assert once(40_000) / once(10_000) < 8.0
+
+
+def test_sheets_leave_no_memory_behind() -> None:
+    seconds(1, 5)
+    tracemalloc.start()
+    seconds(1, 20)
+    before = tracemalloc.get_traced_memory()[0]
+    seconds(1, 20)
+    grown = tracemalloc.get_traced_memory()[0] - before
+    peak = tracemalloc.get_traced_memory()[1]
+    tracemalloc.stop()
+    assert grown < 2_000_000
+    assert peak < 40_000_000

@@ -1,0 +1,256 @@
+"""Evaluation to sheet: echo, origin, rounding, limits, ruler, assumptions, annex."""
+
+from __future__ import annotations
+
+import subprocess
+import sys
+from dataclasses import replace
+
+import pytest
+
+from specsheet import sheet
+from specsheet.evaluate.result import Check, PointResult, Result
+from specsheet.findings import Level, Origin, Reserve
+from specsheet.quantity.value import Base, Quantity
+from specsheet.sheet.model import Row, Sheet, Table
+from specsheet.sheet.ruler import stagger
+from tests.sheet import samples
+
+
+def table(made: Sheet, key: str) -> Table:
+    return next(one for one in (made.points, *made.tables) if one.key == key)
+
+
+def row(made: Sheet, section: str, key: str) -> Row:
+    return next(one for one in table(made, section).rows if one.key == key)
+
+
+def texts(line: Row) -> list[str]:
+    return [cell.text for cell in line.cells]
+
+
+@pytest.fixture(scope="module")
+def made() -> Sheet:
+    return sheet.build(samples.evaluation())
+
+
+def test_given_values_are_echoed_with_their_own_digits(made: Sheet) -> None:
+    pressure = row(made, "points", "points.pressure")
+    assert texts(pressure) == ["7.0", "7.0", "7.0"]
+    assert pressure.unit == "bar(g)"
+    assert pressure.origins == (Origin.GIVEN,)
+
+
+def test_different_units_stay_in_their_cells() -> None:
+    tag = samples.evaluation().tag
+    first, second, third = tag.points
+    flow = samples.quantity(0.86111, "mass_flow", "3100 kg/h")
+    mixed = replace(second, values={**second.values, "flow": flow})
+    made = sheet.build(samples.evaluation(tag=replace(tag, points=(first, mixed, third))))
+    flows = row(made, "points", "points.flow")
+    assert texts(flows) == ["1.116 t/h", "3100 kg/h", "4.2 t/h"]
+    assert flows.unit == ""
+
+
+def test_a_point_without_a_value_shows_a_dash() -> None:
+    tag = samples.evaluation().tag
+    bare = replace(tag.points[0], values={"flow": tag.points[0].values["flow"]})
+    made = sheet.build(samples.evaluation(tag=replace(tag, points=(bare, *tag.points[1:]))))
+    assert texts(row(made, "points", "points.pressure")) == ["–", "7.0", "7.0"]
+
+
+def test_derived_values_are_rounded_and_cited(made: Sheet) -> None:
+    density = row(made, "fluid_points", "density")
+    assert texts(density) == ["3.982"] * 3
+    assert (density.unit, density.source) == ("kg/m³", samples.STEAM)
+    assert made.numbers(density.source) == (made.sources.index(samples.STEAM) + 1,)
+
+
+def test_a_typed_gauge_pressure_is_not_echoed_as_absolute() -> None:
+    typed = Result(8e5, Origin.GIVEN, text="7.0 bar(g)")
+    points = tuple(
+        PointResult(point.name, {**point.values, "pressure": typed})
+        for point in samples.evaluation().points
+    )
+    made = sheet.build(samples.evaluation(points=points))
+    absolute = row(made, "fluid_points", "pressure")
+    assert texts(absolute) == ["8.00"] * 3
+    assert (absolute.unit, absolute.origins) == ("bar(a)", (Origin.DERIVED,))
+
+
+def test_the_pressure_stated_is_not_derived_back(made: Sheet) -> None:
+    keys = [line.key for line in table(made, "fluid_points").rows]
+    assert "pressure" in keys
+    assert "pressure_gauge" not in keys
+
+
+def test_mixed_origins_stand_in_their_cells() -> None:
+    held = samples.evaluation()
+    typed = Result(4.1, Origin.GIVEN, text="4.10 kg/m3")
+    first = PointResult(held.points[0].name, {**held.points[0].values, "density": typed})
+    made = sheet.build(samples.evaluation(points=(first, *held.points[1:])))
+    density = row(made, "fluid_points", "density")
+    assert texts(density) == ["4.10", "3.982", "3.982"]
+    assert density.origins == (Origin.GIVEN, Origin.DERIVED)
+
+
+def test_the_base_condition_of_a_stated_volume_is_printed() -> None:
+    base = Base("0 °C, 101.325 kPa (DIN 1343)", 273.15, 101325.0)
+    flow = Quantity(0.1, "base_volume_flow", "Nm3/h", "360 Nm3/h", base)
+    tag = samples.evaluation().tag
+    points = tuple(replace(one, values={**one.values, "flow": flow}) for one in tag.points)
+    made = sheet.build(samples.evaluation(tag=replace(tag, points=points)))
+    assert row(made, "points", "points.flow").note == f"at {base.name}"
+    assert row(made, "base", "base").text == f"{base.name}: 0 °C, 101.325 kPa(a)"
+
+
+def test_atmosphere_and_job_base_are_always_printed(made: Sheet) -> None:
+    assert "1.00 bar(a)" in made.points.note
+    assert row(made, "base", "job.base.temperature").text == "15 °C"
+    assert row(made, "base", "job.base.pressure").text == "101.325 kPa(a)"
+
+
+def test_altitude_gives_a_derived_atmosphere() -> None:
+    tag = samples.evaluation().tag
+    given = {key: value for key, value in tag.given.items() if key != "job.atmospheric_pressure"}
+    given["job.altitude"] = Quantity(320.0, "elevation", "m", "320 m")
+    made = sheet.build(samples.evaluation(tag=replace(tag, given=given)))
+    pressure = row(made, "base", "job.atmospheric_pressure")
+    assert (pressure.text, pressure.origins) == ("0.975 bar(a)", (Origin.DERIVED,))
+
+
+def test_limits_say_reserve_and_flip(made: Sheet) -> None:
+    velocity = made.limits[0]  # what does not hold comes first
+    assert (velocity.key, velocity.verdict) == ("velocity", "caution")
+    assert (velocity.value, velocity.allowed, velocity.unit) == ("15.71", "at most 14", "m/s")
+    assert (velocity.reserve, velocity.flips) == ("−11 %", "3.74 t/h")
+    margin = next(limit for limit in made.limits if limit.key == "saturation_margin")
+    assert (margin.reserve, margin.flips) == ("−9.6 K", "175.4 °C")
+
+
+@pytest.mark.parametrize(
+    ("low", "high", "allowed"),
+    [
+        (0.1, 0.75, "0.1 to 0.75"),
+        (None, 0.75, "at most 0.75"),
+        (0.1, None, "at least 0.1"),
+        (None, None, "–"),
+        (1.0, 1.0, "1"),
+    ],
+)
+def test_bounds_in_words(low: float | None, high: float | None, allowed: str) -> None:
+    check = Check("diameter_ratio", "normal", 0.5, low, high, True, Level.STOP, "m", "s")
+    made = sheet.build(samples.evaluation(checks=(check,)))
+    assert made.limits[0].allowed == allowed
+
+
+def test_a_reserve_of_any_driver_is_worded() -> None:
+    reserve = Reserve("pressure", 6.0e5, -0.25)
+    check = Check("density", "normal", 4.0, 3.0, None, True, Level.NOTE, "m", "s", reserve)
+    limit = sheet.build(samples.evaluation(checks=(check,))).limits[0]
+    assert (limit.reserve, limit.flips) == ("−25 %", "6.00 bar(a)")
+
+
+def test_the_budget_ends_with_the_expanded_uncertainty(made: Sheet) -> None:
+    assert made.budget is not None
+    assert [cell.text for cell in made.budget.rows[0].cells] == ["0.25", "0.25", "0.25"]
+    assert made.budget.rows[-1].label == "Expanded uncertainty, k = 2"
+    assert made.budget.columns == samples.NAMES
+
+
+def test_every_assumed_value_is_listed(made: Sheet) -> None:
+    listed = {line.key: line.text for line in made.assumptions}
+    assert listed == {
+        "line.material": "carbon steel",
+        "line.upstream_fitting": "single bend",
+        "require.end_connection": "flanged",
+        "job.base.temperature": "15 °C",
+        "job.base.pressure": "101.325 kPa(a)",
+    }
+
+
+def test_the_verdict_counts_the_findings(made: Sheet) -> None:
+    assert made.verdict == "To be decided before purchase: 2 cautions, 1 note."
+    assert sheet.build(samples.evaluation(findings=())).verdict == (
+        "No objection within the limits checked."
+    )
+
+
+def test_the_annex_shows_the_numbers_put_in(made: Sheet) -> None:
+    working = next(one for one in made.annex if one.key == "differential_pressure")
+    assert "√(2 Δp ρ)" in working.equation
+    assert [line.key for line in working.inputs] == [
+        "mass_flow",
+        "discharge_coefficient",
+        "expansibility",
+        "bore_diameter_hot",
+        "density",
+    ]
+    assert texts(working.result) == ["17.65", "136.2", "250.0"]
+
+
+def test_every_derived_value_has_a_place_in_the_annex(made: Sheet) -> None:
+    explained = {working.key for working in made.annex}
+    for part in made.tables:
+        for line in part.rows:
+            if Origin.DERIVED in line.origins:
+                assert line.key in explained
+
+
+def test_every_source_is_listed_once(made: Sheet) -> None:
+    assert len(set(made.sources)) == len(made.sources)
+    for part in (made.points, *made.tables):
+        for line in part.rows:
+            assert not line.source or made.numbers(line.source)
+
+
+def test_the_ruler_stands_in_the_unit_typed(made: Sheet) -> None:
+    assert made.ruler is not None
+    assert (made.ruler.label, made.ruler.unit) == ("Mass flow", "t/h")
+    assert [mark.text for mark in made.ruler.marks] == ["1.12", "3.10", "4.20"]
+    assert [mark.inside for mark in made.ruler.marks] == [False, True, False]
+    places = [mark.position for mark in made.ruler.marks]
+    assert places == sorted(places)
+    assert all(0.0 < place < 1.0 for place in places)
+
+
+def test_the_usable_stretch_is_what_all_windows_leave_open(made: Sheet) -> None:
+    assert made.ruler is not None
+    assert made.ruler.usable is not None
+    low, high = made.ruler.usable
+    assert low == max(window.low for window in made.ruler.windows)
+    assert high == min(window.high for window in made.ruler.windows)
+
+
+def test_volume_flows_rule_where_they_are_in_proportion() -> None:
+    held = samples.evaluation()
+    points = tuple(
+        replace(
+            one,
+            values={
+                **one.values,
+                "flow": Quantity(
+                    float(result.values["volume_flow"].value), "volume_flow", "m3/h", "9 m3/h"
+                ),
+            },
+        )
+        for one, result in zip(held.tag.points, held.points, strict=True)
+    )
+    made = sheet.build(samples.evaluation(tag=replace(held.tag, points=points)))
+    assert made.ruler is not None
+    assert (made.ruler.label, made.ruler.unit) == ("Volume flow, operating", "m³/h")
+
+
+def test_without_flows_there_is_no_ruler() -> None:
+    assert sheet.build(samples.evaluation(points=())).ruler is None
+
+
+def test_labels_of_one_lane_never_touch() -> None:
+    positions, widths = [10.0, 12.0, 14.0, 60.0], [20.0, 20.0, 20.0, 20.0]
+    lanes = stagger(positions, widths, 2.0)
+    assert lanes == (0, 1, 2, 0)
+
+
+def test_the_room_imports_without_numpy() -> None:
+    code = "import sys, specsheet.sheet; sys.exit('numpy' in sys.modules)"
+    assert subprocess.run([sys.executable, "-c", code], check=False).returncode == 0
