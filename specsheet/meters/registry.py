@@ -18,6 +18,10 @@ MODULES = {
         "vortex",
         # Electromagnetic
         "magnetic",
+        # Acoustic
+        "ultrasonic_transit",
+        # Mass
+        "coriolis",
     )
 }
 
