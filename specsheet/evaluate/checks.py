@@ -190,7 +190,7 @@ def _near(request: Request, check: Check) -> tuple[Finding, ...]:
     fraction = check.reserve.fraction
     message = (
         f"{_facts(request, check)}; the limit holds, but a flow "
-        f"{abs(fraction):.1%} {'higher' if fraction > 0 else 'lower'} would cross it."
+        f"{100.0 * abs(fraction):.2g} % {'higher' if fraction > 0 else 'lower'} would cross it."
     )
     return (
         Finding(

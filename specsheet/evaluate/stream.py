@@ -60,7 +60,7 @@ def points_of(tag: Tag, fluid: FluidResult) -> Points:
             continue
         names.append(point.name)
         indices.append(index)
-        rows.append(_row(flow.value, state))
+        rows.append(_row(flow.value, state, tag.phase))
     columns = np.array(rows, dtype=np.float64).reshape(len(rows), 9).T
     return Points(tuple(names), tuple(indices), Stream(*columns), tuple(flows), tuple(findings))
 
@@ -82,10 +82,12 @@ def _missing(state: State | None, name: str) -> list[Finding]:
     ]
 
 
-def _row(flow: float, state: State) -> tuple[float, ...]:
+def _row(flow: float, state: State, phase: str) -> tuple[float, ...]:
     density, viscosity, exponent, sound, vapour = (
         np.nan if (value := state.value(key)) is None else value for key in _COLUMNS
     )
+    if phase == "gas":
+        vapour = np.nan  # steam has a saturation pressure, but it cannot cavitate
     doubt = state.properties["density"].uncertainty
     return (
         flow,

@@ -31,6 +31,6 @@ def say(key: str, value: float, units: Mapping[str, float | str] | None = None) 
         units: the job's own shown units by kind.
     """
     of = term(key)
-    unit = str((units or {}).get(of.kind, "")) or of.shown or KINDS[of.kind].shown
+    unit = of.shown or str((units or {}).get(of.kind, "")) or KINDS[of.kind].shown
     shown = number(quantity.from_si(value, of.kind, unit))
     return shown if unit == "1" else f"{shown} {unit}"
