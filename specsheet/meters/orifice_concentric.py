@@ -7,11 +7,11 @@ import math
 import numpy as np
 
 from specsheet.findings import Level, Origin
-from specsheet.meters.dp import plate
+from specsheet.meters.dp import adapters, plate
 from specsheet.meters.dp.build import family, standard_limits
 from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
-from specsheet.methods import iso5167_1, iso5167_2, orifice_plate
+from specsheet.methods import iso5167_2, orifice_plate
 from specsheet.methods.iso5167_1 import reynolds_number
 from specsheet.sources import cite
 
@@ -33,27 +33,6 @@ def _coefficient_uncertainty(lanes: Lanes) -> Array:
         diameter_ratio=lanes.diameter_ratio,
         reynolds_number=lanes.reynolds_number,
         inside_diameter=lanes.inside_diameter,
-    )
-    return found
-
-
-def _expansibility(ratio: Array, drop: Array, exponent: Array) -> Array:
-    found: Array = iso5167_2.expansibility(
-        diameter_ratio=ratio, pressure_drop_ratio=drop, isentropic_exponent=exponent
-    )
-    return found
-
-
-def _expansibility_uncertainty(ratio: Array, drop: Array, exponent: Array) -> Array:  # noqa: ARG001
-    found: Array = iso5167_2.expansibility_uncertainty(
-        pressure_drop_ratio=drop, isentropic_exponent=exponent
-    )
-    return found
-
-
-def _loss(lanes: Lanes, coefficient: Array) -> Array:
-    found: Array = iso5167_1.loss_ratio(
-        discharge_coefficient=coefficient, diameter_ratio=lanes.diameter_ratio
     )
     return found
 
@@ -178,25 +157,10 @@ _DERIVATIONS = (
         _SOURCE,
         ("diameter_ratio", "reynolds_number", "inside_diameter_hot"),
     ),
-    Derivation(
-        "expansibility",
-        "ε = 1 - (0.351 + 0.256 β⁴ + 0.93 β⁸) (1 - (p2/p1)^(1/κ))",
-        cite("iso5167-2", "5.3.2.2"),
-        ("diameter_ratio", "pressure_ratio", "isentropic_exponent"),
-    ),
-    Derivation(
-        "pressure_loss",
-        "ϖ = Δp (sqrt(1 - β⁴(1 - C²)) - C β²) / (sqrt(1 - β⁴(1 - C²)) + C β²)",
-        cite("iso5167-2", "5.4.1"),
-        ("differential_pressure", "discharge_coefficient", "diameter_ratio"),
-    ),
-    Derivation(
-        "bore_diameter",
-        "mass-flow equation solved for β, d20 = β D / (1 + αd (t - 20 °C)), rounded up to 0.01 mm; "
-        "with a drain hole d = dm (1 + 0.55 (dk/dm)²)",
-        cite("iso5167-1", "annex A"),
-        ("mass_flow", "differential_pressure_range", "inside_diameter_hot", "density"),
-    ),
+    adapters.PLATE_EXPANSIBILITY,
+    adapters.PLATE_LOSS,
+    adapters.BORE,
+    Derivation("bevel_angle", "45°, allowed 30° to 60°", cite("iso5167-2", "5.1.6")),
     Derivation(
         "edge_thickness", "0.005 D to 0.02 D", cite("iso5167-2", "5.1.5"), ("inside_diameter_hot",)
     ),
@@ -215,9 +179,9 @@ FAMILY = family(
         source=_SOURCE,
         coefficient=_coefficient,
         coefficient_uncertainty=_coefficient_uncertainty,
-        expansibility=_expansibility,
-        expansibility_uncertainty=_expansibility_uncertainty,
-        loss=_loss,
+        expansibility=adapters.plate_expansibility,
+        expansibility_uncertainty=adapters.plate_expansibility_uncertainty,
+        loss=adapters.plate_loss,
         bounds=_bounds,
         limits=_limits,
         describe=_describe,

@@ -8,10 +8,11 @@ import numpy as np
 
 from specsheet.findings import Finding, Level
 from specsheet.line.material import find_material
+from specsheet.meters.dp import adapters
 from specsheet.meters.dp.build import family, standard_limits
 from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
-from specsheet.methods import iso5167_3, iso5167_4
+from specsheet.methods import iso5167_4
 from specsheet.methods.iso5167_4 import VENTURIS, Venturi
 from specsheet.sources import PRACTICE, cite
 
@@ -33,20 +34,6 @@ def _coefficient(lanes: Lanes) -> Array:
 def _coefficient_uncertainty(lanes: Lanes) -> Array:
     make = _make_of(lanes.choices["construction"])
     return np.full(lanes.mass_flow.shape, make.uncertainty)
-
-
-def _expansibility(ratio: Array, drop: Array, exponent: Array) -> Array:
-    found: Array = iso5167_3.expansibility(
-        diameter_ratio=ratio, pressure_drop_ratio=drop, isentropic_exponent=exponent
-    )
-    return found
-
-
-def _expansibility_uncertainty(ratio: Array, drop: Array, exponent: Array) -> Array:  # noqa: ARG001
-    found: Array = iso5167_4.expansibility_uncertainty(
-        diameter_ratio=ratio, pressure_drop_ratio=drop
-    )
-    return found
 
 
 def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not depend on it
@@ -123,12 +110,7 @@ _DERIVATIONS = (
         "C = 0.984 as cast, 0.995 machined convergent, 0.985 welded sheet iron",
         _SOURCE,
     ),
-    Derivation(
-        "expansibility",
-        "ε² = κ τ^(2/κ)/(κ - 1) · (1 - β⁴)/(1 - β⁴ τ^(2/κ)) · (1 - τ^((κ-1)/κ))/(1 - τ), τ = p2/p1",
-        cite("iso5167-4", "5.6"),
-        ("diameter_ratio", "pressure_ratio", "isentropic_exponent"),
-    ),
+    adapters.NOZZLE_EXPANSIBILITY,
     Derivation(
         "pressure_loss",
         "ϖ = Δp (0.218 - 0.42 β + 0.38 β²) at 7°, Δp (0.436 - 0.86 β + 0.59 β²) at 15°, linear "
@@ -136,18 +118,8 @@ _DERIVATIONS = (
         "handbook fit (from memory)",
         ("differential_pressure", "diameter_ratio", "divergent_angle"),
     ),
-    Derivation(
-        "throat_diameter",
-        "mass-flow equation solved for β, d20 = β D / (1 + αd (t - 20 °C)), rounded up to 0.01 mm",
-        cite("iso5167-1", "annex A"),
-        ("mass_flow", "differential_pressure_range", "inside_diameter_hot", "density"),
-    ),
-    Derivation(
-        "throat_diameter_hot",
-        "d = d20 (1 + αd (t - 20 °C))",
-        cite("iso5167-1"),
-        ("throat_diameter", "temperature"),
-    ),
+    adapters.THROAT,
+    adapters.THROAT_HOT,
 )
 
 FAMILY = family(
@@ -156,8 +128,8 @@ FAMILY = family(
         source=_SOURCE,
         coefficient=_coefficient,
         coefficient_uncertainty=_coefficient_uncertainty,
-        expansibility=_expansibility,
-        expansibility_uncertainty=_expansibility_uncertainty,
+        expansibility=adapters.nozzle_expansibility,
+        expansibility_uncertainty=adapters.venturi_expansibility_uncertainty,
         loss=_loss,
         bounds=_bounds,
         limits=_limits,

@@ -19,6 +19,7 @@ REFERENCE_TEMPERATURE = 293.15
 
 _ROUNDS = 40
 _TOLERANCE = 4e-14
+_SETTLED = 1e-11
 
 
 def grown(*, length: Any, expansion: Any, temperature: Any) -> Any:
@@ -96,8 +97,12 @@ def fixed_point(step: Callable[[Any], Any], start: Any) -> Any:
         step: function of an array of shape (n,) that returns the next array.
         start: first guess, shape (n,).
     """
-    before = np.asarray(start, dtype=np.float64)
-    now = np.asarray(step(before), dtype=np.float64)
+    with np.errstate(all="ignore"):
+        return _secant(step, np.asarray(start, dtype=np.float64))
+
+
+def _secant(step: Callable[[Any], Any], before: Array) -> Array:
+    now: Array = np.asarray(step(before), dtype=np.float64)
     gap_before = now - before
     for _ in range(_ROUNDS):
         gap = step(now) - now
@@ -107,7 +112,7 @@ def fixed_point(step: Callable[[Any], Any], start: Any) -> Any:
         slope = (gap - gap_before) / (now - before)
         after = np.where(open_lanes, np.where(slope < 0.0, now - gap / slope, np.nan), now)
         before, gap_before, now = now, gap, after
-    settled = np.abs(step(now) - now) <= 1e-11 * np.abs(now)
+    settled = np.abs(step(now) - now) <= _SETTLED * np.abs(now)
     return np.where(settled, now, np.nan)
 
 

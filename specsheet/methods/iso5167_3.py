@@ -77,5 +77,8 @@ def expansibility_uncertainty(*, pressure_drop_ratio: Any) -> Any:
 def venturi_nozzle_expansibility_uncertainty(
     *, diameter_ratio: Any, pressure_drop_ratio: Any
 ) -> Any:
-    """Return that of a Venturi nozzle: (4 + 100 β⁸) Δp/p1 %, k = 2 [-]."""
+    """Return that of a Venturi nozzle or tube: (4 + 100 β⁸) Δp/p1 %, k = 2 [-].
+
+    The same in ISO 5167-4:2003, 5.7.2.
+    """
     return (0.04 + diameter_ratio**8) * pressure_drop_ratio

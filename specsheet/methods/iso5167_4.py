@@ -40,11 +40,6 @@ VENTURIS = {
 }
 
 
-def expansibility_uncertainty(*, diameter_ratio: Any, pressure_drop_ratio: Any) -> Any:
-    """Return the relative expanded uncertainty of ε: (4 + 100 β⁸) Δp/p1 % (5.7.2), k = 2 [-]."""
-    return (0.04 + diameter_ratio**8) * pressure_drop_ratio
-
-
 def loss_ratio(*, diameter_ratio: Any, divergent_angle: float) -> Any:
     """Return the permanent loss by Δp [-] of a classical Venturi tube.
 

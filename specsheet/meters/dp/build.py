@@ -12,7 +12,7 @@ from specsheet.meters.dp import budget, sizing, transmitter
 from specsheet.meters.dp.derivations import COMMON
 from specsheet.meters.dp.device import Device
 from specsheet.meters.dp.response import respond
-from specsheet.meters.family import Element, Family, Given, Limit, Request
+from specsheet.meters.family import Derivation, Element, Family, Given, Limit, Request
 from specsheet.sources import PRACTICE, cite
 
 
@@ -24,8 +24,16 @@ def family(device: Device) -> Family:
         at=partial(respond, device),
         limits=partial(limits, device),
         budget=partial(budget.contributions, device),
-        derivations=(*COMMON, *device.derivations),
+        derivations=(*COMMON, _ratio(device), *device.derivations),
         signal="differential_pressure",
+    )
+
+
+def _ratio(device: Device) -> Derivation:
+    shape = device.shape
+    size = shape.hot_term or shape.term
+    return Derivation(
+        "diameter_ratio", shape.equation, device.source, (size, "inside_diameter_hot")
     )
 
 

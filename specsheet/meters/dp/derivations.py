@@ -82,6 +82,12 @@ COMMON: tuple[Derivation, ...] = (
         ("differential_pressure_range", "diameter_ratio", "density"),
     ),
     Derivation(
+        "second_range",
+        "preferred value at or above the geometric mean of the smallest Δp and the range",
+        PRACTICE,
+        ("differential_pressure", "differential_pressure_range"),
+    ),
+    Derivation(
         "calibrated_range_low", "(ρ - ρleg) g Δz, upwards positive", "hydrostatics", ("density",)
     ),
     Derivation(

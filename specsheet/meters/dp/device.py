@@ -63,6 +63,7 @@ class Shape:
         term: glossary key of it at 20 °C ("bore_diameter").
         hot_term: glossary key of it at operating temperature, or "".
         label: words for it in a message ("bore").
+        equation: how β follows from it.
         share: dimension by D, from β; arrays.
         ratio: β, from dimension by D; arrays.
         effective: dimension that counts, from the one machined [m] and the element's numbers.
@@ -73,6 +74,7 @@ class Shape:
     term: str = "bore_diameter"
     hot_term: str = "bore_diameter_hot"
     label: str = "bore"
+    equation: str = "β = d / D"
     share: Callable[[Array], Array] = same_share
     ratio: Callable[[Array], Array] = same_share
     effective: Callable[[float, Mapping[str, float]], float] = as_machined

@@ -6,6 +6,7 @@ from collections.abc import Mapping
 
 from specsheet.findings import Finding, Level, Origin
 from specsheet.line.material import find_material
+from specsheet.meters.dp.adapters import BORE_HOT
 from specsheet.meters.dp.device import Described, Prepared
 from specsheet.meters.family import Derivation, Element, Given, Limit, Request
 from specsheet.methods import orifice_plate as steel
@@ -21,12 +22,7 @@ SMALLEST_HOLED_PIPE = 0.1
 _BENDING = cite("isotr9464")
 
 DERIVATIONS: tuple[Derivation, ...] = (
-    Derivation(
-        "bore_diameter_hot",
-        "d = d20 (1 + αd (t - 20 °C))",
-        cite("iso5167-1"),
-        ("bore_diameter", "temperature"),
-    ),
+    BORE_HOT,
     Derivation(
         "plate_thickness",
         "thinnest usual sheet up to 0.05 D that the largest Δp does not bend",

@@ -137,7 +137,7 @@ def flow_from(
 
         def step(mass_flow: Array) -> Array:
             at = lanes.with_flow(mass_flow)
-            return equation.mass_flow(
+            found: Array = equation.mass_flow(
                 discharge_coefficient=coefficient(device, at),
                 expansibility=epsilon,
                 diameter_ratio=at.diameter_ratio,
@@ -145,9 +145,10 @@ def flow_from(
                 differential_pressure=differential_pressure,
                 density=stream.density,
             ) / device.over_reading(at)
+            return found
 
-        found: Array = equation.fixed_point(step, stream.mass_flow)
-        return found
+        flow: Array = equation.fixed_point(step, stream.mass_flow)
+        return flow
 
 
 def ratio_for(device: Device, lanes: Lanes, stream: Stream, differential_pressure: Array) -> Array:

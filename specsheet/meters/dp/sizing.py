@@ -16,6 +16,9 @@ from specsheet.meters.family import Array, Element, Given, Request, Stream
 from specsheet.methods import iso5167_1 as equation
 from specsheet.sources import PRACTICE, cite
 
+#: above this diameter ratio nothing narrows the pipe any more [-]
+_WIDEST = 0.95
+
 #: step to which a machined dimension is rounded up [m]
 STEP = 1e-5
 
@@ -114,9 +117,9 @@ def solve(of: Task) -> Sized:
     if span is None:
         return _both(of)
     ratio = float(_ratios(of, np.array([span]))[0])
-    sized = _machine(of, ratio, span, Origin.GIVEN)
-    if np.isfinite(ratio):
-        return sized
+    if ratio < _WIDEST:
+        return _machine(of, ratio, span, Origin.GIVEN)
+    sized = _machine(of, of.bounds.largest, span, Origin.GIVEN)
     return replace(sized, findings=(_impossible(of, span),))
 
 
@@ -134,15 +137,13 @@ def _guess(of: Task, stream: Stream) -> Lanes:
 
 def _machine(of: Task, ratio: float, span: float, span_origin: Origin) -> Sized:
     """Turn β at operating temperature into a dimension at 20 °C, rounded up to the step."""
-    bounds = of.bounds
-    beta = ratio if np.isfinite(ratio) else bounds.largest
     temperature = float(of.request.stream.temperature[of.lead])
     inside = equation.grown(
         length=of.numbers["inside_diameter"],
         expansion=of.numbers["pipe_expansion"],
         temperature=temperature,
     )
-    hot = inside * float(of.device.shape.share(np.array([beta]))[0])
+    hot = inside * float(of.device.shape.share(np.array([ratio]))[0])
     cold = hot / equation.grown(
         length=1.0, expansion=of.numbers["element_expansion"], temperature=temperature
     )
@@ -193,8 +194,11 @@ def _both(of: Task) -> Sized:
             + (loss * back * back > _largest_loss(of.request))
             + (spans >= stream.pressure - np.nan_to_num(stream.vapour_pressure))
         )
-        score = np.where(np.isnan(ratios), np.inf, abs(ratios - bounds.target) + 10.0 * broken)
+        score = np.where(~(ratios < _WIDEST), np.inf, abs(ratios - bounds.target) + 10.0 * broken)
     index = int(np.argmin(score))
+    if not np.isfinite(score[index]):
+        sized = _machine(of, bounds.largest, float(spans[index]), Origin.DERIVED)
+        return replace(sized, findings=(_impossible(of, float(spans[index])),))
     sized = _machine(of, float(ratios[index]), float(spans[index]), Origin.DERIVED)
     if score[index] < 10.0:
         return sized
