@@ -2,19 +2,27 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from pathlib import Path
 
 from specsheet.tagfile.problem import Problem
 from specsheet.tagfile.source import read_text
 from specsheet.tagfile.syntax import parse
 from specsheet.tui.dialogs import Ask, Choice, Prompt, Tell
+from specsheet.tui.evaluator import Evaluator
 from specsheet.tui.form_editing import FormEditing
+from specsheet.tui.journal import Leftover
 from specsheet.tui.saving import Conflict, Outcome
+from specsheet.tui.session import Session
 
 #: folder that printed sheets go into, below the folder the program was started in
 OUTPUT = "output"
 
+_RECOVERING = (
+    Choice("recover", "Recover them; undo takes them out again", key="r"),
+    Choice("later", "Leave them for the next open", key="l"),
+    Choice("discard", "Discard them for good", key="d"),
+)
 _ELSEWHERE = Choice("elsewhere", "Save under another name", key="n")
 _OVERWRITE = Choice("overwrite", "Write my text over what is on disk", key="o")
 _RELOAD = Choice("reload", "Take what is on disk; undo brings my text back", key="l")
@@ -22,6 +30,54 @@ _RELOAD = Choice("reload", "Take what is on disk; undo brings my text back", key
 
 class FormScreen(FormEditing):
     """One tag."""
+
+    def __init__(
+        self,
+        session: Session,
+        evaluator: Evaluator,
+        *,
+        greeting: str = "",
+        leftovers: Sequence[Leftover] = (),
+    ) -> None:
+        """Make the screen.
+
+        Args:
+            session: the tag.
+            evaluator: what derives its values.
+            greeting: what is said first.
+            leftovers: unsaved edits of earlier sessions, to be offered, newest first.
+        """
+        super().__init__(session, evaluator, greeting=greeting)
+        self._leftovers = list(leftovers)
+
+    async def begin(self) -> None:
+        """Show the first page, then offer what earlier sessions left behind."""
+        await super().begin()
+        self._offer()
+
+    def _offer(self) -> None:
+        if not self._leftovers:
+            return
+        leftover = self._leftovers.pop(0)
+
+        async def answered(value: str | None) -> None:
+            if value == "recover":
+                self.session.recover(leftover)
+                await self.moved("recovered", leftover.name)
+                return
+            if value == "discard":
+                leftover.discard()
+            self._offer()
+
+        self.app.push_screen(Ask(self._left_behind(leftover), _RECOVERING), answered)
+
+    def _left_behind(self, leftover: Leftover) -> str:
+        same = leftover.saved == self.session.saved
+        other = "" if same else " The file on disk has changed since then."
+        return (
+            f"An earlier session ended before its edits of {self.session.path.name} were saved "
+            f"(edits: {leftover.edits}, the last one: {leftover.name}).{other}"
+        )
 
     async def action_save(self) -> None:
         """Save, or ask what to do where somebody changed the file."""

@@ -95,13 +95,14 @@ class FormView(CalmScreen):
         """Draw the frame at once and the first page right after."""
         self.evaluator.listen(self.take)
         self.query_one("#foot", Bar).set_line(footer(FORM))
-        told = "The terminal is too small; 60 x 16 is the least. Nothing is lost."
+        told = "Too small: 60 x 16 is the least. Nothing is lost."
         self.query_one("#too-small", Bar).set_line(((told, "head"),))
         self._show_pane(self._shown_pane)
         self._draw_frame()
-        self.call_after_refresh(self._begin)
+        self.call_after_refresh(self.begin)
 
-    async def _begin(self) -> None:
+    async def begin(self) -> None:
+        """Show the first page and ask for the values."""
         await self.open_section(self.section)
         self.request()
 
