@@ -15,7 +15,7 @@ from collections.abc import Sequence
 from typing import TYPE_CHECKING
 
 if TYPE_CHECKING:
-    from specsheet.fluid.build import Built
+    from specsheet.fluid.build_liquids import Built
     from specsheet.fluid.evaluate import Outcome
     from specsheet.fluid.model import Condition, Fluid
     from specsheet.fluid.state import FluidResult

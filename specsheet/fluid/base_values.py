@@ -16,6 +16,8 @@ from specsheet.tag import Tag
 
 _DENSITY = "fluid.base_density"
 _VOLUME_KEYS = ("gross_calorific_value", "net_calorific_value")
+#: what is missing at a point only matters there
+_POINTS_ONLY = ("viscosity", "vapour_pressure")
 #: what a consumer finds among the constants, at the job's own base
 _OWN = ("gross_calorific_value", "net_calorific_value", "wobbe_index", "relative_density")
 
@@ -55,7 +57,7 @@ def apply(
         findings += _differs(base, tag.base, density, values.get("density"))
         values["density"] = given(_moved(density, tag.base, base, fluid.phase), 0.002)
     _calorific(tag, base, values)
-    said = tuple(_softened(item, base, tag.base) for item in findings)
+    said = tuple(_softened(tag, item, base) for item in findings if item.field not in _POINTS_ONLY)
     return replace(found, properties=values), said
 
 
@@ -92,14 +94,26 @@ def _calorific(tag: Tag, base: Base, values: dict[str, Property]) -> None:
             values[f"{key}_mass"] = given(stated / density.value, 0.005)
 
 
-def _softened(finding: Finding, base: Base, own: Base) -> Finding:
-    """Return a finding about a base condition: it stops no point, and its field is the base's."""
+def _softened(tag: Tag, finding: Finding, base: Base) -> Finding:
+    """Return a finding about a base condition: it stops no point, and counts where it is used."""
     field = finding.field
     if field and "." not in field:
-        field = f"job.base.{field}" if base == own else ""
-    level = Level.CAUTION if finding.level is Level.STOP else finding.level
+        field = f"job.base.{field}" if base == tag.base else ""
+    level = finding.level
+    if level is Level.STOP:
+        level = Level.CAUTION if _used(tag, base) else Level.NOTE
     return replace(
         finding, level=level, field=field, message=f"At base ({base.name}): {finding.message}"
+    )
+
+
+def _used(tag: Tag, base: Base) -> bool:
+    """Tell whether a flow is stated at a base condition."""
+    return any(
+        quantity is not None
+        and quantity.kind == "base_volume_flow"
+        and (quantity.base or tag.base) == base
+        for quantity in (point.quantity("flow") for point in tag.points)
     )
 
 

@@ -3,25 +3,17 @@
 from __future__ import annotations
 
 from collections.abc import Callable
-from dataclasses import dataclass
 
 from specsheet.findings import Finding
-from specsheet.fluid import composition, names
+from specsheet.fluid import build_liquids, composition, humidity, job_substances, names
 from specsheet.fluid.backends import given as given_backend
 from specsheet.fluid.backends.given import Given
-from specsheet.fluid.backends.mixture import Mixture
+from specsheet.fluid.backends.mixture import AIR, Mixture
 from specsheet.fluid.backends.pure import Pure
 from specsheet.fluid.backends.water import Water
-from specsheet.fluid.model import Fluid, stop
+from specsheet.fluid.build_liquids import Built
+from specsheet.fluid.model import caution, stop
 from specsheet.tag import Point, Tag
-
-
-@dataclass(frozen=True, slots=True)
-class Built:
-    """The fluid of a tag, or None with the findings that say why."""
-
-    fluid: Fluid | None
-    findings: tuple[Finding, ...] = ()
 
 
 def fluid_of(tag: Tag) -> Built:
@@ -46,6 +38,9 @@ def _substance(tag: Tag) -> Built:
     if not text:
         message = "A substance was wanted, none came: state fluid.substance."
         return Built(None, (stop("substance-missing", "fluid.substance", message),))
+    own = job_substances.find(tag.folder, text, tag.phase)
+    if own.fluid is not None or own.findings:
+        return Built(own.fluid, own.findings)
     item = names.find(text)
     if item is None:
         return Built(None, (unknown("fluid.substance", text),))
@@ -73,6 +68,9 @@ def _mixture(tag: Tag) -> Built:
     if read.composition is None:
         return Built(None, read.findings)
     found = read.composition
+    if humidity.stated(tag):
+        wet = humidity.add(tag, found)
+        return Built(wet.fluid, (*read.findings, *wet.findings))
     if len(found) == 1:
         key = found[0][0]
         lone = Water(tag.phase) if key == "water" else Pure(key, tag.phase, _combustion(tag))
@@ -106,8 +104,31 @@ def _row(tag: Tag, point: Point) -> given_backend.Row | None:
     )
 
 
+def _humid_air(tag: Tag) -> Built:
+    if humidity.stated(tag):
+        wet = humidity.add(tag, AIR)
+        return Built(wet.fluid, wet.findings)
+    text = (
+        "Humid air is stated without its humidity: it is taken as dry. State "
+        "fluid.relative_humidity or fluid.water_dew_point."
+    )
+    return Built(
+        Pure("air", tag.phase, _combustion(tag)),
+        (caution("humidity-missing", "fluid.relative_humidity", text),),
+    )
+
+
+def _slurry(tag: Tag) -> Built:
+    return build_liquids.slurry(tag, lambda stated: _substance(stated).fluid)
+
+
 _BUILDERS: dict[str, Callable[[Tag], Built]] = {
     "substance": _substance,
     "mixture": _mixture,
+    "humid_air": _humid_air,
+    "solution": build_liquids.solution,
+    "petroleum": build_liquids.petroleum,
+    "seawater": build_liquids.seawater,
+    "slurry": _slurry,
     "given": _given,
 }

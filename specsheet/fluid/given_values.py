@@ -47,10 +47,21 @@ def given(value: float, uncertainty: float) -> Property:
     return Property(value, Origin.GIVEN, text, "", uncertainty)
 
 
+#: what is said of a value that is not known, and needs no saying where the user states it
+_SETTLED = {
+    "viscosity-missing": "viscosity",
+    "viscosity-extrapolated": "viscosity",
+    "slurry-viscosity": "viscosity",
+    "vapour-pressure-missing": "vapour_pressure",
+}
+
+
 def apply(tag: Tag, point: Point, state: State, molar_mass: float | None) -> State:
     """Return the state with the values stated at the point in place of the computed ones."""
     values = dict(state.properties)
-    findings = list(state.findings)
+    findings = [
+        item for item in state.findings if point.quantity(_SETTLED.get(item.code, "")) is None
+    ]
     for key, (uncertainty, tolerance) in STATED.items():
         quantity = point.quantity(key)
         if quantity is None:

@@ -28,6 +28,8 @@ from specsheet.sources import cite
 
 #: the Wilson estimate is never colder than the dew point by more than this [K]
 MARGIN = 20.0
+#: a water content this near to saturation, relative, is saturated and not beyond it
+SATURATED = 1e-5
 #: a dew point nearer than this is worth a word [K]
 NEAR = 3.0
 
@@ -83,31 +85,36 @@ def _wet_verdict(
     fraction = dict(composition).get("water", 0.0)
     if fraction <= 0.0 or temperature >= water.CRITICAL_TEMPERATURE:
         return None
-    ideal = _saturation(temperature)
-    if fraction * pressure < 0.5 * ideal:
-        return Verdict(GAS, _ideal_dew(fraction * pressure))
-    ratio = _saturation_ratio(composition, fraction, temperature, pressure, state)
-    # d ln(psat)/dT turns the ratio of fugacities into a distance in temperature
-    slope = math.log(_saturation(temperature + 0.5) / _saturation(temperature - 0.5))
-    dew = temperature + math.log(ratio) / slope
+    if fraction * pressure < 0.5 * saturation(temperature):
+        return Verdict(GAS, {"dew_temperature": _WATER_DEW(boiling(fraction * pressure))})
+    ratio = fraction / saturated_fraction(composition, temperature, pressure, state)
+    # the enhancement by pressure is taken as the same at the dew point
+    dew = boiling(ratio * saturation(temperature))
     values = {"dew_temperature": _WATER_DEW(dew)}
-    if ratio > 1.0:
+    if ratio > 1.0 + SATURATED:
         return Verdict(TWO_PHASE, values)
     return Verdict(GAS, values, _near(dew, temperature, "water"))
 
 
-def _saturation_ratio(
-    composition: Composition, fraction: float, temperature: float, pressure: float, state: Any
+def saturated_fraction(
+    composition: Composition, temperature: float, pressure: float, state: Any
 ) -> float:
-    """Return the fugacity of water in the gas by that in its condensed phase [-]."""
+    """Return the mole fraction of water at which a gas is saturated with it [-]; may exceed one.
+
+    Args:
+        composition: with water.
+        temperature: [K]
+        pressure: [Pa]
+        state: state object of the gas at that state; its fugacity coefficient of water is used.
+    """
     index = [key for key, _ in composition].index("water")
-    gas = fraction * pressure * float(state.fugacity_coefficient(index))
-    vapour = _saturation(temperature)
+    vapour = saturation(temperature)
     poynting = math.exp(1.8e-5 * max(pressure - vapour, 0.0) / (GAS_CONSTANT * temperature))
-    return gas / (vapour * _saturated_coefficient(temperature) * poynting)
+    condensed = vapour * _saturated_coefficient(temperature) * poynting
+    return condensed / (pressure * float(state.fugacity_coefficient(index)))
 
 
-def _saturation(temperature: float) -> float:
+def saturation(temperature: float) -> float:
     """Return the vapour pressure [Pa] of water, over ice below freezing."""
     found = water.saturation_pressure(temperature)
     if found is not None:
@@ -127,12 +134,14 @@ def _saturated_coefficient(temperature: float) -> float:
     return math.exp(factor - 1.0)
 
 
-def _ideal_dew(partial_pressure: float) -> dict[str, Property]:
-    """Return the dew point of water at its partial pressure [Pa], where that is far off."""
-    boiling = water.saturation_temperature(partial_pressure)
-    if boiling is None:
-        return {}
-    return {"dew_temperature": _WATER_DEW(boiling)}
+def boiling(pressure: float) -> float:
+    """Return the temperature [K] at which water or ice has a vapour pressure [Pa]."""
+    found = water.saturation_temperature(pressure)
+    if found is not None:
+        return found
+    if pressure >= water.CRITICAL_PRESSURE:
+        return water.CRITICAL_TEMPERATURE
+    return equilibrium.frost_point(pressure)
 
 
 # All else in the gas -------------------------------------------------------------------------
@@ -222,8 +231,8 @@ def _near(dew: float, temperature: float, what: str) -> tuple[Finding, ...]:
             "near-dew-point",
             "temperature",
             f"The dew point of {what} at this pressure is {celsius(dew)}, only "
-            f"{temperature - dew:.2g} K below the temperature: liquid may form at the meter. Heat "
-            "or insulate the line, or choose a meter that bears droplets.",
+            f"{max(temperature - dew, 0.0):.1f} K below the temperature: liquid may form at "
+            "the meter. Heat or insulate the line, or choose a meter that bears droplets.",
         ),
     )
 

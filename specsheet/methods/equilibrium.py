@@ -75,3 +75,9 @@ def ice_vapour_pressure(temperature: float) -> float:
     """Return the vapour pressure over ice [Pa] at a temperature [K] below 273.16 K."""
     celsius = temperature - 273.15
     return 611.2 * math.exp(22.46 * celsius / (272.62 + celsius))
+
+
+def frost_point(pressure: float) -> float:
+    """Return the temperature [K] at which ice has a vapour pressure [Pa] below 611.2 Pa."""
+    power = math.log(pressure / 611.2)
+    return 273.15 + 272.62 * power / (22.46 - power)

@@ -7,6 +7,7 @@ is the true one is decided by :mod:`specsheet.fluid.mixture_phase`.
 
 from __future__ import annotations
 
+import itertools
 import math
 from collections.abc import Mapping
 from dataclasses import dataclass
@@ -57,8 +58,10 @@ AIR: Composition = (("nitrogen", 0.7812), ("oxygen", 0.2096), ("argon", 0.0092))
 
 
 @lru_cache(maxsize=32)
-def state_of(composition: Composition, phase: str) -> Any:
-    """Return the one state object of a composition and imposed phase, under the lock of the room.
+def state_of(keys: tuple[str, ...], phase: str) -> Any:
+    """Return the one state object of some components and imposed phase, under the lock of the room.
+
+    Its fractions are those of whoever used it last: set them before each update.
 
     Raises:
         ValueError: a pair of components has no mixing parameters and the phase is liquid.
@@ -66,19 +69,30 @@ def state_of(composition: Composition, phase: str) -> Any:
     module = library.fluids()
     table = names.substances()
     if phase == GAS:
-        estimate_pairs(composition)
-    state = module.AbstractState("HEOS", "&".join(table[key].equation for key, _ in composition))
-    state.set_mole_fractions([fraction for _, fraction in composition])
+        estimate_pairs(keys)
+    state = module.AbstractState("HEOS", "&".join(table[key].equation for key in keys))
+    state.set_mole_fractions([1.0 / len(keys)] * len(keys))
     state.specify_phase(module.iphase_gas if phase == GAS else module.iphase_liquid)
     return state
 
 
+def updated(composition: Composition, phase: str, temperature: float, pressure: float) -> Any:
+    """Return the state object of a composition, imposed phase and state.
+
+    Raises:
+        library.ERRORS: there is no such state; forget the objects then.
+    """
+    state = state_of(tuple(key for key, _ in composition), phase)
+    state.set_mole_fractions([fraction for _, fraction in composition])
+    state.update(library.fluids().PT_INPUTS, pressure, temperature)
+    return state
+
+
 @lru_cache(maxsize=256)
-def estimate_pairs(composition: Composition) -> tuple[tuple[str, str], ...]:
+def estimate_pairs(keys: tuple[str, ...]) -> tuple[tuple[str, str], ...]:
     """Give pairs without mixing parameters the linear rule; return those pairs."""
     module = library.fluids()
     table = names.substances()
-    keys = [key for key, _ in composition]
     found = []
     for i, first in enumerate(keys):
         for second in keys[i + 1 :]:
@@ -180,7 +194,9 @@ class Mixture:
         return _range(self.composition)
 
     def _pairs(self) -> tuple[Finding, ...]:
-        pairs = estimate_pairs(self.composition) if self.phase == GAS else ()
+        pairs = (
+            estimate_pairs(tuple(key for key, _ in self.composition)) if self.phase == GAS else ()
+        )
         if not pairs:
             return ()
         table = names.substances()
@@ -199,8 +215,7 @@ class Mixture:
     def _updated(self, temperature: float, pressure: float) -> Any:
         """Return the state object at the state, checked."""
         try:
-            state = state_of(self.composition, self.phase)
-            state.update(library.fluids().PT_INPUTS, pressure, temperature)
+            state = updated(self.composition, self.phase, temperature, pressure)
             sound = _sane(state, self.phase, temperature)
         except library.ERRORS as error:
             state_of.cache_clear()
@@ -242,6 +257,13 @@ class Mixture:
 @lru_cache(maxsize=256)
 def _name(composition: Composition) -> str:
     table = names.substances()
+    dry = [(key, fraction) for key, fraction in composition if key != "water"]
+    total = sum(fraction for _, fraction in dry)
+    if all(
+        key == gas and abs(fraction / total - share) < 1e-9
+        for (key, fraction), (gas, share) in itertools.zip_longest(dry, AIR, fillvalue=("", 0.0))
+    ):
+        return "humid air"
     ranked = sorted(composition, key=lambda item: -item[1])
     listed = [table[key].name for key, _ in ranked[:3]]
     more = f" and {len(ranked) - 3} more" if len(ranked) > 3 else ""

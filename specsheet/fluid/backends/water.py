@@ -26,6 +26,7 @@ from specsheet.fluid.model import (
 )
 from specsheet.fluid.phases import GAS, LIQUID, SUPERCRITICAL, TWO_PHASE
 from specsheet.fluid.state import Property, State
+from specsheet.methods.seawater import Derivatives
 from specsheet.quantity.value import Base
 from specsheet.sources import cite
 
@@ -89,6 +90,34 @@ def liquid_density(temperature: float, pressure: float) -> float:
     else:
         state.update(module.PT_INPUTS, pressure, temperature)
     return float(state.rhomass())
+
+
+def liquid_viscosity(temperature: float) -> float:
+    """Return the viscosity [Pa s] of liquid water near saturation at a temperature [K]."""
+    liquid_density(temperature, 101325.0)
+    _, state = _states()
+    return float(state.viscosity())
+
+
+def liquid_derivatives(temperature: float, pressure: float, step: float) -> Derivatives:
+    """Return the derivatives of the Gibbs energy of liquid water, SI.
+
+    Args:
+        temperature: [K]
+        pressure: [Pa], above boiling.
+        step: on either side, for the slope of volume over temperature [K].
+    """
+    module, state = _states()
+    low, high = max(temperature - step, LOWEST_TEMPERATURE), temperature + step
+    volumes = []
+    for side in (low, high):
+        state.update(module.PT_INPUTS, pressure, side)
+        volumes.append(1.0 / state.rhomass())
+    slope = (volumes[1] - volumes[0]) / (high - low)
+    state.update(module.PT_INPUTS, pressure, temperature)
+    volume, heat, sound = 1.0 / state.rhomass(), state.cpmass(), state.speed_sound()
+    curve = -heat / temperature
+    return Derivatives(volume, curve, slope, slope**2 / curve - (volume / sound) ** 2)
 
 
 @dataclass(frozen=True, slots=True)
