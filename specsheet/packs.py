@@ -69,6 +69,21 @@ class Typical:
     source: str
 
 
+@dataclass(frozen=True, slots=True)
+class SizeRange:
+    """Nominal sizes in which the family is usually made, or lines it usually goes into (DN)."""
+
+    low: int
+    high: int
+    source: str
+
+
+#: where a family can be used: a meter in the line, a probe, from outside, with a free surface
+APPLICATIONS = ("closed pipe", "insertion", "clamp-on", "open channel")
+#: permanent pressure loss of a family in words: of the order of 0, 0.5, 2 velocity heads, or more
+LOSS_CLASSES = ("none", "low", "medium", "high")
+
+
 @dataclass(frozen=True)
 class Profile:
     """The data half of a meter family: ``profiles/families/<key>.toml``.
@@ -76,6 +91,15 @@ class Profile:
     Attributes:
         key, title, group, principle: what it is called and how it works.
         phases: phases it can meter.
+        applies_to: some of :data:`APPLICATIONS`.
+        orientations: orientations of the line that it bears, as ``line.orientation`` has them;
+            empty for any.
+        loss_class: one of :data:`LOSS_CLASSES`.
+        sizes: usual sizes; None where they are not a matter of nominal size.
+        turndown: usual turndown in flow.
+        uncertainty_calibrated: usual expanded uncertainty of the flow, each meter calibrated.
+        uncertainty_uncalibrated: the same without; None where it is never sold so.
+        loss_coefficient: usual permanent loss by ρv²/2 in the meter; None where it is no constant.
         entries: what the user may state under ``[meter]``.
         reply: what a bidder must state.
         limits: usual limits of use.
@@ -93,6 +117,14 @@ class Profile:
     group: str
     principle: str
     phases: tuple[str, ...]
+    applies_to: tuple[str, ...] = ()
+    orientations: tuple[str, ...] = ()
+    loss_class: str = ""
+    sizes: SizeRange | None = None
+    turndown: Typical | None = None
+    uncertainty_calibrated: Typical | None = None
+    uncertainty_uncalibrated: Typical | None = None
+    loss_coefficient: Typical | None = None
     entries: tuple[Entry, ...] = ()
     reply: tuple[Entry, ...] = ()
     limits: tuple[ProfileLimit, ...] = ()
@@ -132,6 +164,14 @@ def _limit(raw: Mapping[str, Any]) -> ProfileLimit:
     )
 
 
+def _typical(raw: Mapping[str, Any] | None) -> Typical | None:
+    return None if raw is None else Typical(raw["value"], raw["source"])
+
+
+def _size_range(raw: Mapping[str, Any] | None) -> SizeRange | None:
+    return None if raw is None else SizeRange(raw["low"], raw["high"], raw["source"])
+
+
 @cache
 def family_keys() -> tuple[str, ...]:
     """Return the keys of all families that have a profile, sorted."""
@@ -148,12 +188,21 @@ def profile(key: str) -> Profile:
     if key not in family_keys():
         raise KeyError(key)
     raw = table(f"{FAMILY_FOLDER}/{key}")
+    usual = raw.get("usual", {})
     return Profile(
         key=key,
         title=raw["title"],
         group=raw["group"],
         principle=raw["principle"],
         phases=tuple(raw["phases"]),
+        applies_to=tuple(raw.get("applies_to", ())),
+        orientations=tuple(raw.get("orientations", ())),
+        loss_class=raw.get("loss_class", ""),
+        sizes=_size_range(usual.get("sizes")),
+        turndown=_typical(usual.get("turndown")),
+        uncertainty_calibrated=_typical(usual.get("uncertainty_calibrated")),
+        uncertainty_uncalibrated=_typical(usual.get("uncertainty_uncalibrated")),
+        loss_coefficient=_typical(usual.get("loss_coefficient")),
         entries=tuple(_entry("meter", item) for item in raw.get("entries", ())),
         reply=tuple(_entry("reply", item) for item in raw.get("reply", ())),
         limits=tuple(_limit(item) for item in raw.get("limits", ())),
