@@ -70,7 +70,6 @@ def build(evaluation: Evaluation) -> Sheet:
     return Sheet(
         tag=tag.name,
         title=evaluation.profile.title if evaluation.profile else words.from_key(tag.family),
-        principle=evaluation.profile.principle if evaluation.profile else "",
         service=tag.text("service"),
         status=tag.text("status"),
         revision=last.mark if last else "",
@@ -92,7 +91,7 @@ def build(evaluation: Evaluation) -> Sheet:
         revisions=_revisions(tag),
         annex=workings,
         sources=tuple(dict.fromkeys(one for item in cited for one in citations(item.source))),
-        reply=_reply(evaluation),
+        reply=_reply(evaluation, units),
         remarks=tag.text("remarks"),
     )
 
@@ -129,7 +128,9 @@ def _only_assumed(row: Row, label: str) -> Row:
 
 
 def _clauses(evaluation: Evaluation) -> tuple[Clauses, ...]:
-    return tuple(
+    principle = evaluation.profile.principle if evaluation.profile else ""
+    how = (Clauses("principle", "Principle", (principle,)),) if principle else ()
+    return how + tuple(
         Clauses(key, words.capital(key), tuple(sentences))
         for key, sentences in evaluation.notes.items()
         if key != _CAUTIONS and sentences
@@ -145,7 +146,7 @@ def _revisions(tag: Tag) -> tuple[RevisionRow, ...]:
     )
 
 
-def _reply(evaluation: Evaluation) -> tuple[Request, ...]:
+def _reply(evaluation: Evaluation, units: Units) -> tuple[Request, ...]:
     """Return what a bidder must state, as the family's profile lists it."""
     if evaluation.profile is None:
         return ()
@@ -153,7 +154,7 @@ def _reply(evaluation: Evaluation) -> tuple[Request, ...]:
         Request(
             item.key,
             item.label,
-            words.unit(KINDS[item.kind].shown) if item.kind in KINDS else "",
+            words.unit(units.pick(item.kind, ())) if item.kind in KINDS else "",
             item.choices,
             item.help,
         )

@@ -11,7 +11,6 @@ from typing import TYPE_CHECKING
 
 from specsheet import quantity
 from specsheet.fields import TERMS
-from specsheet.quantity.value import Quantity
 from specsheet.sheet import rounding, words
 from specsheet.sheet.units import Units
 
@@ -62,15 +61,28 @@ def of(evaluation: Evaluation, units: Units) -> FlowAxis:
     for kind in _kinds_stated(evaluation):
         factor = _proportion(evaluation, kind)
         if factor is not None:
-            unit = units.pick(kind, [flow * factor for flow in flows])
+            unit = _base_unit(evaluation, kind) or units.pick(kind, [one * factor for one in flows])
             return FlowAxis(TERMS[kind].label, kind, unit, factor)
     return FlowAxis(TERMS["mass_flow"].label, "mass_flow", units.pick("mass_flow", flows), 1.0)
 
 
 def _kinds_stated(evaluation: Evaluation) -> list[str]:
-    stated = [point.values.get("flow") for point in evaluation.tag.points]
-    kinds = [held.kind for held in stated if isinstance(held, Quantity)]
+    stated = [held for point in evaluation.tag.points if (held := point.quantity("flow"))]
+    if len({held.base for held in stated}) > 1:
+        return []
+    kinds = [held.kind for held in stated]
     return [kind for kind in dict.fromkeys(kinds) if kind in TERMS]
+
+
+def _base_unit(evaluation: Evaluation, kind: str) -> str:
+    """Return the unit of a base volume as stated: the value stands at the base that it names."""
+    if kind != "base_volume_flow":
+        return ""
+    return next(
+        held.unit
+        for point in evaluation.tag.points
+        if (held := point.quantity("flow")) and held.kind == kind
+    )
 
 
 def _proportion(evaluation: Evaluation, kind: str) -> float | None:

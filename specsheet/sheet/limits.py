@@ -98,8 +98,7 @@ def signed(value: float) -> str:
 def finding(held: Finding, units: Units, axis: FlowAxis) -> FindingRow:
     """Return one finding in words."""
     change, flips = reserve(held.reserve, units, axis)
-    driver = words.label(held.reserve.driver).lower() if held.reserve else ""
-    phrase = f"Verdict flips at {driver} {flips} ({change})" if change and flips else ""
+    phrase = f"Verdict flips at {_driver(held.reserve)} {flips} ({change})" if flips else ""
     return FindingRow(
         level=held.level,
         code=held.code,
@@ -109,6 +108,13 @@ def finding(held: Finding, units: Units, axis: FlowAxis) -> FindingRow:
         source=held.source,
         reserve=phrase,
     )
+
+
+def _driver(held: Reserve | None) -> str:
+    """Return the words for a driver inside a sentence; a flow is shown in the user's own kind."""
+    if held is None or held.driver == "mass_flow":
+        return "a flow of"
+    return f"a {words.label(held.driver).lower()} of"
 
 
 def verdict(evaluation: Evaluation) -> str:

@@ -275,7 +275,6 @@ class Sheet:
     Attributes:
         tag: tag number.
         title: what is bought, in words ("Vortex meter").
-        principle: how it works, in a sentence.
         service: what the line does.
         status: where the document stands.
         revision: mark of the last revision, or "".
@@ -303,7 +302,6 @@ class Sheet:
 
     tag: str
     title: str
-    principle: str
     service: str
     status: str
     revision: str

@@ -51,10 +51,11 @@ KIND_STEPS = {
     "temperature_difference": 0.1,
     "current": 1e-5,
     "length": 1e-5,
+    "angle": 1.7e-3,
 }
 
-#: below this many steps a value keeps its significant digits
-FEW_STEPS = 50.0
+#: below this many steps of its kind a value keeps its significant digits
+_FEW_STEPS = 50.0
 
 
 def digits(key: str, kind: str) -> int:
@@ -62,9 +63,12 @@ def digits(key: str, kind: str) -> int:
     return KEY_DIGITS.get(key, KIND_DIGITS.get(kind, DIGITS))
 
 
-def step(key: str, kind: str) -> float | None:
+def step(key: str, kind: str, value: float) -> float | None:
     """Return the smallest step worth printing [SI], None where significant digits decide."""
-    return KEY_STEPS.get(key, KIND_STEPS.get(kind))
+    if key in KEY_STEPS:
+        return KEY_STEPS[key]
+    smallest = KIND_STEPS.get(kind)
+    return None if smallest is None or abs(value) < _FEW_STEPS * smallest else smallest
 
 
 def significant(value: float, count: int = DIGITS) -> str:

@@ -27,8 +27,8 @@ _STATED = 8
 def number(value: float, key: str, kind: str, unit: str) -> str:
     """Return an SI value rounded to significance in ``unit`` (no unit in the text)."""
     shown = quantity.from_si(value, kind, unit)
-    smallest = rounding.step(key, kind)
-    if smallest is None or abs(value) < rounding.FEW_STEPS * smallest:
+    smallest = rounding.step(key, kind, value)
+    if smallest is None:
         return rounding.significant(shown, rounding.digits(key, kind))
     scale_kind = "temperature_difference" if kind == "temperature" else kind
     scale_unit = unit if kind != "temperature" or unit in quantity.units(scale_kind) else "K"

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import replace
 from typing import TYPE_CHECKING
 
 from specsheet.fields import COMMON, JOB, TERMS, Entry
@@ -165,7 +166,15 @@ def _cost(evaluation: Evaluation) -> tuple[Row, ...]:
     if "yearly_energy" not in evaluation.summary and "yearly_cost" not in evaluation.summary:
         return ()
     tag = evaluation.tag
-    return tuple(_entry(tag, path, _ENTRIES) for path in _COST if tag.get(path) is not None)
+    currency = tag.text("job.currency")
+    made = [_entry(tag, path, _ENTRIES) for path in _COST if tag.get(path) is not None]
+    return tuple(
+        replace(row, cells=(replace(row.cells[0], text=row.text.replace("1/", f"{currency}/")),))
+        if currency and row.key == "job.energy_price"
+        else row
+        for row in made
+        if row.key != "job.currency"
+    )
 
 
 def _results(

@@ -25,7 +25,7 @@ LADDERS = {
 }
 
 #: a largest value outside these bounds moves the row to the next unit of its ladder
-SMALLEST, LARGEST = 0.01, 20000.0
+SMALLEST, LARGEST = 0.1, 20000.0
 
 #: endings of the units of the two kinds of pressure that go together
 _ENDINGS = {"pressure_gauge": "(g)", "pressure_absolute": "(a)"}
@@ -73,13 +73,20 @@ class Units:
             values: the SI values of the row.
             shown: the term's own unit, "" for the kind's.
         """
+        sizes = [abs(value) for value in values]
         if kind in self._stated:
-            return self._stated[kind]
+            stated = self._stated[kind]
+            return shown if shown and _silly(kind, stated, sizes) else stated
         if shown:
             return shown
         if kind in self._typed:
             return self._typed[kind]
-        return _scaled(kind, KINDS[kind].shown, [abs(value) for value in values])
+        return _scaled(kind, KINDS[kind].shown, sizes)
+
+
+def _silly(kind: str, unit: str, sizes: list[float]) -> bool:
+    largest = quantity.from_si(max(sizes, default=0.0), kind, unit)
+    return largest > 0.0 and not SMALLEST <= largest < LARGEST
 
 
 def _scaled(kind: str, unit: str, sizes: list[float]) -> str:

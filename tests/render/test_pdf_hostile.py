@@ -10,9 +10,11 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from specsheet import sheet
+from specsheet.evaluate.result import Evaluation
 from specsheet.findings import Finding, Level
 from specsheet.render import pdf
 from specsheet.render.pdf import fonts
+from specsheet.tag import Tag
 from tests.sheet import samples
 
 
@@ -102,3 +104,9 @@ def test_no_text_raises(service: str, tag: str, remarks: str) -> None:
     given = {"service": service, "tag": tag, "remarks": remarks, "fluid.name": service}
     data = pdf.to_bytes(sheet.build(samples.evaluation(given=dict(given))))
     assert len(pypdf.PdfReader(BytesIO(data)).pages) >= 2
+
+
+def test_an_empty_tag_is_printed() -> None:
+    data = pdf.to_bytes(sheet.build(Evaluation(tag=Tag(given={}))))
+    text = pypdf.PdfReader(BytesIO(data)).pages[0].extract_text()
+    assert "No objection within the limits checked." in text

@@ -9,11 +9,12 @@ from dataclasses import replace
 import pytest
 
 from specsheet import sheet
-from specsheet.evaluate.result import Check, PointResult, Result
+from specsheet.evaluate.result import Check, Evaluation, PointResult, Result
 from specsheet.findings import Level, Origin, Reserve
 from specsheet.quantity.value import Base, Quantity
 from specsheet.sheet.model import Row, Sheet, Table
 from specsheet.sheet.ruler import stagger
+from specsheet.tag import Tag
 from tests.sheet import samples
 
 
@@ -254,3 +255,43 @@ def test_labels_of_one_lane_never_touch() -> None:
 def test_the_room_imports_without_numpy() -> None:
     code = "import sys, specsheet.sheet; sys.exit('numpy' in sys.modules)"
     assert subprocess.run([sys.executable, "-c", code], check=False).returncode == 0
+
+
+def test_a_base_volume_rules_in_the_unit_stated() -> None:
+    base = Base("0 °C, 101.325 kPa (DIN 1343)", 273.15, 101325.0)
+    held = samples.evaluation()
+    flows = [
+        Quantity(flow * 1.2, "base_volume_flow", "Nm3/h", "9 Nm3/h", base) for flow in samples.FLOWS
+    ]
+    points = tuple(
+        replace(one, values={**one.values, "flow": flow})
+        for one, flow in zip(held.tag.points, flows, strict=True)
+    )
+    results = tuple(
+        PointResult(
+            one.name,
+            {
+                **one.values,
+                "base_volume_flow": Result(flow.value, Origin.GIVEN, text=flow.text),
+                "mass_flow": Result(flow.value / 1.2, Origin.DERIVED),
+            },
+        )
+        for one, flow in zip(held.points, flows, strict=True)
+    )
+    made = sheet.build(samples.evaluation(tag=replace(held.tag, points=points), points=results))
+    assert made.ruler is not None
+    assert (made.ruler.label, made.ruler.unit) == ("Volume flow, base", "Nm³/h")
+    assert made.findings[0].reserve == "Verdict flips at a flow of 4490 Nm³/h (−11 %)"
+
+
+def test_an_empty_tag_gives_a_sheet() -> None:
+    made = sheet.build(Evaluation(tag=Tag(given={})))
+    assert (made.tag, made.paper, made.ruler, made.budget) == ("", "A4", None, None)
+    assert made.verdict == "No objection within the limits checked."
+
+
+def test_the_price_of_energy_names_its_currency() -> None:
+    price = Quantity(3.9e-8, "money_rate", "1/kWh", "0.14 1/kWh")
+    given = {"job.energy_price": price, "job.currency": "EUR"}
+    made = sheet.build(samples.evaluation(given=given))
+    assert row(made, "summary", "job.energy_price").text == "0.14 EUR/kWh"

@@ -39,7 +39,7 @@ def narrowest(sheet: Sheet) -> float:
 def by_point(frame: Frame, sheet: Sheet, table: Table) -> None:
     """Set a table with one column for each operating point, split where it is too wide."""
     most = max(1, int((frame.width - _ROWS) / frame.book.column))
-    for part in portions(len(table.columns), most):
+    for part in portions(len(table.columns), most) if table.rows else ():
         title = shared.title(table, part)
         columns = point_columns(table.columns[part], frame.width)
         lines = [_point_line(sheet, row, part) for row in table.rows]

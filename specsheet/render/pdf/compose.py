@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from specsheet.render.pdf import annex, body, document, head, ruler, style
-from specsheet.render.pdf.page import Book, Frame
+from specsheet.render.pdf.page import Book, Frame, Pen
 from specsheet.sheet.model import Sheet
 
 
@@ -17,7 +17,7 @@ def to_bytes(sheet: Sheet) -> bytes:
 def compose(sheet: Sheet, pdf: object) -> Book:
     """Return the pages of the sheet, without running heads and feet."""
     size = style.PAPERS.get(sheet.paper, style.PAPERS["A4"])
-    book = Book(pdf, size, body.narrowest(sheet))
+    book = Book(Pen(pdf), size, body.narrowest(sheet))
     frame = Frame(book, style.SIDE, book.size[0] - 2.0 * style.SIDE, 0, book.top(0))
     head.band(frame, sheet)
     head.details(frame, sheet)

@@ -71,8 +71,9 @@ def grid(
     if title:
         frame.heading(title)
     _headings(frame, columns)
-    for row, held, height in zip(rows, cells, heights, strict=True):
-        if frame.room < height <= frame.full - _TITLE:
+    for place, (row, held) in enumerate(zip(rows, cells, strict=True)):
+        needed = sum(heights[place:]) if place == len(rows) - 2 else heights[place]
+        if frame.room < needed <= frame.full - _TITLE:  # the last row is not left alone
             _overleaf(frame, title, columns)
         _row(frame, title, columns, row, held)
 

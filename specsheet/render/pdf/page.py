@@ -7,6 +7,7 @@ content, in the order they are made, so equal sheets give equal bytes.
 from __future__ import annotations
 
 from dataclasses import dataclass, field
+from functools import cache
 from typing import Any
 
 from reportlab.lib.rl_accel import escapePDF
@@ -15,6 +16,36 @@ from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.style import Style
 
 _BOLD_STROKE = 0.035  # of the size: the stroke that makes a regular letter look bold
+
+
+class Pen:
+    """Writes text as page content in the font of one document; every text is encoded once."""
+
+    def __init__(self, document: Any) -> None:
+        self._document = document
+        self._shown: dict[tuple[str, float], str] = {}
+
+    def show(self, text: str, size: float) -> str:
+        """Return the operators that show a text at the place where the pen is."""
+        known = self._shown.get((text, size))
+        if known is None:
+            known = self._shown[text, size] = self._encode(text, size)
+        return known
+
+    def _encode(self, text: str, size: float) -> str:
+        font = fonts.font()
+        return " ".join(
+            f"{font.getSubsetInternalName(subset, self._document)} {size:g} Tf "
+            f"({escapePDF(chunk)}) Tj"
+            for subset, chunk in font.splitString(text, self._document)
+        )
+
+
+@cache
+def _look(look: Style) -> str:
+    """Return the operators that set colour and weight of a text."""
+    weight = f"2 Tr {look.size * _BOLD_STROKE:.3f} w {look.colour} RG" if look.bold else "0 Tr"
+    return f"{look.colour} rg {weight}"
 
 
 @dataclass(frozen=True, slots=True)
@@ -42,22 +73,15 @@ class Heading:
 class Page:
     """One page: its content as it is written."""
 
-    def __init__(self, document: Any) -> None:
-        self._document = document
+    def __init__(self, pen: Pen) -> None:
+        self._pen = pen
         self.code: list[str] = []
 
     def text(self, x: float, y: float, text: str, look: Style) -> None:
         """Set one line with its left end at x and its baseline at y."""
-        if not text:
-            return
-        bold = f"2 Tr {look.size * _BOLD_STROKE:.3f} w {look.colour} RG" if look.bold else "0 Tr"
-        parts = [f"BT {look.colour} rg {bold} 1 0 0 1 {x:.2f} {y:.2f} Tm"]
-        font = fonts.font()
-        for subset, chunk in font.splitString(text, self._document):
-            name = font.getSubsetInternalName(subset, self._document)
-            parts.append(f"{name} {look.size:g} Tf ({escapePDF(chunk)}) Tj")
-        parts.append("ET")
-        self.code.append(" ".join(parts))
+        if text:
+            shown = self._pen.show(text, look.size)
+            self.code.append(f"BT {_look(look)} 1 0 0 1 {x:.2f} {y:.2f} Tm {shown} ET")
 
     def right(self, x: float, y: float, text: str, look: Style) -> None:
         """Set one line with its right end at x."""
@@ -95,7 +119,7 @@ class Book:
     """The pages of one document.
 
     Attributes:
-        document: the PDF document that the pages are written into.
+        pen: writes text in the document's font.
         size: width and height of the paper [pt].
         column: width of a column of values by operating point [pt].
         pages: so far; made on demand.
@@ -105,7 +129,7 @@ class Book:
         missing: characters without a glyph, in the order met.
     """
 
-    document: Any
+    pen: Pen
     size: tuple[float, float]
     column: float
     pages: list[Page] = field(default_factory=list)
@@ -117,7 +141,7 @@ class Book:
     def page(self, index: int) -> Page:
         """Return a page, made with all pages before it where it is new."""
         while len(self.pages) <= index:
-            self.pages.append(Page(self.document))
+            self.pages.append(Page(self.pen))
         return self.pages[index]
 
     def top(self, index: int) -> float:
