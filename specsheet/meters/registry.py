@@ -18,6 +18,11 @@ MODULES = {
         "vortex",
         # Electromagnetic
         "magnetic",
+        # Rotating and displacement
+        "turbine_axial",
+        "gear_oval",
+        "piston_rotary",
+        "disc_nutating",
         # Acoustic
         "ultrasonic_transit",
         # Mass

@@ -86,6 +86,22 @@ def pressure_behind(values: Mapping[str, Array], stream: Stream, loss: Array) ->
     return stream.pressure - speed_up - values["reducer_loss"] - loss
 
 
+def phase_findings(request: Request) -> tuple[Finding, ...]:
+    """Return a stop where the family does not meter the phase of the tag."""
+    if request.tag.phase in ("", *request.profile.phases):
+        return ()
+    known = " or ".join(request.profile.phases)
+    return (
+        Finding(
+            Level.STOP,
+            "phase-unsuitable",
+            "fluid.phase",
+            f"this family meters {known} only, and the fluid is a {request.tag.phase}; choose "
+            "another family",
+        ),
+    )
+
+
 def vapour_pressure_findings(request: Request) -> tuple[Finding, ...]:
     """Return a caution where a liquid has no vapour pressure, so that flashing goes unchecked."""
     unknown = np.isnan(request.stream.vapour_pressure)
