@@ -37,7 +37,7 @@ def _limit(check: Check, units: Units, axis: FlowAxis) -> LimitRow:
         None if value is None else rows.bound(value, kind, unit)
         for value in (check.low, check.high)
     )
-    change, flips = reserve(check.reserve, units, axis)
+    change, flips = reserve(check.reserve, units, axis, check.point)
     return LimitRow(
         key=check.key,
         label=words.label(check.key),
@@ -64,7 +64,7 @@ def _allowed(low: str | None, high: str | None) -> str:
     return NOTHING if high is None else f"at most {high}"
 
 
-def reserve(held: Reserve | None, units: Units, axis: FlowAxis) -> tuple[str, str]:
+def reserve(held: Reserve | None, units: Units, axis: FlowAxis, point: str) -> tuple[str, str]:
     """Return the change that flips a verdict and the driver's value there, both in words.
 
     A temperature changes by kelvins, everything else by a percentage of its present value.
@@ -72,7 +72,7 @@ def reserve(held: Reserve | None, units: Units, axis: FlowAxis) -> tuple[str, st
     if held is None:
         return "", ""
     if held.driver == "mass_flow":
-        return percent(held.fraction), f"{axis.text(held.at)} {axis.printed_unit}".strip()
+        return percent(held.fraction), f"{axis.text(held.at, point)} {axis.printed_unit}".strip()
     kind = rows.kind_of(held.driver)
     if kind not in KINDS:
         return percent(held.fraction), ""
@@ -97,7 +97,7 @@ def signed(value: float) -> str:
 
 def finding(held: Finding, units: Units, axis: FlowAxis) -> FindingRow:
     """Return one finding in words."""
-    change, flips = reserve(held.reserve, units, axis)
+    change, flips = reserve(held.reserve, units, axis, held.point)
     phrase = f"Verdict flips at {_driver(held.reserve)} {flips} ({change})" if flips else ""
     return FindingRow(
         level=held.level,

@@ -7,7 +7,7 @@ from collections.abc import Sequence
 from typing import TYPE_CHECKING
 
 from specsheet.sheet import rounding, words
-from specsheet.sheet.axis import FlowAxis
+from specsheet.sheet.axis import FlowAxis, mass_flows
 from specsheet.sheet.model import Mark, Ruler, Tick, Window
 
 if TYPE_CHECKING:
@@ -23,33 +23,40 @@ _TOUCH = 1e-6
 
 def build(evaluation: Evaluation, axis: FlowAxis) -> Ruler | None:
     """Return the ruler, None when no operating point has a flow."""
-    flows = {
-        point.name: float(point.values["mass_flow"].value)
-        for point in evaluation.points
-        if "mass_flow" in point.values and float(point.values["mass_flow"].value) > 0.0
-    }
-    if not flows:
+    stated = mass_flows(evaluation)
+    if not stated:
         return None
+    # at the conditions of the normal point, to which the windows belong
+    flows = {name: flow * axis.factors[name] / axis.factor for name, flow in stated.items()}
     low, high = _ends(list(flows.values()), evaluation.bands)
     span = math.log(high / low)
     windows = tuple(_window(band, axis, low, high, span) for band in evaluation.bands)
     start = max((window.low for window in windows), default=0.0)
     end = min((window.high for window in windows), default=1.0)
-
-    def position(flow: float) -> float:
-        return math.log(flow / low) / span
-
     return Ruler(
         label=axis.label,
         unit=axis.printed_unit,
         ticks=_ticks(axis.shown(low), axis.shown(high)),
         windows=windows,
         marks=tuple(
-            Mark(name, axis.text(flow), position(flow), _inside(flow, evaluation.bands))
+            Mark(
+                name,
+                _typed(evaluation, name, axis) or axis.text(flow),
+                math.log(flow / low) / span,
+                _inside(flow, evaluation.bands),
+            )
             for name, flow in flows.items()
         ),
         usable=(start, end) if start < end else None,
     )
+
+
+def _typed(evaluation: Evaluation, name: str, axis: FlowAxis) -> str:
+    """Return the flow of a point with its own digits where it was typed in the axis's unit."""
+    held = next((point for point in evaluation.tag.points if point.name == name), None)
+    flow = held.quantity("flow") if held else None
+    figures, unit = words.split(flow.text) if flow else ("", "")
+    return figures if flow and flow.kind == axis.kind and unit == axis.printed_unit else ""
 
 
 def _ends(flows: list[float], bands: Sequence[Band]) -> tuple[float, float]:

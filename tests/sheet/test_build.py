@@ -208,7 +208,7 @@ def test_every_source_is_listed_once(made: Sheet) -> None:
 def test_the_ruler_stands_in_the_unit_typed(made: Sheet) -> None:
     assert made.ruler is not None
     assert (made.ruler.label, made.ruler.unit) == ("Mass flow", "t/h")
-    assert [mark.text for mark in made.ruler.marks] == ["1.12", "3.10", "4.20"]
+    assert [mark.text for mark in made.ruler.marks] == ["1.116", "3.1", "4.2"]  # as typed
     assert [mark.inside for mark in made.ruler.marks] == [False, True, False]
     places = [mark.position for mark in made.ruler.marks]
     assert places == sorted(places)
@@ -223,8 +223,13 @@ def test_the_usable_stretch_is_what_all_windows_leave_open(made: Sheet) -> None:
     assert high == min(window.high for window in made.ruler.windows)
 
 
-def test_volume_flows_rule_where_they_are_in_proportion() -> None:
+def test_a_user_who_states_volume_reads_volume() -> None:
     held = samples.evaluation()
+    thin = PointResult(
+        "maximum",
+        {**held.points[2].values, "volume_flow": Result(0.4, Origin.DERIVED)},
+    )
+    held = replace(held, points=(*held.points[:2], thin))
     points = tuple(
         replace(
             one,
@@ -237,9 +242,12 @@ def test_volume_flows_rule_where_they_are_in_proportion() -> None:
         )
         for one, result in zip(held.tag.points, held.points, strict=True)
     )
-    made = sheet.build(samples.evaluation(tag=replace(held.tag, points=points)))
+    made = sheet.build(replace(held, tag=replace(held.tag, points=points)))
     assert made.ruler is not None
     assert (made.ruler.label, made.ruler.unit) == ("Volume flow, operating", "m³/h")
+    # at maximum, 1.0394 kg/s is 1.0394 / 1.16667 x 0.4 m3/s; at normal, 1.0394 / 3.9817 m3/s
+    assert made.limits[0].flips == "1280 m³/h"
+    assert made.ruler.windows[1].high_text == "940"
 
 
 def test_without_flows_there_is_no_ruler() -> None:

@@ -15,6 +15,8 @@ from reportlab.lib.rl_accel import escapePDF
 from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.style import Style
 
+_ESCAPED = str.maketrans({"\\": r"\\", "(": r"\(", ")": r"\)"})
+
 _BOLD_STROKE = 0.035  # of the size: the stroke that makes a regular letter look bold
 
 
@@ -23,6 +25,7 @@ class Pen:
 
     def __init__(self, document: Any) -> None:
         self._document = document
+        fonts.font().splitString(" ", document)  # opens the first subset
         self._shown: dict[tuple[str, float], str] = {}
 
     def show(self, text: str, size: float) -> str:
@@ -34,6 +37,9 @@ class Pen:
 
     def _encode(self, text: str, size: float) -> str:
         font = fonts.font()
+        if text.isascii():  # the first subset of the font holds ASCII under its own codes
+            name = font.getSubsetInternalName(0, self._document)
+            return f"{name} {size:g} Tf ({text.translate(_ESCAPED)}) Tj"
         return " ".join(
             f"{font.getSubsetInternalName(subset, self._document)} {size:g} Tf "
             f"({escapePDF(chunk)}) Tj"
