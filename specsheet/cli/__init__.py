@@ -7,10 +7,11 @@ from __future__ import annotations
 
 import os
 import sys
+from argparse import Namespace
 from collections.abc import Sequence
 from importlib import import_module
 
-from specsheet.cli.narrate import say
+from specsheet.cli import narrate
 from specsheet.cli.parser import build_parser
 from specsheet.cli.status import Status
 
@@ -21,15 +22,33 @@ def main(arguments: Sequence[str] | None = None) -> int:
     Args:
         arguments: the words after the program's name; None for those of the process.
     """
+    narrate.set_up()
     parsed = build_parser().parse_args(arguments)
-    command = import_module(f"specsheet.cli.commands.{parsed.module}")
     try:
-        status: int = command.run(parsed)
-        return int(status)
+        status = _run(parsed)
+        sys.stdout.flush()
+        return status
     except BrokenPipeError:
         # the reader of our output (head, less) has gone: not our failure, and nothing to say
-        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+        _drop_output()
         return Status.FINE
     except KeyboardInterrupt:
-        say("stopped by the keyboard; files already written are whole")
+        narrate.say("stopped by the keyboard; files already written are whole")
         return Status.INTERRUPTED
+    except OSError as problem:
+        # commands answer for the files they touch; what is left is our own output: a full disk
+        where = f"{problem.filename}: file" if problem.filename else "the output"
+        narrate.say(f"{where}: cannot be written or read: {problem.strerror or problem}")
+        _drop_output()
+        return Status.UNUSABLE
+
+
+def _run(parsed: Namespace) -> int:
+    command = import_module(f"specsheet.cli.commands.{parsed.module}")
+    status: int = command.run(parsed)
+    return int(status)
+
+
+def _drop_output() -> None:
+    """Let the interpreter flush what is left into nothing when it ends."""
+    os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())

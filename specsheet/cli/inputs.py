@@ -2,26 +2,27 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterable
 
-from specsheet import job
+from specsheet import job, tagfile
 from specsheet.cli.narrate import say
+from specsheet.job import Scan
 from specsheet.tagfile import Reading
 
 
-def readings(paths: Iterable[str]) -> Iterator[Reading]:
-    """Read every tag file of files and folders, in a stable order; narrate each problem once."""
-    scanned = job.scan(paths)
-    told: set[str] = set()
-    for problem in scanned.problems:
-        _tell(str(problem), told)
-    for reading in scanned.readings():
-        for problem in reading.problems:
-            _tell(str(problem), told)
-        yield reading
-
-
-def _tell(text: str, told: set[str]) -> None:
-    if text not in told:
-        told.add(text)
+def read_all(paths: Iterable[str]) -> Scan:
+    """Read every tag file of files and folders, and narrate each problem once."""
+    found = job.scan(paths)
+    for text in dict.fromkeys(str(problem) for problem in found.all_problems):
         say(text)
+    return found
+
+
+def read_one(path: str) -> tuple[Reading, bool]:
+    """Read one tag file within its job, narrate the problems; tell whether there were any."""
+    home = tagfile.find_job(path)
+    reading = tagfile.load(path, home)
+    problems = (*home.problems, *reading.problems)
+    for problem in problems:
+        say(str(problem))
+    return reading, bool(problems)

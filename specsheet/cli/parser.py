@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from argparse import ArgumentParser, RawDescriptionHelpFormatter
+from argparse import ArgumentParser, RawDescriptionHelpFormatter, _SubParsersAction
+from collections.abc import Callable
 
 from specsheet import __version__
 
@@ -17,9 +18,11 @@ _EPILOG = """\
 first steps:
   specsheet demo                              see an invented job, printed and opened
   specsheet new FT-2104 --family vortex       write a commented file to fill in
-  specsheet form tags/FT-2104.toml            fill it in on the screen
-  specsheet check tags                        what is wrong, and by what margin
-  specsheet print tags                        the datasheets, as PDF in output/
+  specsheet form FT-2104.toml                 fill it in on the screen
+  specsheet check FT-2104.toml                what is wrong, and by what margin
+  specsheet print FT-2104.toml                the datasheet, as PDF in output/
+
+`specsheet COMMAND --help` tells more about one command.
 
 exit status: 0 fine; 1 a stop finding (or a caution with --strict);
 2 the input could not be used, each problem as file:line: field: message.
@@ -29,6 +32,9 @@ that apply to the plant nor the judgement of the licensed engineer who signs.
 """
 
 _FILES_HELP = "tag files, or folders that hold them (default: this folder)"
+_STRICT_HELP = "exit with 1 on a caution too"
+
+Commands = _SubParsersAction  # the collection of argparse that a command is added to
 
 
 def build_parser() -> ArgumentParser:
@@ -42,64 +48,124 @@ def build_parser() -> ArgumentParser:
     parser.add_argument("--version", action="version", version=f"specsheet {__version__}")
     parser.set_defaults(module="form", path=None)
     commands = parser.add_subparsers(title="commands", metavar="COMMAND", dest="command")
+    for add in _COMMANDS:
+        add(commands)
+    return parser
 
-    def command(name: str, help_: str, more: str = "") -> ArgumentParser:
-        made: ArgumentParser = commands.add_parser(
-            name,
-            help=help_,
-            description=f"{help_[0].upper()}{help_[1:]}. {more}".strip(),
-            formatter_class=RawDescriptionHelpFormatter,
-        )
-        made.set_defaults(module=name if name != "print" else "print_")
-        return made
 
-    form = command("form", "open a tag or a job in the form", "Needs a terminal.")
+def _command(
+    commands: Commands[ArgumentParser], name: str, help_: str, more: str = "", module: str = ""
+) -> ArgumentParser:
+    made: ArgumentParser = commands.add_parser(
+        name,
+        help=help_,
+        description=f"{help_[0].upper()}{help_[1:]}.\n\n{more}".strip(),
+        formatter_class=RawDescriptionHelpFormatter,
+    )
+    made.set_defaults(module=module or name)
+    return made
+
+
+def _form(commands: Commands[ArgumentParser]) -> None:
+    more = "Needs a terminal of 80 columns or more. F1 explains the entry under the cursor."
+    form = _command(commands, "form", "open a tag or a job in the form", more)
     form.add_argument("path", nargs="?", help="tag file or job folder (default: this folder)")
 
-    demo = command("demo", "write an invented job, print its sheets and open it")
+
+def _demo(commands: Commands[ArgumentParser]) -> None:
+    more = "Some of its tags are wrong on purpose: see what is said about them."
+    demo = _command(commands, "demo", "write an invented job, print its sheets and open it", more)
     demo.add_argument(
         "folder",
         nargs="?",
         default="output/demo",
         help="where the job goes (default: output/demo); files there already are kept as they are",
     )
-    demo.add_argument("--output", default="output", help="where the PDF sheets go")
+    demo.add_argument(
+        "--output", default="output", help="where the PDF sheets go (default: output)"
+    )
     demo.add_argument("--no-form", action="store_true", help="do not open the form at the end")
 
-    new = command("new", "write a commented tag file to fill in")
+
+def _new(commands: Commands[ArgumentParser]) -> None:
+    more = (
+        "Every entry of the family stands in the file with its meaning; those that can wait\n"
+        "are commented out. A file that exists is never written over."
+    )
+    new = _command(commands, "new", "write a commented tag file to fill in", more)
     new.add_argument("tag", help="tag number, for example FT-2104")
     new.add_argument(
         "--family", required=True, help="meter family; `specsheet families` lists them"
     )
-    new.add_argument("--folder", default=".", help="job folder, or folder of the file")
+    new.add_argument(
+        "--folder", default=".", help="job folder, or folder of the file (default: this folder)"
+    )
 
-    derive = command("derive", "derive everything and write the sheet as text or JSON")
+
+def _derive(commands: Commands[ArgumentParser]) -> None:
+    more = "The JSON holds SI numbers under the standard terms, each with its origin and source."
+    derive = _command(
+        commands, "derive", "derive everything and write the sheet as text or JSON", more
+    )
     derive.add_argument("file", help="tag file")
     derive.add_argument("--json", action="store_true", help="JSON with SI numbers")
-    derive.add_argument("--strict", action="store_true", help="exit with 1 on a caution too")
+    derive.add_argument("--strict", action="store_true", help=_STRICT_HELP)
 
-    check = command("check", "list what is wrong, worst first, with the margin to each limit")
+
+def _check(commands: Commands[ArgumentParser]) -> None:
+    more = (
+        "One line a finding: file: level code: entry: message [driver and margin]. The margin\n"
+        "says how far the driver may grow (+) or must fall (-) before the verdict changes."
+    )
+    check = _command(
+        commands, "check", "list what is wrong, worst first, with the margin to each limit", more
+    )
     check.add_argument("paths", nargs="*", default=["."], help=_FILES_HELP)
-    check.add_argument("--strict", action="store_true", help="exit with 1 on a caution too")
+    check.add_argument("--strict", action="store_true", help=_STRICT_HELP)
     check.add_argument("--all", action="store_true", help="list notes too")
 
-    print_ = command("print", "print datasheets as PDF")
-    print_.add_argument("paths", nargs="*", default=["."], help=_FILES_HELP)
-    print_.add_argument("--output", default="output", help="folder for the PDF files")
-    print_.add_argument("--paper", choices=("A4", "Letter"), help="instead of the job's own")
-    print_.add_argument("--strict", action="store_true", help="exit with 1 on a caution too")
 
-    families = command("families", "list the meter families, or show one")
+def _print(commands: Commands[ArgumentParser]) -> None:
+    more = "One PDF a tag, named after it. The same tag file always gives the same bytes."
+    print_ = _command(commands, "print", "print datasheets as PDF", more, module="print_")
+    print_.add_argument("paths", nargs="*", default=["."], help=_FILES_HELP)
+    print_.add_argument(
+        "--output", default="output", help="folder for the PDF files (default: output)"
+    )
+    print_.add_argument("--paper", choices=("A4", "Letter"), help="instead of the job's own")
+    print_.add_argument("--strict", action="store_true", help=_STRICT_HELP)
+
+
+def _families(commands: Commands[ArgumentParser]) -> None:
+    families = _command(commands, "families", "list the meter families, or show one")
     families.add_argument(
         "family", nargs="?", help="key of a family, to show its entries and limits"
     )
 
-    command("schema", "write the JSON schema of the tag file")
 
-    completion = command(
-        "completion",
-        "write a completion script for a shell",
-        'For bash: eval "$(specsheet completion bash)".',
+def _schema(commands: Commands[ArgumentParser]) -> None:
+    more = "Editors that know JSON Schema complete and check tag files with it."
+    _command(commands, "schema", "write the JSON schema of the tag file", more)
+
+
+def _completion(commands: Commands[ArgumentParser]) -> None:
+    more = (
+        'bash: eval "$(specsheet completion bash)"\n'
+        'zsh:  eval "$(specsheet completion zsh)", after compinit\n'
+        "fish: specsheet completion fish | source"
     )
+    completion = _command(commands, "completion", "write a completion script for a shell", more)
     completion.add_argument("shell", choices=("bash", "zsh", "fish"))
-    return parser
+
+
+_COMMANDS: tuple[Callable[[Commands[ArgumentParser]], None], ...] = (
+    _form,
+    _demo,
+    _new,
+    _derive,
+    _check,
+    _print,
+    _families,
+    _schema,
+    _completion,
+)

@@ -5,7 +5,7 @@ from __future__ import annotations
 from argparse import Namespace
 from collections import Counter
 
-from specsheet.cli.inputs import readings
+from specsheet.cli.inputs import read_all
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status, verdict
 from specsheet.evaluate import evaluate
@@ -15,25 +15,18 @@ from specsheet.findings import Finding, Level
 def run(arguments: Namespace) -> Status:
     """Write one line a finding to stdout and the totals to stderr."""
     counts: Counter[Level] = Counter()
-    tags = 0
-    unusable = False
-    for reading in readings(arguments.paths):
-        unusable = unusable or bool(reading.problems)
-        if reading.tag is None:
-            continue
-        tags += 1
-        for finding in evaluate(reading.tag).findings:
+    scanned = read_all(arguments.paths)
+    tags = [reading.tag for reading in scanned.readings() if reading.tag is not None]
+    for tag in tags:
+        for finding in evaluate(tag).findings:
             counts[finding.level] += 1
             if arguments.all or finding.level is not Level.NOTE:
-                data(_line(reading.tag.path, finding))
-    if not tags and not unusable:
-        say("no tag files found; name a tag file, or a folder with *.toml files in it or in tags/")
-        return Status.UNUSABLE
+                data(_line(tag.path, finding))
     say(
-        f"{tags} tag{'s' if tags != 1 else ''}: {counts[Level.STOP]} stop, "
+        f"{len(tags)} tag{'s' if len(tags) != 1 else ''}: {counts[Level.STOP]} stop, "
         f"{counts[Level.CAUTION]} caution, {counts[Level.NOTE]} note"
     )
-    if unusable:
+    if scanned.all_problems:
         return Status.UNUSABLE
     return verdict(counts, strict=arguments.strict)
 

@@ -3,22 +3,31 @@
 from __future__ import annotations
 
 from argparse import ArgumentParser, Namespace, _SubParsersAction
-from collections.abc import Mapping
+from collections.abc import Iterable
+from dataclasses import dataclass
 
+from specsheet import packs
 from specsheet.cli.narrate import data
 from specsheet.cli.status import Status
 
+_FILE_ARGUMENTS = frozenset({"file", "folder", "output", "path", "paths"})
+_FAMILY_ARGUMENTS = frozenset({"family"})
+
 _BASH = """\
 _specsheet() {{
-    local word="${{COMP_WORDS[COMP_CWORD]}}" command="${{COMP_WORDS[1]}}" words=""
+    local IFS=$' \\n' word="${{COMP_WORDS[COMP_CWORD]}}" words="" files=""
     if [ "$COMP_CWORD" -eq 1 ]; then
         words="{commands}"
     else
-        case "$command" in
+        case "${{COMP_WORDS[1]}}" in
 {cases}
         esac
     fi
-    COMPREPLY=($(compgen -W "$words" -- "$word") $(compgen -f -- "$word"))
+    COMPREPLY=($(compgen -W "$words" -- "$word"))
+    if [ -n "$files" ]; then
+        IFS=$'\\n'
+        COMPREPLY+=($(compgen -f -- "$word"))
+    fi
 }}
 complete -o filenames -F _specsheet specsheet
 """
@@ -27,66 +36,86 @@ _ZSH = """\
 #compdef specsheet
 _specsheet() {{
     if (( CURRENT == 2 )); then
-        compadd {commands}
-    else
-        case "${{words[2]}}" in
-{cases}
-        esac
-        _files
+        compadd -- {commands}
+        return
     fi
+    case "${{words[2]}}" in
+{cases}
+    esac
 }}
 compdef _specsheet specsheet
 """
+
+
+@dataclass(frozen=True, slots=True)
+class _Command:
+    """What can follow a command: its options and fixed words, and whether files can."""
+
+    name: str
+    words: tuple[str, ...]
+    files: bool
 
 
 def run(arguments: Namespace) -> Status:
     """Write the script for the shell that was asked for."""
     from specsheet.cli.parser import build_parser
 
-    data(_WRITERS[arguments.shell](_words(build_parser())))
+    data(_WRITERS[arguments.shell](tuple(_commands(build_parser()))))
     return Status.FINE
 
 
-def _words(parser: ArgumentParser) -> dict[str, list[str]]:
-    """Return command -> its options and fixed choices."""
-    found: dict[str, list[str]] = {}
+def _commands(parser: ArgumentParser) -> Iterable[_Command]:
     for action in parser._actions:
         if isinstance(action, _SubParsersAction):
             for name, child in action.choices.items():
-                found[name] = [
-                    word
-                    for item in child._actions
-                    for word in (*item.option_strings, *(item.choices or ()))
-                ]
-    return found
+                yield _command(name, child)
 
 
-def _bash(words: Mapping[str, list[str]]) -> str:
+def _command(name: str, parser: ArgumentParser) -> _Command:
+    words: list[str] = []
+    names = {item.dest for item in parser._actions}
+    for item in parser._actions:
+        words.extend((*item.option_strings, *(item.choices or ())))
+    if names & _FAMILY_ARGUMENTS:
+        words.extend(packs.family_keys())
+    return _Command(name, tuple(words), bool(names & _FILE_ARGUMENTS))
+
+
+def _bash(commands: tuple[_Command, ...]) -> str:
     cases = "\n".join(
-        f'            {name}) words="{" ".join(options)}" ;;' for name, options in words.items()
+        f'            {item.name}) words="{" ".join(item.words)}"'
+        f"{' files=yes' if item.files else ''} ;;"
+        for item in commands
     )
-    return _BASH.format(commands=" ".join(words), cases=cases)
+    return _BASH.format(commands=_names(commands), cases=cases)
 
 
-def _zsh(words: Mapping[str, list[str]]) -> str:
+def _zsh(commands: tuple[_Command, ...]) -> str:
     cases = "\n".join(
-        f"            {name}) compadd -- {' '.join(options)} ;;" for name, options in words.items()
+        f"        {item.name}) compadd -- {' '.join(item.words)}"
+        f"{'; _files' if item.files else ''} ;;"
+        for item in commands
     )
-    return _ZSH.format(commands=" ".join(words), cases=cases)
+    return _ZSH.format(commands=_names(commands), cases=cases)
 
 
-def _fish(words: Mapping[str, list[str]]) -> str:
-    lines = [f"complete -c specsheet -n __fish_use_subcommand -a '{' '.join(words)}'"]
-    for name, options in words.items():
-        condition = f"-n '__fish_seen_subcommand_from {name}'"
+def _fish(commands: tuple[_Command, ...]) -> str:
+    lines = [f"complete -c specsheet -f -n __fish_use_subcommand -a '{_names(commands)}'"]
+    for item in commands:
+        condition = f"-n '__fish_seen_subcommand_from {item.name}'"
+        files = "" if item.files else " -f"
         lines.extend(
-            f"complete -c specsheet {condition} -l {option[2:]}"
-            if option.startswith("--")
-            else f"complete -c specsheet {condition} -a {option}"
-            for option in options
-            if option != "-h"
+            f"complete -c specsheet{files} {condition} -l {word[2:]}"
+            if word.startswith("--")
+            else f"complete -c specsheet{files} {condition} -a {word}"
+            for word in item.words
+            if word != "-h"
         )
     return "\n".join(lines)
+
+
+def _names(commands: tuple[_Command, ...]) -> str:
+    return " ".join(item.name for item in commands)
 
 
 _WRITERS = {"bash": _bash, "zsh": _zsh, "fish": _fish}

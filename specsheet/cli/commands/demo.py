@@ -2,8 +2,8 @@
 
 from __future__ import annotations
 
-import sys
 from argparse import Namespace
+from collections import Counter
 from pathlib import Path
 
 from rich.console import Console
@@ -11,30 +11,33 @@ from rich.progress import BarColumn, MofNCompleteColumn, Progress, TextColumn
 from rich.table import Table
 from rich.text import Text
 
-from specsheet import job, packs, sheet, tagfile
+from specsheet import packs, sheet, tagfile, tui
+from specsheet.cli.inputs import read_all
 from specsheet.cli.narrate import say
 from specsheet.cli.status import Status
 from specsheet.evaluate import Evaluation, evaluate
 from specsheet.findings import Level
 from specsheet.render import pdf
+from specsheet.tui import terminal
 
 
 def run(arguments: Namespace) -> int | Status:
-    """Run the demo; ends with 0 although some of its tags are wrong on purpose."""
+    """Run the demo; ends with 0 although some of its tags are wrong on purpose.
+
+    The form opens at the end where there is a terminal for it.
+    """
     folder = Path(arguments.folder)
     try:
         _write_job(folder)
         results = _print_all(folder, Path(arguments.output))
-    except (OSError, tagfile.SaveError, pdf.WriteError) as problem:
+    except OSError as problem:
         say(f"the demo could not be written: {problem}")
         return Status.UNUSABLE
     _show(results)
     say(f"the job is in {folder}, the sheets are in {arguments.output}")
-    if not arguments.no_form and sys.stdin.isatty() and sys.stdout.isatty():
-        from specsheet import tui
-
-        return tui.run(str(folder))
-    return Status.FINE
+    if arguments.no_form or terminal.objection(folder):
+        return Status.FINE
+    return tui.run(str(folder))
 
 
 def _write_job(folder: Path) -> None:
@@ -48,35 +51,31 @@ def _write_job(folder: Path) -> None:
         tagfile.save(target, path.read_text(encoding="utf-8"))
 
 
-def _print_all(folder: Path, output: Path) -> list[tuple[Evaluation, Path]]:
-    results: list[tuple[Evaluation, Path]] = []
-    found = list(job.scan([str(folder)]).readings())
-    console = Console(stderr=True)
+def _print_all(folder: Path, output: Path) -> list[Evaluation]:
+    """Derive and print every tag, with a bar on stderr."""
+    done: list[Evaluation] = []
+    readings = read_all([str(folder)]).readings()
     columns = (TextColumn("{task.description}"), BarColumn(), MofNCompleteColumn())
-    with Progress(*columns, console=console) as progress:
-        task = progress.add_task("printing", total=len(found))
-        for reading in found:
-            for problem in reading.problems:
-                say(str(problem))
+    with Progress(*columns, console=Console(stderr=True)) as progress:
+        for reading in progress.track(readings, description="printing"):
             if reading.tag is not None:
                 evaluation = evaluate(reading.tag)
-                target = output / pdf.file_name(reading.tag.name)
-                pdf.write(sheet.build(evaluation), target)
-                results.append((evaluation, target))
-            progress.advance(task)
-    return results
+                pdf.write(sheet.build(evaluation), output / pdf.file_name(reading.tag.name))
+                done.append(evaluation)
+    return done
 
 
-def _show(results: list[tuple[Evaluation, Path]]) -> None:
+def _show(evaluations: list[Evaluation]) -> None:
     """Write the summary table to stdout."""
     table = Table(box=None, pad_edge=False)
-    for heading in ("tag", "service", "family", "stop", "caution", "note", "sheet"):
-        table.add_column(heading, justify="right" if heading in tuple(Level) else "left")
-    for evaluation, path in results:
-        counts = [
-            str(sum(finding.level is level for finding in evaluation.findings)) for level in Level
-        ]
+    table.add_column("tag", no_wrap=True)
+    table.add_column("service", no_wrap=True, overflow="ellipsis")
+    table.add_column("family", no_wrap=True)
+    for level in Level:
+        table.add_column(level, justify="right", min_width=len(level))
+    for evaluation in evaluations:
         tag = evaluation.tag
-        cells = (tag.name, tag.text("service"), tag.family, *counts, str(path))
+        counts = Counter(finding.level for finding in evaluation.findings)
+        cells = (tag.name, tag.text("service"), tag.family, *(str(counts[x]) for x in Level))
         table.add_row(*(Text(cell) for cell in cells))
     Console().print(table)

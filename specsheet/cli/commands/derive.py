@@ -4,16 +4,14 @@ from __future__ import annotations
 
 from argparse import Namespace
 
-from specsheet import tagfile
-from specsheet.cli.narrate import data, say
+from specsheet.cli.inputs import read_one
+from specsheet.cli.narrate import data
 from specsheet.cli.status import Status, verdict
 
 
 def run(arguments: Namespace) -> Status:
     """Write the sheet of one tag to stdout; its problems go to stderr."""
-    reading = tagfile.load(arguments.file)
-    for problem in reading.problems:
-        say(str(problem))
+    reading, troubled = read_one(arguments.file)
     if reading.tag is None:
         return Status.UNUSABLE
 
@@ -29,6 +27,6 @@ def run(arguments: Namespace) -> Status:
         from specsheet.render import text
 
         data(text.text(sheet.build(evaluation)))
-    if reading.problems:
+    if troubled:
         return Status.UNUSABLE
     return verdict((item.level for item in evaluation.findings), strict=arguments.strict)

@@ -3,10 +3,10 @@
 from __future__ import annotations
 
 from argparse import Namespace
-from difflib import get_close_matches
 
 from specsheet import packs, quantity
-from specsheet.cli.narrate import data, say
+from specsheet.cli.choose import known_family
+from specsheet.cli.narrate import data
 from specsheet.cli.status import Status
 from specsheet.fields import KINDS, Entry, term
 from specsheet.meters import registry
@@ -19,10 +19,7 @@ def run(arguments: Namespace) -> Status:
     if key is None:
         data(_listing())
         return Status.FINE
-    if key not in packs.family_keys():
-        near = get_close_matches(key, packs.family_keys(), n=3)
-        hint = f"; did you mean {' or '.join(near)}?" if near else ""
-        say(f"there is no meter family {key!r}{hint} `specsheet families` lists them")
+    if not known_family(key):
         return Status.UNUSABLE
     data(_detail(packs.profile(key)))
     return Status.FINE
@@ -71,7 +68,7 @@ def _limit(limit: ProfileLimit) -> str:
     of = term(limit.quantity)
     unit = of.shown or KINDS[of.kind].shown
     bounds = [
-        f"{words} {quantity.from_si(bound, of.kind, unit):.4g} {unit}".removesuffix(" 1")
+        f"{words} {quantity.from_si(bound, of.kind, unit):.6g} {unit}".removesuffix(" 1")
         for words, bound in (("at least", limit.low), ("at most", limit.high))
         if bound is not None
     ]

@@ -3,20 +3,17 @@
 from __future__ import annotations
 
 from argparse import Namespace
-from difflib import get_close_matches
 from pathlib import Path
 
-from specsheet import packs, tagfile
+from specsheet import tagfile
+from specsheet.cli.choose import known_family
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status
 
 
 def run(arguments: Namespace) -> Status:
     """Write the file into the job's tags folder, or the folder named; never over a file."""
-    if arguments.family not in packs.family_keys():
-        near = get_close_matches(arguments.family, packs.family_keys(), n=3)
-        hint = f"did you mean {' or '.join(near)}? " if near else ""
-        say(f"there is no meter family {arguments.family!r}; {hint}`specsheet families` lists them")
+    if not known_family(arguments.family):
         return Status.UNUSABLE
     target = _target(Path(arguments.folder), arguments.tag)
     if target is None:
@@ -28,7 +25,7 @@ def run(arguments: Namespace) -> Status:
     try:
         target.parent.mkdir(parents=True, exist_ok=True)
         tagfile.save(target, tagfile.new_text(arguments.tag, arguments.family))
-    except (OSError, tagfile.SaveError) as problem:
+    except OSError as problem:
         say(f"{target}: file: cannot be written: {problem}")
         return Status.UNUSABLE
     data(str(target))
