@@ -213,8 +213,8 @@ def _facts(request: Request, check: Check) -> str:
     if check.high is not None:
         bounds.append(f"at most {say(check.key, check.high, units)}")
     where = f" at {check.point}" if check.point else ""
-    came = "cannot be reached" if np.isnan(check.value) else say(check.key, check.value, units)
-    return f"{label(check.key)} is {came}{where}; {' and '.join(bounds)} is wanted"
+    given = "has no value" if np.isnan(check.value) else f"is {say(check.key, check.value, units)}"
+    return f"{label(check.key)} {given}{where}; {' and '.join(bounds)} is wanted"
 
 
 def _field(check: Check) -> str:
