@@ -14,6 +14,16 @@ MODULES = {
         # Differential pressure
         "orifice_concentric",
         "venturi_tube",
+        "orifice_eccentric",
+        "orifice_segmental",
+        "orifice_quarter_circle",
+        "orifice_conical_entrance",
+        "nozzle_isa_1932",
+        "nozzle_long_radius",
+        "nozzle_venturi",
+        "dall_tube",
+        "cone",
+        "wedge",
         # Oscillating
         "vortex",
         # Electromagnetic
@@ -27,6 +37,7 @@ MODULES = {
         "ultrasonic_transit",
         # Mass
         "coriolis",
+        "thermal_inline",
     )
 }
 
