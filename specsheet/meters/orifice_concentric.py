@@ -9,7 +9,7 @@ import numpy as np
 from specsheet.findings import Level, Origin
 from specsheet.meters.dp import adapters, plate
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
+from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
 from specsheet.methods import iso5167_2, orifice_plate
 from specsheet.methods.iso5167_1 import reynolds_number
@@ -187,6 +187,6 @@ FAMILY = family(
         describe=_describe,
         derivations=_DERIVATIONS,
         prepare=_prepare,
-        shape=Shape(effective=plate.with_hole, machined=plate.without_hole),
+        shape=plate.HOLED,
     )
 )

@@ -111,13 +111,7 @@ _DERIVATIONS = (
         _SOURCE,
     ),
     adapters.NOZZLE_EXPANSIBILITY,
-    Derivation(
-        "pressure_loss",
-        "ϖ = Δp (0.218 - 0.42 β + 0.38 β²) at 7°, Δp (0.436 - 0.86 β + 0.59 β²) at 15°, linear "
-        "between",
-        "handbook fit (from memory)",
-        ("differential_pressure", "diameter_ratio", "divergent_angle"),
-    ),
+    adapters.VENTURI_LOSS,
     adapters.THROAT,
     adapters.THROAT_HOT,
 )

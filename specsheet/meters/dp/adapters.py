@@ -85,6 +85,12 @@ PLATE_LOSS = Derivation(
     cite("iso5167-2", "5.4.1"),
     ("differential_pressure", "discharge_coefficient", "diameter_ratio"),
 )
+VENTURI_LOSS = Derivation(
+    "pressure_loss",
+    "ϖ = Δp (0.218 - 0.42 β + 0.38 β²) at 7°, Δp (0.436 - 0.86 β + 0.59 β²) at 15°, linear between",
+    "handbook fit (from memory)",
+    ("differential_pressure", "diameter_ratio", "divergent_angle"),
+)
 BORE = Derivation(
     "bore_diameter",
     "mass-flow equation solved for β, d20 = β D / (1 + αd (t - 20 °C)), rounded up to 0.01 mm; "

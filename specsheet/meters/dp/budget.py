@@ -66,8 +66,8 @@ def _expansion(
             "expansibility",
             "expansibility factor",
             np.where(np.isnan(exponent), 0.0, relative),
-            Origin.DERIVED,
-            device.source,
+            Origin.ASSUMED if device.assumed_expansion else Origin.DERIVED,
+            device.assumed_expansion or device.source,
         ),
     )
 

@@ -68,6 +68,7 @@ class Shape:
         ratio: β, from dimension by D; arrays.
         effective: dimension that counts, from the one machined [m] and the element's numbers.
         machined: the inverse of ``effective``.
+        widens: whether a larger dimension opens the pipe; rounding goes that way.
     """
 
     entry: str = "bore"
@@ -79,6 +80,7 @@ class Shape:
     ratio: Callable[[Array], Array] = same_share
     effective: Callable[[float, Mapping[str, float]], float] = as_machined
     machined: Callable[[float, Mapping[str, float]], float] = as_machined
+    widens: bool = True
 
 
 @dataclass(frozen=True)
@@ -131,6 +133,11 @@ def no_over_reading(lanes: Lanes) -> float:  # noqa: ARG001 - the signature is t
     return 1.0
 
 
+def nothing_beside(lanes: Lanes) -> Mapping[str, Array]:  # noqa: ARG001 - the protocol
+    """Return nothing: the device has no further values."""
+    return {}
+
+
 def nothing_more(request: Request) -> Prepared:  # noqa: ARG001 - the signature is the protocol
     """Return nothing: the device has no entries of its own."""
     return Prepared()
@@ -154,6 +161,8 @@ class Device:
         derivations: how C, ε and the loss come about.
         prepare: reads the device's own entries.
         over_reading: by what factor the flow reads high (wet gas), of the lanes.
+        more: further values of the lanes to put out, by glossary key.
+        assumed_expansion: where no published uncertainty of ε was seen: whose is taken instead.
         shape: which dimension is machined.
     """
 
@@ -170,4 +179,6 @@ class Device:
     derivations: tuple[Derivation, ...]
     prepare: Callable[[Request], Prepared] = nothing_more
     over_reading: Callable[[Lanes], Array | float] = no_over_reading
+    more: Callable[[Lanes], Mapping[str, Array]] = nothing_beside
     shape: Shape = Shape()
+    assumed_expansion: str = ""

@@ -7,7 +7,7 @@ from collections.abc import Mapping
 from specsheet.findings import Finding, Level, Origin
 from specsheet.line.material import find_material
 from specsheet.meters.dp.adapters import BORE_HOT
-from specsheet.meters.dp.device import Described, Prepared
+from specsheet.meters.dp.device import Described, Prepared, Shape
 from specsheet.meters.family import Derivation, Element, Given, Limit, Request
 from specsheet.methods import orifice_plate as steel
 from specsheet.sources import PRACTICE, cite
@@ -21,8 +21,7 @@ SMALLEST_HOLED_PIPE = 0.1
 
 _BENDING = cite("isotr9464")
 
-DERIVATIONS: tuple[Derivation, ...] = (
-    BORE_HOT,
+STRENGTH: tuple[Derivation, ...] = (
     Derivation(
         "plate_thickness",
         "thinnest usual sheet up to 0.05 D that the largest Δp does not bend",
@@ -42,6 +41,9 @@ DERIVATIONS: tuple[Derivation, ...] = (
         ("differential_pressure_range", "diameter_ratio", "inside_diameter_hot", "plate_thickness"),
     ),
 )
+
+
+DERIVATIONS: tuple[Derivation, ...] = (BORE_HOT, *STRENGTH)
 
 
 def prepare(request: Request) -> Prepared:
@@ -91,6 +93,10 @@ def with_hole(size: float, numbers: Mapping[str, float]) -> float:
 def without_hole(size: float, numbers: Mapping[str, float]) -> float:
     """Return the bore to machine for one that counts [m]."""
     return float(steel.measured_bore(effective=size, hole=numbers.get("hole", 0.0)))
+
+
+#: a round bore with a drain or vent hole beside it
+HOLED = Shape(effective=with_hole, machined=without_hole)
 
 
 def thickness(request: Request, element: Element) -> Given:
@@ -169,14 +175,14 @@ def _hole(element: Element) -> tuple[Finding, ...]:
     )
 
 
-def bending_limits() -> tuple[Limit, ...]:
-    """Return the limits on the plate as a beam."""
+def bending_limits(level: Level = Level.CAUTION) -> tuple[Limit, ...]:
+    """Return the limits on the plate as a beam; a note where its rule is for round holes only."""
     return (
         Limit(
             "plate_stress",
             None,
             PERMISSIBLE_STRESS,
-            Level.CAUTION,
+            level,
             "plate-bends",
             "the largest differential pressure may bend the plate for good; make it thicker or "
             "lower the range",
@@ -187,7 +193,7 @@ def bending_limits() -> tuple[Limit, ...]:
             "bending_error",
             -1e-3,
             1e-3,
-            Level.CAUTION,
+            level,
             "plate-deflects",
             "the plate deflects enough to shift the flow by more than 0.1 %; make it thicker",
             _BENDING,

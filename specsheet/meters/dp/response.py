@@ -96,6 +96,7 @@ def respond(device: Device, element: Element, stream: Stream) -> Mapping[str, Ar
             "dynamic_pressure": stream.density * velocity**2,
             "back_pressure_margin": stream.pressure - pressure - stream.vapour_pressure,
             **signals(element.numbers, pressure),
+            **device.more(lanes),
         }
         if np.isnan(stream.vapour_pressure).all():
             del values["back_pressure_margin"]

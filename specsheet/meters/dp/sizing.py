@@ -19,7 +19,7 @@ from specsheet.sources import PRACTICE, cite
 #: above this diameter ratio nothing narrows the pipe any more [-]
 _WIDEST = 0.95
 
-#: step to which a machined dimension is rounded up [m]
+#: step to which a machined dimension is rounded, so that Δp falls [m]
 STEP = 1e-5
 
 RANGE = "differential_pressure_range"
@@ -148,7 +148,9 @@ def _machine(of: Task, ratio: float, span: float, span_origin: Origin) -> Sized:
         length=1.0, expansion=of.numbers["element_expansion"], temperature=temperature
     )
     exact = of.device.shape.machined(cold, of.numbers)
-    machined = round(float(np.ceil(round(exact / STEP, 6))) * STEP, 9)
+    steps = round(exact / STEP, 6)
+    whole = np.ceil(steps) if of.device.shape.widens else np.floor(steps)
+    machined = round(float(whole) * STEP, 9)
     size = of.device.shape.effective(machined, of.numbers)
     return Sized(size, machined, span, Origin.DERIVED, span_origin)
 

@@ -1,0 +1,58 @@
+"""What every device with a body of its own shares: material, calibration demanded, notes."""
+
+from __future__ import annotations
+
+from specsheet.findings import Finding, Level, Origin
+from specsheet.line.material import find_material
+from specsheet.meters.dp.device import Prepared
+from specsheet.meters.family import Given, Request
+from specsheet.sources import PRACTICE
+
+
+def prepare(
+    request: Request,
+    *,
+    tapping_share: float,
+    choices: dict[str, str] | None = None,
+    values: dict[str, Given] | None = None,
+    numbers: dict[str, float] | None = None,
+    findings: tuple[Finding, ...] = (),
+) -> Prepared:
+    """Read the material of the element; its expansion is that of the pipe where it is not known.
+
+    Args:
+        request: the tag.
+        tapping_share: usual distance of the tappings along the pipe, by D [-].
+        choices, values, numbers, findings: what the device adds.
+    """
+    found = {"tapping_distance": tapping_share * request.pipe.inside_diameter, **(numbers or {})}
+    material = find_material(request.tag.text("meter.element_material"))
+    if material is not None:
+        temperature = float(request.stream.temperature[request.normal])
+        found["element_expansion"] = material.expansion(temperature)
+    return Prepared(found, choices or {}, values or {}, findings)
+
+
+def is_calibrated(request: Request) -> bool:
+    """Tell whether a calibrated coefficient is stated."""
+    return request.tag.get("meter.discharge_coefficient") is not None
+
+
+def calibration_wanted(request: Request, why: str, level: Level = Level.CAUTION) -> Finding | None:
+    """Return the finding that the device must be calibrated, unless it is."""
+    if is_calibrated(request):
+        return None
+    return Finding(
+        level,
+        "calibration-wanted",
+        "meter.discharge_coefficient",
+        f"{why}; ask for a flow calibration over the Reynolds numbers of the range and state the "
+        "coefficient found",
+        source=PRACTICE,
+    )
+
+
+def typical(request: Request, name: str) -> Given:
+    """Return a figure usual for the family, from its profile."""
+    figure = request.profile.typical[name]
+    return Given(figure.value, Origin.TYPICAL, figure.source)
