@@ -44,7 +44,7 @@ def _gas_state(equation: str) -> Any:
 def dilute_viscosity(key: str, temperature: float) -> float:
     """Return the viscosity [Pa s] of a component at low density."""
     item = names.substances()[key]
-    found = _at_density(key, temperature, 1e-3)
+    found = viscosity_at(key, temperature, 1e-3)
     return transport.dilute(item, temperature).value if found is None else found
 
 
@@ -60,7 +60,7 @@ def dilute_conductivity(key: str, temperature: float) -> float | None:
     return found if math.isfinite(found) and found > 0.0 else None
 
 
-def _at_density(key: str, temperature: float, density: float) -> float | None:
+def viscosity_at(key: str, temperature: float, density: float) -> float | None:
     """Return the viscosity [Pa s] of a component at a molar density [mol/m3]; None if unknown."""
     equation = names.substances()[key].equation
     if not transport.has_model(equation):
@@ -114,7 +114,7 @@ def _rise(
     for (key, fraction), low in zip(composition, dilute, strict=True):
         if fraction < 1e-3:
             continue
-        high = _at_density(key, temperature, molar_density)
+        high = viscosity_at(key, temperature, molar_density)
         if high is not None and 0.5 < high / low < 10.0:
             total += fraction * math.log(high / low)
             weight += fraction

@@ -8,18 +8,35 @@ is the true one is decided by :mod:`specsheet.fluid.mixture_phase`.
 from __future__ import annotations
 
 import itertools
-import math
 from collections.abc import Mapping
 from dataclasses import dataclass
 from functools import lru_cache
 from typing import Any
 
 from specsheet.findings import Finding
-from specsheet.fluid import calorific, library, limits, mixture_phase, mixture_transport, names
+from specsheet.fluid import (
+    calorific,
+    library,
+    limits,
+    mixture_phase,
+    mixture_state,
+    mixture_transport,
+    names,
+)
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.errors import translate
-from specsheet.fluid.model import Condition, Method, Refused, bar, both, caution, note, stop
-from specsheet.fluid.phases import GAS, LIQUID, TWO_PHASE
+from specsheet.fluid.model import (
+    Condition,
+    Method,
+    Refused,
+    bar,
+    both,
+    caution,
+    celsius,
+    note,
+    stop,
+)
+from specsheet.fluid.phases import GAS, LIQUID, SUPERCRITICAL, TWO_PHASE
 from specsheet.fluid.state import Property, State
 from specsheet.quantity.value import Base
 from specsheet.sources import cite
@@ -57,68 +74,6 @@ _GERG = frozenset(
 AIR: Composition = (("nitrogen", 0.7812), ("oxygen", 0.2096), ("argon", 0.0092))
 
 
-@lru_cache(maxsize=32)
-def state_of(keys: tuple[str, ...], phase: str) -> Any:
-    """Return the one state object of some components and imposed phase, under the lock of the room.
-
-    Its fractions are those of whoever used it last: set them before each update.
-
-    Raises:
-        ValueError: a pair of components has no mixing parameters and the phase is liquid.
-    """
-    module = library.fluids()
-    table = names.substances()
-    if phase == GAS:
-        estimate_pairs(keys)
-    state = module.AbstractState("HEOS", "&".join(table[key].equation for key in keys))
-    state.set_mole_fractions([1.0 / len(keys)] * len(keys))
-    state.specify_phase(module.iphase_gas if phase == GAS else module.iphase_liquid)
-    return state
-
-
-def updated(composition: Composition, phase: str, temperature: float, pressure: float) -> Any:
-    """Return the state object of a composition, imposed phase and state.
-
-    Raises:
-        library.ERRORS: there is no such state; forget the objects then.
-    """
-    state = state_of(tuple(key for key, _ in composition), phase)
-    state.set_mole_fractions([fraction for _, fraction in composition])
-    state.update(library.fluids().PT_INPUTS, pressure, temperature)
-    return state
-
-
-@lru_cache(maxsize=256)
-def estimate_pairs(keys: tuple[str, ...]) -> tuple[tuple[str, str], ...]:
-    """Give pairs without mixing parameters the linear rule; return those pairs."""
-    module = library.fluids()
-    table = names.substances()
-    found = []
-    for i, first in enumerate(keys):
-        for second in keys[i + 1 :]:
-            if not _known_pair(table[first].cas, table[second].cas):
-                module.apply_simple_mixing_rule(table[first].cas, table[second].cas, "linear")
-                _ESTIMATED.add(frozenset((table[first].cas, table[second].cas)))
-            if frozenset((table[first].cas, table[second].cas)) in _ESTIMATED:
-                found.append((first, second))
-    return tuple(found)
-
-
-#: pairs (CAS numbers) that got the linear rule in this process
-_ESTIMATED: set[frozenset[str]] = set()
-
-
-def _known_pair(first: str, second: str) -> bool:
-    """Tell whether a pair has mixing parameters; the library keeps them in one order only."""
-    for one, other in ((first, second), (second, first)):
-        try:
-            library.fluids().get_mixture_binary_pair_data(one, other, "gammaT")
-        except library.ERRORS:
-            continue
-        return True
-    return False
-
-
 @dataclass(frozen=True, slots=True)
 class Mixture:
     """A mixture; ``phase`` is the one stated, fractions are by mole and sum to one."""
@@ -138,12 +93,13 @@ class Mixture:
         findings = self._range().check(temperature, pressure, self.name)
         state = self._updated(temperature, pressure)
         verdict = mixture_phase.decide(self.composition, self.phase, temperature, pressure, state)
+        phase = _dense(verdict.phase, state)
         values = self._properties(state, temperature, pressure)
         values.update(verdict.values)
         return State(
             temperature,
             pressure,
-            verdict.phase,
+            phase,
             values,
             (*findings, *self._pairs(), *verdict.findings),
         )
@@ -195,7 +151,9 @@ class Mixture:
 
     def _pairs(self) -> tuple[Finding, ...]:
         pairs = (
-            estimate_pairs(tuple(key for key, _ in self.composition)) if self.phase == GAS else ()
+            mixture_state.estimate_pairs(tuple(key for key, _ in self.composition))
+            if self.phase == GAS
+            else ()
         )
         if not pairs:
             return ()
@@ -213,29 +171,28 @@ class Mixture:
         )
 
     def _updated(self, temperature: float, pressure: float) -> Any:
-        """Return the state object at the state, checked."""
+        """Return the state object at the state, on a root that the phase allows."""
         try:
-            state = updated(self.composition, self.phase, temperature, pressure)
-            sound = _sane(state, self.phase, temperature)
+            state = mixture_state.settled(self.composition, self.phase, temperature, pressure)
         except library.ERRORS as error:
-            state_of.cache_clear()
+            mixture_state.forget()
             raise Refused(translate(error, self.name, temperature, pressure)) from None
-        if sound:
+        if state is not None:
             return state
-        state_of.cache_clear()
         raise Refused(
             stop(
                 "phase-disagrees",
                 "fluid.phase",
-                f"No {self.phase} of this composition exists at {temperature - 273.15:.4g} °C and "
-                f"{pressure / 1e5:.4g} bar(a). Correct the phase, the pressure or the temperature.",
+                f"No {self.phase} of this composition exists at {celsius(temperature)} and "
+                f"{bar(pressure)}. Correct the phase, the pressure or the temperature.",
             )
         )
 
     def _properties(self, state: Any, temperature: float, pressure: float) -> dict[str, Property]:
         """Return all properties of the state object as it stands."""
         density, sound = state.rhomass(), state.speed_sound()
-        plain, fast, warm = _methods(self.composition, self.phase)
+        dense = state.rhomolar() > 0.5 * state.rhomolar_reducing()
+        plain, fast, warm = _methods(self.composition, dense)
         values = {
             "density": plain(density),
             "sound_speed": fast(sound),
@@ -252,6 +209,14 @@ class Mixture:
                 mixture_transport.liquid(self.composition, temperature, pressure, density)
             )
         return values
+
+
+def _dense(phase: str, state: Any) -> str:
+    """Return the phase, with a fluid too dense for a gas or too light for a liquid called so."""
+    ratio = state.rhomolar() / state.rhomolar_reducing()
+    if phase == GAS and ratio > 1.0:
+        return SUPERCRITICAL
+    return GAS if phase == LIQUID and ratio < 0.7 else phase
 
 
 @lru_cache(maxsize=256)
@@ -287,22 +252,11 @@ def _range(composition: Composition) -> limits.Range:
 
 
 @lru_cache(maxsize=256)
-def _methods(composition: Composition, phase: str) -> tuple[Method, Method, Method]:
+def _methods(composition: Composition, dense: bool) -> tuple[Method, Method, Method]:
     """Return the methods of density, sound speed and heat capacity, with honest uncertainties."""
     known = all(key in _GERG for key, _ in composition)
-    factor = (1.0 if known else 3.0) * (1.0 if phase == GAS else 3.0)
+    factor = (1.0 if known else 3.0) * (3.0 if dense else 1.0)
     plain = Method(_EQUATION, _SOURCE, 0.002 * factor)
     fast = Method(_EQUATION, _SOURCE, 0.005 * factor)
     warm = Method(_EQUATION, _SOURCE, 0.02 * factor)
     return plain, fast, warm
-
-
-def _sane(state: Any, phase: str, temperature: float) -> bool:
-    """Tell whether an imposed state is one: finite, stable, and of the density of its phase."""
-    density, heat, sound = state.rhomolar(), state.cpmolar(), state.speed_sound()
-    if not all(math.isfinite(value) and value > 0.0 for value in (density, heat, sound)):
-        return False
-    reducing = state.rhomolar_reducing()
-    if phase == GAS:
-        return bool(density < 0.9 * reducing or temperature > state.T_reducing())
-    return bool(density > 1.2 * reducing)

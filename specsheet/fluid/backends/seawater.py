@@ -22,7 +22,7 @@ _PLAIN = Method("IAPWS-IF97 and saline part", _SOURCE, 0.001)
 _HEAT = Method("IAPWS-IF97 and saline part", _SOURCE, 0.005)
 _VISCOSITY = Method("viscosity of water and salt", cite("sharqawy"), 0.03)
 _VAPOUR = Method("vapour pressure of water, lowered by the salt", cite("sharqawy"), 0.02)
-_RANGE = Range(273.15, 353.15, 100e6, _SOURCE, above=40.0, over=1.0)
+_RANGE = Range(273.15, 353.15, 100e6, _SOURCE, above=20.0, over=1.0)
 _STEP = 0.05  # [K], for the slope of volume over temperature
 
 
@@ -84,10 +84,12 @@ class Seawater:
         viscosity = water.liquid_viscosity(temperature) * method.viscosity_ratio(
             celsius=temperature - 273.15, salinity=self.salinity
         )
-        return {
+        values = {
             "density": _PLAIN(density),
-            "sound_speed": _HEAT(whole.sound_speed()),
             "heat_capacity": _HEAT(-temperature * whole.tt),
             "viscosity": _VISCOSITY(viscosity),
             "kinematic_viscosity": _VISCOSITY(viscosity / density),
         }
+        if temperature <= _RANGE.highest:  # the derivatives behind it do not extrapolate
+            values["sound_speed"] = _HEAT(whole.sound_speed())
+        return values

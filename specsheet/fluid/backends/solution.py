@@ -28,7 +28,7 @@ _DENSITY = Method("correlation of secondary fluids, raised with pressure", _MELI
 _VISCOSITY = Method("correlation of secondary fluids", _MELINDER, 0.06)
 _HEAT = Method("correlation of secondary fluids", _MELINDER, 0.03)
 _CONDUCTIVITY = Method("correlation of secondary fluids", _MELINDER, 0.05)
-_RAOULT = Method("law of Raoult", "from memory", 0.1, Origin.TYPICAL)
+_RAOULT = Method("law of Raoult; strong solutions lie below it", "from memory", 0.1, Origin.TYPICAL)
 _LAAR = Method("equations of van Laar and Antoine", "from memory", 0.1, Origin.TYPICAL)
 
 #: constants of van Laar for water with the alcohol (alcohol first), and of Antoine for the alcohol

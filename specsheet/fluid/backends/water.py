@@ -34,7 +34,7 @@ MOLAR_MASS = 0.01801528  # [kg/mol], IAPWS R5-85 and ISO 6976:2016
 LOWEST_TEMPERATURE = 273.15
 CRITICAL_TEMPERATURE = 647.096
 CRITICAL_PRESSURE = 22.064e6
-TRIPLE_PRESSURE = 611.213  # of the saturation equation at 273.15 K
+TRIPLE_PRESSURE = 611.2135  # a hair above that of the saturation equation at 273.15 K
 HIGHEST_PRESSURE = 100e6
 HIGHEST_TEMPERATURE = 2273.15
 #: above 1073.15 K (region 5) the pressure is limited further
@@ -197,7 +197,7 @@ class Water:
         if 0.0 < dryness < 1.0:
             return _wet(temperature, pressure, dryness, findings)
         module, state = _states()
-        state.update(module.PQ_INPUTS, pressure, dryness)
+        state.update(module.PQ_INPUTS, max(pressure, TRIPLE_PRESSURE), dryness)
         gas = dryness == 1.0
         return State(
             temperature,

@@ -12,8 +12,7 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 from functools import lru_cache
 
-from specsheet.fluid import library, mixture_phase
-from specsheet.fluid.backends import mixture
+from specsheet.fluid import library, mixture_phase, mixture_state
 from specsheet.fluid.backends.mixture import AIR, Mixture
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.model import Condition, Refused, bar, both, celsius, stop
@@ -114,9 +113,9 @@ def saturated(dry: Composition, temperature: float, pressure: float) -> float:
     for _ in range(3):
         wet = wetted(dry, min(fraction, 0.98))
         try:
-            state = mixture.updated(wet, GAS, temperature, pressure)
+            state = mixture_state.updated(wet, GAS, temperature, pressure)
         except library.ERRORS:
-            mixture.state_of.cache_clear()
+            mixture_state.forget()
             text = f"No gas of this composition exists at {celsius(temperature)}."
             raise Refused(stop("fluid-no-state", "temperature", text)) from None
         before, fraction = (
