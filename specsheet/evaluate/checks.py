@@ -10,12 +10,15 @@ import numpy as np
 from specsheet.evaluate.model import Model
 from specsheet.evaluate.reserve import FACTORS, Flips, find_flips, margin
 from specsheet.evaluate.result import Band, Check
-from specsheet.evaluate.words import label, say
+from specsheet.evaluate.words import say
+from specsheet.fields.terms import in_sentence
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.meters.family import Array, Given, Limit, Request
 
 #: a limit that holds by less than this share of the flow is worth a note; common practice
 NEAR = 0.05
+#: a limit that holds by less than this was sized to on purpose
+SIZED_TO = 0.001
 
 
 @dataclass(frozen=True)
@@ -180,7 +183,7 @@ def _is_near(check: Check) -> bool:
     return (
         check.reserve is not None
         and check.reserve.driver == "mass_flow"
-        and abs(check.reserve.fraction) < NEAR
+        and SIZED_TO < abs(check.reserve.fraction) < NEAR
         and check.level is not Level.NOTE
     )
 
@@ -214,7 +217,7 @@ def _facts(request: Request, check: Check) -> str:
         bounds.append(f"at most {say(check.key, check.high, units)}")
     where = f" at {check.point}" if check.point else ""
     given = "has no value" if np.isnan(check.value) else f"is {say(check.key, check.value, units)}"
-    return f"{label(check.key)} {given}{where}; {' and '.join(bounds)} is wanted"
+    return f"{in_sentence(check.key)} {given}{where}; {' and '.join(bounds)} is wanted"
 
 
 def _field(check: Check) -> str:
@@ -234,7 +237,7 @@ def _band(request: Request, limit: Limit, flips: Flips, mine: np.ndarray) -> Ban
     ends = flips.factor[here & ~flips.rising]
     low = flow * float(starts.min()) if starts.size else None
     high = flow * float(ends.max()) if ends.size else None
-    return Band(label(limit.key), low, high, limit.level)
+    return Band(in_sentence(limit.key), low, high, limit.level)
 
 
 def _tightest_first(bands: list[Band], request: Request) -> list[Band]:

@@ -8,12 +8,6 @@ from specsheet import quantity
 from specsheet.fields import KINDS, term
 
 
-def label(key: str) -> str:
-    """Return the label of a glossary key, as it stands inside a sentence."""
-    text = term(key).label
-    return text if text[:2].isupper() else text[0].lower() + text[1:]
-
-
 def number(value: float, digits: int = 3) -> str:
     """Return a number with significant digits, without an exponent where it stays readable."""
     if value == 0.0 or 1e-3 <= abs(value) < 1e7:

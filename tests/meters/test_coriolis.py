@@ -117,9 +117,13 @@ def test_sonic_limits_of_gas(mach, stop, caution):
     request = gas([flow] * 3, meter__size="DN 100")
     values = FAMILY.at(FAMILY.size(request), request.stream)
     assert values["mach_number"] == pytest.approx(mach, rel=1e-9)
-    every = (*of_profile(request), *of_physics(request))
+    every = (*of_profile(request), *of_physics())
     of_mach = [item for item in every if item.key == "mach_number"]
-    broken = [item.level for item in of_mach if shortfall(item, values) > 0]
+    broken = [
+        item.level
+        for item in of_mach
+        if item.phase in ("", request.tag.phase) and shortfall(item, values) > 0
+    ]
     assert (broken.count("stop"), broken.count("caution")) == (stop, caution)
 
 

@@ -162,7 +162,7 @@ def test_bore_stated_alone_is_rated():
 def test_each_limit_flips_when_crossed(key, flow, fluid, phase):
     request = tools.request("vortex", [flow] * 3, fluid, phase=phase, meter__size="DN 100")
     element = FAMILY.size(request)
-    every = (*of_profile(request), *of_physics(request))
+    every = (*of_profile(request), *of_physics())
     of_key = [limit for limit in every if limit.key == key]
     factors = np.geomspace(0.2, 5.0, 41)
     held = []

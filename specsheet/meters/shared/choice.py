@@ -53,7 +53,7 @@ def attempt(request: Request, element: Element, rules: Rules) -> Trial:
         *rules.limits(element, request),
         *shared_limits.of_profile(request),
         *shared_limits.of_purchase(request),
-        *shared_limits.of_physics(request),
+        *shared_limits.of_physics(),
     )
     found = [
         (shared_limits.shortfall(limit, values), limit)
@@ -61,14 +61,17 @@ def attempt(request: Request, element: Element, rules: Rules) -> Trial:
         if limit.phase in ("", request.tag.phase)
     ]
     worst = sorted((pair for pair in found if pair[0] > 0.0), key=lambda pair: -pair[0])
+
+    def total(level: Level) -> float:
+        return sum(size for size, limit in found if limit.level is level)
+
     return Trial(
-        element,
-        values,
-        *(
-            sum(size for size, limit in found if limit.level is level)
-            for level in (Level.STOP, Level.CAUTION, Level.NOTE)
-        ),
-        tuple(dict.fromkeys(limit.key for _, limit in worst)),
+        element=element,
+        values=values,
+        stops=total(Level.STOP),
+        cautions=total(Level.CAUTION),
+        notes=total(Level.NOTE),
+        broken=tuple(dict.fromkeys(limit.key for _, limit in worst)),
     )
 
 

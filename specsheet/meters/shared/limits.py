@@ -1,4 +1,4 @@
-"""The limits that decide a size, and by how much a response breaks them."""
+"""The limits that every family is held to, and by how much a response breaks them."""
 
 from __future__ import annotations
 
@@ -8,13 +8,14 @@ import numpy as np
 
 from specsheet.findings import Level
 from specsheet.meters.family import Array, Limit, Request
+from specsheet.sources import PRACTICE
 
 #: largest shortfall counted for one limit: a value without a logarithm counts as this
 _HOPELESS = 20.0
 
 
 def of_profile(request: Request) -> tuple[Limit, ...]:
-    """Return the usual limits of the family, from its profile, for the phase of the tag."""
+    """Return the usual limits of the family for the phase of the tag, from its profile."""
     return tuple(
         Limit(
             key=item.quantity,
@@ -32,20 +33,64 @@ def of_profile(request: Request) -> tuple[Limit, ...]:
 
 
 def of_purchase(request: Request) -> tuple[Limit, ...]:
-    """Return the demands of the purchase that a size can answer."""
-    wanted = (("uncertainty", "require.uncertainty"), ("pressure_loss", "require.pressure_loss"))
-    return tuple(
-        Limit(key, None, bound, Level.CAUTION, f"{key}-demanded", "", path)
-        for key, path in wanted
-        if (bound := request.tag.si(path)) is not None
-    )
+    """Return the demands of the purchase that bound a value."""
+    wanted: list[Limit] = []
+    uncertainty = request.tag.si("require.uncertainty")
+    if uncertainty is not None:
+        wanted.append(
+            Limit(
+                key="uncertainty",
+                low=None,
+                high=uncertainty,
+                level=Level.CAUTION,
+                code="uncertainty-demanded",
+                message="the purchase demands less; narrow the range, split it over two "
+                "transmitters, or choose a family that holds it",
+                source="require.uncertainty",
+            )
+        )
+    loss = request.tag.si("require.pressure_loss")
+    if loss is not None:
+        wanted.append(
+            Limit(
+                key="pressure_loss",
+                low=None,
+                high=loss,
+                level=Level.CAUTION,
+                code="pressure-loss-demanded",
+                message="the purchase allows less; choose a larger meter or a lower signal",
+                source="require.pressure_loss",
+            )
+        )
+    return tuple(wanted)
 
 
-def of_physics(request: Request) -> tuple[Limit, ...]:
+def of_physics() -> tuple[Limit, ...]:
     """Return the limits that hold for every family: no cavitation, no fast gas."""
-    if request.tag.phase == "liquid":
-        return (Limit("back_pressure_margin", 0.0, None, Level.STOP, "cavitation", "", ""),)
-    return (Limit("mach_number", None, 0.3, Level.CAUTION, "mach-number-high", "", ""),)
+    return (
+        Limit(
+            key="back_pressure_margin",
+            low=0.0,
+            high=None,
+            level=Level.STOP,
+            code="cavitation",
+            message="the liquid flashes or cavitates in the meter: the reading is wrong and the "
+            "meter is damaged; raise the pressure, cool the liquid, or lower the loss",
+            source="vapour pressure of the liquid",
+            phase="liquid",
+        ),
+        Limit(
+            key="mach_number",
+            low=None,
+            high=0.3,
+            level=Level.CAUTION,
+            code="mach-number-high",
+            message="above this the gas can no longer be taken as nearly incompressible in the "
+            "pipe; choose a larger pipe",
+            source=PRACTICE,
+            phase="gas",
+        ),
+    )
 
 
 def shortfall(limit: Limit, values: Mapping[str, Array]) -> float:
