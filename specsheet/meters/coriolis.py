@@ -50,7 +50,7 @@ def _figures(request: Request, item: sizes.Size) -> dict[str, Given]:
 
     def of_size(key: str) -> Given:
         usual = Typical(item.figures[key], item.source)
-        return sizes.stated_or_typical(tag.si(f"meter.{key}"), usual)
+        return sizes.stated_or_typical(sizes.stated(request, key), usual)
 
     error = typical["gas_error" if tag.phase == "gas" else "liquid_error"]
     return {
@@ -58,7 +58,7 @@ def _figures(request: Request, item: sizes.Size) -> dict[str, Given]:
         "zero_stability": of_size("zero_stability"),
         "nominal_flow": of_size("nominal_flow"),
         "tube_count": sizes.stated_or_typical(None, typical["tube_count"]),
-        "base_error": sizes.stated_or_typical(tag.si("meter.base_error"), error),
+        "base_error": sizes.stated_or_typical(sizes.stated(request, "base_error"), error),
         "density_error": sizes.stated_or_typical(None, typical["density_error"]),
     }
 

@@ -50,7 +50,7 @@ def _build(request: Request, item: sizes.Size) -> Element:
     tag, typical = request.tag, request.profile.typical
     clamped = tag.text("meter.mounting") == _CLAMPED
     paths = _ONE_PATH if clamped else tag.text("meter.paths") or _USUAL_PATHS
-    angle = tag.si("meter.path_angle")
+    angle = sizes.stated(request, "path_angle")
     path_angle = sizes.stated_or_typical(angle, typical["path_angle"])
     phase = "gas" if tag.phase == "gas" else "liquid"
     error = typical["clamp_on_error" if clamped else f"error_paths_{paths}"]

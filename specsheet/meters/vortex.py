@@ -40,25 +40,25 @@ def size(request: Request) -> Element:
 
 def _build(request: Request, item: sizes.Size) -> Element:
     tag, typical = request.tag, request.profile.typical
-    width = tag.quantity("meter.bluff_width")
-    stated = tag.quantity("meter.k_factor")
-    bluff = item.bore * typical["bluff_ratio"].value if width is None else width.value
-    if stated is not None:
-        factor = stated.value
-        strouhal = float(vortex.strouhal_number(k_factor=factor, bluff_width=bluff, bore=item.bore))
-    else:
+    width = sizes.stated(request, "bluff_width")
+    factor = sizes.stated(request, "k_factor")
+    calibrated = factor is not None
+    bluff = item.bore * typical["bluff_ratio"].value if width is None else width
+    if factor is None:
         strouhal = typical["strouhal_number"].value
         factor = float(vortex.k_factor(strouhal_number=strouhal, bluff_width=bluff, bore=item.bore))
+    else:
+        strouhal = float(vortex.strouhal_number(k_factor=factor, bluff_width=bluff, bore=item.bore))
     signals = output.output(request)
     typical_source = typical["strouhal_number"].source
     values = {
         **sizes.size_values(request, item),
         "bluff_width": _given(width is not None, bluff, typical["bluff_ratio"].source),
-        "k_factor": _given(stated is not None, factor, typical_source),
+        "k_factor": _given(calibrated, factor, typical_source),
         "strouhal_number": Given(
             strouhal,
-            Origin.TYPICAL if stated is None else Origin.DERIVED,
-            typical_source if stated is None else _METHOD,
+            Origin.DERIVED if calibrated else Origin.TYPICAL,
+            _METHOD if calibrated else typical_source,
         ),
         "pressure_loss_coefficient": Given(
             typical["pressure_loss_coefficient"].value,
@@ -73,7 +73,7 @@ def _build(request: Request, item: sizes.Size) -> Element:
         **{name: figure.value for name, figure in typical.items()},
         "bluff_width": bluff,
         "k_factor": factor,
-        "averaging_time": tag.si("meter.averaging_time") or 10.0,
+        "averaging_time": sizes.stated(request, "averaging_time") or 10.0,
         "reading_error": typical[f"{tag.phase or 'liquid'}_error"].value,
     }
     return Element(

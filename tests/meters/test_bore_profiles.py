@@ -1,9 +1,17 @@
 """Profiles of the meters with a bore of their own: examples, defaults, limits and size series."""
 
+import warnings
+
+import bore_tools as tools
+import numpy as np
 import pytest
+from hypothesis import given, settings
+from hypothesis import strategies as st
 
 from specsheet import packs
 from specsheet.fields import TERMS
+from specsheet.findings import Level
+from specsheet.meters import registry
 from specsheet.quantity.value import Refusal
 from specsheet.tagfile import values
 
@@ -75,3 +83,70 @@ def test_clauses_cover_what_a_purchase_needs(key):
     assert {"calibration", "installation", "output", "materials"} <= set(profile.clauses)
     assert profile.wetted
     assert any(entry.needed == "always" for entry in profile.reply)
+
+
+@pytest.mark.parametrize("key", KEYS)
+@pytest.mark.parametrize("value", [0.0, -1.0])
+def test_figures_that_are_not_positive_are_left_aside_and_found(key, value):
+    profile = packs.profile(key)
+    figures = [
+        entry
+        for entry in profile.entries
+        if entry.kind not in ("nominal_size", "choice", "text", "integer")
+    ]
+    wrong = {
+        entry.path.replace(".", "__"): tools.quantity(
+            value, "mass_flow" if entry.kind == "flow" else entry.kind
+        )
+        for entry in figures
+    }
+    fluid, phase = (
+        (tools.steam(3), "gas") if key == "thermal_inline" else (tools.water(3), "liquid")
+    )
+    request = tools.request(key, [0.5, 1.0, 2.0], fluid, phase=phase, **wrong)
+    family = registry.family(key)
+    element = family.size(request)
+    found = [item for item in element.findings if item.code == "figure-not-positive"]
+    assert {item.field for item in found} == {entry.path for entry in figures}
+    assert all(item.level is Level.STOP for item in found)
+    plain = family.size(tools.request(key, [0.5, 1.0, 2.0], fluid, phase=phase))
+    assert element.numbers == plain.numbers
+
+
+_ANY = st.floats(1e-9, 1e9)
+
+
+@pytest.mark.parametrize("key", KEYS)
+@settings(deadline=None, max_examples=25)
+@given(
+    flows=st.lists(_ANY, min_size=3, max_size=3),
+    density=_ANY,
+    viscosity=_ANY,
+    pressure=_ANY,
+    temperature=st.floats(1.0, 3000.0),
+    exponent=st.one_of(st.just(np.nan), st.floats(1.0, 2.0)),
+    phase=st.sampled_from(["liquid", "gas"]),
+    diameter=st.floats(1e-3, 5.0),
+)
+def test_sizing_never_raises_nor_warns(
+    key, flows, density, viscosity, pressure, temperature, exponent, phase, diameter
+):
+    fluid = tools.water(
+        3,
+        density=density,
+        viscosity=viscosity,
+        pressure=pressure,
+        temperature=temperature,
+        isentropic_exponent=exponent,
+    )
+    request = tools.request(key, flows, fluid, phase=phase, diameter=diameter, nominal=0)
+    family = registry.family(key)
+    with warnings.catch_warnings():
+        warnings.simplefilter("error")
+        element = family.size(request)
+        values = family.at(element, request.stream)
+        parts = family.budget(element, request.stream, values)
+        limits = family.limits(element, request)
+    assert element.numbers["bore"] > 0.0
+    assert parts
+    assert all(limit.message for limit in limits)

@@ -91,7 +91,7 @@ def _range(request: Request, stated: Quantity | None) -> _Span:
     """Return the flow at 20 mA: stated by the user, else the largest flow rounded up."""
     largest = float(request.stream.mass_flow[request.maximum])
     wanted = request.tag.quantity("meter.upper_range_value")
-    if wanted is not None:
+    if wanted is not None and wanted.value > 0.0:
         return _stated_range(request, wanted, stated, largest)
     if stated is None:
         mass = signal.round_up(value=largest * HEADROOM * 3600.0) / 3600.0

@@ -80,22 +80,22 @@ def line_nominal(request: Request, sizes: tuple[Size, ...]) -> int:
 def candidates(request: Request) -> Candidates:
     """Return the sizes in question: the one stated, else every size up to that of the line."""
     sizes = series(request.profile)
-    stated = request.tag.text("meter.size")
-    bore = request.tag.quantity("meter.bore")
-    if stated and stated != FREE:
-        found = _stated_size(sizes, stated)
+    name = request.tag.text("meter.size")
+    bore = stated(request, "bore")
+    if name and name != FREE:
+        found = _stated_size(sizes, name)
     elif bore is not None:
-        found = Candidates((_nearest_bore(sizes, bore.value),), free=False)
+        found = Candidates((_nearest_bore(sizes, bore),), free=False)
     else:
         return _up_to_line(request, sizes)
     if bore is not None and found.sizes:
-        size = replace(found.sizes[0], bore=bore.value, origin=Origin.GIVEN, source="")
+        size = replace(found.sizes[0], bore=bore, origin=Origin.GIVEN, source="")
         found = replace(found, sizes=(size,))
     return found
 
 
-def _stated_size(sizes: tuple[Size, ...], stated: str) -> Candidates:
-    parsed = quantity.parse_size(stated)
+def _stated_size(sizes: tuple[Size, ...], name: str) -> Candidates:
+    parsed = quantity.parse_size(name)
     if isinstance(parsed, Refusal):
         finding = Finding(Level.STOP, "size-unreadable", "meter.size", parsed.message)
         return Candidates(sizes[-1:], free=False, findings=(finding,))
@@ -135,10 +135,30 @@ def _nearest_bore(sizes: tuple[Size, ...], bore: float) -> Size:
     return min(sizes, key=lambda size: abs(size.bore - bore))
 
 
+def stated(request: Request, key: str) -> float | None:
+    """Return what the user stated under ``meter.<key>`` (SI), or None; only if above zero."""
+    found = request.tag.si(f"meter.{key}")
+    return found if found is not None and found > 0.0 else None
+
+
+def _not_positive(request: Request) -> tuple[Finding, ...]:
+    """Return a stop for each figure of the meter that is not above zero."""
+    findings = []
+    for entry in request.profile.entries:
+        found = request.tag.quantity(entry.path)
+        if found is not None and not found.value > 0.0:
+            message = (
+                f"{entry.label} must be greater than zero, and {found.text} came; the figure is "
+                "left aside. State it again"
+            )
+            findings.append(Finding(Level.STOP, "figure-not-positive", entry.path, message))
+    return tuple(findings)
+
+
 def size_values(request: Request, size: Size) -> dict[str, Given]:
     """Return what the sheet prints of the size: its name and bore."""
-    stated = request.tag.text("meter.size")
-    origin = Origin.GIVEN if stated and stated != FREE else Origin.DERIVED
+    name = request.tag.text("meter.size")
+    origin = Origin.GIVEN if name and name != FREE else Origin.DERIVED
     return {
         "meter_size": Given(size.text, origin),
         "meter_bore": Given(size.bore, size.origin, size.source),
@@ -146,11 +166,13 @@ def size_values(request: Request, size: Size) -> dict[str, Given]:
 
 
 def size_findings(request: Request, size: Size) -> tuple[Finding, ...]:
-    """Return a caution where the meter is larger than the line."""
+    """Return what is wrong with the figures stated, and a caution on a meter above the line."""
+    wrong = _not_positive(request)
     nominal = line_nominal(request, series(request.profile))
     if size.nominal <= nominal:
-        return ()
+        return wrong
     return (
+        *wrong,
         Finding(
             Level.CAUTION,
             "meter-larger-than-line",
@@ -161,8 +183,8 @@ def size_findings(request: Request, size: Size) -> tuple[Finding, ...]:
     )
 
 
-def stated_or_typical(stated: float | None, typical: Typical) -> Given:
+def stated_or_typical(value: float | None, typical: Typical) -> Given:
     """Return what the user stated of the meter, else the figure usual for the family."""
-    if stated is not None:
-        return Given(stated, Origin.GIVEN)
+    if value is not None:
+        return Given(value, Origin.GIVEN)
     return Given(typical.value, Origin.TYPICAL, typical.source)

@@ -64,19 +64,19 @@ def family(rotor: Rotor) -> Family:
 
 def _range(rotor: Rotor, request: Request, bore: float) -> dict[str, Given]:
     """Return K-factor, largest and smallest flow: stated by the user, else usual for the bore."""
-    tag, typical = request.tag, request.profile.typical
+    typical = request.profile.typical
     phase = _phase(request)
     speed, turndown = typical[f"{phase}_velocity_high"], typical[f"{phase}_turndown"]
     area = float(duct.area(diameter=bore))
-    stated = tag.si("meter.largest_flow")
+    stated = sizes.stated(request, "largest_flow")
     largest = stated if stated is not None else speed.value * area
     values = {
         "largest_volume_flow": _given(stated is not None, largest, speed.source),
         "smallest_volume_flow": Given(largest / turndown.value, Origin.TYPICAL, turndown.source),
     }
-    factor = tag.si("meter.k_factor")
+    factor = sizes.stated(request, "k_factor")
     if rotor.sweeps:
-        swept = tag.si("meter.swept_volume")
+        swept = sizes.stated(request, "swept_volume")
         usual = typical["highest_rotation"]
         volume = swept if swept is not None else largest / usual.value
         values["swept_volume"] = _given(swept is not None, volume, usual.source)
