@@ -8,7 +8,7 @@ import numpy as np
 
 from specsheet.findings import Finding, Level
 from specsheet.line.material import find_material
-from specsheet.meters.dp import adapters
+from specsheet.meters.dp import adapters, wet
 from specsheet.meters.dp.build import family, standard_limits
 from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
@@ -27,11 +27,15 @@ def _make_of(construction: str) -> Venturi:
 
 
 def _coefficient(lanes: Lanes) -> Array:
+    if wet.is_wet(lanes.numbers):
+        return wet.coefficient(lanes)
     make = _make_of(lanes.choices["construction"])
     return np.full(lanes.mass_flow.shape, make.discharge_coefficient)
 
 
 def _coefficient_uncertainty(lanes: Lanes) -> Array:
+    if wet.is_wet(lanes.numbers):
+        return wet.uncertainty(lanes)
     make = _make_of(lanes.choices["construction"])
     return np.full(lanes.mass_flow.shape, make.uncertainty)
 
@@ -53,7 +57,10 @@ def _prepare(request: Request) -> Prepared:
     if material is not None:
         numbers["element_expansion"] = material.expansion(temperature)
     values = {"divergent_angle": Given(angle, tag.origin("meter.divergent_angle"))}
-    return Prepared(numbers, {"construction": construction}, values)
+    carried, printed, findings = wet.read(request)
+    return Prepared(
+        {**numbers, **carried}, {"construction": construction}, {**values, **printed}, findings
+    )
 
 
 def _tapping_distance(request: Request) -> float:
@@ -73,8 +80,15 @@ def _bounds(request: Request, prepared: Prepared) -> Bounds:  # noqa: ARG001
 def _describe(request: Request, element: Element) -> Described:  # noqa: ARG001
     construction = element.choices["construction"]
     make = _make_of(construction)
+    carried: tuple[str, ...] = ()
+    if wet.is_wet(element.numbers):
+        carried = (
+            "Wet gas: the flow stated is that of the gas alone; the differential pressure "
+            "expected counts the over-reading. The liquid flow must be known from elsewhere.",
+        )
     notes = {
         "element": (
+            *carried,
             f"Classical Venturi tube, {construction}: entrance cylinder of D, convergent of 21° "
             "(±1°), cylindrical throat of length d, divergent of 7° to 15°.",
             "At least four tappings in each plane, joined by a ring or triple-T.",
@@ -96,12 +110,13 @@ def _describe(request: Request, element: Element) -> Described:  # noqa: ARG001
 
 def _limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
     make = _make_of(element.choices["construction"])
-    return standard_limits(
+    found = standard_limits(
         source=cite("iso5167-4", make.clause),
         diameter=make.diameter,
         ratio=make.ratio,
         reynolds=make.reynolds,
     )
+    return (*found, *wet.limits(element)) if wet.is_wet(element.numbers) else found
 
 
 _DERIVATIONS = (
@@ -114,6 +129,7 @@ _DERIVATIONS = (
     adapters.VENTURI_LOSS,
     adapters.THROAT,
     adapters.THROAT_HOT,
+    *wet.DERIVATIONS,
 )
 
 FAMILY = family(
@@ -130,6 +146,8 @@ FAMILY = family(
         describe=_describe,
         derivations=_DERIVATIONS,
         prepare=_prepare,
+        over_reading=wet.over_reading,
+        more=wet.more,
         shape=Shape("throat", "throat_diameter", "throat_diameter_hot", "throat"),
     )
 )
