@@ -23,7 +23,7 @@ from specsheet.meters.family import (
 )
 from specsheet.meters.shared import output, response, sizes
 from specsheet.meters.shared.choice import Rules, choose
-from specsheet.meters.wetted.conductivity import conductivity_findings
+from specsheet.meters.wetted.conductivity import conductivity_findings, conductivity_limits
 from specsheet.meters.wetted.electrode import earthing, electrode
 from specsheet.meters.wetted.liner import Liner, liner
 from specsheet.meters.wetted.service import is_slurry, service
@@ -164,9 +164,11 @@ def at(element: Element, stream: Stream) -> Mapping[str, Array]:
 
 
 def limits(element: Element, request: Request) -> tuple[Limit, ...]:
-    """Return the temperatures that the liner bears, and the velocities of a slurry."""
+    """Return the conductivity, the liner's temperatures and the velocities of a slurry."""
     of = element.numbers
     found: list[Limit] = []
+    if "electrical_conductivity" in element.values:
+        found.extend(conductivity_limits(request))
     if not np.isnan(of["liner_high"]):
         found.append(
             Limit(

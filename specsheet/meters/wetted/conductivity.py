@@ -3,15 +3,15 @@
 from __future__ import annotations
 
 from specsheet.findings import Finding, Level
-from specsheet.meters.family import Request
+from specsheet.meters.family import Limit, Request
 from specsheet.sources import PRACTICE
 
 _FIELD = "fluid.electrical_conductivity"
 
 
 def conductivity_findings(request: Request) -> tuple[Finding, ...]:
-    """Return what is wrong with the conductivity; common practice, bounds in the profile."""
-    tag, typical = request.tag, request.profile.typical
+    """Return a finding where the fluid does not conduct, or nobody knows whether it does."""
+    tag = request.tag
     if tag.phase == "gas":
         return (
             Finding(
@@ -23,27 +23,35 @@ def conductivity_findings(request: Request) -> tuple[Finding, ...]:
                 source=PRACTICE,
             ),
         )
-    found = tag.si(_FIELD)
-    if found is None:
-        return (_unknown(request),)
-    least, usual = typical["least_conductivity"].value, typical["usual_conductivity"].value
-    if found >= usual:
-        return ()
-    stop = found < least
-    message = (
-        f"the liquid conducts {found * 1e4:.3g} uS/cm; at least {least * 1e4:g} uS/cm is wanted. "
-        "Choose another family, for example ultrasonic or Coriolis."
-        if stop
-        else f"the liquid conducts {found * 1e4:.3g} uS/cm, less than the {usual * 1e4:g} uS/cm of "
-        "most meters; demineralised water and condensate need a version made for it."
-    )
+    return () if tag.si(_FIELD) is not None else (_unknown(request),)
+
+
+def conductivity_limits(request: Request) -> tuple[Limit, ...]:
+    """Return the least conductivity of any meter, and of most meters; both from the profile."""
+    typical = request.profile.typical
+    key = "electrical_conductivity"
     return (
-        Finding(
-            Level.STOP if stop else Level.CAUTION,
+        Limit(
+            key,
+            typical["least_conductivity"].value,
+            None,
+            Level.STOP,
             "conductivity-low",
-            _FIELD,
-            message,
-            source=typical["least_conductivity" if stop else "usual_conductivity"].source,
+            "the liquid conducts too little for this family; choose another, for example "
+            "ultrasonic or Coriolis",
+            typical["least_conductivity"].source,
+            driver=key,
+        ),
+        Limit(
+            key,
+            typical["usual_conductivity"].value,
+            None,
+            Level.CAUTION,
+            "conductivity-unusual",
+            "the liquid conducts less than most meters want; demineralised water and condensate "
+            "need a version made for it",
+            typical["usual_conductivity"].source,
+            driver=key,
         ),
     )
 
