@@ -149,8 +149,8 @@ def _fluid_findings(request: Request) -> tuple[Finding, ...]:
                 Level.CAUTION,
                 "bubbles",
                 "fluid.bubbles",
-                "free gas damps the tubes and shifts mass and density readings; remove it before "
-                "the meter, or have the bidder state the error with this share of gas",
+                "Free gas damps the tubes and shifts mass and density readings; remove it before "
+                "the meter, or have the bidder state the error with this share of gas.",
                 source=PRACTICE,
             )
         )
@@ -160,8 +160,8 @@ def _fluid_findings(request: Request) -> tuple[Finding, ...]:
                 Level.NOTE,
                 "containment",
                 "fluid.hazards",
-                "the tubes are thin: ask for a housing rated as secondary containment, with its "
-                "pressure stated",
+                "The tubes are thin: ask for a housing rated as secondary containment, with its "
+                "pressure stated.",
                 source=PRACTICE,
             )
         )

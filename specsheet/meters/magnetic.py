@@ -125,7 +125,7 @@ def _line_findings(request: Request) -> tuple[Finding, ...]:
                 Level.CAUTION,
                 "not-full",
                 "line.orientation",
-                "a line that falls need not run full, and the meter reads an empty part of the "
+                "A line that falls need not run full, and the meter reads an empty part of the "
                 "bore as flow; put it where the flow rises, or in a siphon.",
                 source=PRACTICE,
             )
@@ -136,7 +136,7 @@ def _line_findings(request: Request) -> tuple[Finding, ...]:
                 Level.CAUTION,
                 "bubbles",
                 "fluid.bubbles",
-                "free gas counts as liquid: the reading is high by its share of the volume, and "
+                "Free gas counts as liquid: the reading is high by its share of the volume, and "
                 "bubbles at the electrodes make noise.",
                 source=PRACTICE,
             )

@@ -99,30 +99,30 @@ def _fluid_findings(request: Request) -> tuple[Finding, ...]:
             Level.CAUTION,
             "moisture",
             "fluid.relative_humidity",
-            "drops on the probe take far more heat than gas and drive the reading up; dry or heat "
-            "the gas, or choose another family",
+            "Drops on the probe take far more heat than gas and drive the reading up; dry or heat "
+            "the gas, or choose another family.",
         )
     if tag.text("fluid.substance") == "water":
         add(
             Level.STOP,
             "steam",
             "fluid.substance",
-            "steam condenses on the probe; choose vortex or differential pressure",
+            "Steam condenses on the probe; choose vortex or differential pressure.",
         )
     if tag.text("fluid.kind") == "mixture":
         add(
             Level.CAUTION,
             "mixture",
             "fluid.mixture",
-            "the reading changes with the composition; state its range, so that the bidder can "
-            "state what it costs",
+            "The reading changes with the composition; state its range, so that the bidder can "
+            "state what it costs.",
         )
     if tag.flag("fluid.abrasive"):
         add(
             Level.CAUTION,
             "dirt",
             "fluid.abrasive",
-            "dust coats the probe and lowers the reading; filter the gas, or plan cleaning",
+            "Dust coats the probe and lowers the reading; filter the gas, or plan cleaning.",
         )
     return tuple(findings)
 

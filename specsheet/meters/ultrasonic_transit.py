@@ -127,7 +127,7 @@ def _fluid_findings(request: Request, *, clamped: bool) -> tuple[Finding, ...]:
             Level.CAUTION,
             "sound-speed-missing",
             "points.sound_speed",
-            "the sound speed is not known, so no transit time can be told; state it at each point",
+            "The sound speed is not known, so no transit time can be told; state it at each point.",
         )
     bubbles, solids = tag.si("fluid.bubbles") or 0.0, tag.si("fluid.solids") or 0.0
     if bubbles > typical["most_bubbles"].value:
@@ -135,28 +135,28 @@ def _fluid_findings(request: Request, *, clamped: bool) -> tuple[Finding, ...]:
             Level.STOP,
             "bubbles",
             "fluid.bubbles",
-            "so much free gas scatters the sound; choose another family, for example magnetic",
+            "So much free gas scatters the sound; choose another family, for example magnetic.",
         )
     elif bubbles > 0.0:
         add(
             Level.CAUTION,
             "bubbles",
             "fluid.bubbles",
-            "free gas weakens the sound and counts as liquid; have the bidder confirm it",
+            "Free gas weakens the sound and counts as liquid; have the bidder confirm it.",
         )
     if solids > typical["most_solids"].value:
         add(
             Level.CAUTION,
             "solids",
             "fluid.solids",
-            "so many solids weaken the sound; have the bidder confirm it, or choose magnetic",
+            "So many solids weaken the sound; have the bidder confirm it, or choose magnetic.",
         )
     if clamped and tag.text("line.lining"):
         add(
             Level.CAUTION,
             "lining",
             "line.lining",
-            "sound crosses a lining only where it is bonded without a gap; try it on site first",
+            "Sound crosses a lining only where it is bonded without a gap; try it on site first.",
         )
     if clamped and tag.phase == "gas":
         least = typical["least_clamp_on_pressure"].value
@@ -165,8 +165,8 @@ def _fluid_findings(request: Request, *, clamped: bool) -> tuple[Finding, ...]:
                 Level.STOP,
                 "clamp-on-gas-pressure",
                 "meter.mounting",
-                f"below {least / 1e5:g} bar(a) too little sound gets through the wall into a gas; "
-                "choose an inline meter",
+                f"Below {least / 1e5:g} bar(a) too little sound gets through the wall into a gas; "
+                "choose an inline meter.",
             )
     return tuple(findings)
 

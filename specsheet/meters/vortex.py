@@ -130,7 +130,7 @@ def _fluid_findings(request: Request) -> tuple[Finding, ...]:
                 Level.CAUTION,
                 "bubbles",
                 "fluid.bubbles",
-                "free gas in the liquid counts as flow and weakens the vortices; remove it before "
+                "Free gas in the liquid counts as flow and weakens the vortices; remove it before "
                 "the meter.",
                 source=PRACTICE,
             )
@@ -141,7 +141,7 @@ def _fluid_findings(request: Request) -> tuple[Finding, ...]:
                 Level.CAUTION,
                 "solids",
                 "fluid.abrasive" if tag.flag("fluid.abrasive") else "fluid.solids",
-                "solids wear the edges of the bluff body and shift the K-factor; keep the velocity "
+                "Solids wear the edges of the bluff body and shift the K-factor; keep the velocity "
                 "low or choose a meter without edges.",
                 source=PRACTICE,
             )

@@ -117,7 +117,7 @@ def _stated_range(
             Level.CAUTION,
             "range-kind",
             "meter.upper_range_value",
-            f"the range ({wanted.text}) is stated in another kind of flow than the operating "
+            f"The range ({wanted.text}) is stated in another kind of flow than the operating "
             "points; state it as they are, or as a mass flow. The largest flow is used instead.",
         )
         return _Span(largest, "the largest flow", Origin.ASSUMED, "", (finding,))
@@ -128,7 +128,7 @@ def _stated_range(
                 Level.CAUTION,
                 "range-exceeded",
                 "meter.upper_range_value",
-                f"the range ends at {wanted.text}, below the largest flow; widen it.",
+                f"The range ends at {wanted.text}, below the largest flow; widen it.",
                 request.names[request.maximum],
             ),
         )

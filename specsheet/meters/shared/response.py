@@ -96,8 +96,8 @@ def phase_findings(request: Request) -> tuple[Finding, ...]:
             Level.STOP,
             "phase-unsuitable",
             "fluid.phase",
-            f"this family meters {known} only, and the fluid is a {request.tag.phase}; choose "
-            "another family",
+            f"This family meters {known} only, and the fluid is a {request.tag.phase}; choose "
+            "another family.",
         ),
     )
 
@@ -112,8 +112,8 @@ def vapour_pressure_findings(request: Request) -> tuple[Finding, ...]:
             Level.CAUTION,
             "vapour-pressure-missing",
             "points.vapour_pressure",
-            "the vapour pressure is not known, so flashing and cavitation cannot be checked; state "
-            "it at each point",
+            "The vapour pressure is not known, so flashing and cavitation cannot be checked; state "
+            "it at each point.",
         ),
     )
 

@@ -125,7 +125,7 @@ def _up_to_line(request: Request, sizes: tuple[Size, ...]) -> Candidates:
         Level.CAUTION,
         "line-below-series",
         "line.size",
-        f"the line is smaller than the smallest meter of this family ({sizes[0].text}); the line "
+        f"The line is smaller than the smallest meter of this family ({sizes[0].text}); the line "
         "would have to be widened around the meter. Choose another family, or accept expanders.",
     )
     return Candidates(sizes[:1], free=True, findings=(finding,))
@@ -149,7 +149,7 @@ def _not_positive(request: Request) -> tuple[Finding, ...]:
         if found is not None and not found.value > 0.0:
             message = (
                 f"{entry.label} must be greater than zero, and {found.text} came; the figure is "
-                "left aside. State it again"
+                "left aside. State it again."
             )
             findings.append(Finding(Level.STOP, "figure-not-positive", entry.path, message))
     return tuple(findings)
@@ -177,7 +177,7 @@ def size_findings(request: Request, size: Size) -> tuple[Finding, ...]:
             Level.CAUTION,
             "meter-larger-than-line",
             "meter.size",
-            f"the meter ({size.text}) is larger than the line (DN {nominal}); it needs expanders "
+            f"The meter ({size.text}) is larger than the line (DN {nominal}); it needs expanders "
             "before it, which spoil the profile. Take the line's size or a smaller one.",
         ),
     )

@@ -153,14 +153,14 @@ def _fluid_findings(request: Request) -> tuple[Finding, ...]:
     findings: list[Finding] = []
     if tag.phase == "liquid" and (tag.si("fluid.bubbles") or 0.0) > 0.0:
         message = (
-            "free gas is counted as liquid, and a slug of it overspeeds the meter; fit a gas "
-            "separator before the strainer"
+            "Free gas is counted as liquid, and a slug of it overspeeds the meter; fit a gas "
+            "separator before the strainer."
         )
         findings.append(
             Finding(Level.CAUTION, "bubbles", "fluid.bubbles", message, source=PRACTICE)
         )
     if tag.flag("fluid.abrasive") or (tag.si("fluid.solids") or 0.0) > 0.0:
-        message = "solids wear bearings and clearances; choose a family without moving parts"
+        message = "Solids wear bearings and clearances; choose a family without moving parts."
         field = "fluid.abrasive" if tag.flag("fluid.abrasive") else "fluid.solids"
         findings.append(Finding(Level.STOP, "solids", field, message, source=PRACTICE))
     return tuple(findings)

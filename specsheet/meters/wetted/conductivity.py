@@ -18,7 +18,7 @@ def conductivity_findings(request: Request) -> tuple[Finding, ...]:
                 Level.STOP,
                 "gas-does-not-conduct",
                 "fluid.phase",
-                "a gas does not conduct and induces no voltage; choose another family, for "
+                "A gas does not conduct and induces no voltage; choose another family, for "
                 "example vortex.",
                 source=PRACTICE,
             ),
@@ -63,7 +63,7 @@ def _unknown(request: Request) -> Finding:
             Level.STOP,
             "hydrocarbon-does-not-conduct",
             _FIELD,
-            "petroleum liquids do not conduct and induce no voltage; choose another family.",
+            "Petroleum liquids do not conduct and induce no voltage; choose another family.",
             source=PRACTICE,
         )
     least = request.profile.typical["least_conductivity"].value
@@ -71,7 +71,7 @@ def _unknown(request: Request) -> Finding:
         Level.CAUTION,
         "conductivity-missing",
         _FIELD,
-        f"state the conductivity of the liquid; at least {least * 1e4:g} uS/cm is wanted. "
+        f"State the conductivity of the liquid; at least {least * 1e4:g} uS/cm is wanted. "
         "Demineralised water, condensate and most organic liquids conduct less.",
         source=PRACTICE,
     )

@@ -41,9 +41,9 @@ def electrode(request: Request, of: Service) -> Part:
         return Part(Given(_proposed(of), Origin.DERIVED, PRACTICE))
     wrong = ""
     if stated == STEEL and (of.chlorides or of.acid):
-        wrong = "chlorides or acid attack stainless steel 316L; nickel alloy or tantalum is usual"
+        wrong = "Chlorides or acid attack stainless steel 316L; nickel alloy or tantalum is usual"
     if stated == TANTALUM and of.alkaline:
-        wrong = "alkalis attack tantalum; nickel alloy is usual"
+        wrong = "Alkalis attack tantalum; nickel alloy is usual"
     if not wrong:
         return Part(Given(stated, Origin.GIVEN))
     finding = Finding(
@@ -73,7 +73,7 @@ def earthing(request: Request, of: Service) -> Part:
         Level.STOP,
         "earthing-missing",
         "meter.earthing",
-        "a lined or plastic pipe does not earth the liquid, so the voltage has no reference; ask "
+        "A lined or plastic pipe does not earth the liquid, so the voltage has no reference; ask "
         "for earthing rings or a reference electrode.",
         source=PRACTICE,
     )

@@ -47,7 +47,7 @@ def liner(request: Request, of: Service) -> Liner:
         Level.STOP,
         "no-liner",
         "meter.liner",
-        "no liner of the table bears temperature, vacuum, wear and chemistry together; "
+        "No liner of the table bears temperature, vacuum, wear and chemistry together; "
         f"{name} comes nearest, but {'; '.join(_objections(row, of))}. Ask the bidders or choose "
         "another family.",
         source=PRACTICE,
