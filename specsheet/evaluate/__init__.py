@@ -1,5 +1,8 @@
 """The pipeline: a tag in, its evaluation out. Every front end calls :func:`evaluate`.
 
+* :mod:`specsheet.evaluate.prepare`  what every family shares on one tag
+* :mod:`specsheet.evaluate.service`  what the service rules out, whatever the size
+* :mod:`specsheet.evaluate.by_limits` a family of which only the profile is known
 * :mod:`specsheet.evaluate.flows`    the stated flow as mass flow
 * :mod:`specsheet.evaluate.stream`   operating points as arrays
 * :mod:`specsheet.evaluate.model`    the meter as one function of the stream

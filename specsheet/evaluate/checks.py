@@ -8,9 +8,9 @@ from dataclasses import dataclass
 import numpy as np
 
 from specsheet.evaluate.model import Model
-from specsheet.evaluate.reserve import FACTORS, Flips, find_flips, margin
+from specsheet.evaluate.reserve import FACTORS, NO_FLIPS, Flips, find_flips, margin
 from specsheet.evaluate.result import Band, Check
-from specsheet.evaluate.words import say
+from specsheet.evaluate.words import facts
 from specsheet.fields.terms import in_sentence
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.meters.family import Array, Given, Limit, Request
@@ -41,7 +41,7 @@ def check_limits(
     model: Model,
     limits: Sequence[Limit],
     values: Mapping[str, Array],
-    grid: Mapping[str, Array],
+    grid: Mapping[str, Array] | None,
 ) -> Checked:
     """Check every limit at every operating point.
 
@@ -50,10 +50,14 @@ def check_limits(
         model: the meter.
         limits: the limits that apply.
         values: response at the operating points, shape (n,).
-        grid: response over :func:`specsheet.evaluate.reserve.scaled`.
+        grid: response over :func:`specsheet.evaluate.reserve.scaled`; None for no reserves.
     """
     driven = [limit for limit in limits if _driven_by_flow(limit, values)]
-    flips = find_flips(model, request.stream, driven, [grid[limit.key] for limit in driven])
+    flips = (
+        find_flips(model, request.stream, driven, [grid[limit.key] for limit in driven])
+        if grid is not None
+        else NO_FLIPS
+    )
     checks: list[Check] = []
     findings: list[Finding] = []
     bands: list[Band] = []
@@ -91,10 +95,12 @@ def _judge_flow(
             nearest[point] = np.log(factor)
     broken = inside < 0.0
     distance = np.abs(nearest)
-    if broken.any():
+    if not np.isfinite(distance).any():
+        worst = int(inside.argmin())
+    elif broken.any():
         worst = int(np.argmax(np.where(broken, distance, -1.0)))
     else:
-        worst = int(np.argmin(distance)) if np.isfinite(distance).any() else int(inside.argmin())
+        worst = int(np.argmin(distance))
     reserve = None
     if np.isfinite(nearest[worst]):
         factor = float(np.exp(nearest[worst]))
@@ -209,15 +215,9 @@ def _near(request: Request, check: Check) -> tuple[Finding, ...]:
 
 
 def _facts(request: Request, check: Check) -> str:
-    units = request.tag.table("job.units")
-    bounds = []
-    if check.low is not None:
-        bounds.append(f"at least {say(check.key, check.low, units)}")
-    if check.high is not None:
-        bounds.append(f"at most {say(check.key, check.high, units)}")
     where = f" at {check.point}" if check.point else ""
-    given = "has no value" if np.isnan(check.value) else f"is {say(check.key, check.value, units)}"
-    return f"{in_sentence(check.key)} {given}{where}; {' and '.join(bounds)} is wanted"
+    units = request.tag.table("job.units")
+    return facts(check.key, check.value, (check.low, check.high), units, where)
 
 
 def _field(check: Check) -> str:

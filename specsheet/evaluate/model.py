@@ -11,7 +11,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from specsheet.meters.family import Array, Contribution, Element, Family, Stream
+from specsheet.meters.family import Array, Contribution, Element, Family, Request, Stream
 from specsheet.methods import energy, gum
 
 #: properties of the stream that a limit may bound
@@ -79,6 +79,18 @@ class Model:
         return energy.lost_power_liquid(
             pressure_loss=loss, volume_flow=stream.volume_flow, efficiency=self.efficiency
         )
+
+
+def model_of(request: Request, family: Family, element: Element, additional: float) -> Model:
+    """Return the model of a meter on its tag; ``additional`` as in :class:`Model`."""
+    tag = request.tag
+    return Model(
+        family,
+        element,
+        gas=tag.phase == "gas",
+        efficiency=tag.si("job.efficiency") or 1.0,
+        additional=additional,
+    )
 
 
 def _back_pressure_margin(stream: Stream, values: Mapping[str, Array]) -> Array:

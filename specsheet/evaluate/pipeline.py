@@ -7,16 +7,18 @@ from dataclasses import replace
 
 import numpy as np
 
-from specsheet import fluid, line, packs
+from specsheet import line, packs
 from specsheet.evaluate import assemble, summary
+from specsheet.evaluate.by_limits import family_by_limits
 from specsheet.evaluate.checks import check_limits
 from specsheet.evaluate.common import COMMON_DERIVATIONS
 from specsheet.evaluate.limits import limits_of
-from specsheet.evaluate.model import Model
+from specsheet.evaluate.model import model_of
+from specsheet.evaluate.prepare import NO_PIPE, Prepared, prepare
+from specsheet.evaluate.prepare import request as requested
 from specsheet.evaluate.reserve import scaled
 from specsheet.evaluate.result import Evaluation, Result, Sweep
-from specsheet.evaluate.sanity import check_statements
-from specsheet.evaluate.stream import Points, points_of
+from specsheet.evaluate.service import judge_habits, judge_service
 from specsheet.findings import Finding, Level
 from specsheet.fluid.state import FluidResult
 from specsheet.meters import registry
@@ -31,10 +33,9 @@ _RANK = {Level.STOP: 0, Level.CAUTION: 1, Level.NOTE: 2}
 def evaluate(tag: Tag) -> Evaluation:
     """Evaluate one tag. Never raises on user data: what is wrong is among the findings."""
     profile = packs.profile(tag.family) if tag.family in packs.family_keys() else None
-    state = fluid.derive(tag)
-    points = points_of(tag, state)
-    pipe = line.pipe_of(tag)
-    findings = [*state.findings, *points.findings, *pipe.findings, *check_statements(tag, points)]
+    prepared = prepare(tag)
+    state, points = prepared.fluid, prepared.points
+    findings = [*prepared.findings(profile)]
     evaluation = Evaluation(
         tag=tag,
         profile=profile,
@@ -42,17 +43,23 @@ def evaluate(tag: Tag) -> Evaluation:
         points=assemble.point_results(tag, state, points, {}, {}),
         base=_base(tag, state),
         fluid={key: assemble.property_result(found) for key, found in state.constants.items()},
-        line=_printed(pipe.values),
+        line=_printed(prepared.pipe.values),
         derivations=COMMON_DERIVATIONS,
     )
     family = registry.family(tag.family)
     if profile is None or family is None:
         findings.append(_no_family(tag, profile))
-    if profile is not None and family is not None and pipe.pipe is not None and points.names:
-        request = _request(tag, profile, pipe.pipe, points)
-        evaluation = _with_meter(evaluation, family, request, state, points, findings)
+    request = None if profile is None else requested(prepared, profile)
+    if profile is not None and request is not None:
+        if family is None:
+            family = family_by_limits(profile)
+            findings.extend(judge_habits(prepared, profile))
+        service = judge_service(prepared, profile)
+        findings.extend(service.findings)
+        evaluation = _with_meter(evaluation, family, request, prepared, findings)
+        evaluation = replace(evaluation, checks=(*evaluation.checks, *service.checks))
     else:
-        evaluation = _without_meter(evaluation, pipe.pipe, state, findings)
+        evaluation = _without_meter(evaluation, prepared.pipe.pipe, state, findings)
     return _finished(evaluation, findings)
 
 
@@ -64,55 +71,31 @@ def _no_family(tag: Tag, profile: Profile | None) -> Finding:
         )
         return Finding(Level.STOP, "family-unknown", "family", message)
     message = (
-        f"Only the usual limits of the family {profile.title!r} are known; nothing is sized. "
-        "Have a bidder size it, and check the limits."
+        f"Only the usual limits of the family {profile.title!r} are known: it is judged by them, "
+        "and size, loss and error are usual figures. Have a bidder size it."
     )
     return Finding(Level.CAUTION, "family-without-equations", "family", message)
-
-
-def _request(tag: Tag, profile: Profile, pipe: line.Pipe, points: Points) -> Request:
-    flows = points.stream.mass_flow
-    order = np.argsort(flows)
-    middle = int(order[order.size // 2])
-    normal = points.names.index("normal") if "normal" in points.names else middle
-    return Request(
-        tag=tag,
-        profile=profile,
-        pipe=pipe,
-        names=points.names,
-        stream=points.stream,
-        normal=normal,
-        maximum=int(flows.argmax()),
-        minimum=int(flows.argmin()),
-    )
 
 
 def _with_meter(
     evaluation: Evaluation,
     family: Family,
     request: Request,
-    state: FluidResult,
-    points: Points,
+    prepared: Prepared,
     findings: list[Finding],
 ) -> Evaluation:
     """Return the evaluation with the meter in the line; adds to ``findings``."""
-    tag = request.tag
+    tag, state, points = request.tag, prepared.fluid, prepared.points
     element = family.size(request)
     beside = line.assess(
         tag,
         request.profile,
-        request.pipe,
+        None if request.pipe is NO_PIPE else request.pipe,
         state,
         beta=_number(element, "diameter_ratio"),
         meter_diameter=_number(element, "meter_bore"),
     )
-    model = Model(
-        family,
-        element,
-        gas=tag.phase == "gas",
-        efficiency=tag.si("job.efficiency") or 1.0,
-        additional=beside.additional_uncertainty,
-    )
+    model = model_of(request, family, element, beside.additional_uncertainty)
     stream, count = request.stream, len(request.names)
     swept = _swept(request, element)
     grid = scaled(stream)

@@ -40,6 +40,10 @@ class Flips:
     rising: NDArray[np.bool_]
 
 
+#: no crossing was looked for
+NO_FLIPS = Flips(np.empty(0, np.intp), np.empty(0, np.intp), np.empty(0), np.empty(0, np.bool_))
+
+
 def margin(limit: Limit, values: Array) -> Array:
     """Return how far inside its bounds a value is, relative to the bound; negative is outside.
 

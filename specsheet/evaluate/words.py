@@ -2,10 +2,12 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Mapping
 
 from specsheet import quantity
 from specsheet.fields import KINDS, term
+from specsheet.fields.terms import in_sentence
 
 
 def number(value: float, digits: int = 3) -> str:
@@ -28,3 +30,28 @@ def say(key: str, value: float, units: Mapping[str, float | str] | None = None) 
     unit = of.shown or str((units or {}).get(of.kind, "")) or KINDS[of.kind].shown
     shown = number(quantity.from_si(value, of.kind, unit))
     return shown if unit == "1" else f"{shown} {unit}"
+
+
+def facts(
+    key: str,
+    value: float,
+    bounds: tuple[float | None, float | None],
+    units: Mapping[str, float | str] | None = None,
+    where: str = "",
+) -> str:
+    """Return what came and what was wanted, as the beginning of a sentence.
+
+    Args:
+        key: glossary key.
+        value: SI value; NaN where there is none.
+        bounds: lowest and highest, SI; None where it is open.
+        units: the job's own shown units by kind.
+        where: " at maximum", or "".
+    """
+    wanted = " and ".join(
+        f"{words} {say(key, bound, units)}"
+        for words, bound in zip(("at least", "at most"), bounds, strict=True)
+        if bound is not None
+    )
+    given = "has no value" if math.isnan(value) else f"is {say(key, value, units)}"
+    return f"{in_sentence(key)} {given}{where}; {wanted} is wanted"

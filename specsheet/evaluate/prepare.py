@@ -1,0 +1,96 @@
+"""What every meter family shares on one tag: fluid, operating points and pipe, derived once."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from math import nan
+
+import numpy as np
+
+from specsheet import fluid, line
+from specsheet.evaluate.sanity import check_statements
+from specsheet.evaluate.stream import Points, points_of
+from specsheet.findings import Finding
+from specsheet.fluid.state import FluidResult
+from specsheet.line import Pipe, PipeResult
+from specsheet.meters.family import Request
+from specsheet.packs import Profile
+from specsheet.tag import Tag
+
+CHANNEL = "open channel"
+#: stands in for the pipe where the water has a free surface: nothing is known of a section
+NO_PIPE = Pipe(nan, nan, nan, nan, "", 0, "")
+_LINE_ENTRIES = ("line.size", "line.inside_diameter", "line.outside_diameter")
+
+
+@dataclass(frozen=True)
+class Prepared:
+    """One tag without a meter.
+
+    Attributes:
+        tag: the tag.
+        fluid: its fluid at every point.
+        points: the operating points that can be evaluated.
+        pipe: the pipe; its ``pipe`` is None where it cannot be had.
+        statements: what is wrong with the statements as such.
+    """
+
+    tag: Tag
+    fluid: FluidResult
+    points: Points
+    pipe: PipeResult
+    statements: tuple[Finding, ...]
+
+    def findings(self, profile: Profile | None) -> tuple[Finding, ...]:
+        """Return what is wrong before a meter is looked at.
+
+        A family for open channels misses no pipe where none is stated.
+        """
+        missing_pipe = in_channel(self, profile) and self.pipe.pipe is None
+        of_pipe = () if missing_pipe else self.pipe.findings
+        return (*self.fluid.findings, *self.points.findings, *of_pipe, *self.statements)
+
+
+def prepare(tag: Tag) -> Prepared:
+    """Derive fluid, operating points and pipe of one tag. Never raises on user data."""
+    state = fluid.derive(tag)
+    points = points_of(tag, state)
+    return Prepared(tag, state, points, line.pipe_of(tag), check_statements(tag, points))
+
+
+def in_channel(prepared: Prepared, profile: Profile | None) -> bool:
+    """Tell whether a family is used with a free surface on this tag.
+
+    So it is where it knows nothing else, or where it can and no pipe is stated.
+    """
+    if profile is None or CHANNEL not in profile.applies_to:
+        return False
+    stated = any(path in prepared.tag.given for path in _LINE_ENTRIES)
+    return profile.applies_to == (CHANNEL,) or not stated
+
+
+def request(prepared: Prepared, profile: Profile, tag: Tag | None = None) -> Request | None:
+    """Return what a family is asked; None where no point or no pipe can be evaluated.
+
+    Args:
+        prepared: the tag without a meter.
+        profile: profile of the family.
+        tag: the tag with the entries of that family, where it is not the tag's own.
+    """
+    pipe = NO_PIPE if in_channel(prepared, profile) else prepared.pipe.pipe
+    names, stream = prepared.points.names, prepared.points.stream
+    if pipe is None or not names:
+        return None
+    flows = stream.mass_flow
+    order = np.argsort(flows)
+    middle = int(order[order.size // 2])
+    return Request(
+        tag=prepared.tag if tag is None else tag,
+        profile=profile,
+        pipe=pipe,
+        names=names,
+        stream=stream,
+        normal=names.index("normal") if "normal" in names else middle,
+        maximum=int(flows.argmax()),
+        minimum=int(flows.argmin()),
+    )
