@@ -4,8 +4,10 @@ from __future__ import annotations
 
 from functools import cache
 from importlib import import_module
+from typing import TYPE_CHECKING
 
-from specsheet.meters.family import Family
+if TYPE_CHECKING:  # the list of families is wanted without numpy
+    from specsheet.meters.family import Family
 
 #: key -> module; a test holds it to the folder and to the profiles
 MODULES = {
