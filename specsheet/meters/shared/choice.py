@@ -21,12 +21,15 @@ class Trial:
     Attributes:
         element: the candidate.
         values: its response at the operating points, shape (n,).
+        harm: the part of ``stops`` that damages the meter: a bound crossed upwards, or
+            cavitation. A meter that cannot read the smallest flow is a lesser evil [-].
         stops, cautions, notes: sum of the shortfalls of the limits of each level [-].
         broken: glossary keys of the limits that it breaks, worst first.
     """
 
     element: Element
     values: Mapping[str, Array]
+    harm: float
     stops: float
     cautions: float
     notes: float
@@ -68,6 +71,7 @@ def attempt(request: Request, element: Element, rules: Rules) -> Trial:
     return Trial(
         element=element,
         values=values,
+        harm=sum(size for size, limit in found if _harmful(limit, values)),
         stops=total(Level.STOP),
         cautions=total(Level.CAUTION),
         notes=total(Level.NOTE),
@@ -75,16 +79,37 @@ def attempt(request: Request, element: Element, rules: Rules) -> Trial:
     )
 
 
+def _harmful(limit: Limit, values: Mapping[str, Array]) -> bool:
+    if limit.level is not Level.STOP:
+        return False
+    if limit.key == "back_pressure_margin":
+        return True
+    return limit.high is not None and shared_limits.shortfall(replace(limit, low=None), values) > 0
+
+
 def best(trials: Sequence[Trial]) -> int:
     """Return the index of the trial that breaks least; of equals the first.
 
-    The caller puts the candidates in the order in which it likes them. A stop outweighs any
-    caution, a caution any note.
+    The caller puts the candidates in the order in which it likes them. Harm outweighs any other
+    stop, a stop any caution, a caution any note.
     """
     scores = [
-        (round(trial.stops, 9), round(trial.cautions, 9), round(trial.notes, 9)) for trial in trials
+        tuple(round(part, 9) for part in (trial.harm, trial.stops, trial.cautions, trial.notes))
+        for trial in trials
     ]
     return scores.index(min(scores))
+
+
+def _tried(
+    request: Request, order: Sequence[Size], build: Callable[[Request, Size], Element], rules: Rules
+) -> list[Trial]:
+    """Try the candidates in their order, up to the first that breaks nothing: none beats it."""
+    trials: list[Trial] = []
+    for size in order:
+        trials.append(attempt(request, build(request, size), rules))
+        if not trials[-1].broken:
+            break
+    return trials
 
 
 def choose(
@@ -105,7 +130,7 @@ def choose(
         rules: the family's functions.
         liking: how the order came about ("the largest size").
     """
-    trials = [attempt(request, build(request, size), rules) for size in order]
+    trials = _tried(request, order, build, rules)
     index = best(trials)
     element = trials[index].element
     notes = dict(element.notes)

@@ -4,8 +4,9 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass, replace
+from functools import cache
 
-from specsheet import quantity
+from specsheet import packs, quantity
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.family import Given, Request
 from specsheet.packs import Profile, Typical
@@ -57,6 +58,12 @@ class Candidates:
 
 def series(profile: Profile) -> tuple[Size, ...]:
     """Return the size series of a family, from small to large."""
+    return _series(profile.key)
+
+
+@cache
+def _series(key: str) -> tuple[Size, ...]:
+    profile = packs.profile(key)
     source = str(profile.data.get("sizes_source", ""))
     sizes = [
         Size(
