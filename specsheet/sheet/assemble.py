@@ -55,7 +55,7 @@ def build(evaluation: Evaluation) -> Sheet:
     """Return the sheet of one evaluated tag. Never raises on user data."""
     tag = evaluation.tag
     units = Units(tag)
-    flow = axis.of(evaluation, units)
+    units.flow = flow = axis.of(evaluation, units)
     points = tables.points(tag)
     others = (*tables.by_point(evaluation, units), *tables.single(evaluation, units))
     budget = tables.budget(evaluation)

@@ -50,9 +50,9 @@ class FlowAxis:
         factor = self.factors.get(point, self.factor)
         return quantity.from_si(mass_flow * factor, self.kind, self.unit)
 
-    def text(self, mass_flow: float, point: str = "") -> str:
-        """Return a mass flow [kg/s] rounded to three digits, without the unit."""
-        return rounding.significant(self.shown(mass_flow, point), 3)
+    def text(self, mass_flow: float, point: str = "", digits: int = 3) -> str:
+        """Return a mass flow [kg/s] rounded, without the unit."""
+        return rounding.significant(self.shown(mass_flow, point), digits)
 
 
 def of(evaluation: Evaluation, units: Units) -> FlowAxis:

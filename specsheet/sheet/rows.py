@@ -17,8 +17,12 @@ from specsheet.tag import Tag, Value
 
 if TYPE_CHECKING:
     from specsheet.evaluate.result import Result
+    from specsheet.sheet.axis import FlowAxis
 
 _EMPTY = Cell(NOTHING)
+
+#: mass flows at the ends of the range, shown in the kind of flow that the user states
+_RANGE = ("upper_range_flow", "lower_range_flow")
 
 #: digits of a given value whose text is not at hand: enough for anything a user types
 _STATED = 8
@@ -64,7 +68,12 @@ def of_results(key: str, results: Sequence[Result | None], units: Units, note: s
     term = TERMS.get(key)
     present = [result for result in results if result is not None]
     typed = [result.text for result in present if echoes(result, key)]
-    if typed and len(typed) == len(present):
+    if key in _RANGE and units.flow:
+        cells, unit = (
+            [_range_flow(result, units.flow) for result in results],
+            units.flow.printed_unit,
+        )
+    elif typed and len(typed) == len(present):
         cells, unit = _as_typed([result.text if result else "" for result in results])
     else:
         numbers = [r.value for r in present if isinstance(r.value, float | int)]
@@ -85,6 +94,11 @@ def of_results(key: str, results: Sequence[Result | None], units: Units, note: s
         ),
         note=note,
     )
+
+
+def _range_flow(result: Result | None, axis: FlowAxis) -> str:
+    known = result is not None and not isinstance(result.value, str)
+    return axis.text(float(result.value), digits=rounding.DIGITS) if known and result else NOTHING
 
 
 def echoes(result: Result, key: str) -> bool:

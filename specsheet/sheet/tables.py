@@ -181,8 +181,9 @@ def _results(
     tag: Tag, values: Mapping[str, Result], stated: tuple[Row, ...], units: Units
 ) -> tuple[Row, ...]:
     """Return the rows of results, leaving out given values that the rows above echo already."""
-    held = [tag.quantity(row.key) for row in stated]
-    echoed = {(one.kind, one.value) for one in held if one is not None}
+    typed = (held for held in tag.given.values() if isinstance(held, Quantity))
+    echoed: set[tuple[str, float | str]] = {(held.kind, held.value) for held in typed}
+    echoed |= {("text", row.text) for row in stated}
     return tuple(
         rows.of_results(key, (values[key],), units)
         for key in rows.ordered(values)

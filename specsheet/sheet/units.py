@@ -3,11 +3,15 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
+from typing import TYPE_CHECKING
 
 from specsheet import quantity
 from specsheet.fields import KINDS
 from specsheet.quantity.value import Quantity
 from specsheet.tag import Tag
+
+if TYPE_CHECKING:
+    from specsheet.sheet.axis import FlowAxis
 
 #: units of one kind from small to large, for values that would be silly in the unit shown
 LADDERS = {
@@ -46,7 +50,12 @@ _FOLLOWING = (
 
 
 class Units:
-    """The units one tag is shown in."""
+    """The units one tag is shown in.
+
+    Attributes:
+        currency: of prices, or "".
+        flow: how the flows at the ends of the range are shown, once that is known.
+    """
 
     def __init__(self, tag: Tag) -> None:
         self._stated = {
@@ -56,6 +65,7 @@ class Units:
         }
         self._typed = _typed(tag)
         self.currency = tag.text("job.currency")
+        self.flow: FlowAxis | None = None
 
     def chosen(self, kind: str) -> str:
         """Return the unit the job or the user's own typing asks for, "" for none.

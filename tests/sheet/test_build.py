@@ -229,7 +229,11 @@ def test_a_user_who_states_volume_reads_volume() -> None:
         "maximum",
         {**held.points[2].values, "volume_flow": Result(0.4, Origin.DERIVED)},
     )
-    held = replace(held, points=(*held.points[:2], thin))
+    held = replace(
+        held,
+        points=(*held.points[:2], thin),
+        element={"upper_range_flow": Result(1.16667, Origin.DERIVED)},
+    )
     points = tuple(
         replace(
             one,
@@ -248,6 +252,7 @@ def test_a_user_who_states_volume_reads_volume() -> None:
     # at maximum, 1.0394 kg/s is 1.0394 / 1.16667 x 0.4 m3/s; at normal, 1.0394 / 3.9817 m3/s
     assert made.limits[0].flips == "1280 m³/h"
     assert made.ruler.windows[1].high_text == "940"
+    assert row(made, "element", "upper_range_flow").text == "1055 m³/h"
 
 
 def test_without_flows_there_is_no_ruler() -> None:
@@ -303,3 +308,24 @@ def test_the_price_of_energy_names_its_currency() -> None:
     given = {"job.energy_price": price, "job.currency": "EUR"}
     made = sheet.build(samples.evaluation(given=given))
     assert row(made, "summary", "job.energy_price").text == "0.14 EUR/kWh"
+
+
+def test_what_was_stated_is_not_printed_twice() -> None:
+    element = {
+        "differential_pressure_range": Result(25e3, Origin.GIVEN),
+        "bore_diameter": Result(0.0742, Origin.GIVEN),
+    }
+    made = sheet.build(samples.evaluation(element=element))
+    keys = [line.key for line in table(made, "element").rows]
+    assert keys == [
+        "meter.taps",
+        "meter.bore",
+        "meter.differential_pressure_range",
+        "bore_diameter",
+    ]
+    assert row(made, "element", "bore_diameter").text == "74.2 mm"
+
+
+def test_a_given_value_keeps_every_digit() -> None:
+    made = sheet.build(samples.evaluation(element={"meter_bore": Result(0.1540832, Origin.GIVEN)}))
+    assert row(made, "element", "meter_bore").text == "154.0832 mm"

@@ -35,7 +35,9 @@ def draw(ruler: Ruler, width: int) -> list[str]:
     for mark, column in zip(ruler.marks, columns, strict=True):
         axis[column] = "◆" if mark.inside else "◇"
     lines.append(_line("", axis))
-    lines.append(_line(f"{ruler.label}, {ruler.unit}", _labels(ruler, long)))
+    room = _GUTTER - len(ruler.unit) - 2
+    label = ruler.label if len(ruler.label) <= room else f"{ruler.label[: room - 1]}…"
+    lines.append(_line(f"{label}, {ruler.unit}", _labels(ruler, long)))
     return lines
 
 
