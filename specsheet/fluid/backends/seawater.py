@@ -17,6 +17,8 @@ from specsheet.quantity.value import Base
 from specsheet.sources import cite
 
 HIGHEST_SALINITY = 0.12
+#: the slope of density over pressure, which the sound speed needs, was measured in the ocean only
+SOUND_TEMPERATURE, SOUND_SALINITY = 313.15, 0.05
 _SOURCE = cite("iapws-r13-08")
 _PLAIN = Method("IAPWS-IF97 and saline part", _SOURCE, 0.001)
 _HEAT = Method("IAPWS-IF97 and saline part", _SOURCE, 0.005)
@@ -90,6 +92,6 @@ class Seawater:
             "viscosity": _VISCOSITY(viscosity),
             "kinematic_viscosity": _VISCOSITY(viscosity / density),
         }
-        if temperature <= _RANGE.highest:  # the derivatives behind it do not extrapolate
+        if temperature <= SOUND_TEMPERATURE and self.salinity <= SOUND_SALINITY:
             values["sound_speed"] = _HEAT(whole.sound_speed())
         return values
