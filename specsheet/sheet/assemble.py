@@ -87,7 +87,7 @@ def build(evaluation: Evaluation) -> Sheet:
         findings=findings,
         assumptions=_assumptions(tag, (points, *others), budget),
         clauses=_clauses(evaluation),
-        cautions=(*evaluation.notes.get(_CAUTIONS, ()), STANDING_CAUTION),
+        cautions=(*_cautions(evaluation), STANDING_CAUTION),
         revisions=_revisions(tag),
         annex=workings,
         sources=tuple(dict.fromkeys(one for item in cited for one in citations(item.source))),
@@ -133,8 +133,19 @@ def _clauses(evaluation: Evaluation) -> tuple[Clauses, ...]:
     return how + tuple(
         Clauses(key, words.capital(key), tuple(sentences))
         for key, sentences in evaluation.notes.items()
-        if key != _CAUTIONS and sentences
+        if key.lower() != _CAUTIONS and sentences
     )
+
+
+def _cautions(evaluation: Evaluation) -> tuple[str, ...]:
+    """Return the sentences under the heading of cautions, however it is capitalised."""
+    found = (
+        item
+        for key, items in evaluation.notes.items()
+        if key.lower() == _CAUTIONS
+        for item in items
+    )
+    return tuple(dict.fromkeys(found))
 
 
 def _revisions(tag: Tag) -> tuple[RevisionRow, ...]:

@@ -15,7 +15,6 @@ DIGITS = 4
 
 #: digits by glossary key
 KEY_DIGITS = {
-    "pressure": 3,  # mostly a gauge pressure of two digits and the atmosphere
     "reynolds_number": 3,
     "meter_reynolds_number": 3,
     "throat_reynolds_number": 3,

@@ -75,7 +75,7 @@ def test_a_typed_gauge_pressure_is_not_echoed_as_absolute() -> None:
     )
     made = sheet.build(samples.evaluation(points=points))
     absolute = row(made, "fluid_points", "pressure")
-    assert texts(absolute) == ["8.00"] * 3
+    assert texts(absolute) == ["8.000"] * 3
     assert (absolute.unit, absolute.origins) == ("bar(a)", (Origin.DERIVED,))
 
 
@@ -117,7 +117,7 @@ def test_altitude_gives_a_derived_atmosphere() -> None:
     given["job.altitude"] = Quantity(320.0, "elevation", "m", "320 m")
     made = sheet.build(samples.evaluation(tag=replace(tag, given=given)))
     pressure = row(made, "base", "job.atmospheric_pressure")
-    assert (pressure.text, pressure.origins) == ("0.975 bar(a)", (Origin.DERIVED,))
+    assert (pressure.text, pressure.origins) == ("0.9754 bar(a)", (Origin.DERIVED,))
 
 
 def test_limits_say_reserve_and_flip(made: Sheet) -> None:
@@ -149,7 +149,7 @@ def test_a_reserve_of_any_driver_is_worded() -> None:
     reserve = Reserve("pressure", 6.0e5, -0.25)
     check = Check("density", "normal", 4.0, 3.0, None, True, Level.NOTE, "m", "s", reserve)
     limit = sheet.build(samples.evaluation(checks=(check,))).limits[0]
-    assert (limit.reserve, limit.flips) == ("−25 %", "6.00 bar(a)")
+    assert (limit.reserve, limit.flips) == ("−25 %", "6.000 bar(a)")
 
 
 def test_the_budget_ends_with_the_expanded_uncertainty(made: Sheet) -> None:
@@ -329,3 +329,11 @@ def test_what_was_stated_is_not_printed_twice() -> None:
 def test_a_given_value_keeps_every_digit() -> None:
     made = sheet.build(samples.evaluation(element={"meter_bore": Result(0.1540832, Origin.GIVEN)}))
     assert row(made, "element", "meter_bore").text == "154.0832 mm"
+
+
+@pytest.mark.parametrize("heading", ["cautions", "Cautions"])
+def test_cautions_stand_by_themselves(heading: str) -> None:
+    made = sheet.build(samples.evaluation(notes={heading: ("Toxic.", "Toxic."), "output": ()}))
+    assert made.cautions[0] == "Toxic."
+    assert len(made.cautions) == 2  # and the standing one
+    assert [clause.key for clause in made.clauses] == ["principle"]
