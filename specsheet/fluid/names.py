@@ -87,9 +87,22 @@ def _index() -> Mapping[str, str]:
         for text in (key, item.name, *item.names):
             found.setdefault(normal(text), key)
     for key, item in substances().items():
-        for text in (item.cas, item.formula, item.equation):
+        for text in (item.cas, item.equation):
             if text:
                 found.setdefault(normal(text), key)
+    for formula, keys in _isomers().items():
+        plain = [key for key in keys if key.startswith("n_") or key == "hydrogen"]
+        if len(keys) == 1 or len(plain) == 1:
+            found.setdefault(formula, (plain or keys)[0])
+    return found
+
+
+def _isomers() -> Mapping[str, list[str]]:
+    """Normalised formula -> keys. One that several share means the normal isomer, or nothing."""
+    found: dict[str, list[str]] = {}
+    for key, item in substances().items():
+        if item.formula:
+            found.setdefault(normal(item.formula), []).append(key)
     return found
 
 

@@ -17,6 +17,8 @@ from specsheet.methods.equilibrium import Critical, wilson_ratio
 _ROOT2 = math.sqrt(2.0)
 #: answers: two phases, or one on the gas root, the liquid root, or the only root
 TWO, GAS, LIQUID, ONLY = "two_phase", "gas", "liquid", "only"
+#: volume by that of the molecules, below which a fluid is dense; 3.95 at the critical point
+_DENSE = 3.0
 _STEPS = 60
 _CONVERGED = 1e-9
 #: a trial phase whose amounts all lie this near to the feed is the feed itself
@@ -67,10 +69,11 @@ def _factors(a: float, b: float) -> list[float]:
 
 @dataclass(frozen=True, slots=True)
 class _Branch:
-    """The root of the lower Gibbs energy: ln phi of each component, and which root it is."""
+    """The root of the lower Gibbs energy: ln phi of each component, which root, volume by b."""
 
     logarithms: tuple[float, ...]
     root: str
+    volume: float
 
 
 def _branch(fractions: Sequence[float], data: _Reduced) -> _Branch:
@@ -81,10 +84,10 @@ def _branch(fractions: Sequence[float], data: _Reduced) -> _Branch:
     low, high = min(roots), max(roots)
     best = _logarithms(high, a, b, total, data)
     if high - low < 1e-9:
-        return _Branch(best, ONLY)
+        return _Branch(best, ONLY, high / b)
     dense = _logarithms(low, a, b, total, data)
     energy = sum(x * (d - v) for x, d, v in zip(fractions, dense, best, strict=True))
-    return _Branch(dense, LIQUID) if energy < 0.0 else _Branch(best, GAS)
+    return _Branch(dense, LIQUID, low / b) if energy < 0.0 else _Branch(best, GAS, high / b)
 
 
 def _logarithms(z: float, a: float, b: float, total: float, data: _Reduced) -> tuple[float, ...]:
@@ -166,6 +169,10 @@ def phase(
     light = [x * ratio for x, ratio in zip(fractions, ratios, strict=True)]
     if any(_splits(trial, fractions, level, data) for trial in (heavy, light)):
         return TWO
+    if feed.root == ONLY and feed.volume < _DENSE:
+        # an only root this dense is a liquid, unless the mixture is too hot for one (Kay's rule)
+        warmest = sum(x * item.temperature for x, item in zip(fractions, components, strict=True))
+        return LIQUID if temperature < warmest else ONLY
     return feed.root
 
 
