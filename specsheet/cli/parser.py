@@ -125,6 +125,24 @@ def _check(commands: Commands[ArgumentParser]) -> None:
     check.add_argument("--all", action="store_true", help="list notes too")
 
 
+def _shortlist(commands: Commands[ArgumentParser]) -> None:
+    more = (
+        "Families with equations are sized, the others judged by their usual limits. A family\n"
+        "that does not fit is listed with the reason. Exit status 1 where none fits."
+    )
+    shortlist = _command(
+        commands, "shortlist", "hold every meter family against a tag, the best first", more
+    )
+    shortlist.add_argument("file", help="tag file")
+    shortlist.add_argument("--json", action="store_true", help="JSON with SI numbers")
+    shortlist.add_argument(
+        "--adopt",
+        metavar="FAMILY",
+        help="write this family into the file; what stands under [meter] and it does not take "
+        'is put behind a "#"',
+    )
+
+
 def _print(commands: Commands[ArgumentParser]) -> None:
     more = "One PDF a tag, named after it. The same tag file always gives the same bytes."
     print_ = _command(commands, "print", "print datasheets as PDF", more, module="print_")
@@ -164,6 +182,7 @@ _COMMANDS: tuple[Callable[[Commands[ArgumentParser]], None], ...] = (
     _new,
     _derive,
     _check,
+    _shortlist,
     _print,
     _families,
     _schema,

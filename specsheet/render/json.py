@@ -11,7 +11,7 @@ from collections.abc import Mapping
 from typing import TYPE_CHECKING, Any
 
 from specsheet.fields import KINDS, TERMS
-from specsheet.findings import Finding
+from specsheet.findings import Finding, Reserve
 from specsheet.sheet.rows import ordered
 
 if TYPE_CHECKING:
@@ -40,7 +40,7 @@ def document(evaluation: Evaluation) -> dict[str, Any]:
         "fluid": _values(evaluation.fluid),
         "line": _values(evaluation.line),
         "summary": _values(evaluation.summary),
-        "findings": [_finding(finding) for finding in evaluation.findings],
+        "findings": [finding_data(finding) for finding in evaluation.findings],
     }
 
 
@@ -69,7 +69,8 @@ def si_unit(key: str) -> str:
     return KINDS[kind].si if kind in KINDS else "1"
 
 
-def _finding(finding: Finding) -> dict[str, Any]:
+def finding_data(finding: Finding) -> dict[str, Any]:
+    """Return one finding as plain Python data."""
     held: dict[str, Any] = {
         "level": str(finding.level),
         "code": finding.code,
@@ -78,12 +79,18 @@ def _finding(finding: Finding) -> dict[str, Any]:
         "message": finding.message,
         "source": finding.source,
     }
-    reserve = finding.reserve
-    if reserve and math.isfinite(reserve.at) and math.isfinite(reserve.fraction):
-        held["reserve"] = {
+    return {**held, **reserve_data(finding.reserve)}
+
+
+def reserve_data(reserve: Reserve | None) -> dict[str, Any]:
+    """Return a reserve under its key; nothing where there is none."""
+    if not reserve or not (math.isfinite(reserve.at) and math.isfinite(reserve.fraction)):
+        return {}
+    return {
+        "reserve": {
             "driver": reserve.driver,
             "at": float(reserve.at),
             "unit": si_unit(reserve.driver),
             "fraction": float(reserve.fraction),
         }
-    return held
+    }

@@ -4,10 +4,12 @@
 * :func:`load_job`, :func:`find_job`  ``job.toml`` -> :class:`Job`
 * :class:`Document`  a text edited by path, every other line untouched
 * :func:`save`, :func:`stamp`  a file replaced whole or not at all
+* :func:`adopt`, :func:`with_family`  another family for the same tag
 * :func:`new_text`  the text a new tag starts from
 * :func:`schema`  JSON Schema of the tag file
 """
 
+from specsheet.tagfile.adopt import Adoption, adopt, with_family
 from specsheet.tagfile.document import Document, EditError
 from specsheet.tagfile.jobfile import JOB_FILE, NO_JOB, Job, find_job, load_job
 from specsheet.tagfile.new import new_text
@@ -20,6 +22,7 @@ from specsheet.tagfile.source import read_text
 __all__ = [
     "JOB_FILE",
     "NO_JOB",
+    "Adoption",
     "Document",
     "EditError",
     "Job",
@@ -27,6 +30,7 @@ __all__ = [
     "Reading",
     "SaveError",
     "Stamp",
+    "adopt",
     "find_job",
     "load",
     "load_job",
@@ -36,4 +40,5 @@ __all__ = [
     "save",
     "schema",
     "stamp",
+    "with_family",
 ]
