@@ -54,7 +54,7 @@ def _conditions(tag: Tag, point: Point, state: State | None) -> dict[str, Result
     row: dict[str, Result] = {}
     pressure = point.quantity("pressure")
     if pressure is not None:
-        row["pressure"] = Result(tag.absolute(pressure), Origin.GIVEN, text=pressure.text)
+        row.update(_pressures(tag, pressure))
     temperature = point.quantity("temperature")
     if temperature is not None:
         row["temperature"] = Result(temperature.value, Origin.GIVEN, text=temperature.text)
@@ -62,12 +62,23 @@ def _conditions(tag: Tag, point: Point, state: State | None) -> dict[str, Result
         return row
     row.setdefault("pressure", Result(state.pressure, Origin.DERIVED, method="saturation"))
     row.setdefault("temperature", Result(state.temperature, Origin.DERIVED, method="saturation"))
-    row["pressure_gauge"] = Result(state.pressure - tag.atmospheric_pressure, Origin.DERIVED)
+    gauge = state.pressure - tag.atmospheric_pressure
+    row.setdefault("pressure_gauge", Result(gauge, Origin.DERIVED))
     row["phase"] = Result(state.phase, Origin.DERIVED)
     for key, found in state.properties.items():
         stated = point.quantity(key)
         row[key] = property_result(found, stated)
     return row
+
+
+def _pressures(tag: Tag, stated: Quantity) -> dict[str, Result]:
+    """Return a stated pressure as typed, and what follows from it with the atmosphere."""
+    if stated.kind == "pressure_gauge":
+        return {
+            "pressure": Result(tag.absolute(stated), Origin.DERIVED),
+            "pressure_gauge": Result(stated.value, Origin.GIVEN, text=stated.text),
+        }
+    return {"pressure": Result(stated.value, Origin.GIVEN, text=stated.text)}
 
 
 def property_result(found: Property, stated: Quantity | None = None) -> Result:
