@@ -9,7 +9,7 @@ from functools import cache
 from typing import Any
 
 from specsheet.findings import Finding
-from specsheet.fluid import calorific, library, limits, names, transport
+from specsheet.fluid import calorific, library, limits, names, saturation, transport
 from specsheet.fluid.errors import translate
 from specsheet.fluid.model import Condition, Method, Refused, bar, note, stop
 from specsheet.fluid.phases import GAS, LIQUID, SUPERCRITICAL, TWO_PHASE
@@ -113,17 +113,11 @@ class Pure:
 
     def boiling(self, pressure: float) -> float | None:
         """Return the boiling temperature [K] at a pressure [Pa]; None off the saturation line."""
-        item = self.substance
-        if not 0.0 < pressure < 0.999 * item.critical_pressure:
-            return None
-        return _boiling(item.equation, pressure)
+        return saturation.boiling_temperature(self.substance, pressure)
 
     def vapour_pressure(self, temperature: float) -> float | None:
         """Return the vapour pressure [Pa] at a temperature [K]; None off the saturation line."""
-        item = self.substance
-        if not item.lowest_temperature <= temperature < 0.9995 * item.critical_temperature:
-            return None
-        return _vapour_pressure(item.equation, temperature)
+        return saturation.vapour_pressure(self.substance, temperature)
 
     def _range(self) -> limits.Range:
         item = self.substance
@@ -237,28 +231,3 @@ class Pure:
         if vapour is not None:
             values["vapour_pressure"] = _SATURATION(vapour)
         return {key: item for key, item in values.items() if math.isfinite(item.value)}
-
-
-@cache
-def _saturation_state(equation: str) -> Any:
-    return library.fluids().AbstractState("HEOS", equation)
-
-
-def _boiling(equation: str, pressure: float) -> float | None:
-    state = _saturation_state(equation)
-    try:
-        state.update(library.fluids().PQ_INPUTS, pressure, 0.0)
-        return float(state.T())
-    except library.ERRORS:
-        _saturation_state.cache_clear()
-        return None
-
-
-def _vapour_pressure(equation: str, temperature: float) -> float | None:
-    state = _saturation_state(equation)
-    try:
-        state.update(library.fluids().QT_INPUTS, 0.0, temperature)
-        return float(state.p())
-    except library.ERRORS:
-        _saturation_state.cache_clear()
-        return None
