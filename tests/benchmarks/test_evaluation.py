@@ -1,0 +1,56 @@
+"""One edit, evaluated anew: text -> tag -> evaluation -> sheet, as the worker of the form does it."""
+
+from __future__ import annotations
+
+import pytest
+from cli_process import demo_text
+from measure import calls, report
+
+from specsheet import sheet, tagfile
+from specsheet.evaluate import evaluate
+
+pytestmark = pytest.mark.benchmark
+
+STEAM = demo_text("FT-2104")
+FLUID = STEAM[STEAM.index("[fluid]") : STEAM.index("[line]")]
+
+
+def _with_fluid(fluid: str) -> str:
+    return STEAM.replace(FLUID, f"[fluid]\n{fluid}\n\n")
+
+
+PURE = 'kind = "substance"\nsubstance = "{}"\nphase = "gas"'
+MIXTURE = """\
+kind = "mixture"
+phase = "gas"
+mixture = { methane = 0.80, ethane = 0.06, propane = 0.03, nitrogen = 0.03, carbon_dioxide = 0.03, \
+isobutane = 0.01, butane = 0.01, hydrogen = 0.01, oxygen = 0.01, carbon_monoxide = 0.01 }"""
+
+SERVICES = {
+    "water": (demo_text("FT-6101"), 16.0),
+    "steam": (STEAM, 16.0),
+    "nitrogen": (_with_fluid(PURE.format("nitrogen")), 16.0),
+    "methane": (_with_fluid(PURE.format("methane")), 16.0),
+    "carbon dioxide": (_with_fluid(PURE.format("carbon_dioxide")), 16.0),
+    "gas of ten components": (_with_fluid(MIXTURE), 30.0),
+}
+
+
+@pytest.mark.parametrize("service", SERVICES)
+def test_edit_of_the_process_data(service: str) -> None:
+    text, budget = SERVICES[service]
+    first = text.index("temperature = ") + len('temperature = "')
+    stated = text[first : text.index(" ", first)]
+
+    def edit(place: int) -> object:
+        # another temperature each time, so that nothing can be remembered
+        changed = text.replace(f'"{stated} degC"', f'"{float(stated) + 0.01 * place:.2f} degC"')
+        reading = tagfile.loads(changed)
+        assert reading.tag is not None
+        assert reading.problems == ()
+        return sheet.build(evaluate(reading.tag))
+
+    edit(0)  # loads the libraries
+    spent = calls(edit, 25) * 1e3
+    report(f"edit, {service}", spent, "ms", budget)
+    assert spent <= budget
