@@ -11,6 +11,12 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from specsheet.evaluate.budget import (
+    DensityInUse,
+    density_in_use,
+    exponent_stream,
+    with_density,
+)
 from specsheet.meters.family import Array, Contribution, Element, Family, Request, Stream
 from specsheet.methods import energy, gum
 
@@ -39,6 +45,7 @@ class Model:
         family, element: the meter.
         gas: whether the stream is a gas.
         efficiency: of the pump or compressor that makes up the loss [-].
+        density: how well the density in use is known.
         additional: uncertainty of the flow by short straight lengths, added arithmetically to the
             expanded uncertainty as ISO 5167-1 has it [-].
     """
@@ -47,6 +54,7 @@ class Model:
     element: Element
     gas: bool
     efficiency: float
+    density: DensityInUse
     additional: float = 0.0
 
     def __call__(self, stream: Stream) -> Response:
@@ -60,12 +68,17 @@ class Model:
             if not self.gas:
                 values.setdefault("back_pressure_margin", _back_pressure_margin(stream, values))
             values["lost_power"] = self._lost_power(stream, values["pressure_loss"])
-            contributions = self.family.budget(self.element, stream, values)
+            contributions = with_density(
+                self.family.budget(self.element, exponent_stream(stream), values),
+                stream,
+                self.density,
+            )
             if contributions:
                 relative = np.stack([item.relative for item in contributions])
                 freedom = np.array([item.freedom for item in contributions])
                 combined = gum.combine(relative=relative, freedom=freedom)
                 values["uncertainty"] = combined.expanded + self.additional
+                values["coverage_factor"] = combined.coverage
         return Response(values, contributions)
 
     def _lost_power(self, stream: Stream, loss: Array) -> Array:
@@ -89,6 +102,7 @@ def model_of(request: Request, family: Family, element: Element, additional: flo
         element,
         gas=tag.phase == "gas",
         efficiency=tag.si("job.efficiency") or 1.0,
+        density=density_in_use(tag, float(request.stream.density[request.normal])),
         additional=additional,
     )
 

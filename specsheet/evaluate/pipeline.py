@@ -9,6 +9,7 @@ import numpy as np
 
 from specsheet import line, packs
 from specsheet.evaluate import assemble, summary
+from specsheet.evaluate.budget import name_largest
 from specsheet.evaluate.by_limits import family_by_limits
 from specsheet.evaluate.checks import check_limits
 from specsheet.evaluate.common import COMMON_DERIVATIONS
@@ -110,7 +111,7 @@ def _with_meter(
     totals = summary.summarise(request, at_points, checked.bands)
     findings.extend(element.findings)
     findings.extend(beside.findings)
-    findings.extend(checked.findings)
+    findings.extend(name_largest(checked.findings, request.names, response.contributions))
     findings.extend(summary.check_turndown(request, totals))
     return replace(
         evaluation,
@@ -174,5 +175,10 @@ def _printed(values: Mapping[str, Given]) -> dict[str, Result]:
 
 def _finished(evaluation: Evaluation, findings: Iterable[Finding]) -> Evaluation:
     """Return the evaluation with its findings sorted, worst first, without repeats."""
-    unique = dict.fromkeys(findings)
+    unique = dict.fromkeys(replace(item, message=_sentence(item.message)) for item in findings)
     return replace(evaluation, findings=tuple(sorted(unique, key=lambda item: _RANK[item.level])))
+
+
+def _sentence(text: str) -> str:
+    """Return a message as a sentence: a capital at its head, a full stop at its end."""
+    return f"{text[:1].upper()}{text[1:]}{'' if text.endswith(('.', '!', '?')) else '.'}"
