@@ -1,4 +1,4 @@
-"""One edit, evaluated anew: text -> tag -> evaluation -> sheet, as the worker of the form does it."""
+"""One edit, evaluated anew: text -> tag -> evaluation -> sheet, as the form's worker does it."""
 
 from __future__ import annotations
 
