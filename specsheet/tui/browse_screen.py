@@ -32,11 +32,11 @@ class BrowseScreen(CalmScreen):
         Binding(command.keys, command.action, command.title, show=False) for command in BROWSE
     ]
 
-    def __init__(self, folder: Path, evaluator: Evaluator, *, greeting: str = "") -> None:
+    def __init__(self, folder: Path, evaluator: Evaluator, *, trouble: str = "") -> None:
         super().__init__()
         self.folder = folder
         self.evaluator = evaluator
-        self._greeting = greeting
+        self._trouble = trouble
         self._paths: tuple[Path, ...] = ()
         self._lines: list[Line] = []
 
@@ -68,12 +68,15 @@ class BrowseScreen(CalmScreen):
         self._lines = [((f" {path.name}", "text"),) for path in self._paths]
         self._show()
         count = len(self._paths)
-        told = self._greeting or problem or f"{count} tag{'' if count == 1 else 's'}"
+        told = problem or f"{count} tag{'' if count == 1 else 's'}"
         if not count:
             told = f"{told}: no tag file in this folder; N begins one"
         self.say(told)
         self.query_one("#tags", Lines).focus()
         self._read_on(0)
+        if self._trouble:
+            self.app.push_screen(Tell("Not opened", [self._trouble]))
+            self._trouble = ""
 
     def say(self, message: str) -> None:
         """Say something in the line above the keys."""

@@ -54,6 +54,19 @@ def wants_no_colour() -> bool:
     return bool(os.environ.get("NO_COLOR"))
 
 
+async def run_own_binding(widget: Widget, event: events.Key) -> None:
+    """Run the widget's own binding of a key here and now, in the order the keys were typed.
+
+    Left to itself Textual sends the key up to the application first, which looks for bindings of
+    whatever has the focus by then.
+    """
+    for binding in widget._bindings.key_to_bindings.get(event.key, ()):
+        event.stop()
+        event.prevent_default()
+        await widget.run_action(binding.action)
+        return
+
+
 class Field(Input, inherit_bindings=False):
     """A one-line editor in one row, with its keys in the order in which they were typed."""
 
@@ -67,12 +80,8 @@ class Field(Input, inherit_bindings=False):
 
     async def _on_key(self, event: events.Key) -> None:
         # Textual goes on to Input._on_key by itself unless the default is prevented.
-        for binding in self._bindings.key_to_bindings.get(event.key, ()):
-            if not event.is_printable:
-                event.stop()
-                event.prevent_default()
-                await self.run_action(binding.action)
-                return
+        if not event.is_printable:
+            await run_own_binding(self, event)
 
     def on_unmount(self) -> None:
         """Let go of the signal that would keep a removed field alive."""

@@ -191,7 +191,7 @@ class Pick(ModalScreen[str]):
         now: str = "",
         free: bool = False,
     ) -> None:
-        """Make the list.
+        """Make the list; ``found`` is what it holds for the text typed so far.
 
         Args:
             title: words above it.
@@ -206,7 +206,7 @@ class Pick(ModalScreen[str]):
         self._free = free
         self._field = _DialogField("", placeholder="type to search")
         self._lines = Lines(id="dialog-lines")
-        self._found: Sequence[Choice] = ()
+        self.found: Sequence[Choice] = ()
         self._searched: str | None = None
 
     def compose(self) -> ComposeResult:
@@ -242,8 +242,8 @@ class Pick(ModalScreen[str]):
     def action_accept(self) -> None:
         """Choose what stands under the cursor, of the list for the text as it is now."""
         self._search()
-        if self._found:
-            self.dismiss(self._found[self._lines.cursor].value)
+        if self.found:
+            self.dismiss(self.found[self._lines.cursor].value)
         elif self._free:
             self.dismiss(self._field.value.strip())
 
@@ -256,11 +256,11 @@ class Pick(ModalScreen[str]):
         if text == self._searched:
             return
         self._searched = text
-        self._found = self._find(text)
+        self.found = self._find(text)
         lines: list[Line] = []
         owners: list[int] = []
         width = self._lines.size.width - 3
-        for number, choice in enumerate(self._found):
+        for number, choice in enumerate(self.found):
             sign = "▸ " if choice.value == self._now else "  "
             told = [((sign, "accent"), (choice.label, "text"))]
             told += [(("    ", "dim"), (part, "dim")) for part in _details(choice, width)]
@@ -272,7 +272,7 @@ class Pick(ModalScreen[str]):
         self._lines.set_content(lines, owners, cursor=0 if text else self._place_of_now())
 
     def _place_of_now(self) -> int:
-        return next((n for n, c in enumerate(self._found) if c.value == self._now), 0)
+        return next((n for n, c in enumerate(self.found) if c.value == self._now), 0)
 
 
 def _details(choice: Choice, width: int) -> list[str]:

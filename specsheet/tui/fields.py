@@ -10,7 +10,7 @@ from textual.message import Message
 from textual.strip import Strip
 from textual.widget import Widget
 
-from specsheet.tui.compat import Field
+from specsheet.tui.compat import Field, run_own_binding
 from specsheet.tui.form import Row
 from specsheet.tui.lines import strip_of
 
@@ -61,11 +61,17 @@ class Editor(Widget):
 class TextEditor(Field, Editor):
     """A line of text."""
 
+    BINDINGS: ClassVar[list[BindingType]] = [Binding("escape", "revert", show=False)]
+
     def __init__(self, row: Row, text: str, index: int | None = None) -> None:
         super().__init__(text)
         self.row = row
         self.index = index
         self.committed = text
+
+    def action_revert(self) -> None:
+        """Go back to the committed text."""
+        self.revert()
 
     def on_blur(self) -> None:
         """Commit: the value includes every key typed before the focus moved."""
@@ -83,6 +89,7 @@ class ChoiceEditor(Editor, can_focus=True):
         Binding("left,minus", "cycle(-1)", show=False),
         Binding("delete,backspace", "clear", show=False),
         Binding("space", "screen.choose", show=False),
+        Binding("escape", "revert", show=False),
     ]
 
     def __init__(self, row: Row, text: str, index: int | None = None) -> None:
@@ -103,15 +110,23 @@ class ChoiceEditor(Editor, can_focus=True):
         self.value = ring[(place + step) % len(ring)]
         self.refresh()
 
+    def action_revert(self) -> None:
+        """Go back to the committed choice."""
+        self.revert()
+
     def action_clear(self) -> None:
         """State nothing."""
         self.value = ""
         self.refresh()
 
-    def on_key(self, event: events.Key) -> None:
+    async def _on_key(self, event: events.Key) -> None:
+        await run_own_binding(self, event)
+        self._go_to_letter(event)
+
+    def _go_to_letter(self, event: events.Key) -> None:
         """Go to the next choice that starts with the letter typed."""
         letter = (event.character or "").casefold()
-        if not event.is_printable or not letter.strip():
+        if event.is_printable is False or not letter.strip():
             return
         ring = self.row.choices
         start = ring.index(self.value) + 1 if self.value in ring else 0

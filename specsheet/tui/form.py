@@ -99,22 +99,9 @@ def _composition(session: Session, entry: Entry) -> list[Row]:
 
 def text_in(session: Session, row: Row, index: int | None = None) -> str:
     """Return the text in the field of a row, at one operating point or revision in a list."""
-    return "" if row.adds else session.get(Address(row.address.path, index))
-
-
-def component(text: str) -> tuple[str, str] | str:
-    """Read "methane 0.62" as a component and its fraction; else return what was wanted."""
-    name, _, fraction = text.strip().rpartition(" ")
-    name = name.strip().rstrip("=").strip()
-    if not name or not fraction:
-        return f'a substance and its fraction were wanted, "{text}" came; write methane 0.62'
-    if fraction == "%":
-        name, _, number = name.rpartition(" ")
-        fraction = f"{number} %"
-    name = name.strip().rstrip("=").strip()
-    if "." in name:
-        return f'"{name}" holds a full stop, which a name in a composition cannot; leave it out'
-    return name, fraction
+    if row.adds:
+        return session.refused_component
+    return session.get(Address(row.address.path, index))
 
 
 def example(entry: Entry) -> str:

@@ -35,11 +35,12 @@ class FormEditing(FormView):
         text = editor.value
         address = address_in(editor)
         if editor.row.adds:
-            self._add_component(editor, text)
+            refused = self.session.add_component(text)
+            editor.load(self.session.refused_component)
         else:
             refused = self.session.edit(address, text)
             editor.load(self.session.get(address))
-            self.frame.message = f"not stored: {refused}" if refused else ""
+        self.frame.message = f"not stored: {refused}" if refused else ""
         await self._changed()
 
     async def commit_all(self) -> None:
@@ -47,29 +48,15 @@ class FormEditing(FormView):
         for editor in self.editors:
             await self.commit(editor)
 
-    def _add_component(self, editor: Editor, text: str) -> None:
-        parts = form.component(text) if text.strip() else ("", "")
-        if isinstance(parts, str):
-            editor.committed = text  # stays in the field to be mended
-            self.frame.message = parts
-            return
-        editor.load("")
-        if parts[0]:
-            refused = self.session.edit(Address(f"{COMPOSITION}.{parts[0]}"), parts[1])
-            self.frame.message = f"not stored: {refused}" if refused else ""
-
     async def _changed(self) -> None:
         if self.session.trouble:
             self.frame.message = self.session.trouble
         await self.refresh_form()
         self.request()
 
-    def action_revert(self) -> None:
-        """Take back what was typed in the field and not committed."""
-        if self.editor is not None and self.focused is self.editor:
-            self.editor.revert()
-        else:
-            self.set_focus(self.editor)
+    def action_to_form(self) -> None:
+        """Go back from a pane to the field."""
+        self.set_focus(self.editor)
 
     async def action_undo(self) -> None:
         """Take back what is being typed, else the last committed edit."""
@@ -86,8 +73,7 @@ class FormEditing(FormView):
     async def moved(self, verb: str, name: str) -> None:
         """Show the document after a step through its history, and say which."""
         self.frame.message = f"{verb}: {name}" if name else f"nothing to be {verb}"
-        for page in self.pages.values():
-            await page.sync(self.session, self.notes())
+        await self.sync_pages()
         await self._changed()
 
     # Lists to choose from
@@ -256,8 +242,7 @@ class FormEditing(FormView):
             return
         name = self.session.point_names()[editor.index]
         refused = self.session.remove_point(editor.index)
-        for page in self.pages.values():
-            await page.sync(self.session, self.notes())
+        await self.sync_pages()
         await self._changed()
         self.say(refused or f"{name} removed; Ctrl+Z brings it back")
         if self.focused is None:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import asyncio
 from collections.abc import Mapping
 from typing import ClassVar
 
@@ -42,7 +43,7 @@ def _bindings() -> list[BindingType]:
         Binding(command.keys, command.action, command.title, show=False, priority=command.moves)
         for command in FORM
     ]
-    return [*moves, *commands, Binding("escape", "revert", show=False)]
+    return [*moves, *commands, Binding("escape", "to_form", show=False)]
 
 
 class FormView(CalmScreen):
@@ -70,6 +71,8 @@ class FormView(CalmScreen):
         self._last_editor: Editor | None = None
         self._shown_pane = "findings"
         self._items: tuple[Item, ...] = ()
+        # Answers arrive while a page is being mounted: pages change one at a time.
+        self._syncing = asyncio.Lock()
 
     def compose(self) -> ComposeResult:
         """Lay out the frame; the pages come when they are first looked at."""
@@ -128,13 +131,15 @@ class FormView(CalmScreen):
 
     async def open_section(self, section: str, address: Address | None = None) -> None:
         """Show a section with the focus on an address, or on its first editor."""
-        if section not in self.pages:
-            self.pages[section] = (GridPage if section in LISTS else SectionPage)(section)
-            await self.query_one("#pages").mount(self.pages[section])
-        self.section = section
-        for key, page in self.pages.items():
-            page.display = key == section
-        await self.page.sync(self.session, self.notes())
+        async with self._syncing:
+            if section not in self.pages:
+                page = (GridPage if section in LISTS else SectionPage)(section)
+                await self.query_one("#pages").mount(page)
+                self.pages[section] = page
+            self.section = section
+            for key, other in self.pages.items():
+                other.display = key == section
+            await self.page.sync(self.session, self.notes())
         target = self.page.editor(address) if address is not None else None
         first = next(iter(self.page.editors), None)
         chosen = target or first
@@ -145,22 +150,25 @@ class FormView(CalmScreen):
 
     async def go_to(self, address: Address) -> None:
         """Show an address, wherever it stands."""
-        section = address.section
-        page = self.pages.get(section)
-        if page is not None:
-            page.everything = page.everything or page.editor(address) is None
-        await self.open_section(section, address)
+        await self.open_section(address.section, address)
         if self.page.editor(address) is None:
             self.page.everything = True
-            await self.open_section(section, address)
+            await self.open_section(address.section, address)
 
     async def refresh_form(self) -> None:
         """Bring page, frame and panes up to date with the session."""
-        if self.section in self.pages:
-            await self.page.sync(self.session, self.notes())
+        async with self._syncing:
+            if self.section in self.pages:
+                await self.page.sync(self.session, self.notes())
         self._draw_frame()
         self._draw_detail()
         self._draw_panes()
+
+    async def sync_pages(self) -> None:
+        """Bring every page up to date, also those that are not on the screen."""
+        async with self._syncing:
+            for page in self.pages.values():
+                await page.sync(self.session, self.notes())
 
     def request(self) -> None:
         """Ask for the values of the present text; the screen goes on at once."""

@@ -71,6 +71,7 @@ class Journal:
         self.trouble = ""
         self._file: FileIO | None = None
         self._name: Path | None = None
+        self._closed = False
 
     def record(self, state: State, name: str, saved: str) -> None:
         """Write the state after a change; never raises for a full or read-only disk.
@@ -80,6 +81,8 @@ class Journal:
             name: words for the change.
             saved: fingerprint of the tag file as it was last read or written, "" for a new file.
         """
+        if self._closed:
+            return
         line = json.dumps(
             {
                 "path": str(self.path),
@@ -113,6 +116,7 @@ class Journal:
         if self._file is not None:
             self._file.close()
         self._file = None
+        self._closed = True
 
     def _open(self) -> FileIO:
         if self._file is not None:

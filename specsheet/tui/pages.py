@@ -85,6 +85,7 @@ class Page(ScrollableContainer, can_focus=False):
             editor.mark(bool(session.refusal(address_in(editor))))
 
     def _draw_labels(self) -> None:
+        self.set_class(not self._rows, "-empty")
         self._labels.set_lines([self._label(row) for row in self._rows] or [self._nothing()])
 
     def _nothing(self) -> Line:
@@ -143,7 +144,7 @@ class SectionPage(Page):
 
     def _beside(self, session: Session, row: Row) -> Line:
         refused = session.refusal(row.address)
-        if refused and not row.adds:
+        if refused:
             return ((f"{_BAD} {refused}", "stop"),)
         note = self._notes.get(row.address)
         if note is not None and not row.adds:

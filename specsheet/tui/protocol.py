@@ -8,9 +8,10 @@ from __future__ import annotations
 import pickle
 import struct
 from dataclasses import dataclass
-from typing import Any, BinaryIO
+from typing import TYPE_CHECKING, Any, BinaryIO
 
-from specsheet.sheet.model import Sheet
+if TYPE_CHECKING:  # the first screen is drawn without it
+    from specsheet.sheet.model import Sheet
 
 #: length of the frame that follows, in bytes
 HEADER = struct.Struct(">I")

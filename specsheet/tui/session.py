@@ -24,7 +24,7 @@ from specsheet.tui.address import LISTS, Address
 from specsheet.tui.history import History, Refused, State
 from specsheet.tui.journal import Journal, Leftover, digest
 from specsheet.tui.saving import Conflict, Outcome, write
-from specsheet.tui.values import entry_at, refusal, shown
+from specsheet.tui.values import component, entry_at, refusal, shown
 
 COMPOSITION = "fluid.mixture"
 
@@ -148,7 +148,8 @@ class Session:
         text = self.text
         try:
             for address in self.refused:
-                if self._raw(address) is not None:
+                adds = address.path == COMPOSITION  # a component not added replaces nothing
+                if not adds and self._raw(address) is not None:
                     text = edits.unset(text, address)
         except EditError:
             return None
@@ -176,6 +177,32 @@ class Session:
         text = text.strip()
         if text == self.get(address):
             return self.refusal(address)
+        return self._edit(address, text, self.refused)
+
+    def add_component(self, text: str) -> str:
+        """Add a component to the mixture from "methane 0.62"; return why it is refused, or "".
+
+        A refused text is kept as the composition's own until it is mended or emptied.
+        """
+        text = text.strip()
+        whole = Address(COMPOSITION)
+        rest = {a: told for a, told in self.refused.items() if a != whole}
+        parts = component(text) if text else ""
+        if isinstance(parts, tuple):
+            return self._edit(Address(f"{COMPOSITION}.{parts[0]}"), parts[1], rest)
+        if text != self.refused_component:
+            if parts:
+                rest[whole] = Refused(text, parts)
+            self._change(self.name(whole), State(self.text, rest))
+        return parts
+
+    @property
+    def refused_component(self) -> str:
+        """The text last typed to add a component, where it was refused."""
+        told = self.refused.get(Address(COMPOSITION))
+        return "" if told is None else told.text
+
+    def _edit(self, address: Address, text: str, others: Mapping[Address, Refused]) -> str:
         reason = self._objection(address, text)
         after = self.text
         if not reason:
@@ -183,7 +210,7 @@ class Session:
                 after = self._stored(address, text)
             except EditError as error:
                 reason = str(error)
-        refused = {a: told for a, told in self.refused.items() if a != address}
+        refused = {a: told for a, told in others.items() if a != address}
         if reason:
             refused[address] = Refused(text, reason)
         self._change(self.name(address), State(after, refused))
@@ -244,15 +271,15 @@ class Session:
         self._change("reloaded from disk", State(text))
 
     def give_up(self) -> None:
-        """Forget the unsaved edits, on the user's word."""
+        """Forget the unsaved edits, on the user's word, and end the session."""
         self._journal.clear()
+        self._journal.close()
 
     def close(self) -> None:
         """End the session; unsaved edits stay in the journal for the next one."""
-        if self.dirty:
-            self._journal.close()
-        else:
+        if not self.dirty:
             self._journal.clear()
+        self._journal.close()
 
     # Inside
 

@@ -19,6 +19,6 @@ def first_screen(app: App[int], path: Path, evaluator: Evaluator) -> None:
         return
     session = open_session(path)
     if isinstance(session, str):
-        app.switch_screen(BrowseScreen(path.parent, evaluator, greeting=session))
+        app.switch_screen(BrowseScreen(path.parent, evaluator, trouble=session))
     else:
         enter(app, session, evaluator)

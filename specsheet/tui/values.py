@@ -65,3 +65,18 @@ def _fraction_refusal(text: str) -> str:
         found = quantity.parse(text, "ratio")
         return found.message if isinstance(found, Refusal) else ""
     return ""
+
+
+def component(text: str) -> tuple[str, str] | str:
+    """Read "methane 0.62" as a component and its fraction; else return what was wanted."""
+    name, _, fraction = text.strip().rpartition(" ")
+    name = name.strip().rstrip("=").strip()
+    if not name or not (fraction[:1].isdecimal() or fraction[:1] in "+-.%"):
+        return f'a substance and its fraction were wanted, "{text}" came; write methane 0.62'
+    if fraction == "%":
+        name, _, number = name.rpartition(" ")
+        fraction = f"{number} %"
+    name = name.strip().rstrip("=").strip()
+    if "." in name:
+        return f'"{name}" holds a full stop, which a name in a composition cannot; leave it out'
+    return name, fraction

@@ -1,0 +1,68 @@
+"""The panes as text: widths, order, letters. No terminal."""
+
+from __future__ import annotations
+
+import pytest
+
+from specsheet.findings import Level
+from specsheet.tui import readout
+from specsheet.tui.glyphs import plain_ascii, printable
+from specsheet.tui.protocol import Trouble
+from specsheet.tui.readout import Item
+from tests.tui.conftest import sheet
+
+
+def text_of(lines: list[readout.Line]) -> list[str]:
+    return ["".join(text for text, _ in line) for line in lines]
+
+
+@pytest.mark.parametrize("width", [40, 60, 78, 120])
+def test_no_line_of_the_findings_is_wider_than_the_pane(width: int) -> None:
+    found = readout.items(sheet("long " * 40), (), (), str)
+    lines, owners = readout.finding_lines(found, width)
+    assert max(len(line) for line in text_of(lines)) <= width
+    assert len(lines) == len(owners)
+    assert sorted(set(owners)) == list(range(len(found)))
+
+
+def test_the_worst_comes_first_and_every_level_has_a_letter() -> None:
+    refused = [Item(Level.STOP, "line.size", "Nominal size", "not stored: no size")]
+    found = readout.items(sheet(), [Trouble("points", "no point")], refused, str)
+    lines, _ = readout.finding_lines(found, 200)
+    assert [line[0] for line in text_of(lines)] == ["S", "S", "C", "!"]
+    assert readout.counts(found) == "stop 2, caution 1"
+    assert readout.worst(found) is Level.STOP
+
+
+def test_a_standing_caution_of_the_service_is_shown_but_is_no_finding() -> None:
+    found = readout.items(sheet(), (), (), str)
+    assert any("licensed engineer" in item.message and item.level is None for item in found)
+    assert readout.counts(found) == "caution 1"
+
+
+def test_derived_values_stand_in_columns_with_their_origin() -> None:
+    lines = text_of(readout.derived(sheet(), 60))
+    head, row = lines[0], lines[1]
+    assert "minimum" in head
+    assert "Velocity m/s" in row
+    assert "1.2g" in row
+    assert row.index("1.2") + 2 == head.index("minimum") + len("minimum") - 1
+
+
+def test_the_ruler_shows_points_scale_and_windows() -> None:
+    lines = text_of(readout.ruler_lines(sheet(), 78))
+    joined = "\n".join(lines)
+    for words in ("normal", "minimum", "Mass flow, t/h", "velocity", "10"):
+        assert words in joined
+    assert max(map(len, lines)) <= 78
+
+
+@pytest.mark.parametrize("text", ["━┿◂▸┣┫│─┴╴◆◇✓✗▸", "Δ ρ ≤ 5 m³/h ± 1 °C ·"])
+def test_every_sign_of_ours_has_a_plain_form(text: str) -> None:
+    plain = plain_ascii(text)
+    assert plain.isascii()
+    assert "?" not in plain
+
+
+def test_control_characters_cannot_reach_the_terminal() -> None:
+    assert printable("a\x1b[2Jb\nc\td") == "a [2Jb c d"
