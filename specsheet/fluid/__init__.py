@@ -2,6 +2,8 @@
 
 * :func:`derive`  tag -> :class:`~specsheet.fluid.state.FluidResult`
 * :func:`fluid_of`  tag -> the fluid alone, for :func:`states`
+* :func:`settle`  what was left unverified about a phase, found in a process of its own
+* :func:`warm`  loads what a tag needs, before a screen starts or in an idle moment
 * :func:`states`  fluid and conditions -> states (what-if)
 * :mod:`specsheet.fluid.names`  substances by name, for form and messages
 
@@ -21,7 +23,7 @@ if TYPE_CHECKING:
     from specsheet.fluid.state import FluidResult
     from specsheet.tag import Tag
 
-__all__ = ["derive", "fluid_of", "states"]
+__all__ = ["derive", "fluid_of", "settle", "states", "warm"]
 
 
 def derive(tag: Tag) -> FluidResult:
@@ -43,3 +45,23 @@ def states(fluid: Fluid, conditions: Sequence[Condition]) -> tuple[Outcome, ...]
     from specsheet.fluid.evaluate import states as run
 
     return run(fluid, conditions)
+
+
+def settle(tag: Tag, seconds: float = 10.0) -> bool:
+    """Settle an unverified phase within a time; tell whether :func:`derive` knows more now."""
+    from specsheet.fluid.result import settle as run
+
+    return run(tag, seconds)
+
+
+def warm(tag: Tag | None = None) -> None:
+    """Load what the fluid of a tag needs, or everything: 10 ms for water, else a third of a second.
+
+    Loading keeps standard output to itself for that time, so do it before a screen starts.
+    """
+    from specsheet.fluid import library
+
+    if tag is None:
+        library.fluids()
+    else:
+        derive(tag)

@@ -16,6 +16,8 @@ from specsheet.fluid.phases import disagreement
 from specsheet.fluid.state import State
 from specsheet.quantity.value import Base
 
+#: below these no fluid flows through a meter [K], [Pa]
+LOWEST_TEMPERATURE, LOWEST_PRESSURE = 1.0, 1.0
 #: the state objects of the fluid library must not be used by two threads at once
 LOCK = threading.RLock()
 
@@ -30,18 +32,19 @@ class Outcome:
 
 def state(fluid: Fluid, condition: Condition) -> Outcome:
     """Return the state of a fluid, its phase checked against the one stated."""
-    for value, field, unit in (
-        (condition.temperature, "temperature", "K"),
-        (condition.pressure, "pressure", "Pa"),
+    for value, field, unit, lowest in (
+        (condition.temperature, "temperature", "K", LOWEST_TEMPERATURE),
+        (condition.pressure, "pressure", "Pa", LOWEST_PRESSURE),
     ):
-        if value is not None and not (math.isfinite(value) and value > 0.0):
+        if value is not None and not (math.isfinite(value) and value >= lowest):
             return Outcome(
                 None,
                 (
                     stop(
                         "fluid-limit",
                         field,
-                        f"An absolute {field} above zero was wanted, {value:g} {unit} came.",
+                        f"An absolute {field} above {lowest:g} {unit} was wanted, {value:g} {unit} "
+                        "came.",
                     ),
                 ),
             )
@@ -65,6 +68,12 @@ def _state(fluid: Fluid, condition: Condition) -> Outcome:
     if wrong is None:
         return outcome
     return Outcome(replace(found, findings=(*found.findings, wrong)), ())
+
+
+def forget() -> None:
+    """Drop the states kept, so that the next ones use what was learnt since."""
+    _state.cache_clear()
+    _base.cache_clear()
 
 
 def base(fluid: Fluid, condition: Base) -> Outcome:

@@ -6,7 +6,7 @@ from collections.abc import Mapping
 from dataclasses import replace
 
 from specsheet.findings import Finding, Origin
-from specsheet.fluid.model import GAS_CONSTANT, caution, stop
+from specsheet.fluid.model import GAS_CONSTANT, caution
 from specsheet.fluid.phases import GAS, LIQUID, TWO_PHASE, disagreement
 from specsheet.fluid.state import Property, State
 from specsheet.quantity.value import Quantity
@@ -77,20 +77,7 @@ def apply(tag: Tag, point: Point, state: State, molar_mass: float | None) -> Sta
     _kinematic(values)
     if "vapour_pressure" in values and point.quantity("vapour_pressure") is not None:
         findings += _boiling(tag, state, values["vapour_pressure"].value)
-    findings += _missing(values, {item.code for item in findings})
     return replace(state, properties=values, findings=tuple(findings))
-
-
-def _missing(values: Mapping[str, Property], said: set[str]) -> list[Finding]:
-    """Return what to state where density or viscosity is known from nowhere."""
-    found = []
-    if "density" not in values:
-        text = "No density is known at this point: state it, or what it follows from."
-        found.append(stop("density-missing", "density", text))
-    if "viscosity" not in values and "viscosity-missing" not in said:
-        text = "No viscosity is known at this point: state it."
-        found.append(caution("viscosity-missing", "viscosity", text))
-    return found
 
 
 def _unusable(key: str, stated: float) -> list[Finding]:

@@ -4,7 +4,8 @@
    below one even 20 K colder (no dew point of 3000 random mixtures lay higher).
 2. Water: its fugacity in the gas against that in liquid water (or ice) at the same state.
 3. The rest: the tangent-plane test of a cubic equation, where it holds with room to spare.
-4. Near the edge: the dew point (gas) or bubble point (liquid) of the equation of state, with gates
+4. The phase envelope, where it was found beforehand (:mod:`specsheet.fluid.envelope`).
+5. Near the edge: the dew point (gas) or bubble point (liquid) of the equation of state, with gates
    that keep out false solutions.
 What none of them settles is "unverified", never guessed.
 """
@@ -18,7 +19,7 @@ from functools import lru_cache
 from typing import Any
 
 from specsheet.findings import Finding, Origin
-from specsheet.fluid import library, mixture_state, names
+from specsheet.fluid import envelope, library, mixture_state, names
 from specsheet.fluid.backends import pure, water
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.model import GAS_CONSTANT, Condition, Method, caution, celsius
@@ -38,6 +39,7 @@ NEAR = 3.0
 
 _ESTIMATE = Method("estimate from critical constants", cite("wilson"), 0.08, Origin.TYPICAL)
 _DEW = Method("dew point of the equation of state", cite("coolprop"), 0.01)
+_ENVELOPE = Method("phase envelope of the equation of state", cite("coolprop"), 0.01)
 _WATER_DEW = Method("water in the gas as in liquid water (fugacity)", cite("coolprop"), 0.005)
 _BUBBLE = Method("bubble point of the equation of state", cite("coolprop"), 0.03)
 
@@ -175,16 +177,31 @@ def _dry_verdict(composition: Composition, temperature: float, pressure: float) 
         return Verdict(GAS, _wilson(composition, pressure))
     if len(fractions) == 1:
         return _lone(composition, temperature, pressure)
+    found = envelope.known(without_water(composition))
+    if found is not None:
+        return _by_envelope(found, temperature, pressure)
     plain = _by_cubic(GAS, fractions, components, temperature, pressure)
     if plain == GAS:
         return Verdict(GAS)
-    dew = dew_temperature(_without_water(composition), pressure)
+    dew = dew_temperature(without_water(composition), pressure)
     if dew is None:
         return Verdict(plain)
     values = {"dew_temperature": _DEW(dew)}
     if temperature < dew:
         return Verdict(TWO_PHASE, values)
     return Verdict(GAS, values, _near(dew, temperature, "the gas"))
+
+
+def _by_envelope(found: envelope.Envelope, temperature: float, pressure: float) -> Verdict:
+    """Return the verdict on a gas whose phase envelope is known."""
+    crossings = found.crossings(pressure)
+    if not crossings:
+        return Verdict(GAS)  # above the highest pressure of two phases
+    values = {"dew_temperature": _ENVELOPE(crossings[-1])}
+    if temperature > crossings[-1]:
+        return Verdict(GAS, values, _near(crossings[-1], temperature, "the gas"))
+    colder = len(crossings) > 1 and temperature < crossings[0]
+    return Verdict(LIQUID if colder else TWO_PHASE, values)
 
 
 def _lone(composition: Composition, temperature: float, pressure: float) -> Verdict:
@@ -224,7 +241,8 @@ def _by_cubic(
 
 
 @lru_cache(maxsize=256)
-def _without_water(composition: Composition) -> Composition:
+def without_water(composition: Composition) -> Composition:
+    """Return a composition without its water, summing to one."""
     fractions, _ = _dry(composition)
     keys = [key for key, _ in composition if key != "water"]
     return tuple(zip(keys, fractions, strict=True))

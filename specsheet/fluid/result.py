@@ -6,9 +6,12 @@ from collections.abc import Mapping
 from dataclasses import replace
 
 from specsheet.findings import Finding, Level
-from specsheet.fluid import base_values, evaluate, given_values
+from specsheet.fluid import base_values, envelope, evaluate, given_values, mixture_phase
+from specsheet.fluid.backends.mixture import Mixture
+from specsheet.fluid.backends.wet_gas import WetGas
 from specsheet.fluid.build import fluid_of
 from specsheet.fluid.model import Condition, Fluid
+from specsheet.fluid.phases import UNVERIFIED
 from specsheet.fluid.state import FluidResult, Property, State
 from specsheet.quantity.value import Base
 from specsheet.tag import Point, Tag
@@ -34,6 +37,31 @@ def derive(tag: Tag) -> FluidResult:
         {**constants, **base_values.at_own_base(tag, bases)},
         _sorted((*built.findings, *findings, *base_findings)),
     )
+
+
+def settle(tag: Tag, seconds: float = 10.0) -> bool:
+    """Settle what :func:`derive` left unverified about the phase of a mixture.
+
+    Works in a process of its own, so it may be called from a thread while a screen stays alive.
+    Afterwards :func:`derive` uses what was found.
+
+    Args:
+        tag: the tag.
+        seconds: after which the search is given up, for good.
+
+    Returns:
+        whether anything was unverified and is settled now.
+    """
+    if all(state is None or state.phase != UNVERIFIED for state in derive(tag).points):
+        return False
+    found = fluid_of(tag).fluid
+    if not isinstance(found, (WetGas, Mixture)):
+        return False
+    whole = found.dry if isinstance(found, WetGas) else found.composition
+    if not envelope.settle(mixture_phase.without_water(whole), seconds):
+        return False
+    evaluate.forget()
+    return True
 
 
 def condition_of(tag: Tag, point: Point) -> Condition:

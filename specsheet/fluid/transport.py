@@ -78,10 +78,11 @@ def _nudged(equation: str, temperature: float, density: float) -> float | None:
     for factor in (0.999, 1.001):
         try:
             state.update(module.DmassT_INPUTS, density, temperature * factor)
-            found.append(state.viscosity())
+            found.append(float(state.viscosity()))
         except library.ERRORS:
             continue
-    return sum(found) / len(found) if found else None
+    sound = [value for value in found if math.isfinite(value) and value > 0.0]
+    return sum(sound) / len(sound) if sound else None
 
 
 @lru_cache(maxsize=256)
