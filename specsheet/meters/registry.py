@@ -26,6 +26,13 @@ MODULES = {
         "dall_tube",
         "cone",
         "wedge",
+        "nozzle_critical",
+        "pitot_tube",
+        "pitot_averaging",
+        "probe_multihole",
+        "laminar_element",
+        "variable_area_float",
+        "variable_area_spring",
         # Oscillating
         "vortex",
         # Electromagnetic

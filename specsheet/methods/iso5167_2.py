@@ -66,9 +66,8 @@ def _tapping_terms(
     beta: Any, ln_beta: Any, beta4: Any, shape: Any, inside_diameter: Any, taps: str
 ) -> Any:
     upstream, downstream = tapping_distances(taps=taps, inside_diameter=inside_diameter)
-    decay = np.exp(-upstream)
-    decay7 = decay**7
-    rise = 0.043 + 0.080 * decay7 * decay**3 - 0.123 * decay7
+    decay7 = np.exp(-7.0 * upstream)
+    rise = 0.043 + 0.080 * np.exp(-10.0 * upstream) - 0.123 * decay7
     result = rise * (1.0 - 0.11 * shape) * beta4 / (1.0 - beta4)
     if taps == "corner":
         return result
@@ -86,7 +85,8 @@ def expansibility(
         pressure_drop_ratio: Δp/p1, up to 0.25 [-]
         isentropic_exponent: κ [-]
     """
-    beta4 = diameter_ratio**4
+    beta2 = diameter_ratio * diameter_ratio
+    beta4 = beta2 * beta2
     factor = 0.351 + (0.256 + 0.93 * beta4) * beta4
     return 1.0 + factor * np.expm1(np.log1p(-pressure_drop_ratio) / isentropic_exponent)
 

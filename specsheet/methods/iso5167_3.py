@@ -11,6 +11,9 @@ from typing import Any
 
 import numpy as np
 
+#: smallest Δp/p1 told from none
+_NOTHING = 1e-300
+
 
 def expansibility(
     *, diameter_ratio: Any, pressure_drop_ratio: Any, isentropic_exponent: Any
@@ -25,18 +28,16 @@ def expansibility(
         pressure_drop_ratio: 1 - τ = Δp/p1, 0 to below 1 [-]
         isentropic_exponent: κ [-]
     """
-    beta4 = diameter_ratio**4
-    log_tau = np.log1p(-pressure_drop_ratio)
-    exponent = (1.0 - 1.0 / isentropic_exponent) * log_tau
+    beta2 = diameter_ratio * diameter_ratio
+    beta4 = beta2 * beta2
+    drop = np.maximum(pressure_drop_ratio, _NOTHING)
+    log_tau = np.log1p(-drop)
+    exponent = log_tau - log_tau / isentropic_exponent
     contraction = np.exp(2.0 * log_tau / isentropic_exponent)
-    work = _ratio(log_tau, -pressure_drop_ratio) * _ratio(np.expm1(exponent), exponent)
+    flat = np.abs(exponent) < _NOTHING
+    growth = (np.expm1(exponent) + flat) / (exponent + flat)
+    work = -log_tau / drop * growth
     return np.sqrt(contraction * (1.0 - beta4) / (1.0 - beta4 * contraction) * work)
-
-
-def _ratio(top: Any, bottom: Any) -> Any:
-    """Return top / bottom, and its limit 1 where both vanish."""
-    flat = np.abs(bottom) < 1e-300
-    return np.where(flat, 1.0, top / np.where(flat, 1.0, bottom))
 
 
 def isa_1932_coefficient(*, diameter_ratio: Any, reynolds_number: Any) -> Any:
@@ -81,4 +82,10 @@ def venturi_nozzle_expansibility_uncertainty(
 
     The same in ISO 5167-4:2003, 5.7.2.
     """
-    return (0.04 + diameter_ratio**8) * pressure_drop_ratio
+    return (0.04 + _eighth(diameter_ratio)) * pressure_drop_ratio
+
+
+def _eighth(ratio: Any) -> Any:
+    square = ratio * ratio
+    fourth = square * square
+    return fourth * fourth

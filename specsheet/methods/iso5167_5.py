@@ -31,7 +31,8 @@ def expansibility(
     *, diameter_ratio: Any, pressure_drop_ratio: Any, isentropic_exponent: Any
 ) -> Any:
     """Return ε = 1 - (0.649 + 0.696 β⁴) Δp/(κ p1) [-], p2/p1 from 0.75."""
-    factor = 0.649 + 0.696 * diameter_ratio**4
+    square = diameter_ratio * diameter_ratio
+    factor = 0.649 + 0.696 * square * square
     return 1.0 - factor * pressure_drop_ratio / isentropic_exponent
 
 

@@ -33,19 +33,19 @@ def prepare(
     return Prepared(found, choices or {}, values or {}, findings)
 
 
-def is_calibrated(request: Request) -> bool:
-    """Tell whether a calibrated coefficient is stated."""
-    return request.tag.get("meter.discharge_coefficient") is not None
-
-
-def calibration_wanted(request: Request, why: str, level: Level = Level.CAUTION) -> Finding | None:
+def calibration_wanted(
+    request: Request,
+    why: str,
+    level: Level = Level.CAUTION,
+    entry: str = "meter.discharge_coefficient",
+) -> Finding | None:
     """Return the finding that the device must be calibrated, unless it is."""
-    if is_calibrated(request):
+    if entry in request.tag.given and request.tag.quantity(entry) is not None:
         return None
     return Finding(
         level,
         "calibration-wanted",
-        "meter.discharge_coefficient",
+        entry,
         f"{why}; ask for a flow calibration over the Reynolds numbers of the range and state the "
         "coefficient found",
         source=PRACTICE,
@@ -56,3 +56,8 @@ def typical(request: Request, name: str) -> Given:
     """Return a figure usual for the family, from its profile."""
     figure = request.profile.typical[name]
     return Given(figure.value, Origin.TYPICAL, figure.source)
+
+
+def figure(request: Request, name: str) -> float:
+    """Return the value of such a figure (SI)."""
+    return request.profile.typical[name].value

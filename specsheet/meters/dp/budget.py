@@ -94,7 +94,7 @@ def _dimensions(element: Element, diameter_ratio: Array) -> tuple[Contribution, 
     )
 
 
-def density(stream: Stream, exponent: float = 0.5) -> Contribution:
+def density(stream: Stream, exponent: float | Array = 0.5) -> Contribution:
     """Return what the density adds; ``exponent`` is the flow's by density's relative change."""
     return Contribution(
         "density",

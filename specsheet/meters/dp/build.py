@@ -11,6 +11,7 @@ from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.dp import budget, sizing, transmitter
 from specsheet.meters.dp.derivations import COMMON
 from specsheet.meters.dp.device import Device
+from specsheet.meters.dp.notes import output_note
 from specsheet.meters.dp.response import respond
 from specsheet.meters.family import Derivation, Element, Family, Given, Limit, Request
 from specsheet.sources import PRACTICE, cite
@@ -76,18 +77,9 @@ def size(device: Device, request: Request) -> Element:
 def _notes(
     request: Request, described: Mapping[str, tuple[str, ...]], tappings: tuple[str, ...]
 ) -> dict[str, tuple[str, ...]]:
-    output = request.tag.text("meter.output_characteristic")
     notes = dict(described)
     notes["installation"] = (*notes.get("installation", ()), *tappings)
-    if output == "linear in flow":
-        notes["output"] = (
-            "The transmitter extracts the square root: its output is linear in flow.",
-        )
-    elif output:
-        notes["output"] = (
-            "The transmitter's output is linear in differential pressure; the receiver extracts "
-            "the square root, once.",
-        )
+    notes |= output_note(request.tag)
     return notes
 
 
@@ -110,34 +102,10 @@ def _unchecked(numbers: Mapping[str, float]) -> tuple[Finding, ...]:
 
 def limits(device: Device, element: Element, request: Request) -> tuple[Limit, ...]:
     """Return the device's own limits and those of the transmitter."""
-    cut_off = element.numbers["cut_off"]
-    found = [
+    return (
         *device.limits(element, request),
-        Limit(
-            key="signal_fraction",
-            low=None,
-            high=1.0 + 1e-9,
-            level=Level.STOP,
-            code="above-range",
-            message="the differential pressure is above the upper range value: the transmitter "
-            "does not show it; widen the range or the bore",
-            source=f"meter.{sizing.RANGE}",
-        ),
-    ]
-    if cut_off:
-        found.append(
-            Limit(
-                key="signal_fraction",
-                low=cut_off * cut_off,
-                high=None,
-                level=Level.CAUTION,
-                code="below-cut-off",
-                message="the flow is below the low-flow cut-off: the output shows none; lower the "
-                "cut-off, or add a second transmitter",
-                source="meter.low_cut_off",
-            )
-        )
-    return tuple(found)
+        *transmitter.limits(element.numbers, f"meter.{sizing.RANGE}"),
+    )
 
 
 def standard_limits(

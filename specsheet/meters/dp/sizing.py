@@ -193,7 +193,7 @@ def _both(of: Task) -> Sized:
             + (spans > bounds.largest_differential)
             + (~np.isnan(stream.isentropic_exponent))
             * (spans > bounds.largest_drop * stream.pressure)
-            + (loss * back * back > _largest_loss(of.request))
+            + _excess(loss * back * back, _largest_loss(of.request))
             + (spans >= stream.pressure - np.nan_to_num(stream.vapour_pressure))
         )
         score = np.where(~(ratios < _WIDEST), np.inf, abs(ratios - bounds.target) + 10.0 * broken)
@@ -205,6 +205,11 @@ def _both(of: Task) -> Sized:
     if score[index] < 10.0:
         return sized
     return replace(sized, findings=(_no_match(of, float(spans[index])),))
+
+
+def _excess(loss: Array, allowed: float) -> Array:
+    """Return 0 where the loss is allowed, above 1 and rising with the loss where it is not."""
+    return np.where(loss > allowed, 1.0 + np.log(np.maximum(loss / allowed, 1.0)), 0.0)
 
 
 def _largest_loss(request: Request) -> float:

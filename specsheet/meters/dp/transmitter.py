@@ -8,7 +8,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from specsheet.findings import Finding, Level, Origin
-from specsheet.meters.family import Array, Contribution, Given, Request
+from specsheet.meters.family import Array, Contribution, Given, Limit, Request
 from specsheet.methods import signal
 from specsheet.sources import PRACTICE
 
@@ -52,7 +52,7 @@ def contributions(
     numbers: Mapping[str, float],
     choices: Mapping[str, str],
     differential_pressure: Array,
-    exponent: float = 0.5,
+    exponent: float | Array = 0.5,
 ) -> tuple[Contribution, ...]:
     """Return what the transmitter adds to the uncertainty of the flow.
 
@@ -82,6 +82,42 @@ def contributions(
                     source=f"meter.{key}",
                 )
             )
+    return tuple(found)
+
+
+def limits(numbers: Mapping[str, float], entry: str) -> tuple[Limit, ...]:
+    """Return the limits of the signal: the upper range value and the low-flow cut-off.
+
+    Args:
+        numbers: of the element: "cut_off", share of the upper range flow [-].
+        entry: path of the entry that states the range.
+    """
+    cut_off = numbers["cut_off"]
+    found = [
+        Limit(
+            key="signal_fraction",
+            low=None,
+            high=1.0 + 1e-9,
+            level=Level.STOP,
+            code="above-range",
+            message="the differential pressure is above the upper range value: the transmitter "
+            "does not show it; widen the range or the bore",
+            source=entry,
+        ),
+    ]
+    if cut_off:
+        found.append(
+            Limit(
+                key="signal_fraction",
+                low=cut_off * cut_off,
+                high=None,
+                level=Level.CAUTION,
+                code="below-cut-off",
+                message="the flow is below the low-flow cut-off: the output shows none; lower the "
+                "cut-off, or add a second transmitter",
+                source="meter.low_cut_off",
+            )
+        )
     return tuple(found)
 
 

@@ -1,0 +1,178 @@
+"""Families that read a differential pressure without throttling the flow: range, signals, legs."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Mapping
+
+import numpy as np
+
+from specsheet.findings import Finding, Level, Origin
+from specsheet.meters.dp import transmitter
+from specsheet.meters.dp.notes import output_note
+from specsheet.meters.dp.response import signals
+from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request, Stream
+from specsheet.methods import iso5167_1 as equation
+from specsheet.sources import PRACTICE
+
+RANGE = "differential_pressure_range"
+
+#: numbers and choices -> response to a stream
+Respond = Callable[[Mapping[str, float], Mapping[str, str], Stream], Mapping[str, Array]]
+
+#: derivations that these families share with the throttling ones
+SHARED = (
+    "inside_diameter_hot",
+    "velocity",
+    "reynolds_number",
+    "pressure_loss_coefficient",
+    "dynamic_pressure",
+    "signal_fraction",
+    "signal_current",
+    "signal_current_root",
+    "differential_pressure_range",
+    "upper_range_flow",
+    "second_range",
+    "calibrated_range_low",
+    "calibrated_range_high",
+)
+
+
+def base_numbers(request: Request) -> dict[str, float]:
+    """Return the numbers of pipe and transmitter."""
+    return {
+        "inside_diameter": request.pipe.inside_diameter,
+        "pipe_expansion": request.pipe.expansion,
+        "cut_off": request.tag.si("meter.low_cut_off") or 0.0,
+        "second_range": request.tag.si("meter.second_range") or 0.0,
+        "pipe_diameter_uncertainty": request.tag.si("meter.pipe_diameter_uncertainty") or 0.0,
+        **transmitter.error_numbers(request),
+    }
+
+
+def pipe_values(numbers: Mapping[str, float], stream: Stream) -> dict[str, Array]:
+    """Return velocity, Reynolds number and momentum flux in the pipe; arrays of shape (n,)."""
+    inside = hot_diameter(numbers, stream)
+    velocity = stream.volume_flow / (np.pi / 4.0 * inside**2)
+    return {
+        "velocity": velocity,
+        "reynolds_number": equation.reynolds_number(
+            mass_flow=stream.mass_flow, diameter=inside, viscosity=stream.viscosity
+        ),
+        "dynamic_pressure": stream.density * velocity**2,
+    }
+
+
+def hot_diameter(numbers: Mapping[str, float], stream: Stream) -> Array:
+    """Return the inside diameter of the pipe at operating temperature [m], shape (n,)."""
+    hot: Array = equation.grown(
+        length=numbers["inside_diameter"],
+        expansion=numbers["pipe_expansion"],
+        temperature=stream.temperature,
+    )
+    return hot
+
+
+def with_signals(numbers: Mapping[str, float], values: Mapping[str, Array]) -> dict[str, Array]:
+    """Return the values with the loss coefficient and the transmitter's outputs added."""
+    return {
+        **values,
+        "pressure_loss_coefficient": values["pressure_loss"] / (0.5 * values["dynamic_pressure"]),
+        **signals(numbers, values["differential_pressure"]),
+    }
+
+
+def element(
+    request: Request,
+    respond: Respond,
+    *,
+    numbers: Mapping[str, float],
+    choices: Mapping[str, str],
+    values: Mapping[str, Given],
+    notes: Mapping[str, tuple[str, ...]],
+    findings: tuple[Finding, ...] = (),
+    tapping_distance: float = 0.0,
+    origin_keys: tuple[str, ...] = (),
+) -> Element:
+    """Choose the range where it is free and put the element together."""
+    tag = request.tag
+    margin = 1.0 + (tag.si("meter.margin") or 0.0)
+    choices = {**transmitter.origins(request, (*transmitter.ERRORS, *origin_keys)), **choices}
+    stated = tag.si(f"meter.{RANGE}")
+    span, more = (
+        (stated, ()) if stated is not None else _range(request, respond, numbers, choices, margin)
+    )
+    origin = tag.origin(f"meter.{RANGE}") if stated is not None else Origin.DERIVED
+    complete = {**numbers, "range": span}
+    top = _upper_flow(request, respond, complete, choices, span)
+    legs = transmitter.legs(request, span, tapping_distance)
+    inside = float(hot_diameter(complete, request.stream)[request.normal])
+    printed = {
+        **values,
+        "inside_diameter_hot": Given(inside, Origin.DERIVED, "thermal growth"),
+        RANGE: Given(span, origin, PRACTICE),
+        "upper_range_flow": Given(top, Origin.DERIVED, "response at the upper range value"),
+        **legs.values,
+    }
+    if numbers["second_range"]:
+        printed["second_range"] = Given(
+            numbers["second_range"], tag.origin("meter.second_range"), ""
+        )
+    installation = (*notes.get("installation", ()), *legs.notes)
+    return Element(
+        numbers={**complete, "upper_range_flow": top},
+        values=printed,
+        notes={**notes, "installation": installation, **output_note(tag)},
+        findings=(*findings, *more, *legs.findings),
+        choices=choices,
+    )
+
+
+def _range(
+    request: Request,
+    respond: Respond,
+    numbers: Mapping[str, float],
+    choices: Mapping[str, str],
+    margin: float,
+) -> tuple[float, tuple[Finding, ...]]:
+    """Return the preferred range above the largest Δp, and a finding where there is none."""
+    stream = request.stream.with_flow(request.stream.mass_flow * margin)
+    found = respond({**numbers, "range": 1.0}, choices, stream)["differential_pressure"]
+    if not np.isfinite(found).any():
+        return float(transmitter.SERIES[-1]), (
+            Finding(
+                Level.STOP,
+                "differential-pressure-impossible",
+                f"meter.{RANGE}",
+                "no differential pressure can be found at any operating point; check flow, pipe "
+                "size and the entries of the meter",
+            ),
+        )
+    return transmitter.next_range(float(np.nanmax(found))), ()
+
+
+def _upper_flow(
+    request: Request,
+    respond: Respond,
+    numbers: Mapping[str, float],
+    choices: Mapping[str, str],
+    span: float,
+) -> float:
+    """Return the flow at the upper range value, at the conditions of the largest flow [kg/s]."""
+    index: np.ndarray = np.array([request.maximum])
+    stream = request.stream.take(index)
+
+    def step(flow: Array) -> Array:
+        drop = respond(numbers, choices, stream.with_flow(flow))["differential_pressure"]
+        return flow * np.sqrt(span / drop)
+
+    return float(equation.fixed_point(step, stream.mass_flow)[0])
+
+
+def limits(element: Element) -> tuple[Limit, ...]:
+    """Return the limits of the transmitter."""
+    return transmitter.limits(element.numbers, f"meter.{RANGE}")
+
+
+def shared_derivations(common: tuple[Derivation, ...]) -> tuple[Derivation, ...]:
+    """Return those of the group's derivations that apply."""
+    return tuple(item for item in common if item.key in SHARED)
