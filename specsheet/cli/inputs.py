@@ -2,12 +2,12 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 
 from specsheet import job, tagfile
 from specsheet.cli.narrate import say
 from specsheet.job import Scan
-from specsheet.tagfile import Reading
+from specsheet.tagfile import Change, Reading
 
 
 def read_all(paths: Iterable[str]) -> Scan:
@@ -18,11 +18,28 @@ def read_all(paths: Iterable[str]) -> Scan:
     return found
 
 
-def read_one(path: str) -> tuple[Reading, bool]:
-    """Read one tag file within its job, narrate the problems; tell whether there were any."""
+def read_one(path: str, changes: Sequence[Change] = ()) -> tuple[Reading, bool]:
+    """Read one tag file within its job, narrate the problems; tell whether there were any.
+
+    With ``changes`` the entries hold those values instead; a change that is refused gives no tag.
+    """
     home = tagfile.find_job(path)
     reading = tagfile.load(path, home)
     problems = (*home.problems, *reading.problems)
     for problem in problems:
         say(str(problem))
-    return reading, bool(problems)
+    if changes and reading.tag is not None:
+        reading = supposed(path, changes)
+    return reading, bool(problems) or reading.tag is None
+
+
+def supposed(path: str, changes: Sequence[Change]) -> Reading:
+    """Read one tag file as if its entries held other values; narrate a refusal, without a tag."""
+    text = tagfile.read_text(path)
+    if not isinstance(text, str):
+        return Reading(None, (text,))
+    try:
+        return tagfile.suppose(text, changes, path, tagfile.find_job(path))
+    except tagfile.EditError as refused:
+        say(f"{path}: --set {refused}")
+        return Reading(None)

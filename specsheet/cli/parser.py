@@ -2,7 +2,12 @@
 
 from __future__ import annotations
 
-from argparse import ArgumentParser, RawDescriptionHelpFormatter, _SubParsersAction
+from argparse import (
+    ArgumentParser,
+    ArgumentTypeError,
+    RawDescriptionHelpFormatter,
+    _SubParsersAction,
+)
 from collections.abc import Callable
 
 from specsheet import __version__
@@ -110,6 +115,7 @@ def _derive(commands: Commands[ArgumentParser]) -> None:
     derive.add_argument("file", help="tag file")
     derive.add_argument("--json", action="store_true", help="JSON with SI numbers")
     derive.add_argument("--strict", action="store_true", help=_STRICT_HELP)
+    _add_set(derive)
 
 
 def _check(commands: Commands[ArgumentParser]) -> None:
@@ -123,6 +129,43 @@ def _check(commands: Commands[ArgumentParser]) -> None:
     check.add_argument("paths", nargs="*", default=["."], help=_FILES_HELP)
     check.add_argument("--strict", action="store_true", help=_STRICT_HELP)
     check.add_argument("--all", action="store_true", help="list notes too")
+    _add_set(check)
+
+
+def _add_set(command: ArgumentParser) -> None:
+    command.add_argument(
+        "--set",
+        action="append",
+        default=[],
+        type=_change,
+        metavar="ENTRY=VALUE",
+        help='suppose another value, as points.maximum.flow="140 m3/h"; the file stays as it is; '
+        "may be repeated",
+    )
+
+
+def _change(text: str) -> tuple[str, str]:
+    path, sign, value = text.partition("=")
+    if not sign or not path.strip():
+        raise ArgumentTypeError(
+            f'ENTRY=VALUE was wanted, as points.maximum.flow="140 m3/h"; {text!r} came'
+        )
+    return path.strip(), value.strip()
+
+
+def _whatif(commands: Commands[ArgumentParser]) -> None:
+    more = (
+        "The file stays as it is. A size that is free is chosen anew at every value; state the\n"
+        "size under [meter], or with --set, to see one meter over the whole range."
+    )
+    whatif = _command(commands, "whatif", "table of the verdict against one figure", more)
+    whatif.add_argument("file", help="tag file")
+    whatif.add_argument("--vary", required=True, metavar="ENTRY", help="as points.maximum.flow")
+    whatif.add_argument("--from", required=True, dest="first", help='first value, as "80 m3/h"')
+    whatif.add_argument("--to", required=True, dest="last", help='last value, as "200 m3/h"')
+    whatif.add_argument("--steps", type=int, default=7, help="number of values (default: 7)")
+    whatif.add_argument("--json", action="store_true", help="JSON with SI numbers")
+    _add_set(whatif)
 
 
 def _shortlist(commands: Commands[ArgumentParser]) -> None:
@@ -182,6 +225,7 @@ _COMMANDS: tuple[Callable[[Commands[ArgumentParser]], None], ...] = (
     _new,
     _derive,
     _check,
+    _whatif,
     _shortlist,
     _print,
     _families,

@@ -11,6 +11,7 @@
 * :mod:`specsheet.evaluate.checks`   checks, findings and bands
 * :mod:`specsheet.evaluate.summary`  turndown and cost
 * :mod:`specsheet.evaluate.shortlist` every family held against one tag
+* :mod:`specsheet.evaluate.whatif`   the verdict against one figure
 * :mod:`specsheet.evaluate.assemble` arrays to results with origin and source
 """
 

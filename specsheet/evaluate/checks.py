@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
+from math import log
 
 import numpy as np
 
@@ -53,20 +54,16 @@ def check_limits(
         grid: response over :func:`specsheet.evaluate.reserve.scaled`; None for no reserves.
     """
     driven = [limit for limit in limits if _driven_by_flow(limit, values)]
-    flips = (
-        find_flips(model, request.stream, driven, [grid[limit.key] for limit in driven])
-        if grid is not None
-        else NO_FLIPS
-    )
+    flips = NO_FLIPS if grid is None else find_flips(model, request.stream, driven, grid)
+    crossings = _by_limit(flips, len(driven))
     checks: list[Check] = []
     findings: list[Finding] = []
     bands: list[Band] = []
-    for index, limit in enumerate(driven):
-        mine = flips.limit == index
-        judged = _judge_flow(request, limit, values[limit.key], flips, mine)
+    for limit, own in zip(driven, crossings, strict=True):
+        judged = _judge_flow(request, limit, values[limit.key], own)
         checks.append(judged)
         findings.extend(_findings(request, limit, judged, values[limit.key]))
-        band = _band(request, limit, flips, mine)
+        band = _band(request, limit, own)
         if band is not None:
             bands.append(band)
     for limit in limits:
@@ -83,30 +80,49 @@ def _driven_by_flow(limit: Limit, values: Mapping[str, Array]) -> bool:
     return limit.driver == "mass_flow" and found is not None and not bool(np.isnan(found).all())
 
 
+@dataclass(frozen=True, slots=True)
+class _Crossing:
+    """One flip of one limit: at which point, at which flow factor, and in which sense."""
+
+    point: int
+    factor: float
+    rising: bool
+
+    @property
+    def distance(self) -> float:
+        return abs(log(self.factor))
+
+
+def _by_limit(flips: Flips, count: int) -> list[list[_Crossing]]:
+    found: list[list[_Crossing]] = [[] for _ in range(count)]
+    rows = (flips.limit, flips.point, flips.factor, flips.rising)
+    for limit, point, factor, rising in zip(*(row.tolist() for row in rows), strict=True):
+        found[limit].append(_Crossing(point, factor, rising))
+    return found
+
+
 def _judge_flow(
-    request: Request, limit: Limit, values: Array, flips: Flips, mine: np.ndarray
+    request: Request, limit: Limit, values: Array, crossings: Sequence[_Crossing]
 ) -> Check:
     """Judge a limit that the flow drives, at the point where it is tightest."""
-    inside = margin(limit, values)
-    nearest = np.full(values.size, np.inf)  # |log of the factor| to the nearest crossing
-    for point, factor in zip(flips.point[mine], flips.factor[mine], strict=True):
-        distance = abs(np.log(factor))
-        if distance < abs(nearest[point]):
-            nearest[point] = np.log(factor)
-    broken = inside < 0.0
-    distance = np.abs(nearest)
-    if not np.isfinite(distance).any():
-        worst = int(inside.argmin())
-    elif broken.any():
-        worst = int(np.argmax(np.where(broken, distance, -1.0)))
+    inside = margin(limit, values).tolist()
+    broken = [index for index, share in enumerate(inside) if share < 0.0]
+    nearest: dict[int, _Crossing] = {}
+    for crossing in sorted(crossings, key=lambda item: -item.distance):
+        nearest[crossing.point] = crossing
+    if broken and any(index in nearest for index in broken):
+        known = [index for index in broken if index in nearest]
+        worst = max(known, key=lambda index: nearest[index].distance)
+    elif broken or not nearest:
+        worst = inside.index(min(inside))
     else:
-        worst = int(np.argmin(distance))
+        worst = min(nearest, key=lambda index: nearest[index].distance)
     reserve = None
-    if np.isfinite(nearest[worst]):
-        factor = float(np.exp(nearest[worst]))
+    if worst in nearest:
+        factor = nearest[worst].factor
         flow = float(request.stream.mass_flow[worst])
         reserve = Reserve("mass_flow", flow * factor, factor - 1.0)
-    return _check(request, limit, worst, float(values[worst]), not broken.any(), reserve)
+    return _check(request, limit, worst, float(values[worst]), not broken, reserve)
 
 
 def _judge_state(
@@ -227,16 +243,16 @@ def _field(check: Check) -> str:
     return f"points.{check.point}.{own}"
 
 
-def _band(request: Request, limit: Limit, flips: Flips, mine: np.ndarray) -> Band | None:
+def _band(request: Request, limit: Limit, crossings: Sequence[_Crossing]) -> Band | None:
     """Return the window of flow around the normal point in which the limit holds."""
-    here = mine & (flips.point == request.normal)
-    if not here.any():
+    here = [crossing for crossing in crossings if crossing.point == request.normal]
+    if not here:
         return None
     flow = float(request.stream.mass_flow[request.normal])
-    starts = flips.factor[here & flips.rising]
-    ends = flips.factor[here & ~flips.rising]
-    low = flow * float(starts.min()) if starts.size else None
-    high = flow * float(ends.max()) if ends.size else None
+    starts = [crossing.factor for crossing in here if crossing.rising]
+    ends = [crossing.factor for crossing in here if not crossing.rising]
+    low = flow * min(starts) if starts else None
+    high = flow * max(ends) if ends else None
     return Band(in_sentence(limit.key), low, high, limit.level)
 
 
@@ -246,6 +262,6 @@ def _tightest_first(bands: list[Band], request: Request) -> list[Band]:
     def width(band: Band) -> float:
         low = band.low or flow * FACTORS[0]
         high = band.high or flow * FACTORS[-1]
-        return float(np.log(high / low))
+        return log(high / low)
 
     return sorted(bands, key=width)

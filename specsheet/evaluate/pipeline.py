@@ -35,13 +35,12 @@ def evaluate(tag: Tag) -> Evaluation:
     """Evaluate one tag. Never raises on user data: what is wrong is among the findings."""
     profile = packs.profile(tag.family) if tag.family in packs.family_keys() else None
     prepared = prepare(tag)
-    state, points = prepared.fluid, prepared.points
+    state = prepared.fluid
     findings = [*prepared.findings(profile)]
     evaluation = Evaluation(
         tag=tag,
         profile=profile,
         fluid_name=state.name,
-        points=assemble.point_results(tag, state, points, {}, {}),
         base=_base(tag, state),
         fluid={key: assemble.property_result(found) for key, found in state.constants.items()},
         line=_printed(prepared.pipe.values),
@@ -60,7 +59,7 @@ def evaluate(tag: Tag) -> Evaluation:
         evaluation = _with_meter(evaluation, family, request, prepared, findings)
         evaluation = replace(evaluation, checks=(*evaluation.checks, *service.checks))
     else:
-        evaluation = _without_meter(evaluation, prepared.pipe.pipe, state, findings)
+        evaluation = _without_meter(evaluation, prepared, findings)
     return _finished(evaluation, findings)
 
 
@@ -131,13 +130,15 @@ def _with_meter(
 
 
 def _without_meter(
-    evaluation: Evaluation, pipe: line.Pipe | None, state: FluidResult, findings: list[Finding]
+    evaluation: Evaluation, prepared: Prepared, findings: list[Finding]
 ) -> Evaluation:
     """Return the evaluation with what the line alone can say; adds to ``findings``."""
-    beside = line.assess(evaluation.tag, evaluation.profile, pipe, state)
+    tag = evaluation.tag
+    beside = line.assess(tag, evaluation.profile, prepared.pipe.pipe, prepared.fluid)
     findings.extend(beside.findings)
     return replace(
         evaluation,
+        points=assemble.point_results(tag, prepared.fluid, prepared.points, {}, {}),
         line={**evaluation.line, **_printed(beside.values)},
         notes=beside.notes,
     )
@@ -175,10 +176,12 @@ def _printed(values: Mapping[str, Given]) -> dict[str, Result]:
 
 def _finished(evaluation: Evaluation, findings: Iterable[Finding]) -> Evaluation:
     """Return the evaluation with its findings sorted, worst first, without repeats."""
-    unique = dict.fromkeys(replace(item, message=_sentence(item.message)) for item in findings)
+    unique = dict.fromkeys(_sentence(item) for item in findings)
     return replace(evaluation, findings=tuple(sorted(unique, key=lambda item: _RANK[item.level])))
 
 
-def _sentence(text: str) -> str:
-    """Return a message as a sentence: a capital at its head, a full stop at its end."""
-    return f"{text[:1].upper()}{text[1:]}{'' if text.endswith(('.', '!', '?')) else '.'}"
+def _sentence(finding: Finding) -> Finding:
+    """Return a finding whose message is a sentence: a capital at its head, a stop at its end."""
+    text = finding.message
+    whole = f"{text[:1].upper()}{text[1:]}{'' if text.endswith(('.', '!', '?')) else '.'}"
+    return finding if whole == text else replace(finding, message=whole)

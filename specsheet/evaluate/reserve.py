@@ -6,7 +6,7 @@ the crossing is closed in on. All limits and points share each call of the model
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 
 import numpy as np
@@ -44,16 +44,50 @@ class Flips:
 NO_FLIPS = Flips(np.empty(0, np.intp), np.empty(0, np.intp), np.empty(0), np.empty(0, np.bool_))
 
 
-def margin(limit: Limit, values: Array) -> Array:
-    """Return how far inside its bounds a value is, relative to the bound; negative is outside.
+@dataclass(frozen=True)
+class Bounds:
+    """The bounds of k limits as columns of shape (k, 1), infinite where a limit has none.
 
-    NaN (an impossible state) counts as outside by one.
+    ``low_scale`` and ``high_scale`` make a margin relative to its bound (1 where that is zero).
     """
-    inside = np.full(values.shape, np.inf)
-    for bound, sign in ((limit.low, 1.0), (limit.high, -1.0)):
-        if bound is not None:
-            inside = np.fmin(inside, sign * (values - bound) / (abs(bound) or 1.0))
-    return np.where(np.isnan(values), -1.0, np.clip(inside, -1e9, 1e9))
+
+    low: Array
+    high: Array
+    low_scale: Array
+    high_scale: Array
+
+    @classmethod
+    def of(cls, limits: Sequence[Limit]) -> Bounds:
+        """Return the bounds of limits."""
+        low = [-np.inf if limit.low is None else limit.low for limit in limits]
+        high = [np.inf if limit.high is None else limit.high for limit in limits]
+        scales = (
+            [abs(limit.low or 1.0) for limit in limits],
+            [abs(limit.high or 1.0) for limit in limits],
+        )
+        return cls(*(np.array([column]).T for column in (low, high, *scales)))
+
+    def take(self, rows: NDArray[np.intp]) -> Bounds:
+        """Return the bounds of the chosen limits (repeats allowed)."""
+        return Bounds(self.low[rows], self.high[rows], self.low_scale[rows], self.high_scale[rows])
+
+    def margins(self, values: Array) -> Array:
+        """Return how far inside its bounds each value is; shape (k, m) as ``values``.
+
+        Relative to the bound; negative is outside. NaN (an impossible state) counts as outside by
+        one.
+        """
+        inside = np.minimum(
+            (values - self.low) / self.low_scale, (self.high - values) / self.high_scale
+        )
+        clipped = np.minimum(np.maximum(inside, -1e9), 1e9)
+        return np.asarray(np.where(np.isnan(values), -1.0, clipped))
+
+
+def margin(limit: Limit, values: Array) -> Array:
+    """Return the margins of one limit, shape (n,) as ``values``; see :meth:`Bounds.margins`."""
+    margins: Array = Bounds.of([limit]).margins(values[None])[0]
+    return margins
 
 
 def scaled(stream: Stream) -> Stream:
@@ -64,7 +98,7 @@ def scaled(stream: Stream) -> Stream:
 
 
 def find_flips(
-    model: Model, stream: Stream, limits: Sequence[Limit], grid: Sequence[Array]
+    model: Model, stream: Stream, limits: Sequence[Limit], grid: Mapping[str, Array]
 ) -> Flips:
     """Return all crossings of all limits at all points.
 
@@ -72,58 +106,70 @@ def find_flips(
         model: the meter.
         stream: the operating points, n of them.
         limits: limits driven by the flow.
-        grid: for each limit, the values over :func:`scaled`, shape (n * len(FACTORS),).
+        grid: response over :func:`scaled`, each of shape (n * len(FACTORS),).
     """
-    count = stream.mass_flow.size
-    shape = (len(limits), count, FACTORS.size)
-    margins = np.array(
-        [margin(limit, values) for limit, values in zip(limits, grid, strict=True)]
-    ).reshape(shape)
+    if not limits:
+        return NO_FLIPS
+    bounds = Bounds.of(limits)
+    values = np.array([grid[limit.key] for limit in limits])
+    shape = (len(limits), stream.mass_flow.size, FACTORS.size)
+    margins = bounds.margins(values).reshape(shape)
     holds = margins >= 0.0
     of_limit, of_point, of_step = np.nonzero(holds[..., 1:] != holds[..., :-1])
-    flips = Flips(
-        of_limit,
-        of_point,
-        np.empty(of_limit.size),
-        holds[of_limit, of_point, of_step + 1],
+    if not of_limit.size:
+        return NO_FLIPS
+    search = _Search(
+        model,
+        stream.take(np.repeat(of_point, _CUTS.size)),
+        bounds.take(of_limit),
+        [limits[index].key for index in of_limit.tolist()],
     )
-    if of_limit.size:
-        logs = np.log(FACTORS)
-        low, high = logs[of_step], logs[of_step + 1]
-        at_low = margins[of_limit, of_point, of_step]
-        at_high = margins[of_limit, of_point, of_step + 1]
-        flips.factor[:] = _close_in(model, stream, limits, flips, (low, high), (at_low, at_high))
-    return flips
+    logs = np.log(FACTORS)
+    factor = search.close_in(
+        (logs[of_step], logs[of_step + 1]),
+        (margins[of_limit, of_point, of_step], margins[of_limit, of_point, of_step + 1]),
+    )
+    return Flips(of_limit, of_point, factor, holds[of_limit, of_point, of_step + 1])
 
 
-def _close_in(
-    model: Model,
-    stream: Stream,
-    limits: Sequence[Limit],
-    flips: Flips,
-    bracket: tuple[Array, Array],
-    ends: tuple[Array, Array],
-) -> Array:
-    """Narrow each bracket by cutting it into sections; return the factors.
+@dataclass(frozen=True)
+class _Search:
+    """The search inside k brackets at once.
 
-    Sections instead of interpolation, since some values jump (an error that steps up below a
-    Reynolds number) and a jump defeats interpolation.
+    Attributes:
+        model: the meter.
+        conditions: the point of each bracket, once for each cut, k * len(_CUTS) lanes.
+        bounds: bounds of the limit of each bracket.
+        keys: glossary key of the limit of each bracket.
     """
-    (low, high), (at_low, at_high) = bracket, ends
-    rows = np.arange(low.size)
-    conditions = stream.take(np.repeat(flips.point, _CUTS.size))
-    for _ in range(_ROUNDS):
-        cuts = low[:, None] + (high - low)[:, None] * _CUTS
-        lanes = conditions.with_flow(conditions.mass_flow * np.exp(cuts.ravel()))
-        values = model(lanes).values
-        found = np.empty(cuts.shape)
-        for index in np.unique(flips.limit):
-            mine = flips.limit == index
-            key = limits[index].key
-            found[mine] = margin(limits[index], values[key].reshape(cuts.shape)[mine])
-        edges = np.column_stack([low, cuts, high])
-        margins = np.column_stack([at_low, found, at_high])
-        step = np.argmax((margins[:, 1:] >= 0.0) != (margins[:, :1] >= 0.0), axis=1)
-        low, high = edges[rows, step], edges[rows, step + 1]
-        at_low, at_high = margins[rows, step], margins[rows, step + 1]
-    return np.exp(low - at_low * (high - low) / (at_high - at_low))
+
+    model: Model
+    conditions: Stream
+    bounds: Bounds
+    keys: Sequence[str]
+
+    def close_in(self, bracket: tuple[Array, Array], ends: tuple[Array, Array]) -> Array:
+        """Narrow each bracket (logarithms of the factor) by cuts; return the factors.
+
+        Cuts instead of interpolation, since some values jump (an error that steps up below a
+        Reynolds number) and a jump defeats interpolation.
+        """
+        (low, high), (at_low, at_high) = bracket, ends
+        rows = np.arange(low.size)
+        for _ in range(_ROUNDS):
+            cuts = low[:, None] + (high - low)[:, None] * _CUTS
+            edges = np.column_stack([low, cuts, high])
+            margins = np.column_stack([at_low, self._margins(cuts), at_high])
+            step = np.argmax((margins[:, 1:] >= 0.0) != (margins[:, :1] >= 0.0), axis=1)
+            low, high = edges[rows, step], edges[rows, step + 1]
+            at_low, at_high = margins[rows, step], margins[rows, step + 1]
+        return np.asarray(np.exp(low - at_low * (high - low) / (at_high - at_low)))
+
+    def _margins(self, cuts: Array) -> Array:
+        """Return the margins at the cuts, shape (k, len(_CUTS))."""
+        lanes = self.conditions.with_flow(self.conditions.mass_flow * np.exp(cuts.ravel()))
+        values = self.model(lanes).values
+        distinct = {key: place for place, key in enumerate(dict.fromkeys(self.keys))}
+        table = np.array([values[key] for key in distinct]).reshape(-1, *cuts.shape)
+        own = np.array([distinct[key] for key in self.keys])
+        return self.bounds.margins(table[own, np.arange(own.size)])

@@ -45,11 +45,12 @@ def document(evaluation: Evaluation) -> dict[str, Any]:
 
 
 def _values(values: Mapping[str, Result]) -> dict[str, Any]:
-    made = {key: _value(key, values[key]) for key in ordered(values)}
+    made = {key: value_data(key, values[key]) for key in ordered(values)}
     return {key: value for key, value in made.items() if value is not None}
 
 
-def _value(key: str, result: Result) -> dict[str, Any] | None:
+def value_data(key: str, result: Result) -> dict[str, Any] | None:
+    """Return one value as plain Python data; None where it is no number and no text."""
     held: dict[str, Any]
     if isinstance(result.value, str):
         held = {"value": result.value, "unit": ""}

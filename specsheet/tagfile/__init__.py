@@ -5,6 +5,7 @@
 * :class:`Document`  a text edited by path, every other line untouched
 * :func:`save`, :func:`stamp`  a file replaced whole or not at all
 * :func:`adopt`, :func:`with_family`  another family for the same tag
+* :func:`suppose`  a text with other values, read; the file stays as it is
 * :func:`new_text`  the text a new tag starts from
 * :func:`schema`  JSON Schema of the tag file
 """
@@ -18,11 +19,13 @@ from specsheet.tagfile.read import load, loads
 from specsheet.tagfile.save import SaveError, Stamp, save, stamp
 from specsheet.tagfile.schema import schema
 from specsheet.tagfile.source import read_text
+from specsheet.tagfile.suppose import Change, suppose
 
 __all__ = [
     "JOB_FILE",
     "NO_JOB",
     "Adoption",
+    "Change",
     "Document",
     "EditError",
     "Job",
@@ -40,5 +43,6 @@ __all__ = [
     "save",
     "schema",
     "stamp",
+    "suppose",
     "with_family",
 ]

@@ -5,7 +5,7 @@ from __future__ import annotations
 from argparse import Namespace
 from collections import Counter
 
-from specsheet.cli.inputs import read_all
+from specsheet.cli.inputs import read_all, supposed
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status, verdict
 from specsheet.evaluate import evaluate
@@ -16,7 +16,13 @@ def run(arguments: Namespace) -> Status:
     """Write one line a finding to stdout and the totals to stderr."""
     counts: Counter[Level] = Counter()
     scanned = read_all(arguments.paths)
-    tags = [reading.tag for reading in scanned.readings() if reading.tag is not None]
+    readings = scanned.readings()
+    refused = False
+    if arguments.set:
+        usable = [file.path for file in scanned.files if file.reading.tag is not None]
+        readings = tuple(supposed(str(path), arguments.set) for path in usable)
+        refused = any(reading.tag is None for reading in readings)
+    tags = [reading.tag for reading in readings if reading.tag is not None]
     for tag in tags:
         for finding in evaluate(tag).findings:
             counts[finding.level] += 1
@@ -26,7 +32,7 @@ def run(arguments: Namespace) -> Status:
         f"{len(tags)} tag{'s' if len(tags) != 1 else ''}: {counts[Level.STOP]} stop, "
         f"{counts[Level.CAUTION]} caution, {counts[Level.NOTE]} note"
     )
-    if scanned.all_problems:
+    if scanned.all_problems or refused:
         return Status.UNUSABLE
     return verdict(counts, strict=arguments.strict)
 

@@ -11,7 +11,7 @@ from specsheet.cli.status import Status, verdict
 
 def run(arguments: Namespace) -> Status:
     """Write the sheet of one tag to stdout; its problems go to stderr."""
-    reading, troubled = read_one(arguments.file)
+    reading, troubled = read_one(arguments.file, arguments.set)
     if reading.tag is None:
         return Status.UNUSABLE
 
