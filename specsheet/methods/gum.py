@@ -97,6 +97,8 @@ def effective_freedom(parts: Array, freedom: Array) -> Array:
 
     Source: JCGM 100:2008, G.4.1 (G.2b).
     """
+    if np.isinf(freedom).all():
+        return np.full(parts.shape[1], np.inf)
     fourth = np.sum(parts**4 / freedom[:, np.newaxis], axis=0)
     total = np.sum(parts**2, axis=0) ** 2
     unlimited = np.full_like(total, np.inf)
@@ -118,6 +120,8 @@ def coverage_factor(freedom: ArrayLike, *, level: float = TWO_SIGMA) -> Array:
         raise ValueError(f"a level of confidence between 0 and 1 was wanted, {level} came")
     if np.any(degrees < 1.0):
         raise ValueError("degrees of freedom must be at least 1")
+    if np.isinf(degrees).all():
+        return np.full(degrees.shape, _student(math.inf, level))
     whole = np.floor(degrees + 0.05)
     distinct, inverse = np.unique(whole, return_inverse=True)
     factors = np.array([_student(float(value), level) for value in distinct])
