@@ -4,14 +4,16 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass, field
+from typing import NamedTuple
 
 from specsheet.findings import Finding, Origin
 from specsheet.quantity.value import Base
 
 
-@dataclass(frozen=True, slots=True)
-class Property:
+class Property(NamedTuple):
     """One property of the fluid, with where it comes from.
+
+    A named tuple, since a state has a dozen and building them is most of its cost.
 
     Attributes:
         value: SI value of the term.
