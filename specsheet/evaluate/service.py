@@ -31,6 +31,8 @@ ENTRIES = {
 _CONDUCTS = 100.0
 #: gauge pressure above which there is no free surface [Pa]: half a metre of water
 _NO_SURFACE = 5000.0
+#: a line this much smaller than the smallest usual one has no room for the probe; common practice
+_FAR_BELOW = 0.5
 _IN_LIQUIDS = ("solids_fraction", "bubble_fraction", "scatterer_fraction")
 
 
@@ -216,12 +218,14 @@ def _size(prepared: Prepared, profile: Profile) -> Iterator[Finding]:
     if pipe is None or sizes is None or "closed pipe" in profile.applies_to:
         return
     line = pipe.nominal or 1000.0 * pipe.inside_diameter
-    if not sizes.low <= line <= sizes.high:
-        message = (
-            f"The line is DN {line:.0f}; DN {sizes.low} to DN {sizes.high} is usual for the "
-            "family. Have the bidder confirm it, or choose another family."
-        )
-        yield Finding(Level.CAUTION, "line-size-unusual", "line.size", message, source=sizes.source)
+    if sizes.low <= line <= sizes.high:
+        return
+    message = (
+        f"The line is DN {line:.0f}; DN {sizes.low} to DN {sizes.high} is usual for the family. "
+        "Have the bidder confirm it, or choose another family."
+    )
+    level = Level.STOP if line < _FAR_BELOW * sizes.low else Level.CAUTION
+    yield Finding(level, "line-size-unusual", "line.size", message, source=sizes.source)
 
 
 def _capital(text: str) -> str:

@@ -99,7 +99,7 @@ class Shortlist:
 def shortlist(tag: Tag) -> Shortlist:
     """Hold every family against one tag. Never raises on user data."""
     prepared = prepare(tag)
-    found = [_candidate(prepared, packs.profile(key)) for key in packs.family_keys()]
+    found = [candidate(prepared, packs.profile(key)) for key in packs.family_keys()]
     common = prepared.findings(None)
     worst = sorted(dict.fromkeys(common), key=lambda item: _RANK[item.level])
     return Shortlist(tag, tuple(worst), tuple(sorted(found, key=_merit)))
@@ -117,7 +117,8 @@ def _merit(candidate: Candidate) -> tuple[float | str, ...]:
     )
 
 
-def _candidate(prepared: Prepared, profile: Profile) -> Candidate:
+def candidate(prepared: Prepared, profile: Profile) -> Candidate:
+    """Hold one family against a prepared tag. Never raises on user data."""
     family = registry.family(profile.key)
     service = judge_service(prepared, profile)
     own = prepared.tag.family == profile.key

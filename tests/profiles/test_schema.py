@@ -71,7 +71,7 @@ ORIENTATIONS = ENTRIES["line.orientation"].choices
 def is_source(text: object) -> bool:
     """Tell whether a text names where a figure comes from."""
     return isinstance(text, str) and (
-        text.startswith(PRACTICE)
+        PRACTICE in text
         or MEMORY in text
         or text in SOURCES
         or any(source.name.split(":")[0] in text for source in SOURCES.values())
