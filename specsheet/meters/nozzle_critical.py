@@ -28,6 +28,10 @@ from specsheet.sources import MEMORY, PRACTICE, cite
 _SOURCE = cite("iso9300")
 _STEP = 1e-5
 
+#: the flow rises as sqrt(p ρ), and ρ as p: one by one in all. The density's contribution carries a
+#: half of it, so that sqrt(1 - 1/4) in square sum makes it whole
+_BESIDE_DENSITY = 0.75**0.5
+
 
 def size(request: Request) -> Element:
     """Choose the throat that passes the flow of the leading point at its stated pressure."""
@@ -42,10 +46,8 @@ def size(request: Request) -> Element:
         if material is None
         else material.expansion(normal),
         "area_ratio": exit_ratio**2,
-        **{
-            key: tag.si(f"meter.{key}") or 0.0
-            for key in ("pressure_uncertainty", "temperature_uncertainty", "throat_uncertainty")
-        },
+        "throat_uncertainty": tag.si("meter.throat_uncertainty") or 0.0,
+        "pressure_uncertainty": tag.si("require.pressure_uncertainty") or 0.0,
         "function_uncertainty": body.figure(request, "critical_flow_function_uncertainty"),
     }
     throat = tag.text("meter.throat_form") or "toroidal"
@@ -80,7 +82,11 @@ def size(request: Request) -> Element:
             "Throat measured to 0.1 %; no condensation before the throat: dry, clean gas.",
         )
     }
-    return Element(numbers, values, notes, findings, {"throat_form": throat})
+    origins = {
+        "origin.throat_uncertainty": str(tag.origin("meter.throat_uncertainty")),
+        "origin.pressure_uncertainty": str(tag.origin("require.pressure_uncertainty")),
+    }
+    return Element(numbers, values, notes, findings, {"throat_form": throat, **origins})
 
 
 def _bore(request: Request, numbers: Mapping[str, float], throat: str) -> float:
@@ -206,31 +212,37 @@ def budget(
     """Return the contributions to the uncertainty of the flow."""
     numbers = element.numbers
     ones = np.ones_like(values["discharge_coefficient"])
-    rows = (
-        ("discharge_coefficient", "discharge coefficient", iso9300.UNCERTAINTY, _SOURCE),
-        (
+    return (
+        Contribution(
+            "discharge_coefficient",
+            "discharge coefficient",
+            ones * iso9300.UNCERTAINTY / 2.0,
+            Origin.DERIVED,
+            _SOURCE,
+        ),
+        Contribution(
             "critical_flow_function",
             "critical flow function",
-            numbers["function_uncertainty"],
+            ones * numbers["function_uncertainty"] / 2.0,
+            Origin.TYPICAL,
             MEMORY,
         ),
-        ("throat", "area of the throat", 2.0 * numbers["throat_uncertainty"], "meter"),
-        ("inlet_pressure", "inlet pressure", numbers["pressure_uncertainty"], "meter"),
-        ("temperature", "temperature", 0.5 * numbers["temperature_uncertainty"], "meter"),
-    )
-    parts = tuple(
         Contribution(
-            key, label, ones * relative / 2.0, _origin(source), source if source != "meter" else key
-        )
-        for key, label, relative, source in rows
+            "throat",
+            "area of the throat",
+            ones * numbers["throat_uncertainty"],
+            Origin(element.choices["origin.throat_uncertainty"]),
+            "meter.throat_uncertainty",
+        ),
+        Contribution(
+            "inlet_pressure",
+            "inlet pressure, beside its part in the density",
+            ones * _BESIDE_DENSITY * numbers["pressure_uncertainty"] / 2.0,
+            Origin(element.choices["origin.pressure_uncertainty"]),
+            "require.pressure_uncertainty",
+        ),
+        density_contribution(stream),
     )
-    return (*parts, density_contribution(stream))
-
-
-def _origin(source: str) -> Origin:
-    if source == MEMORY:
-        return Origin.TYPICAL
-    return Origin.ASSUMED if source == "meter" else Origin.DERIVED
 
 
 FAMILY = Family(

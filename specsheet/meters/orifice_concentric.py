@@ -54,7 +54,28 @@ def _prepare(request: Request) -> Prepared:
 
 
 def _bounds(request: Request, prepared: Prepared) -> Bounds:  # noqa: ARG001
-    return Bounds(smallest=0.1, largest=0.75, smallest_bore=0.0125)
+    return Bounds(smallest=0.1, largest=_largest_ratio(request), smallest_bore=0.0125)
+
+
+def _largest_ratio(request: Request) -> float:
+    """Return the largest β that the roughness of the pipe allows, 0.4 to 0.75 [-]."""
+    inside = request.pipe.inside_diameter
+    roughness = request.pipe.roughness / math.pi / inside
+    highest = _largest_reynolds(inside, request)
+    for ratio in (0.75, 0.65, 0.6, 0.55, 0.5, 0.45):
+        allowed = iso5167_2.largest_roughness(diameter_ratio=ratio, reynolds_number=highest)
+        if not roughness > allowed:
+            return ratio
+    return 0.4
+
+
+def _largest_reynolds(inside: float, request: Request) -> float:
+    stream = request.stream
+    return float(
+        np.max(
+            reynolds_number(mass_flow=stream.mass_flow, diameter=inside, viscosity=stream.viscosity)
+        )
+    )
 
 
 def _describe(request: Request, element: Element) -> Described:
@@ -125,15 +146,7 @@ def _limits(element: Element, request: Request) -> tuple[Limit, ...]:
 
 
 def _roughness(ratio: float, inside: float, request: Request) -> Limit:
-    highest = float(
-        np.max(
-            reynolds_number(
-                mass_flow=request.stream.mass_flow,
-                diameter=inside,
-                viscosity=request.stream.viscosity,
-            )
-        )
-    )
+    highest = _largest_reynolds(inside, request)
     return Limit(
         "relative_roughness",
         None,

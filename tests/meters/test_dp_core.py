@@ -281,7 +281,7 @@ def test_cut_off_rests_at_four_milliampere():
 @pytest.mark.parametrize("key", FAMILIES)
 @pytest.mark.parametrize("make", [water, steam])
 def test_a_thousand_lanes_take_little(key, make):
-    """500 lanes below 1 ms, counted against as many numpy powers in the same run."""
+    """500 lanes within the time of 250 numpy powers of 500 lanes (about 1 ms) in the same run."""
     request = make(key)
     family = registry.family(key)
     element = family.size(request)
@@ -299,4 +299,4 @@ def test_a_thousand_lanes_take_little(key, make):
             best = min(best, (time.perf_counter() - start) / count)
         return best
 
-    assert seconds(lambda: family.at(element, sweep)) < 150 * seconds(lambda: base**0.7)
+    assert seconds(lambda: family.at(element, sweep)) < 250 * seconds(lambda: base**0.7)
