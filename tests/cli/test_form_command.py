@@ -15,6 +15,7 @@ from pseudo_terminal import Terminal
 
 FORM = ("-m", "specsheet", "form")
 QUIT = b"\x11"  # ctrl+q
+ESCAPE = b"\x1b"
 
 
 @pytest.mark.parametrize("size", [(80, 24), (120, 40)], ids=str)
@@ -53,6 +54,8 @@ def test_file_that_cannot_be_read_is_explained(tmp_path: Path) -> None:
     (job / "tags" / "FT-0001.toml").write_bytes(b"\xff\xfe\x00")
     with Terminal((*FORM, "tags/FT-0001.toml"), job) as terminal:
         terminal.until("UTF-8")
+        terminal.press(ESCAPE)
+        terminal.until("FT-7103")  # the other tags of the folder
         terminal.press(QUIT)
         assert terminal.end() == 0
 
@@ -61,6 +64,8 @@ def test_demo_ends_in_the_form(tmp_path: Path) -> None:
     with Terminal(("-m", "specsheet", "demo"), tmp_path) as terminal:
         terminal.until("printing")
         terminal.until("\x1b[?1049h")  # the form takes the whole screen
+        terminal.seen = b""
+        terminal.until("FT-7103")
         terminal.press(QUIT)
         assert terminal.end() == 0
     assert len(list((tmp_path / "output").glob("*.pdf"))) == 11

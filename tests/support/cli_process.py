@@ -19,6 +19,12 @@ ROOT = Path(specsheet.__file__).resolve().parents[1]
 DEMO = packs.folder() / "demo"
 
 
+def environment(**extra: str) -> dict[str, str]:
+    """Return the environment of a user: the package found from anywhere, bytecode kept."""
+    kept = {key: text for key, text in os.environ.items() if key != "PYTHONDONTWRITEBYTECODE"}
+    return {**kept, "PYTHONPATH": str(ROOT), **extra}
+
+
 def run(*arguments: str | Path, cwd: Path | None = None) -> subprocess.CompletedProcess[str]:
     """Run the program without a terminal and return what it said."""
     return subprocess.run(
@@ -29,7 +35,7 @@ def run(*arguments: str | Path, cwd: Path | None = None) -> subprocess.Completed
         stdin=subprocess.DEVNULL,
         timeout=120,
         check=False,
-        env={**os.environ, "PYTHONPATH": str(ROOT), "COLUMNS": "120"},
+        env=environment(COLUMNS="120"),
     )
 
 

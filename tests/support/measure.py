@@ -10,6 +10,8 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from pathlib import Path
 
+from cli_process import environment
+
 
 @dataclass(frozen=True, slots=True)
 class Cost:
@@ -31,6 +33,7 @@ def _once(arguments: Sequence[str], cwd: Path | None) -> Cost:
         stdin=subprocess.DEVNULL,
         stdout=subprocess.DEVNULL,
         stderr=subprocess.DEVNULL,
+        env=environment(),
     ) as child:
         _, _, used = os.wait4(child.pid, 0)
         child.returncode = 0

@@ -16,6 +16,8 @@ from collections.abc import Sequence
 from pathlib import Path
 from types import TracebackType
 
+from cli_process import environment
+
 
 class Terminal:
     """The interpreter with arguments, in a pseudo-terminal; a context manager that ends it."""
@@ -35,7 +37,7 @@ class Terminal:
             stdout=slave,
             stderr=slave,
             start_new_session=True,
-            env={**os.environ, "TERM": "xterm-256color", "TEXTUAL_ANIMATIONS": "none"},
+            env=environment(TERM="xterm-256color", TEXTUAL_ANIMATIONS="none"),
         )
         os.close(slave)
 
@@ -64,7 +66,8 @@ class Terminal:
         return time.perf_counter() - self.started
 
     def press(self, keys: bytes) -> None:
-        """Send keys."""
+        """Send keys, and forget what was drawn before them."""
+        self.seen = b""
         os.write(self._master, keys)
 
     def end(self, patience: float = 30.0) -> int:
