@@ -25,7 +25,14 @@ def fluid_of(tag: Tag) -> Built:
         came = f"{kind!r} came" if kind else "none came"
         text = f"A kind of fluid was wanted ({wanted}), {came}."
         return Built(None, (stop("fluid-kind", "fluid.kind", text),))
+    if not tag.phase and kind in _EITHER_PHASE:
+        text = "Liquid or gas was wanted, nothing came: state fluid.phase."
+        return Built(None, (stop("phase-missing", "fluid.phase", text),))
     return builder(tag)
+
+
+#: kinds that may flow in either phase
+_EITHER_PHASE = ("substance", "mixture", "given")
 
 
 def _combustion(tag: Tag) -> float:

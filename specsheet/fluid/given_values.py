@@ -5,8 +5,9 @@ from __future__ import annotations
 from collections.abc import Mapping
 from dataclasses import replace
 
-from specsheet.findings import Finding, Origin
-from specsheet.fluid.model import GAS_CONSTANT, caution
+from specsheet.findings import Finding, Level, Origin
+from specsheet.fluid.evaluate import Outcome
+from specsheet.fluid.model import GAS_CONSTANT, Condition, caution
 from specsheet.fluid.phases import GAS, LIQUID, TWO_PHASE, disagreement
 from specsheet.fluid.state import Property, State
 from specsheet.quantity.value import Quantity
@@ -78,6 +79,30 @@ def apply(tag: Tag, point: Point, state: State, molar_mass: float | None) -> Sta
     if "vapour_pressure" in values and point.quantity("vapour_pressure") is not None:
         findings += _boiling(tag, state, values["vapour_pressure"].value)
     return replace(state, properties=values, findings=tuple(findings))
+
+
+#: refusals that a stated density makes good: the point is beyond what is known, not impossible
+_BEYOND = ("fluid-limit", "concentration-limit", "fluid-no-state", "mixture-pair")
+
+
+def rescued(tag: Tag, condition: Condition, outcome: Outcome) -> Outcome:
+    """Return a bare state for stated values to stand on, where the fluid's own data end.
+
+    Args:
+        tag: the tag.
+        condition: the point's, where a density is stated.
+        outcome: the refusal.
+    """
+    temperature, pressure = condition.temperature, condition.pressure
+    if temperature is None or pressure is None or temperature <= 0.0 or pressure <= 0.0:
+        return outcome
+    if any(item.code not in _BEYOND for item in outcome.findings):
+        return outcome
+    findings = tuple(
+        replace(item, level=Level.CAUTION, message=f"{item.message} The stated values are used.")
+        for item in outcome.findings
+    )
+    return Outcome(State(temperature, pressure, tag.phase, {}, findings))
 
 
 def _unusable(key: str, stated: float) -> list[Finding]:

@@ -25,6 +25,7 @@ _GAS = Method(
     f"{cite('wilke')}; {cite('coolprop')}",
     0.04,
 )
+_DENSE_GAS = Method(_GAS.words, _GAS.source, 0.15)
 _CONDUCTIVITY = Method(
     "Wassiljewa with the factors of Mason and Saxena, low density", cite("mason-saxena"), 0.1
 )
@@ -75,7 +76,12 @@ def viscosity_at(key: str, temperature: float, density: float) -> float | None:
 
 
 def gas(
-    composition: Composition, temperature: float, molar_density: float, density: float
+    composition: Composition,
+    temperature: float,
+    molar_density: float,
+    density: float,
+    *,
+    dense: bool,
 ) -> dict[str, Property]:
     """Return viscosity, kinematic viscosity and conductivity of a gas mixture.
 
@@ -84,7 +90,9 @@ def gas(
         temperature: [K]
         molar_density: of the mixture [mol/m3].
         density: of the mixture [kg/m3].
+        dense: whether it is more than half as dense as at the critical point.
     """
+    method = _DENSE_GAS if dense else _GAS
     table = names.substances()
     fractions = [fraction for _, fraction in composition]
     masses = [table[key].molar_mass for key, _ in composition]
@@ -92,8 +100,8 @@ def gas(
     mixed = gas_viscosity.wilke(fractions=fractions, viscosities=pure, molar_masses=masses)
     viscosity = mixed * _rise(composition, temperature, molar_density, pure)
     values = {
-        "viscosity": _GAS(viscosity),
-        "kinematic_viscosity": _GAS(viscosity / density),
+        "viscosity": method(viscosity),
+        "kinematic_viscosity": method(viscosity / density),
     }
     conductivities = [dilute_conductivity(key, temperature) for key, _ in composition]
     known = [value for value in conductivities if value is not None]
@@ -121,10 +129,21 @@ def _rise(
     return math.exp(total / weight) if weight > 0.0 else 1.0
 
 
+#: components that bind to each other, so that their liquids mix far from ideally
+_POLAR = frozenset({"water", "methanol", "ethanol", "ammonia", "acetone", "propylene_glycol"})
+
+
+def is_polar(composition: Composition) -> bool:
+    """Tell whether a liquid has a polar component to speak of."""
+    return any(key in _POLAR and fraction > 0.01 for key, fraction in composition)
+
+
 def liquid(
     composition: Composition, temperature: float, pressure: float, density: float
 ) -> dict[str, Property]:
     """Return viscosity and kinematic viscosity of a liquid mixture, typical; nothing if unknown."""
+    if is_polar(composition):
+        return {}  # water thickens alcohol twofold; no rule without measurements sees that
     total = 0.0
     for key, fraction in composition:
         found = _liquid_viscosity(key, temperature, pressure)

@@ -83,6 +83,8 @@ def _points(
     findings: list[Finding] = []
     for point in tag.points:
         outcome = evaluate.state(fluid, condition_of(tag, point))
+        if outcome.state is None and point.quantity("density") is not None:
+            outcome = given_values.rescued(tag, condition_of(tag, point), outcome)
         found = outcome.state
         if found is not None:
             molar_mass = None if molar is None else molar.value

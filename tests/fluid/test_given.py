@@ -192,3 +192,40 @@ def test_an_edited_substance_file_is_read_again(tmp_path: Path) -> None:
     assert first is not None
     assert again is not None
     assert (first.value("density"), again.value("density")) == (872.0, 900.0)
+
+
+def test_stated_values_carry_a_point_beyond_the_data_of_the_fluid() -> None:
+    text = 'kind = "solution"\nsolute = "NaOH"\nmass_fraction = "55 %"\nphase = "liquid"'
+    bare = fluid.derive(tag(text, point("3 bar(g)", "60 degC")))
+    told = fluid.derive(
+        tag(text, point("3 bar(g)", "60 degC", density="1560 kg/m3", viscosity="25 mPa s"))
+    )
+    assert stops(bare) == ["concentration-limit"]
+    assert stops(told) == []
+    assert finding(told, "concentration-limit").level is Level.CAUTION
+    assert told.points[0] is not None
+    assert told.points[0].value("kinematic_viscosity") == pytest.approx(0.025 / 1560)
+
+
+def test_frozen_is_frozen_whatever_is_stated() -> None:
+    text = 'kind = "solution"\nsolute = "MEG"\nmass_fraction = "30 %"\nphase = "liquid"'
+    result = fluid.derive(tag(text, point("3 bar(g)", "-25 degC", density="1050 kg/m3")))
+    assert stops(result) == ["frozen"]
+
+
+def test_a_missing_phase_is_asked_for() -> None:
+    stated = tag(WATER, point("3 bar(g)", "60 degC"))
+    without = {key: value for key, value in stated.given.items() if key != "fluid.phase"}
+    result = fluid.derive(Tag(without, stated.assumed, stated.points))
+    assert stops(result) == ["phase-missing"]
+
+
+def test_polar_liquid_mixtures_are_not_trusted() -> None:
+    text = 'kind = "mixture"\nphase = "liquid"\nmixture = { water = 0.7, ethanol = 0.3 }'
+    result = fluid.derive(tag(text, point("3 bar(g)", "20 degC")))
+    assert "liquid-mixture-polar" in codes(result)
+    assert result.points[0] is not None
+    assert "viscosity" not in result.points[0].properties
+    # 0.3 by mole is 52.3 % by mass: 908 kg/m3 (OIML R 22, from memory)
+    density = result.points[0].properties["density"]
+    assert density.value == pytest.approx(908.0, rel=density.uncertainty)

@@ -96,12 +96,16 @@ class Mixture:
         phase = _dense(verdict.phase, state)
         values = self._properties(state, temperature, pressure)
         values.update(verdict.values)
+        dew = values.get("dew_temperature")
+        if dew is not None and phase == GAS:
+            margin = dew._replace(value=temperature - dew.value, uncertainty=0.0)
+            values["saturation_margin"] = margin
         return State(
             temperature,
             pressure,
             phase,
             values,
-            (*findings, *self._pairs(), *verdict.findings),
+            (*findings, *self._pairs(), *self._polar(), *verdict.findings),
         )
 
     def base(self, base: Base) -> State:
@@ -148,6 +152,16 @@ class Mixture:
 
     def _range(self) -> limits.Range:
         return _range(self.composition)
+
+    def _polar(self) -> tuple[Finding, ...]:
+        if self.phase == GAS or not mixture_transport.is_polar(self.composition):
+            return ()
+        text = (
+            "Liquids of water, alcohols, ammonia and the like mix far from ideally: the density "
+            "may be off by 2 % and no viscosity is given. State a solution (fluid.kind solution), or "
+            "density and viscosity at each point."
+        )
+        return (caution("liquid-mixture-polar", "fluid.mixture", text, _SOURCE),)
 
     def _pairs(self) -> tuple[Finding, ...]:
         pairs = (
@@ -202,7 +216,9 @@ class Mixture:
             values["compressibility"] = plain(state.compressibility_factor())
             values["isentropic_exponent"] = fast(density * sound * sound / pressure)
             values.update(
-                mixture_transport.gas(self.composition, temperature, state.rhomolar(), density)
+                mixture_transport.gas(
+                    self.composition, temperature, state.rhomolar(), density, dense=dense
+                )
             )
         else:
             values.update(
@@ -256,6 +272,8 @@ def _methods(composition: Composition, dense: bool) -> tuple[Method, Method, Met
     """Return the methods of density, sound speed and heat capacity, with honest uncertainties."""
     known = all(key in _GERG for key, _ in composition)
     factor = (1.0 if known else 3.0) * (3.0 if dense else 1.0)
+    if dense and mixture_transport.is_polar(composition):
+        factor = 10.0
     plain = Method(_EQUATION, _SOURCE, 0.002 * factor)
     fast = Method(_EQUATION, _SOURCE, 0.005 * factor)
     warm = Method(_EQUATION, _SOURCE, 0.02 * factor)

@@ -177,7 +177,7 @@ class Solution:
             "temperature",
             f"{self.name} is described from {celsius(lowest)} to {celsius(highest)}; "
             f"{celsius(temperature)} came. Check the temperature, or state density and viscosity "
-            "yourself (fluid.kind given).",
+            "at each point.",
             _LALIBERTE,
         )
 
@@ -187,7 +187,7 @@ class Solution:
             "fluid.mass_fraction",
             f"Solutions of {self.solute.name} are described up to {100 * highest:.3g} % by mass; "
             f"{100 * self.fraction:.4g} % came. Check the fraction, or state density and viscosity "
-            "yourself (fluid.kind given).",
+            "at each point.",
         )
 
     def _viscosity_unknown(self, item: solutes.Correlation | None) -> Finding:
