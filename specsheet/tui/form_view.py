@@ -360,9 +360,15 @@ class FormView(CalmScreen):
             await self.go_to(address)
 
     def _show_pane(self, pane: str) -> None:
+        """Show a pane where only one has room. (A class on the screen would restyle all of it.)"""
         self._shown_pane = pane
-        for name in _PANES:
-            self.set_class(name == pane, f"-{name}")
+        wide, low = self.has_class("-wide"), self.has_class("-low")
+        for name in ("findings", "derived"):
+            for part in (f"#{name}", f"#{name}-head"):
+                self.query_one(part).display = wide or name == pane
+        fits = not (self.has_class("-tiny") or self.has_class("-flat"))
+        self.query_one("#side").display = fits and (wide or pane != "ruler")
+        self.query_one("#below").display = fits and (pane == "ruler" or (wide and not low))
         self.call_after_refresh(self._draw_panes)
 
     # Events
@@ -385,4 +391,4 @@ class FormView(CalmScreen):
 
     def _redraw(self) -> None:
         self._draw_detail()
-        self._draw_panes()
+        self._show_pane(self._shown_pane)

@@ -209,9 +209,10 @@ def ruler_lines(sheet: Sheet | None, width: int) -> list[Line]:
 
 
 def counts(found: Sequence[Item]) -> str:
-    """Return how many findings there are of each level ("stop 1, caution 2")."""
-    numbers = [(level, sum(item.level is level for item in found)) for level in Level]
-    return ", ".join(f"{level.value} {number}" for level, number in numbers if number)
+    """Return how many findings there are of each level, and cautions ("stop 1, safety 2")."""
+    numbers = [(level.value, sum(item.level is level for item in found)) for level in Level]
+    numbers.append(("safety", sum(item.level is None for item in found)))
+    return ", ".join(f"{words} {number}" for words, number in numbers if number)
 
 
 def worst(found: Sequence[Item]) -> Level | None:

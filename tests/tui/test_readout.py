@@ -30,14 +30,15 @@ def test_the_worst_comes_first_and_every_level_has_a_letter() -> None:
     found = readout.items(sheet(), [Trouble("points", "no point")], refused, str)
     lines, _ = readout.finding_lines(found, 200)
     assert [line[0] for line in text_of(lines)] == ["S", "S", "C", "!"]
-    assert readout.counts(found) == "stop 2, caution 1"
+    assert readout.counts(found) == "stop 2, caution 1, safety 1"
     assert readout.worst(found) is Level.STOP
 
 
 def test_a_standing_caution_of_the_service_is_shown_but_is_no_finding() -> None:
     found = readout.items(sheet(), (), (), str)
     assert any("licensed engineer" in item.message and item.level is None for item in found)
-    assert readout.counts(found) == "caution 1"
+    assert readout.counts(found) == "caution 1, safety 1"
+    assert readout.worst(found) is Level.CAUTION
 
 
 def test_derived_values_stand_in_columns_with_their_origin() -> None:
