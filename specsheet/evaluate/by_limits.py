@@ -25,6 +25,7 @@ from specsheet.meters.family import (
 )
 from specsheet.meters.shared import response
 from specsheet.meters.shared.limits import of_profile, shortfall
+from specsheet.meters.shared.sizes import FREE
 from specsheet.methods import reducer
 from specsheet.packs import Profile
 from specsheet.quantity.value import NominalSize
@@ -105,7 +106,8 @@ def _nominal(request: Request) -> tuple[int, Origin, tuple[Finding, ...]]:
     """Return the DN of the meter, whether it was stated, and what is wrong with it."""
     sizes = request.profile.sizes
     assert sizes is not None
-    stated = quantity.parse_size(request.tag.text("meter.size"))
+    text = request.tag.text("meter.size")
+    stated = None if text in ("", FREE) else quantity.parse_size(text)
     if isinstance(stated, NominalSize):
         return stated.dn, Origin.GIVEN, ()
     line = _line_size(request)

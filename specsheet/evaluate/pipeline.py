@@ -20,6 +20,7 @@ from specsheet.evaluate.prepare import request as requested
 from specsheet.evaluate.reserve import scaled
 from specsheet.evaluate.result import Evaluation, Result, Sweep
 from specsheet.evaluate.service import judge_habits, judge_service
+from specsheet.evaluate.stream import joined
 from specsheet.findings import Finding, Level
 from specsheet.fluid.state import FluidResult
 from specsheet.meters import registry
@@ -50,12 +51,13 @@ def evaluate(tag: Tag) -> Evaluation:
     if profile is None or family is None:
         findings.append(_no_family(tag, profile))
     request = None if profile is None else requested(prepared, profile)
-    if profile is not None and request is not None:
+    service = None if profile is None else judge_service(prepared, profile)
+    if service is not None:
+        findings.extend(service.findings)
+    if profile is not None and request is not None and service is not None:
         if family is None:
             family = family_by_limits(profile)
             findings.extend(judge_habits(prepared, profile))
-        service = judge_service(prepared, profile)
-        findings.extend(service.findings)
         evaluation = _with_meter(evaluation, family, request, prepared, findings)
         evaluation = replace(evaluation, checks=(*evaluation.checks, *service.checks))
     else:
@@ -99,7 +101,7 @@ def _with_meter(
     stream, count = request.stream, len(request.names)
     swept = _swept(request, element)
     grid = scaled(stream)
-    response = model(_joined(stream, swept, grid))
+    response = model(joined(stream, swept, grid))
     at_points = {key: values[:count] for key, values in response.values.items()}
     in_sweep = {
         key: values[count : count + _SWEEP_LANES] for key, values in response.values.items()
@@ -156,11 +158,6 @@ def _swept(request: Request, element: Element) -> Stream:
     range_ = np.geomspace(0.3 * float(flows.min()), 1.3 * highest, _SWEEP_LANES)
     lanes = request.stream.take(np.full(_SWEEP_LANES, request.normal))
     return lanes.with_flow(range_)
-
-
-def _joined(*streams: Stream) -> Stream:
-    names = Stream.__dataclass_fields__
-    return Stream(*(np.concatenate([getattr(one, name) for one in streams]) for name in names))
 
 
 def _base(tag: Tag, state: FluidResult) -> dict[str, Result]:

@@ -16,22 +16,23 @@ from specsheet import line, packs
 from specsheet.evaluate.by_limits import family_by_limits
 from specsheet.evaluate.checks import SIZED_TO, Checked, check_limits
 from specsheet.evaluate.limits import limits_of
-from specsheet.evaluate.model import Model, model_of
+from specsheet.evaluate.model import model_of
 from specsheet.evaluate.prepare import NO_PIPE, Prepared, prepare
 from specsheet.evaluate.prepare import request as requested
-from specsheet.evaluate.reserve import scaled
+from specsheet.evaluate.reserve import margin, scaled
 from specsheet.evaluate.result import Result
 from specsheet.evaluate.service import Service, judge_habits, judge_service
+from specsheet.evaluate.stream import joined
 from specsheet.evaluate.summary import check_turndown, summarise
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.line import StraightResult
 from specsheet.meters import registry
-from specsheet.meters.family import Array, Element, Family, Request
+from specsheet.meters.family import Array, Element, Family, Limit, Request
 from specsheet.packs import Profile
 from specsheet.tag import Tag
 from specsheet.tagfile import with_family
 
-#: findings about the line, which no choice of a family mends
+#: limits of the line, which no choice of a family mends
 _OF_LINE = ("line-velocity-high", "line-velocity-low")
 _RANK = {Level.STOP: 0, Level.CAUTION: 1, Level.NOTE: 2}
 
@@ -139,8 +140,8 @@ def _stops(findings: Iterable[Finding]) -> tuple[Finding, ...]:
 
 
 def _deciding(findings: Iterable[Finding]) -> tuple[Finding, ...]:
-    """Return the stops, else the cautions, without repeats and without what is the line's own."""
-    unique = dict.fromkeys(item for item in findings if item.code not in _OF_LINE)
+    """Return the stops, else the cautions, without repeats."""
+    unique = dict.fromkeys(findings)
     stops = _stops(unique)
     return stops or tuple(item for item in unique if item.level is Level.CAUTION)
 
@@ -153,16 +154,18 @@ def _sized(
     element = family.size(request)
     runs = _runs(request, element)
     model = model_of(request, family, element, runs.additional_uncertainty)
-    values = model(request.stream).values
-    checked = check_limits(request, model, limits_of(family, element, request), values, None)
-    findings = (*said, *element.findings, *runs.findings, *checked.findings)
-    if not _stops(findings):
-        checked = _with_reserves(request, model, values)
-        totals = summarise(request, values, checked.bands)
-        short = check_turndown(request, totals)
-        findings = (*said, *element.findings, *runs.findings, *checked.findings, *short)
-    else:
-        totals = summarise(request, values, ())
+    every = model(joined(request.stream, scaled(request.stream))).values
+    count = len(request.names)
+    values = {key: found[:count] for key, found in every.items()}
+    grid = {key: found[count:] for key, found in every.items()}
+    limits = tuple(
+        limit for limit in limits_of(family, element, request) if limit.code not in _OF_LINE
+    )
+    stopped = _stops((*said, *element.findings)) or _breaks_stop(limits, values)
+    checked = check_limits(request, model, limits, values, None if stopped else grid)
+    totals = summarise(request, values, checked.bands)
+    short = () if stopped else check_turndown(request, totals)
+    findings = (*said, *element.findings, *runs.findings, *checked.findings, *short)
     reasons = _deciding(findings)
     return Candidate(
         profile=request.profile,
@@ -177,6 +180,17 @@ def _sized(
         yearly_cost=_number(totals, "yearly_cost"),
         upstream=_upstream(runs),
         unknown=(*service.unknown, *_not_known(values, runs)),
+    )
+
+
+def _breaks_stop(limits: Iterable[Limit], values: Mapping[str, Array]) -> bool:
+    """Tell whether a stop limit is broken at an operating point: then no reserve is looked for."""
+    return any(
+        bool((margin(limit, values[limit.key]) < 0.0).any())
+        for limit in limits
+        if limit.level is Level.STOP
+        and limit.key in values
+        and not np.isnan(values[limit.key]).all()
     )
 
 
@@ -196,12 +210,6 @@ def _runs(request: Request, element: Element) -> StraightResult:
         pipe_diameter=request.pipe.inside_diameter,
         meter_diameter=_element(element, "meter_bore"),
     )
-
-
-def _with_reserves(request: Request, model: Model, values: Mapping[str, Array]) -> Checked:
-    grid = model(scaled(request.stream)).values
-    limits = limits_of(model.family, model.element, request)
-    return check_limits(request, model, limits, values, grid)
 
 
 def _tightest(checked: Checked) -> Reserve | None:

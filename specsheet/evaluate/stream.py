@@ -100,3 +100,9 @@ def _row(flow: float, state: State, phase: str) -> tuple[float, ...]:
         vapour,
         doubt,
     )
+
+
+def joined(*streams: Stream) -> Stream:
+    """Return the conditions of several streams behind one another."""
+    names = Stream.__dataclass_fields__
+    return Stream(*(np.concatenate([getattr(one, name) for one in streams]) for name in names))

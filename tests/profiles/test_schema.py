@@ -102,7 +102,7 @@ def faults(key: str, raw: dict[str, Any]) -> list[str]:
     wrong.extend(_unknown(raw))
     wrong.extend(
         f"{name}: each figure needs a source: a citation with a name of the bibliography, "
-        f" {PRACTICE!r} or {MEMORY!r}; {source!r} came"
+        f"{PRACTICE!r} or {MEMORY!r}; {source!r} came"
         for name, source in figures(raw)
         if not is_source(source)
     )

@@ -157,8 +157,7 @@ def service_text(name: str, family: str = "vortex") -> str:
         for point, flow in zip(("minimum", "normal", "maximum"), flows, strict=True)
     )
     head = f'schema = 1\ntag = "FT-1"\nfamily = "{family}"\n'
-    design = '[design]\npressure = "16 bar(g)"\ntemperature = "60 degC"\n'
-    return f"{head}[fluid]\n{fluid}[line]\n{line}{points}{design}"
+    return f"{head}[fluid]\n{fluid}[line]\n{line}{points}"
 
 
 def service(name: str, family: str = "vortex") -> Tag:
