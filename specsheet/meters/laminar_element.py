@@ -11,6 +11,7 @@ from specsheet.findings import Level, Origin
 from specsheet.meters.dp import body, plain, transmitter
 from specsheet.meters.dp import budget as shared_budget
 from specsheet.meters.dp.derivations import COMMON
+from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
     Contribution,
@@ -243,7 +244,7 @@ def budget(
 
 FAMILY = Family(
     key="laminar_element",
-    size=size,
+    size=guarded(size),
     at=at,
     limits=limits,
     budget=budget,

@@ -11,6 +11,7 @@ from specsheet.line.material import find_material
 from specsheet.meters.dp import body, plain
 from specsheet.meters.dp.budget import density as density_contribution
 from specsheet.meters.dp.derivations import COMMON
+from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
     Contribution,
@@ -247,7 +248,7 @@ def budget(
 
 FAMILY = Family(
     key="nozzle_critical",
-    size=size,
+    size=guarded(size),
     at=at,
     limits=limits,
     budget=budget,

@@ -9,6 +9,7 @@ import numpy as np
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.dp import body, insertion, plain
 from specsheet.meters.dp.derivations import COMMON
+from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
     Contribution,
@@ -166,7 +167,7 @@ def budget(
 
 FAMILY = Family(
     key="pitot_tube",
-    size=size,
+    size=guarded(size),
     at=at,
     limits=limits,
     budget=budget,

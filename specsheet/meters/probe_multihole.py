@@ -10,6 +10,7 @@ import numpy as np
 from specsheet.findings import Level, Origin
 from specsheet.meters.dp import body, insertion, plain
 from specsheet.meters.dp.derivations import COMMON
+from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
     Contribution,
@@ -140,7 +141,7 @@ def budget(
 
 FAMILY = Family(
     key="probe_multihole",
-    size=size,
+    size=guarded(size),
     at=at,
     limits=limits,
     budget=budget,

@@ -10,6 +10,7 @@ from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.dp import body, plain
 from specsheet.meters.dp.budget import density as density_contribution
 from specsheet.meters.dp.derivations import COMMON
+from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
     Contribution,
@@ -222,7 +223,7 @@ def budget(
 
 FAMILY = Family(
     key="variable_area_float",
-    size=size,
+    size=guarded(size),
     at=at,
     limits=limits,
     budget=budget,

@@ -300,3 +300,35 @@ def test_a_thousand_lanes_take_little(key, make):
         return best
 
     assert seconds(lambda: family.at(element, sweep)) < 250 * seconds(lambda: base**0.7)
+
+
+@pytest.mark.parametrize(
+    ("key", "entry", "text"),
+    [
+        ("orifice_concentric", "bore", "0 mm"),
+        ("orifice_concentric", "bore", "103 mm"),
+        ("orifice_concentric", "differential_pressure_range", "0 mbar"),
+        ("orifice_concentric", "plate_thickness", "0 mm"),
+        ("orifice_concentric", "target_diameter_ratio", "1.2"),
+        ("orifice_concentric", "discharge_coefficient", "0"),
+        ("cone", "cone_diameter", "2000 mm"),
+        ("wedge", "wedge_height", "0 mm"),
+    ],
+)
+def test_an_entry_that_cannot_be_is_said_and_left_out(key, entry, text):
+    """The finding names the entry and what came; everything else is worked out without it."""
+    request = water(key, **{entry: text})
+    family = registry.family(key)
+    element = family.size(request)
+    stops = [item for item in element.findings if item.level is Level.STOP]
+    assert [item.field for item in stops] == [f"meter.{entry}"]
+    assert text in stops[0].message
+    assert np.isfinite(family.at(element, request.stream)["differential_pressure"]).all()
+
+
+def test_range_above_the_pressure_is_out_of_reach():
+    """20 bar cannot stand across a plate in steam of 8 bar."""
+    request = steam("orifice_concentric", bore="80 mm", differential_pressure_range="20 bar")
+    element = registry.family("orifice_concentric").size(request)
+    assert "range-out-of-reach" in [item.code for item in element.findings]
+    assert "upper_range_flow" not in element.values

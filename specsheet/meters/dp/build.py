@@ -11,6 +11,7 @@ from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.dp import budget, sizing, transmitter
 from specsheet.meters.dp.derivations import COMMON
 from specsheet.meters.dp.device import Device
+from specsheet.meters.dp.given import guarded
 from specsheet.meters.dp.notes import output_note
 from specsheet.meters.dp.response import respond
 from specsheet.meters.family import Derivation, Element, Family, Given, Limit, Request
@@ -21,7 +22,7 @@ def family(device: Device) -> Family:
     """Return the family of a device."""
     return Family(
         key=device.key,
-        size=partial(size, device),
+        size=guarded(partial(size, device)),
         at=partial(respond, device),
         limits=partial(limits, device),
         budget=partial(budget.contributions, device),
@@ -50,16 +51,17 @@ def size(device: Device, request: Request) -> Element:
         values["second_range"] = Given(second, Origin.DERIVED, PRACTICE)
     element = Element(numbers, values, {}, (), task.choices)
     described = device.describe(request, element)
-    top = sizing.upper_flow(task, element)
+    flow = sizing.upper_flow(task, element)
+    top = transmitter.top_of(flow, f"meter.{sizing.RANGE}", cite("iso5167-1"))
     legs = transmitter.legs(request, sized.span, numbers.get("tapping_distance", 0.0))
     values = {
         **values,
         **described.values,
         **legs.values,
-        "upper_range_flow": Given(top, Origin.DERIVED, cite("iso5167-1")),
+        **top.values,
     }
     return Element(
-        numbers={**numbers, "upper_range_flow": top},
+        numbers=numbers,
         values=values,
         notes=_notes(request, described.notes, legs.notes),
         findings=(
@@ -68,6 +70,7 @@ def size(device: Device, request: Request) -> Element:
             *remarks,
             *described.findings,
             *legs.findings,
+            *top.findings,
             *_unchecked(task.numbers),
         ),
         choices=task.choices,
@@ -79,7 +82,7 @@ def _notes(
 ) -> dict[str, tuple[str, ...]]:
     notes = dict(described)
     notes["installation"] = (*notes.get("installation", ()), *tappings)
-    notes |= output_note(request.tag)
+    notes |= output_note(request)
     return notes
 
 

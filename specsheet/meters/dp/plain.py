@@ -103,14 +103,15 @@ def element(
     )
     origin = tag.origin(f"meter.{RANGE}") if stated is not None else Origin.DERIVED
     complete = {**numbers, "range": span}
-    top = _upper_flow(request, respond, complete, choices, span)
+    flow = _upper_flow(request, respond, complete, choices, span)
+    top = transmitter.top_of(flow, f"meter.{RANGE}", "response at the upper range value")
     legs = transmitter.legs(request, span, tapping_distance)
     inside = float(hot_diameter(complete, request.stream)[request.normal])
     printed = {
         **values,
         "inside_diameter_hot": Given(inside, Origin.DERIVED, "thermal growth"),
         RANGE: Given(span, origin, PRACTICE),
-        "upper_range_flow": Given(top, Origin.DERIVED, "response at the upper range value"),
+        **top.values,
         **legs.values,
     }
     if numbers["second_range"]:
@@ -119,10 +120,10 @@ def element(
         )
     installation = (*notes.get("installation", ()), *legs.notes)
     return Element(
-        numbers={**complete, "upper_range_flow": top},
+        numbers=complete,
         values=printed,
-        notes={**notes, "installation": installation, **output_note(tag)},
-        findings=(*findings, *more, *legs.findings),
+        notes={**notes, "installation": installation, **output_note(request)},
+        findings=(*findings, *more, *legs.findings, *top.findings),
         choices=choices,
     )
 

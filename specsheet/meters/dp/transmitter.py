@@ -122,6 +122,27 @@ def limits(numbers: Mapping[str, float], entry: str) -> tuple[Limit, ...]:
 
 
 @dataclass(frozen=True)
+class Top:
+    """The flow at the upper range value: printed where there is one, a finding where not."""
+
+    values: Mapping[str, Given]
+    findings: tuple[Finding, ...] = ()
+
+
+def top_of(flow: float, entry: str, source: str) -> Top:
+    """Return how the flow at the upper range value [kg/s] is put out; NaN is out of reach."""
+    if np.isfinite(flow):
+        return Top({"upper_range_flow": Given(flow, Origin.DERIVED, source)})
+    finding = Finding(
+        Level.CAUTION,
+        "range-out-of-reach",
+        entry,
+        "no flow gives the upper range value at the pressure of the largest flow; lower the range",
+    )
+    return Top({}, (finding,))
+
+
+@dataclass(frozen=True)
 class Legs:
     """The impulse legs: what the transmitter sees at rest and how it is calibrated."""
 
