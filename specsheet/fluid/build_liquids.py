@@ -6,8 +6,7 @@ from collections.abc import Callable
 from dataclasses import dataclass
 
 from specsheet.findings import Finding
-from specsheet.fluid import solutes
-from specsheet.fluid.backends import water
+from specsheet.fluid import if97, solutes
 from specsheet.fluid.backends.petroleum import Petroleum
 from specsheet.fluid.backends.seawater import Seawater
 from specsheet.fluid.backends.slurry import Slurry
@@ -73,7 +72,7 @@ def _by_volume(tag: Tag, item: solutes.Solute, fraction: float) -> Built:
         text = f"{item.name} is sold by mass: state fluid.mass_fraction instead."
         return _refuse("fraction-basis", "fluid.volume_fraction", text)
     with LOCK:
-        pure_water = water.liquid_density(293.15, 101325.0)
+        pure_water = if97.liquid_density(293.15, 101325.0)
     mass = fraction * item.pure_density
     by_mass = mass / (mass + (1.0 - fraction) * pure_water)
     text = (

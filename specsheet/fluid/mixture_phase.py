@@ -19,7 +19,7 @@ from functools import lru_cache
 from typing import Any
 
 from specsheet.findings import Finding, Origin
-from specsheet.fluid import envelope, library, mixture_state, names
+from specsheet.fluid import envelope, if97, library, mixture_state, names
 from specsheet.fluid.backends import pure, water
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.model import GAS_CONSTANT, Condition, Method, caution, celsius
@@ -93,7 +93,7 @@ def _wet_verdict(
 ) -> Verdict | None:
     """Return the verdict on the water in a gas; None where there is none to speak of."""
     fraction = dict(composition).get("water", 0.0)
-    if fraction <= 0.0 or temperature >= water.CRITICAL_TEMPERATURE:
+    if fraction <= 0.0 or temperature >= if97.CRITICAL_TEMPERATURE:
         return None
     if fraction * pressure < 0.5 * saturation(temperature):
         return Verdict(GAS, {"dew_temperature": _WATER_DEW(boiling(fraction * pressure))})
@@ -126,11 +126,11 @@ def saturated_fraction(
 
 def saturation(temperature: float) -> float:
     """Return the vapour pressure [Pa] of water, over ice below freezing."""
-    found = water.saturation_pressure(temperature)
+    found = if97.saturation_pressure(temperature)
     if found is not None:
         return found
-    if temperature >= water.CRITICAL_TEMPERATURE:
-        return water.CRITICAL_PRESSURE
+    if temperature >= if97.CRITICAL_TEMPERATURE:
+        return if97.CRITICAL_PRESSURE
     return equilibrium.ice_vapour_pressure(temperature)
 
 
@@ -138,7 +138,7 @@ def saturation(temperature: float) -> float:
 def _saturated_coefficient(temperature: float) -> float:
     """Return the fugacity coefficient of saturated steam, from its compressibility factor."""
     found = water.Water(GAS)
-    if temperature < water.LOWEST_TEMPERATURE:
+    if temperature < if97.LOWEST_TEMPERATURE:
         return 1.0
     factor = found.state(Condition(temperature, None)).value("compressibility") or 1.0
     return math.exp(factor - 1.0)
@@ -146,11 +146,11 @@ def _saturated_coefficient(temperature: float) -> float:
 
 def boiling(pressure: float) -> float:
     """Return the temperature [K] at which water or ice has a vapour pressure [Pa]."""
-    found = water.saturation_temperature(pressure)
+    found = if97.saturation_temperature(pressure)
     if found is not None:
         return found
-    if pressure >= water.CRITICAL_PRESSURE:
-        return water.CRITICAL_TEMPERATURE
+    if pressure >= if97.CRITICAL_PRESSURE:
+        return if97.CRITICAL_TEMPERATURE
     return equilibrium.frost_point(pressure)
 
 

@@ -158,8 +158,8 @@ class Mixture:
             return ()
         text = (
             "Liquids of water, alcohols, ammonia and the like mix far from ideally: the density "
-            "may be off by 2 % and no viscosity is given. State a solution (fluid.kind solution), or "
-            "density and viscosity at each point."
+            "may be off by 2 % and no viscosity is given. State a solution (fluid.kind solution) "
+            "or density and viscosity at each point."
         )
         return (caution("liquid-mixture-polar", "fluid.mixture", text, _SOURCE),)
 

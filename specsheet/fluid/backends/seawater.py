@@ -7,7 +7,7 @@ from dataclasses import dataclass
 from functools import cache
 
 from specsheet import packs
-from specsheet.fluid.backends import water
+from specsheet.fluid import if97
 from specsheet.fluid.limits import Range
 from specsheet.fluid.model import Condition, Method, Refused, both, stop
 from specsheet.fluid.phases import LIQUID, TWO_PHASE
@@ -60,7 +60,7 @@ class Seawater:
                 )
             )
         findings = _RANGE.check(temperature, pressure, "seawater")
-        boiling = water.saturation_pressure(temperature)
+        boiling = if97.saturation_pressure(temperature)
         assert boiling is not None  # the range ends far below the critical point
         vapour = boiling * method.vapour_pressure_ratio(self.salinity)
         phase = LIQUID if pressure > vapour else TWO_PHASE
@@ -77,13 +77,13 @@ class Seawater:
         return {}
 
     def _properties(self, temperature: float, pressure: float) -> dict[str, Property]:
-        pure = water.liquid_derivatives(temperature, pressure, _STEP)
+        pure = if97.liquid_derivatives(temperature, pressure, _STEP)
         salt = method.saline(
             temperature=temperature, pressure=pressure, salinity=self.salinity, terms=_terms()
         )
         whole = pure.plus(salt)
         density = 1.0 / whole.p
-        viscosity = water.liquid_viscosity(temperature) * method.viscosity_ratio(
+        viscosity = if97.liquid_viscosity(temperature) * method.viscosity_ratio(
             celsius=temperature - 273.15, salinity=self.salinity
         )
         values = {

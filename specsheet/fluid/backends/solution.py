@@ -13,8 +13,8 @@ from functools import cache
 from typing import Any
 
 from specsheet.findings import Finding, Origin
-from specsheet.fluid import library, solutes
-from specsheet.fluid.backends import user_table, water
+from specsheet.fluid import if97, library, solutes
+from specsheet.fluid.backends import user_table
 from specsheet.fluid.model import Condition, Method, Refused, both, caution, celsius, note, stop
 from specsheet.fluid.phases import LIQUID, TWO_PHASE
 from specsheet.fluid.state import Property, State
@@ -105,7 +105,7 @@ class Solution:
             return self._strong(strong, temperature, pressure)
         if density is None or self.fraction > density.fraction * 1.02:
             raise Refused(self._fraction(self.solute.highest_fraction))
-        lowest = max(density.lowest, water.LOWEST_TEMPERATURE)  # pure water is part of the equation
+        lowest = max(density.lowest, if97.LOWEST_TEMPERATURE)  # pure water is part of the equation
         beyond = self._temperature(temperature, lowest, density.highest)
         if not max(lowest - 10.0, 273.15) <= temperature <= density.highest + 10.0:
             raise Refused(beyond)
@@ -115,7 +115,7 @@ class Solution:
         value = method.laliberte_density(
             celsius=temperature - 273.15,
             solute_fraction=self.fraction,
-            water_density=water.liquid_density(temperature, 101325.0),
+            water_density=if97.liquid_density(temperature, 101325.0),
             coefficients=density.coefficients,
         ) * _squeeze(pressure)
         found = Method("equation of Laliberté and Cooper", _LALIBERTE, density.uncertainty)
@@ -125,7 +125,7 @@ class Solution:
         mixed = method.laliberte_viscosity(
             celsius=temperature - 273.15,
             solute_fraction=self.fraction,
-            water_viscosity=water.liquid_viscosity(temperature),
+            water_viscosity=if97.liquid_viscosity(temperature),
             coefficients=viscosity.coefficients,
         )
         fluid = Method("equation of Laliberté", _LALIBERTE, viscosity.uncertainty)
@@ -154,9 +154,9 @@ class Solution:
 
     def _vapour_pressure(self, temperature: float) -> Property | None:
         """Return the vapour pressure; None where the solute evaporates in a way not described."""
-        pure = water.saturation_pressure(temperature)
+        pure = if97.saturation_pressure(temperature)
         if pure is None:
-            pure = 611.2 if temperature < water.LOWEST_TEMPERATURE else None
+            pure = 611.2 if temperature < if97.LOWEST_TEMPERATURE else None
         if pure is None or self.solute.volatile == "yes":
             return None
         share = method.water_mole_fraction(
