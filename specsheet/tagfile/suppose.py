@@ -65,6 +65,8 @@ def _hint(document: Document, path: str, family: str) -> str:
     """Return what was meant, or what there is."""
     sections = tag_sections(family)
     section = path.rpartition(".")[0]
+    if section == "meter" and section not in sections:
+        return f"the family {family or '(none stated)'} takes nothing under [meter]"
     if section == "points" or section.startswith("points."):
         point = section.partition(".")[2] or next(iter(document.point_names()), "normal")
         return did_you_mean(path, (f"points.{point}.{name}" for name in sections["points"]))

@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
+import time
 import timeit
+from collections.abc import Callable
 
 import pytest
 from family_keys import KEYS
@@ -112,12 +114,15 @@ def test_without_a_usable_point_nothing_fits_and_the_reason_is_told() -> None:
 
 @pytest.mark.benchmark
 @pytest.mark.parametrize("name", ["water", "steam", "compressed air"])
-def test_all_families_cost_little_more_than_a_few_evaluations(name: str) -> None:
-    """64 families in less time than 20 single evaluations of the same tag."""
+def test_all_families_cost_less_than_evaluating_each(name: str) -> None:
+    """What is shared is derived once, and what is ruled out is not sized (two thirds at most)."""
     tag = service(name)
-    shortlist(tag)
-    evaluate(tag)
-    whole = min(timeit.repeat(lambda: shortlist(tag), number=1, repeat=5))
-    single = min(timeit.repeat(lambda: evaluate(tag), number=1, repeat=5))
-    print(f"{name}: {whole * 1e3:.0f} ms, {whole / single:.1f} single evaluations")
-    assert whole < 20.0 * single
+
+    def seconds(call: Callable[[], object]) -> float:
+        call()
+        return min(timeit.repeat(call, timer=time.process_time, number=3, repeat=5)) / 3.0
+
+    whole, single = seconds(lambda: shortlist(tag)), seconds(lambda: evaluate(tag))
+    each = len(KEYS) * single
+    print(f"{name}: {whole * 1e3:.0f} ms, {whole / each:.2f} of {len(KEYS)} single evaluations")
+    assert whole < 0.67 * each

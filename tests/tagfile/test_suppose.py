@@ -54,6 +54,7 @@ def test_problems_that_were_there_before_are_no_refusal() -> None:
         ("fluid.bubles", "1 %", 'did you mean "fluid.bubbles"'),
         ("fluids.bubbles", "1 %", 'did you mean "fluid"'),
         ("meter.bore_", "1 mm", 'did you mean "meter.bore"'),
+        ("family", "waterwheel", "family: .*is no meter family"),
         ("job.altitude", "100 m", "stands in job.toml"),
         ("line.orientation", "upside down", "line.orientation: "),
         ("", "1", "there is no such entry"),
@@ -62,3 +63,8 @@ def test_problems_that_were_there_before_are_no_refusal() -> None:
 def test_what_cannot_be_supposed_is_refused_in_words(path: str, value: str, words: str) -> None:
     with pytest.raises(EditError, match=words):
         suppose(TEXT, [(path, value)])
+
+
+def test_a_family_without_entries_of_its_own_says_so() -> None:
+    with pytest.raises(EditError, match=r"weir_vnotch takes nothing under \[meter\]"):
+        suppose(service_text("brook", "weir_vnotch"), [("meter.size", "DN 80")])
