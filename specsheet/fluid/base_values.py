@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Mapping
 from dataclasses import replace
 
-from specsheet.findings import Finding, Level
+from specsheet.findings import Finding, Level, Origin
 from specsheet.fluid.evaluate import Outcome
 from specsheet.fluid.given_values import given
 from specsheet.fluid.model import Fluid, caution
@@ -56,7 +56,7 @@ def apply(
         findings = [item for item in findings if item.level is not Level.STOP]
         findings += _differs(base, tag.base, density, values.get("density"))
         values["density"] = given(_moved(density, tag.base, base, fluid.phase), 0.002)
-    _calorific(tag, base, values)
+    findings += _calorific(tag, base, values)
     said = tuple(_softened(tag, item, base) for item in findings if item.field not in _POINTS_ONLY)
     return replace(found, properties=values), said
 
@@ -80,18 +80,46 @@ def _differs(base: Base, own: Base, stated: float, computed: Property | None) ->
     return [caution("base-density-given-differs", _DENSITY, text, computed.source)]
 
 
-def _calorific(tag: Tag, base: Base, values: dict[str, Property]) -> None:
-    """Put calorific values stated at the job's base in place, moved to this base by density."""
+def _calorific(tag: Tag, base: Base, values: dict[str, Property]) -> list[Finding]:
+    """Put calorific values stated at the job's base in place, moved to this base by density.
+
+    Where one of gross and net is stated and both are computed, the other follows in proportion.
+    """
     density = values.get("density")
-    for key in _VOLUME_KEYS:
-        stated = tag.si(f"fluid.{key}")
-        if stated is None or stated <= 0.0:
+    move = base.pressure / tag.base.pressure * tag.base.temperature / base.temperature
+    stated = {key: value for key in _VOLUME_KEYS if (value := tag.si(f"fluid.{key}")) is not None}
+    findings: list[Finding] = []
+    ratio = 1.0
+    for key, value in stated.items():
+        if value <= 0.0:
             continue
-        if base != tag.base:
-            stated *= base.pressure / tag.base.pressure * tag.base.temperature / base.temperature
-        values[key] = given(stated, 0.005)
+        computed = values.get(key)
+        if computed is not None:
+            ratio = value * move / computed.value
+            findings += _calorific_differs(key, value * move, computed, base == tag.base)
+        values[key] = given(value * move, 0.005)
         if density is not None:
-            values[f"{key}_mass"] = given(stated / density.value, 0.005)
+            values[f"{key}_mass"] = given(value * move / density.value, 0.005)
+    for key in _VOLUME_KEYS:
+        found = values.get(key)
+        if stated and key not in stated and found is not None and density is not None:
+            text = "computed from the composition, in proportion to the stated calorific value"
+            scaled = Property(found.value * ratio, Origin.DERIVED, text, found.source, 0.005)
+            values[key] = scaled
+            values[f"{key}_mass"] = scaled._replace(value=scaled.value / density.value)
+    return findings
+
+
+def _calorific_differs(key: str, stated: float, computed: Property, own: bool) -> list[Finding]:
+    difference = 100.0 * (stated / computed.value - 1.0)
+    if not own or abs(difference) <= 2.0:
+        return []
+    text = (
+        f"The stated {key.replace('_', ' ')} {stated / 1e6:.4g} MJ/m3 is {abs(difference):.3g} % "
+        f"{'above' if difference > 0 else 'below'} the computed {computed.value / 1e6:.4g} MJ/m3. "
+        "The stated one is used: confirm it and its base, or leave it out."
+    )
+    return [caution("calorific-value-given-differs", f"fluid.{key}", text, computed.source)]
 
 
 def _softened(tag: Tag, finding: Finding, base: Base) -> Finding:

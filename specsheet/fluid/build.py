@@ -70,7 +70,10 @@ def unknown(field: str, text: str) -> Finding:
 
 def _mixture(tag: Tag) -> Built:
     read = composition.read(
-        tag.table("fluid.mixture"), tag.text("fluid.basis") or "mole", tag.flag("fluid.normalise")
+        tag.table("fluid.mixture"),
+        tag.text("fluid.basis") or "mole",
+        tag.flag("fluid.normalise"),
+        tag.phase,
     )
     if read.composition is None:
         return Built(None, read.findings)

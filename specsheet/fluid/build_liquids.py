@@ -11,7 +11,7 @@ from specsheet.fluid.backends.petroleum import Petroleum
 from specsheet.fluid.backends.seawater import Seawater
 from specsheet.fluid.backends.slurry import Slurry
 from specsheet.fluid.backends.solution import Solution
-from specsheet.fluid.evaluate import LOCK
+from specsheet.fluid.lock import LOCK
 from specsheet.fluid.model import Fluid, note, stop
 from specsheet.methods import petroleum as method
 from specsheet.tag import Tag

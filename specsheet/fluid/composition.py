@@ -7,10 +7,11 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 
 from specsheet.findings import Finding
-from specsheet.fluid import names
+from specsheet.fluid import liquid_volumes, names
 from specsheet.fluid.backends.mixture import AIR
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.model import note, stop
+from specsheet.fluid.phases import LIQUID
 
 _FIELD = "fluid.mixture"
 #: a sum nearer to one than this is rounding of the last printed digit, and is scaled silently
@@ -27,13 +28,17 @@ class Read:
     findings: tuple[Finding, ...] = ()
 
 
-def read(stated: Mapping[str, float | str], basis: str, normalise: bool) -> Read:
+def read(
+    stated: Mapping[str, float | str], basis: str, normalise: bool, phase: str = "gas"
+) -> Read:
     """Return the mole fractions of a stated composition.
 
     Args:
         stated: name -> fraction [-].
-        basis: "mole", "mass" or "volume" (ideal volume, which is mole).
+        basis: "mole", "mass" or "volume": of ideal gases, which is mole, or of the pure liquids at
+            15 degC.
         normalise: whether the user lets the fractions be scaled.
+        phase: the phase stated.
     """
     findings = _refusals(stated)
     if findings:
@@ -48,7 +53,12 @@ def read(stated: Mapping[str, float | str], basis: str, normalise: bool) -> Read
     if off > CLOSE and not normalise:
         return Read(None, (_sum_refused(total),))
     notes = (_scaled(total),) if off > EXACT else ()
-    return Read(_moles(amounts, basis), notes)
+    if basis != "volume" or phase != LIQUID:
+        return Read(_moles(amounts, basis), notes)
+    masses = liquid_volumes.masses(amounts)
+    if isinstance(masses, Finding):
+        return Read(None, (masses,))
+    return Read(_moles(masses, "mass"), (*notes, liquid_volumes.SAID))
 
 
 def _refusals(stated: Mapping[str, float | str]) -> tuple[Finding, ...]:

@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import math
-import threading
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass, replace
 from functools import lru_cache
@@ -11,6 +10,7 @@ from functools import lru_cache
 from specsheet.findings import Finding
 from specsheet.fluid import library
 from specsheet.fluid.errors import translate
+from specsheet.fluid.lock import LOCK
 from specsheet.fluid.model import Condition, Fluid, Refused, stop
 from specsheet.fluid.phases import disagreement
 from specsheet.fluid.state import State
@@ -18,8 +18,6 @@ from specsheet.quantity.value import Base
 
 #: below these no fluid flows through a meter [K], [Pa]
 LOWEST_TEMPERATURE, LOWEST_PRESSURE = 1.0, 1.0
-#: the state objects of the fluid library must not be used by two threads at once
-LOCK = threading.RLock()
 
 
 @dataclass(frozen=True, slots=True)

@@ -8,7 +8,7 @@ from specsheet.findings import Finding
 from specsheet.fluid.backends.mixture import Mixture
 from specsheet.fluid.backends.wet_gas import WetGas, saturated, wetted
 from specsheet.fluid.calorific import Composition
-from specsheet.fluid.evaluate import LOCK
+from specsheet.fluid.lock import LOCK
 from specsheet.fluid.model import Condition, Fluid, Refused, caution, celsius, stop
 from specsheet.fluid.phases import GAS
 from specsheet.tag import Point, Tag

@@ -8,9 +8,11 @@ from dataclasses import replace
 from specsheet.findings import Finding, Level
 from specsheet.fluid import base_values, envelope, evaluate, given_values, mixture_phase
 from specsheet.fluid.backends.mixture import Mixture
+from specsheet.fluid.backends.water import Water
 from specsheet.fluid.backends.wet_gas import WetGas
 from specsheet.fluid.build import fluid_of
-from specsheet.fluid.model import Condition, Fluid
+from specsheet.fluid.lock import LOCK
+from specsheet.fluid.model import Condition, Fluid, caution
 from specsheet.fluid.phases import UNVERIFIED
 from specsheet.fluid.state import FluidResult, Property, State
 from specsheet.quantity.value import Base
@@ -26,7 +28,7 @@ def derive(tag: Tag) -> FluidResult:
         return FluidResult(
             name, tuple(None for _ in tag.points), {}, findings=_sorted(built.findings)
         )
-    with evaluate.LOCK:
+    with LOCK:
         constants = base_values.constants(tag, fluid)
         points, findings = _points(tag, fluid, constants)
         bases, base_findings = _bases(tag, fluid)
@@ -91,9 +93,19 @@ def _points(
             found = given_values.apply(tag, point, found, molar_mass)
             found = replace(found, findings=tuple(_at(point, item) for item in found.findings))
             findings += found.findings
-        findings += [_at(point, item) for item in outcome.findings]
+        findings += [_at(point, item) for item in (*outcome.findings, *_unused(fluid, point))]
         states.append(found)
     return tuple(states), tuple(findings)
+
+
+def _unused(fluid: Fluid, point: Point) -> tuple[Finding, ...]:
+    """Return the caution for a dryness fraction of anything but steam."""
+    if point.quantity("dryness_fraction") is None or isinstance(fluid, Water):
+        return ()
+    text = (
+        f"A dryness fraction is stated, but only steam has one here: {fluid.name} is computed dry."
+    )
+    return (caution("dryness-unused", "dryness_fraction", text),)
 
 
 def _at(point: Point, finding: Finding) -> Finding:

@@ -101,3 +101,21 @@ def test_whatever_is_read_sums_to_one(stated: dict[str, float], basis: str) -> N
     assert read.composition is not None
     assert sum(fraction for _, fraction in read.composition) == pytest.approx(1.0, abs=1e-12)
     assert all(fraction > 0.0 for _, fraction in read.composition)
+
+
+def test_volumes_of_a_liquid_are_those_of_the_pure_liquids() -> None:
+    text = (
+        'kind = "mixture"\nphase = "liquid"\nbasis = "volume"\n'
+        "mixture = { propane = 0.6, n_butane = 0.4 }"
+    )
+    result = fluid.derive(tag(text, point("12 bar(g)", "15 degC")))
+    assert "fractions-by-liquid-volume" in codes(result)
+    # 507 and 585 kg/m3 at 15 degC (handbook, from memory); volumes all but add up
+    assert result.points[0] is not None
+    assert result.points[0].value("density") == pytest.approx(0.6 * 507 + 0.4 * 585, rel=0.01)
+
+
+def test_a_gas_has_no_liquid_volume() -> None:
+    read = composition.read({"methane": 0.1, "propane": 0.9}, "volume", False, "liquid")
+    assert read.composition is None
+    assert read.findings[0].code == "fraction-basis"

@@ -229,3 +229,21 @@ def test_polar_liquid_mixtures_are_not_trusted() -> None:
     # 0.3 by mole is 52.3 % by mass: 908 kg/m3 (OIML R 22, from memory)
     density = result.points[0].properties["density"]
     assert density.value == pytest.approx(908.0, rel=density.uncertainty)
+
+
+def test_a_stated_calorific_value_draws_the_other_with_it() -> None:
+    computed = fluid.derive(tag(METHANE, point("1 bar(g)", "20 degC"))).constants
+    text = METHANE + '\ngross_calorific_value = "40 MJ/m3"'
+    stated = fluid.derive(tag(text, point("1 bar(g)", "20 degC")))
+    ratio = 40e6 / computed["gross_calorific_value"].value
+    assert stated.constants["net_calorific_value"].value == pytest.approx(
+        ratio * computed["net_calorific_value"].value
+    )
+    said = finding(stated, "calorific-value-given-differs")
+    assert said.field == "fluid.gross_calorific_value"
+    assert "40 MJ/m3" in said.message
+
+
+def test_dryness_of_anything_but_steam_is_said_to_be_unused() -> None:
+    result = fluid.derive(tag(METHANE, point("1 bar(g)", "20 degC", dryness_fraction="95 %")))
+    assert finding(result, "dryness-unused").field == "points.normal.dryness_fraction"

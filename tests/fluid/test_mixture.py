@@ -159,3 +159,19 @@ def test_base_density_below_the_dew_point_is_that_of_a_hypothetical_gas() -> Non
     assert len(densities) == 2
     mass = result.constants["molar_mass"].value
     assert densities[1] == pytest.approx(101325 * mass / (8.314462618 * 273.15), rel=0.006)
+
+
+def test_hot_flue_gas_has_a_state() -> None:
+    text = (
+        'kind = "mixture"\nphase = "gas"\n'
+        "mixture = { nitrogen = 0.72, carbon_dioxide = 0.12, water = 0.12, oxygen = 0.04 }"
+    )
+    result = fluid.derive(tag(text, point("0 bar(g)", "900 degC")))
+    assert stops(result) == []
+    assert "fluid-limit" not in codes(result)
+    mass = result.constants["molar_mass"].value
+    state_ = result.points[0]
+    assert state_ is not None
+    assert state_.value("density") == pytest.approx(
+        101325 * mass / (8.314462618 * 1173.15), rel=1e-3
+    )

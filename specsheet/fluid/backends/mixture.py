@@ -254,17 +254,12 @@ def _name(composition: Composition) -> str:
 @lru_cache(maxsize=256)
 def _range(composition: Composition) -> limits.Range:
     """Return the limits: of the equation within its components, wide enough for ISO 20765-2."""
-    table = names.substances()
+    weighty = [names.substances()[key] for key, fraction in composition if fraction >= 0.01]
+    highest = min(item.highest_temperature for item in weighty)
     if all(key in _GERG for key, _ in composition):
-        return limits.Range(60.0, 700.0, 70e6, cite("iso20765-2"), above=300.0)
-    weighty = [table[key] for key, fraction in composition if fraction >= 0.01]
-    return limits.Range(
-        60.0,
-        max(item.highest_temperature for item in weighty),
-        max(item.highest_pressure for item in weighty),
-        _SOURCE,
-        above=100.0,
-    )
+        return limits.Range(60.0, max(700.0, highest), 70e6, cite("iso20765-2"), above=300.0)
+    pressure = max(item.highest_pressure for item in weighty)
+    return limits.Range(60.0, max(500.0, highest), pressure, _SOURCE, above=200.0)
 
 
 @lru_cache(maxsize=256)
