@@ -19,10 +19,10 @@ from functools import lru_cache
 from typing import Any
 
 from specsheet.findings import Finding, Origin
-from specsheet.fluid import envelope, if97, library, mixture_state, names
-from specsheet.fluid.backends import pure, water
+from specsheet.fluid import envelope, if97, library, mixture_state, names, water_in_gas
+from specsheet.fluid.backends import pure
 from specsheet.fluid.calorific import Composition
-from specsheet.fluid.model import GAS_CONSTANT, Condition, Method, caution, celsius
+from specsheet.fluid.model import Method, caution, celsius
 from specsheet.fluid.phases import GAS, LIQUID, TWO_PHASE, UNVERIFIED
 from specsheet.fluid.state import Property
 from specsheet.methods import cubic, equilibrium
@@ -95,63 +95,17 @@ def _wet_verdict(
     fraction = dict(composition).get("water", 0.0)
     if fraction <= 0.0 or temperature >= if97.CRITICAL_TEMPERATURE:
         return None
-    if fraction * pressure < 0.5 * saturation(temperature):
-        return Verdict(GAS, {"dew_temperature": _WATER_DEW(boiling(fraction * pressure))})
-    ratio = fraction / saturated_fraction(composition, temperature, pressure, state)
+    if fraction * pressure < 0.5 * water_in_gas.saturation(temperature):
+        return Verdict(
+            GAS, {"dew_temperature": _WATER_DEW(water_in_gas.boiling(fraction * pressure))}
+        )
+    ratio = fraction / water_in_gas.saturated_fraction(composition, temperature, pressure, state)
     # the enhancement by pressure is taken as the same at the dew point
-    dew = boiling(ratio * saturation(temperature))
+    dew = water_in_gas.boiling(ratio * water_in_gas.saturation(temperature))
     values = {"dew_temperature": _WATER_DEW(dew)}
     if ratio > 1.0 + SATURATED:
         return Verdict(TWO_PHASE, values)
     return Verdict(GAS, values, _near(dew, temperature, "water"))
-
-
-def saturated_fraction(
-    composition: Composition, temperature: float, pressure: float, state: Any
-) -> float:
-    """Return the mole fraction of water at which a gas is saturated with it [-]; may exceed one.
-
-    Args:
-        composition: with water.
-        temperature: [K]
-        pressure: [Pa]
-        state: state object of the gas at that state; its fugacity coefficient of water is used.
-    """
-    index = [key for key, _ in composition].index("water")
-    vapour = saturation(temperature)
-    poynting = math.exp(1.8e-5 * max(pressure - vapour, 0.0) / (GAS_CONSTANT * temperature))
-    condensed = vapour * _saturated_coefficient(temperature) * poynting
-    return condensed / (pressure * float(state.fugacity_coefficient(index)))
-
-
-def saturation(temperature: float) -> float:
-    """Return the vapour pressure [Pa] of water, over ice below freezing."""
-    found = if97.saturation_pressure(temperature)
-    if found is not None:
-        return found
-    if temperature >= if97.CRITICAL_TEMPERATURE:
-        return if97.CRITICAL_PRESSURE
-    return equilibrium.ice_vapour_pressure(temperature)
-
-
-@lru_cache(maxsize=1024)
-def _saturated_coefficient(temperature: float) -> float:
-    """Return the fugacity coefficient of saturated steam, from its compressibility factor."""
-    found = water.Water(GAS)
-    if temperature < if97.LOWEST_TEMPERATURE:
-        return 1.0
-    factor = found.state(Condition(temperature, None)).value("compressibility") or 1.0
-    return math.exp(factor - 1.0)
-
-
-def boiling(pressure: float) -> float:
-    """Return the temperature [K] at which water or ice has a vapour pressure [Pa]."""
-    found = if97.saturation_temperature(pressure)
-    if found is not None:
-        return found
-    if pressure >= if97.CRITICAL_PRESSURE:
-        return if97.CRITICAL_TEMPERATURE
-    return equilibrium.frost_point(pressure)
 
 
 # All else in the gas -------------------------------------------------------------------------

@@ -9,8 +9,8 @@ from specsheet import fluid
 from specsheet.fluid import library
 from specsheet.fluid.backends.mixture import AIR, Mixture
 from specsheet.fluid.backends.wet_gas import saturated, wetted
-from specsheet.fluid.mixture_phase import saturation
 from specsheet.fluid.model import Condition
+from specsheet.fluid.water_in_gas import saturation
 
 WATER, DRY = 0.01801528, 0.0289655
 AIR_60 = 'kind = "humid_air"\nphase = "gas"\nrelative_humidity = "60 %"'

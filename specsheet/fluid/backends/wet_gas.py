@@ -12,7 +12,7 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 from functools import lru_cache
 
-from specsheet.fluid import library, mixture_phase, mixture_state
+from specsheet.fluid import library, mixture_state, water_in_gas
 from specsheet.fluid.backends.mixture import AIR, Mixture
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.model import Condition, Refused, bar, both, celsius, stop
@@ -103,7 +103,7 @@ def saturated(dry: Composition, temperature: float, pressure: float) -> float:
     if temperature < 173.15:
         text = f"Humidity is described from -100 °C; {celsius(temperature)} came."
         raise Refused(stop("fluid-limit", "temperature", text))
-    fraction = mixture_phase.saturation(temperature) / pressure
+    fraction = water_in_gas.saturation(temperature) / pressure
     if fraction >= 0.98:
         text = (
             f"At {celsius(temperature)} and {bar(pressure)} water alone fills the space, so a "
@@ -120,7 +120,7 @@ def saturated(dry: Composition, temperature: float, pressure: float) -> float:
             raise Refused(stop("fluid-no-state", "temperature", text)) from None
         before, fraction = (
             fraction,
-            mixture_phase.saturated_fraction(wet, temperature, pressure, state),
+            water_in_gas.saturated_fraction(wet, temperature, pressure, state),
         )
         if abs(fraction - before) < 1e-6 * fraction:
             break
