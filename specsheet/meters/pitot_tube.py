@@ -82,7 +82,7 @@ def _places(request: Request, position: str) -> tuple[tuple[str, ...], tuple[Fin
                 "meter.points_on_radius",
                 f"the {rule} rule has positions for {known[0]} to {known[-1]} points on a radius, "
                 f"not {count}; 4 are taken",
-                source=_SOURCE,
+                source=cite("iso5802"),
             ),
         )
         count = 4
