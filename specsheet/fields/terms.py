@@ -171,6 +171,7 @@ _TERMS = (
     Term("froude_number", "Froude number of the gas", "Frg", "dimensionless"),
     Term("throat_froude_number", "Froude number, throat", "Frg,th", "dimensionless"),
     Term("over_reading", "Over-reading in wet gas", "φ", "dimensionless"),
+    Term("element_expansion", "Thermal expansion of the element", "αd", "expansion"),
     Term("edge_radius", "Radius of the inlet edge", "r", "length"),
     Term("segment_height", "Height of the segment at 20 °C", "h", "length"),
     Term("cone_diameter", "Cone diameter at 20 °C", "dc", "length"),

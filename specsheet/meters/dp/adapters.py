@@ -102,7 +102,7 @@ BORE_HOT = Derivation(
     "bore_diameter_hot",
     "d = d20 (1 + αd (t - 20 °C))",
     cite("iso5167-1"),
-    ("bore_diameter", "temperature"),
+    ("bore_diameter", "element_expansion", "temperature"),
 )
 THROAT = Derivation(
     "throat_diameter",
@@ -114,5 +114,5 @@ THROAT_HOT = Derivation(
     "throat_diameter_hot",
     "d = d20 (1 + αd (t - 20 °C))",
     cite("iso5167-1"),
-    ("throat_diameter", "temperature"),
+    ("throat_diameter", "element_expansion", "temperature"),
 )

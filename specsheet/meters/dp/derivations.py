@@ -10,10 +10,16 @@ _PART1 = cite("iso5167-1")
 #: derivations shared by the group
 COMMON: tuple[Derivation, ...] = (
     Derivation(
+        "element_expansion",
+        "mean coefficient of the material to the temperature of the normal point",
+        "table of materials",
+        ("temperature",),
+    ),
+    Derivation(
         "inside_diameter_hot",
         "D = D20 (1 + αD (t - 20 °C))",
         _PART1,
-        ("inside_diameter", "temperature"),
+        ("inside_diameter", "pipe_expansion", "temperature"),
     ),
     Derivation("velocity", "v = qm / (ρ π D²/4)", "continuity", ("mass_flow", "density")),
     Derivation(

@@ -297,6 +297,9 @@ def given_values(of: Task, sized: Sized) -> dict[str, Given]:
         "diameter_ratio": Given(ratio, Origin.DERIVED, device.source),
         "inside_diameter_hot": Given(inside, Origin.DERIVED, clause),
         RANGE: Given(sized.span, sized.span_origin, PRACTICE),
+        "element_expansion": Given(
+            numbers["element_expansion"], Origin.DERIVED, "table of materials"
+        ),
     }
     if device.shape.hot_term:
         values[device.shape.hot_term] = Given(sized.machined * grown, Origin.DERIVED, clause)
