@@ -25,6 +25,7 @@ first steps:
   specsheet new FT-2104 --family vortex       write a commented file to fill in
   specsheet form FT-2104.toml                 fill it in on the screen
   specsheet check FT-2104.toml                what is wrong, and by what margin
+  specsheet shortlist FT-2104.toml            which other families would fit
   specsheet print FT-2104.toml                the datasheet, as PDF in output/
 
 `specsheet COMMAND --help` tells more about one command.
@@ -171,7 +172,8 @@ def _whatif(commands: Commands[ArgumentParser]) -> None:
 def _shortlist(commands: Commands[ArgumentParser]) -> None:
     more = (
         "Families with equations are sized, the others judged by their usual limits. A family\n"
-        "that does not fit is listed with the reason. Exit status 1 where none fits."
+        "that does not fit is listed with the reason. Exit status 1 where none fits, or where the\n"
+        "process data have a stop finding whatever the family."
     )
     shortlist = _command(
         commands, "shortlist", "hold every meter family against a tag, the best first", more

@@ -20,6 +20,8 @@ from specsheet.tag import Tag
 CHANNEL = "open channel"
 #: stands in for the pipe where the water has a free surface: nothing is known of a section
 NO_PIPE = Pipe(nan, nan, nan, nan, "", 0, "")
+#: gauge pressure above which there is no free surface [Pa]: half a metre of water
+_NO_SURFACE = 5000.0
 _LINE_ENTRIES = ("line.size", "line.inside_diameter", "line.outside_diameter")
 
 
@@ -61,12 +63,27 @@ def prepare(tag: Tag) -> Prepared:
 def in_channel(prepared: Prepared, profile: Profile | None) -> bool:
     """Tell whether a family is used with a free surface on this tag.
 
-    So it is where it knows nothing else, or where it can and no pipe is stated.
+    So it is where it knows nothing else; or where it can, no pipe is stated, and the liquid can
+    have a free surface.
     """
     if profile is None or CHANNEL not in profile.applies_to:
         return False
+    if profile.applies_to == (CHANNEL,):
+        return True
     stated = any(path in prepared.tag.given for path in _LINE_ENTRIES)
-    return profile.applies_to == (CHANNEL,) or not stated
+    return not stated and prepared.tag.phase == "liquid" and not has_pressure(prepared)
+
+
+def overpressure(prepared: Prepared) -> float:
+    """Return the highest gauge pressure of the operating points [Pa]; 0 where none is known."""
+    known = [state.pressure for state in prepared.fluid.points if state is not None]
+    atmosphere = prepared.tag.atmospheric_pressure
+    return max((pressure - atmosphere for pressure in known), default=0.0)
+
+
+def has_pressure(prepared: Prepared) -> bool:
+    """Tell whether the line stands under more pressure than a free surface allows."""
+    return overpressure(prepared) > _NO_SURFACE
 
 
 def request(prepared: Prepared, profile: Profile, tag: Tag | None = None) -> Request | None:

@@ -9,7 +9,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 
-from specsheet.evaluate.prepare import CHANNEL, Prepared
+from specsheet.evaluate.prepare import CHANNEL, Prepared, has_pressure, overpressure
 from specsheet.evaluate.result import Check
 from specsheet.evaluate.words import facts, number
 from specsheet.fields.terms import in_sentence
@@ -29,8 +29,6 @@ ENTRIES = {
 }
 #: most that anything but a liquid metal conducts [S/m]; common practice
 _CONDUCTS = 100.0
-#: gauge pressure above which there is no free surface [Pa]: half a metre of water
-_NO_SURFACE = 5000.0
 #: a line this much smaller than the smallest usual one has no room for the probe; common practice
 _FAR_BELOW = 0.5
 _IN_LIQUIDS = ("solids_fraction", "bubble_fraction", "scatterer_fraction")
@@ -96,12 +94,10 @@ def _suitable(prepared: Prepared, profile: Profile) -> Iterator[Finding]:
             f"{tag.phase}. Choose another family."
         )
         yield Finding(Level.STOP, "phase-unsuitable", "fluid.phase", message, source=PRACTICE)
-    pressure = [state.pressure for state in prepared.fluid.points if state is not None]
-    over = max(pressure, default=0.0) - tag.atmospheric_pressure
-    if profile.applies_to == (CHANNEL,) and over > _NO_SURFACE:
+    if profile.applies_to == (CHANNEL,) and has_pressure(prepared):
         message = (
             f"{profile.title}: a free surface is needed, and the line stands under "
-            f"{number(over / 1e5)} bar(g). Choose a family for closed pipes."
+            f"{number(overpressure(prepared) / 1e5)} bar(g). Choose a family for closed pipes."
         )
         yield Finding(
             Level.STOP, "free-surface-needed", "points.pressure", message, source=PRACTICE

@@ -101,8 +101,10 @@ def shortlist(tag: Tag) -> Shortlist:
     """Hold every family against one tag. Never raises on user data."""
     prepared = prepare(tag)
     found = [candidate(prepared, packs.profile(key)) for key in packs.family_keys()]
-    common = prepared.findings(None)
-    worst = sorted(dict.fromkeys(common), key=lambda item: _RANK[item.level])
+    # a pipe that is missing is a reason with each family that needs one, not with a channel
+    of_pipe = _stops(prepared.pipe.findings)
+    common = dict.fromkeys(item for item in prepared.findings(None) if item not in of_pipe)
+    worst = sorted(common, key=lambda item: _RANK[item.level])
     return Shortlist(tag, tuple(worst), tuple(sorted(found, key=_merit)))
 
 

@@ -104,6 +104,17 @@ def test_without_a_pipe_no_closed_pipe_family_is_judged() -> None:
     assert all("open channel" in packs.profile(key).applies_to for key in fitting)
 
 
+def test_a_channel_is_told_of_no_missing_pipe_and_a_pressure_line_is(water: Shortlist) -> None:
+    assert "line-size-missing" not in {f.code for f in shortlist(service("canal")).findings}
+    text = service_text("water").replace('size = "DN 100"\n', "")
+    tag = tagfile.loads(text).tag
+    assert tag is not None
+    found = shortlist(tag)
+    assert {item.verdict for item in found.candidates} == {Verdict.UNFIT}
+    assert "line-size-missing" in {reason.code for reason in of(found, "tracer_dilution").reasons}
+    assert of(water, "tracer_dilution").verdict is not Verdict.UNFIT
+
+
 def test_without_a_usable_point_nothing_fits_and_the_reason_is_told() -> None:
     tag = tagfile.loads(service_text("water").replace("flow = ", "# flow = ")).tag
     assert tag is not None

@@ -8,7 +8,7 @@ from specsheet import tagfile
 from specsheet.cli.choose import known_family
 from specsheet.cli.inputs import read_one
 from specsheet.cli.narrate import data, say
-from specsheet.cli.status import Status
+from specsheet.cli.status import Status, verdict
 from specsheet.tagfile import Problem
 
 
@@ -27,8 +27,9 @@ def run(arguments: Namespace) -> Status:
     data(render.as_json(found) if arguments.json else render.text(found))
     if troubled:
         return Status.UNUSABLE
-    fitting = any(item.verdict is not Verdict.UNFIT for item in found.candidates)
-    return Status.FINE if fitting else Status.STOPPED
+    if all(item.verdict is Verdict.UNFIT for item in found.candidates):
+        return Status.STOPPED
+    return verdict(item.level for item in found.findings)
 
 
 def _adopt(path: str, family: str) -> Status:
