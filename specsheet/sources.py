@@ -88,7 +88,7 @@ _SOURCES = (
     Source("iso20765-2", "ISO 20765-2:2015", "natural gas: GERG-2008", "published values"),
     Source("iso6976", "ISO 6976:2016", "calorific values from composition", "published values"),
     Source("wilke", "Wilke (1950)", "viscosity of gas mixtures", "read"),
-    Source("perry8", "Perry's Handbook, 8th edition", "data of substances", "published values"),
+    Source("perry8", "Perry's Handbook, 8th edition", "data of substances", "read"),
     Source("wilson", "Wilson (1968)", "vapour-liquid ratios from critical constants"),
     Source("mason-saxena", "Mason and Saxena (1958)", "thermal conductivity of gas mixtures"),
     Source("grunberg", "Grunberg and Nissan (1949)", "viscosity of liquid mixtures"),

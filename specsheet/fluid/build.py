@@ -4,8 +4,9 @@ from __future__ import annotations
 
 from collections.abc import Callable
 
+from specsheet import packs
 from specsheet.findings import Finding
-from specsheet.fluid import build_liquids, composition, humidity, job_substances, names
+from specsheet.fluid import build_liquids, composition, humidity, job_substances, names, solutes
 from specsheet.fluid.backends import given as given_backend
 from specsheet.fluid.backends.given import Given
 from specsheet.fluid.backends.mixture import AIR, Mixture
@@ -56,8 +57,28 @@ def _substance(tag: Tag) -> Built:
     return Built(Pure(item.key, tag.phase, _combustion(tag)))
 
 
+_ADVICE = {
+    "mixture": "state its composition with fluid.kind mixture",
+    "petroleum": "state fluid.kind petroleum with its density at 15 °C",
+    "humid_air": "state fluid.kind humid_air with its humidity",
+    "seawater": "state fluid.kind seawater with its salinity",
+    "slurry": "state fluid.kind slurry with its carrying liquid and solids",
+    "given": "state fluid.kind given with density and viscosity at each point",
+    "solution": "state fluid.kind solution with how much of it is in the water",
+}
+
+
 def unknown(field: str, text: str) -> Finding:
-    """Return the finding for a name that names no substance, with the nearest ones."""
+    """Return the finding for a name that names no substance: the kind it belongs to, or near names.
+
+    Args:
+        field: path of the entry.
+        text: the name.
+    """
+    kind = _kind_of(text)
+    if kind:
+        message = f"{text} is no pure substance here: {_ADVICE[kind]}."
+        return stop("substance-unknown", field, message)
     near = names.nearest(text)
     hint = f" Did you mean {' or '.join(near)}?" if near else ""
     return stop(
@@ -66,6 +87,15 @@ def unknown(field: str, text: str) -> Finding:
         f"No substance is called {text!r}.{hint} Otherwise state density and viscosity at each "
         "point with fluid.kind given, or add the substance to the folder fluids of the job.",
     )
+
+
+def _kind_of(text: str) -> str:
+    """Return the kind that a fluid of this name is stated as, or ""."""
+    wanted = names.normal(text)
+    for kind, listed in packs.table("fluids/hints").items():
+        if any(names.normal(name) == wanted for name in listed):
+            return str(kind)
+    return "solution" if solutes.find(text) is not None else ""
 
 
 def _mixture(tag: Tag) -> Built:

@@ -74,18 +74,6 @@ def test_nothing_is_printed_and_the_environment_is_left_alone() -> None:
     assert found.stderr == ""
 
 
-def test_plain_import_still_works_beside_it() -> None:
-    found = run(
-        """
-        from specsheet.fluid import library
-        library.extension()
-        import CoolProp
-        assert CoolProp.AbstractState is not None
-        """
-    )
-    assert "Traceback" not in found.stderr
-
-
 @pytest.mark.parametrize(
     ("text", "code"),
     [

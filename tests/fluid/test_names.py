@@ -7,7 +7,9 @@ import sys
 
 import chemicals
 import pytest
+from fluid_tags import finding, point, tag
 
+from specsheet import fluid
 from specsheet.fluid import names, solutes
 
 
@@ -132,3 +134,22 @@ def test_names_load_no_numerical_library() -> None:
     )
     found = subprocess.run([sys.executable, "-c", code], capture_output=True, text=True, check=True)
     assert found.stdout.strip() == "[]"
+
+
+@pytest.mark.parametrize(
+    ("text", "words"),
+    [
+        ("Natural gas", "fluid.kind mixture"),
+        ("diesel", "fluid.kind petroleum"),
+        ("sea water", "fluid.kind seawater"),
+        ("ethylene glycol", "fluid.kind solution"),
+        ("sludge", "fluid.kind slurry"),
+        ("milk", "fluid.kind given"),
+        ("metane", "methane"),
+    ],
+)
+def test_what_is_no_substance_is_shown_the_way(text: str, words: str) -> None:
+    stated = tag(f'kind = "substance"\nsubstance = "{text}"\nphase = "liquid"', point())
+    said = finding(fluid.derive(stated), "substance-unknown")
+    assert said.field == "fluid.substance"
+    assert words in said.message
