@@ -7,7 +7,7 @@ import numpy as np
 from specsheet.meters.dp import adapters, body, nozzle
 from specsheet.meters.dp.build import family, standard_limits
 from specsheet.meters.dp.device import Described, Device, Lanes, Prepared
-from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
+from specsheet.meters.family import Array, Derivation, Element, Limit, Request
 from specsheet.sources import MEMORY
 
 _SOURCE = f"literature ({MEMORY}); calibration decides"
@@ -38,14 +38,13 @@ def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not
 
 
 def _describe(request: Request, element: Element) -> Described:  # noqa: ARG001 - the protocol
-    values: dict[str, Given] = {}
     notes = (
         "Dall tube: short, steep convergent, annular slot at the throat, short divergent; one "
         "tapping upstream, one in the slot.",
         "Higher differential and lower loss than a Venturi tube of the same throat; not for "
         "liquids with solids, which fill the slot, nor for flow either way.",
     )
-    return Described(values, {"element": notes})
+    return Described({}, {"element": notes})
 
 
 def _limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001

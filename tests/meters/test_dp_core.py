@@ -332,3 +332,51 @@ def test_range_above_the_pressure_is_out_of_reach():
     element = registry.family("orifice_concentric").size(request)
     assert "range-out-of-reach" in [item.code for item in element.findings]
     assert "upper_range_flow" not in element.values
+
+
+def test_the_hardest_point_decides_the_bore():
+    """The largest Δp is not always at the largest flow: thin gas at less flow makes more."""
+    fluid = tools.steam(3)
+    fluid["density"] = np.array([4.0, 2.0, 4.0])
+    fluid["pressure"] = np.array([8e5, 4e5, 8e5])
+    request = tools.request(
+        "orifice_concentric",
+        [0.3, 0.9, 1.0],
+        fluid,
+        phase="gas",
+        diameter=0.1541,
+        nominal=150,
+        differential_pressure_range="250 mbar",
+    )
+    family = registry.family("orifice_concentric")
+    fraction = family.at(family.size(request), request.stream)["signal_fraction"]
+    assert fraction.argmax() == 1
+    assert 0.99 < fraction[1] <= 1.0
+
+
+def test_expansion_can_make_another_point_the_hardest():
+    """Equal qm²/ρ, but half the pressure: ε is smaller there and Δp larger."""
+    fluid = tools.steam(3)
+    fluid["pressure"] = np.array([8e5, 2e5, 8e5])
+    request = tools.request(
+        "orifice_concentric",
+        [0.3, 0.9999, 1.0],
+        fluid,
+        phase="gas",
+        diameter=0.1541,
+        nominal=150,
+        differential_pressure_range="250 mbar",
+    )
+    family = registry.family("orifice_concentric")
+    fraction = family.at(family.size(request), request.stream)["signal_fraction"]
+    assert fraction.argmax() == 1
+    assert 0.99 < fraction[1] <= 1.0
+
+
+def test_second_transmitter_must_reach_lower():
+    request = water(
+        "orifice_concentric", differential_pressure_range="160 mbar", second_range="250 mbar"
+    )
+    element = registry.family("orifice_concentric").size(request)
+    assert "second-transmitter-useless" in [item.code for item in element.findings]
+    assert "second_range" not in element.values

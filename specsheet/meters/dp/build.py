@@ -41,7 +41,7 @@ def _ratio(device: Device) -> Derivation:
 
 def size(device: Device, request: Request) -> Element:
     """Size or rate the device for a tag; what is wrong with it becomes a finding."""
-    task = sizing.task(device, request)
+    task = sizing.led(sizing.task(device, request))
     sized = sizing.solve(task)
     bare = task.element(sized.size, sized.span)
     second, remarks = sizing.second_range(task, bare)

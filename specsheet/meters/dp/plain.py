@@ -102,7 +102,8 @@ def element(
         (stated, ()) if stated is not None else _range(request, respond, numbers, choices, margin)
     )
     origin = tag.origin(f"meter.{RANGE}") if stated is not None else Origin.DERIVED
-    complete = {**numbers, "range": span}
+    second, useless = transmitter.below(numbers["second_range"], span)
+    complete = {**numbers, "range": span, "second_range": second}
     flow = _upper_flow(request, respond, complete, choices, span)
     top = transmitter.top_of(flow, f"meter.{RANGE}", "response at the upper range value")
     legs = transmitter.legs(request, span, tapping_distance)
@@ -114,16 +115,14 @@ def element(
         **top.values,
         **legs.values,
     }
-    if numbers["second_range"]:
-        printed["second_range"] = Given(
-            numbers["second_range"], tag.origin("meter.second_range"), ""
-        )
+    if second:
+        printed["second_range"] = Given(second, tag.origin("meter.second_range"), "")
     installation = (*notes.get("installation", ()), *legs.notes)
     return Element(
         numbers=complete,
         values=printed,
         notes={**notes, "installation": installation, **output_note(request)},
-        findings=(*findings, *more, *legs.findings, *top.findings),
+        findings=(*findings, *more, *useless, *legs.findings, *top.findings),
         choices=choices,
     )
 

@@ -16,6 +16,9 @@ from specsheet.meters.family import Array, Element, Given, Request, Stream
 from specsheet.methods import iso5167_1 as equation
 from specsheet.sources import PRACTICE, cite
 
+#: how often the leading point may change
+_ROUNDS = 3
+
 #: above this diameter ratio nothing narrows the pipe any more [-]
 _WIDEST = 0.95
 
@@ -102,6 +105,24 @@ def task(device: Device, request: Request) -> Task:
 def _or_nan(request: Request, key: str) -> float:
     value = request.tag.si(f"meter.{key}")
     return np.nan if value is None else value
+
+
+def led(of: Task) -> Task:
+    """Return the task led by the point that gives the largest Δp with the element as sized.
+
+    The first guess is the largest qm²/ρ; expansion of a gas can make another point harder.
+    """
+    stream = of.request.stream
+    for _ in range(_ROUNDS):
+        sized = solve(of)
+        found = respond(of.device, of.element(sized.size, sized.span), stream)
+        pressure = found["differential_pressure"]
+        if not np.isfinite(pressure).all() or int(np.argmax(pressure)) == of.lead:
+            return of
+        lead = int(np.argmax(pressure))
+        margin = of.flow / float(stream.mass_flow[of.lead])
+        of = replace(of, lead=lead, flow=float(stream.mass_flow[lead]) * margin)
+    return of
 
 
 def solve(of: Task) -> Sized:
@@ -245,7 +266,7 @@ def second_range(of: Task, bare: Element) -> tuple[float, tuple[Finding, ...]]:
     tag = of.request.tag
     stated = tag.si("meter.second_range")
     if stated is not None:
-        return stated, ()
+        return transmitter.below(stated, bare.numbers["range"])
     values = respond(of.device, bare, of.request.stream)
     pressure = values["differential_pressure"]
     if not np.isfinite(pressure).any():

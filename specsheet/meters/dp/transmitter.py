@@ -121,6 +121,21 @@ def limits(numbers: Mapping[str, float], entry: str) -> tuple[Limit, ...]:
     return tuple(found)
 
 
+def below(second: float, span: float) -> tuple[float, tuple[Finding, ...]]:
+    """Return the second transmitter's range [Pa]; 0 and a finding where it adds nothing."""
+    if second < span:
+        return second, ()
+    return 0.0, (
+        Finding(
+            Level.CAUTION,
+            "second-transmitter-useless",
+            "meter.second_range",
+            f"the second transmitter must reach lower than the first, {span / 100.0:.4g} mbar; it "
+            "is left out here",
+        ),
+    )
+
+
 @dataclass(frozen=True)
 class Top:
     """The flow at the upper range value: printed where there is one, a finding where not."""
