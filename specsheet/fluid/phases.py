@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from specsheet.findings import Finding
-from specsheet.fluid.model import bar, caution, celsius, stop
+from specsheet.fluid.model import bar, caution, celsius, note, stop
 from specsheet.fluid.state import State
 
 LIQUID = "liquid"
@@ -28,6 +28,14 @@ def disagreement(stated: str, state: State) -> Finding | None:
         return _flashing(state)
     if stated == GAS and found in (LIQUID, TWO_PHASE):
         return _condensing(state)
+    if found == SUPERCRITICAL:
+        return note(
+            "supercritical",
+            "fluid.phase",
+            f"At {celsius(state.temperature)} and {bar(state.pressure)} the fluid is above its "
+            "critical point, dense as a liquid and compressible as a gas: make sure that the meter "
+            "suits it.",
+        )
     if found == UNVERIFIED:
         return caution(
             "phase-unverified",

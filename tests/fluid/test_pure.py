@@ -182,3 +182,11 @@ def test_a_vapour_that_is_liquid_at_base_has_no_volume_there() -> None:
     result = fluid.derive(tag(substance("n-hexane", "gas"), point("0.2 bar(g)", "120 degC")))
     assert [item.value("density") for item in result.bases.values()] == [None]
     assert "base-liquid" in codes(result)
+
+
+def test_near_the_critical_point_is_a_caution() -> None:
+    # critical point of carbon dioxide: 31.0 degC, 73.8 bar
+    near = fluid.derive(tag(substance("CO2", "gas"), point("75 bar(g)", "35 degC")))
+    far = fluid.derive(tag(substance("CO2", "gas"), point("20 bar(g)", "35 degC")))
+    assert "near-critical" in codes(near)
+    assert "near-critical" not in codes(far)

@@ -188,3 +188,16 @@ def test_every_value_says_where_it_comes_from() -> None:
         assert item.method
         assert item.source
         assert item.uncertainty > 0.0
+
+
+def test_hardly_superheated_steam_is_a_caution() -> None:
+    near = fluid.derive(tag(STEAM, point("7 bar(g)", "172 degC")))
+    far = fluid.derive(tag(STEAM, point("7 bar(g)", "185 degC")))
+    assert finding(near, "near-saturation").field == "points.normal.temperature"
+    assert "near-saturation" not in codes(far)
+
+
+def test_supercritical_water_is_noted() -> None:
+    result = fluid.derive(tag(STEAM, point("240 bar(g)", "400 degC")))
+    assert "supercritical" in codes(result)
+    assert stops(result) == []

@@ -11,7 +11,7 @@ from typing import Any
 from specsheet.findings import Finding
 from specsheet.fluid import calorific, library, limits, names, saturation, transport
 from specsheet.fluid.errors import translate
-from specsheet.fluid.model import Condition, Method, Refused, bar, note, stop
+from specsheet.fluid.model import Condition, Method, Refused, bar, caution, celsius, note, stop
 from specsheet.fluid.phases import GAS, LIQUID, SUPERCRITICAL, TWO_PHASE
 from specsheet.fluid.state import Property, State
 from specsheet.quantity.value import Base
@@ -19,6 +19,8 @@ from specsheet.sources import cite
 
 #: a stated temperature this near to saturation is taken as saturated [K]
 SNAP = 0.05
+#: shares of the critical temperature and pressure within which a density is hard to hold
+NEAR_TEMPERATURE, NEAR_PRESSURE = 0.03, 0.2
 
 _EQUATION = "reference equation of state"
 _SOURCE = cite("coolprop")
@@ -34,12 +36,6 @@ _MOLAR = Method("molar mass", _SOURCE, 0.0)
 def state_of(equation: str) -> Any:
     """Return the one state object of an equation; callers hold the lock of the room."""
     return library.fluids().AbstractState("HEOS", equation)
-
-
-def renew(equation: str) -> None:
-    """Forget state objects after a failure: their contents cannot be trusted any more."""
-    del equation
-    state_of.cache_clear()
 
 
 @dataclass(frozen=True, slots=True)
@@ -77,7 +73,7 @@ class Pure:
             pressure,
             phase,
             self._properties(state, phase, temperature, pressure, boiling),
-            findings,
+            (*findings, *self._near_critical(temperature, pressure)),
         )
 
     def base(self, base: Base) -> State:
@@ -119,6 +115,21 @@ class Pure:
         """Return the vapour pressure [Pa] at a temperature [K]; None off the saturation line."""
         return saturation.vapour_pressure(self.substance, temperature)
 
+    def _near_critical(self, temperature: float, pressure: float) -> tuple[Finding, ...]:
+        item = self.substance
+        near = (
+            abs(temperature / item.critical_temperature - 1.0) < NEAR_TEMPERATURE
+            and abs(pressure / item.critical_pressure - 1.0) < NEAR_PRESSURE
+        )
+        if not near:
+            return ()
+        text = (
+            f"{self.name} is near its critical point ({celsius(item.critical_temperature)}, "
+            f"{bar(item.critical_pressure)}): a kelvin or a few per cent of pressure change the "
+            "density by many per cent. Meter it elsewhere, or by mass."
+        )
+        return (caution("near-critical", "temperature", text, _SOURCE),)
+
     def _range(self) -> limits.Range:
         item = self.substance
         return limits.Range(
@@ -142,10 +153,10 @@ class Pure:
             state.update(inputs, first, second)
             density = state.rhomass()
         except library.ERRORS as error:
-            renew(self.substance.equation)
+            state_of.cache_clear()  # what a failed object holds cannot be trusted
             raise Refused(translate(error, self.name, temperature, pressure)) from None
         if not (math.isfinite(density) and density > 0.0):
-            renew(self.substance.equation)
+            state_of.cache_clear()  # what a failed object holds cannot be trusted
             raise Refused(translate(ValueError(), self.name, temperature, pressure))
 
     def _phase(self, module: Any, state: Any) -> str:
@@ -189,7 +200,7 @@ class Pure:
             pressure = self.vapour_pressure(condition.temperature)
             if pressure is not None:
                 return condition.temperature, pressure
-            field, came = "temperature", f"{condition.temperature - 273.15:.4g} °C"
+            field, came = "temperature", celsius(condition.temperature)
         else:
             raise Refused(
                 stop(

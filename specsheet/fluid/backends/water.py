@@ -24,10 +24,12 @@ from specsheet.fluid.model import (
 from specsheet.fluid.phases import GAS, LIQUID, SUPERCRITICAL, TWO_PHASE
 from specsheet.fluid.state import Property, State
 from specsheet.quantity.value import Base
-from specsheet.sources import cite
+from specsheet.sources import PRACTICE, cite
 
 #: a stated temperature this near to saturation is taken as saturated [K]
 SNAP = 0.05
+#: superheat below which steam may well be wet at the meter [K] (common practice, no source)
+NEAR = 3.0
 
 _LIQUID = Method("IAPWS-IF97", if97.SOURCE, 0.0005)
 _STEAM = Method("IAPWS-IF97", if97.SOURCE, 0.001)
@@ -64,6 +66,8 @@ class Water:
         findings: tuple[Finding, ...] = ()
         if condition.dryness is not None:
             findings = (_dryness_idle(temperature, boiling),)
+        if self.phase == GAS and boiling is not None and 0.0 < temperature - boiling < NEAR:
+            findings += (_hardly_superheated(temperature - boiling),)
         return _single(temperature, pressure, boiling, findings)
 
     def base(self, base: Base) -> State:
@@ -138,6 +142,16 @@ def _dryness_idle(temperature: float, boiling: float | None) -> Finding:
         "dryness_fraction",
         f"A dryness fraction is stated, but {away}. It is not used: leave out the temperature for "
         "wet steam, or the dryness fraction for superheated steam.",
+    )
+
+
+def _hardly_superheated(superheat: float) -> Finding:
+    return caution(
+        "near-saturation",
+        "temperature",
+        f"The steam is superheated by {superheat:.2g} K only: heat lost on the way may make it wet "
+        "at the meter. Insulate the line, or state saturated steam by its pressure alone.",
+        PRACTICE,
     )
 
 
