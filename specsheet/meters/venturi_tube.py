@@ -13,31 +13,31 @@ from specsheet.meters.dp.build import family, standard_limits
 from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
 from specsheet.methods import iso5167_4
-from specsheet.methods.iso5167_4 import VENTURIS, Venturi
+from specsheet.methods.iso5167_4 import VENTURIS
 from specsheet.sources import PRACTICE, cite
 
 _SOURCE = cite("iso5167-4", "5.5")
+
+_USUAL = "machined convergent"
 
 #: usual coefficients in the trade, below the standard's (common practice, no source)
 _BAND = (0.93, 0.97)
 
 
-def _make_of(construction: str) -> Venturi:
-    return VENTURIS.get(construction, VENTURIS["machined convergent"])
-
-
 def _coefficient(lanes: Lanes) -> Array:
     if wet.is_wet(lanes.numbers):
         return wet.coefficient(lanes)
-    make = _make_of(lanes.choices["construction"])
+    make = VENTURIS[lanes.choices["construction"]]
     return np.full(lanes.mass_flow.shape, make.discharge_coefficient)
 
 
 def _coefficient_uncertainty(lanes: Lanes) -> Array:
     if wet.is_wet(lanes.numbers):
         return wet.uncertainty(lanes)
-    make = _make_of(lanes.choices["construction"])
-    return np.full(lanes.mass_flow.shape, make.uncertainty)
+    found: Array = iso5167_4.uncertainty(
+        construction=lanes.choices["construction"], reynolds_number=lanes.reynolds_number
+    )
+    return found
 
 
 def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not depend on it
@@ -49,7 +49,8 @@ def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not
 
 def _prepare(request: Request) -> Prepared:
     tag = request.tag
-    construction = tag.text("meter.construction") or "machined convergent"
+    stated = tag.text("meter.construction")
+    construction = stated if stated in VENTURIS else _USUAL
     angle = tag.si("meter.divergent_angle") or math.radians(7.0)
     material = find_material(tag.text("meter.throat_material"))
     temperature = float(request.stream.temperature[request.normal])
@@ -73,13 +74,13 @@ def _tapping_distance(request: Request) -> float:
 
 
 def _bounds(request: Request, prepared: Prepared) -> Bounds:  # noqa: ARG001
-    make = _make_of(prepared.choices["construction"])
+    make = VENTURIS[prepared.choices["construction"]]
     return Bounds(*make.ratio, largest_differential=1e6)
 
 
 def _describe(request: Request, element: Element) -> Described:  # noqa: ARG001
     construction = element.choices["construction"]
-    make = _make_of(construction)
+    make = VENTURIS[construction]
     carried: tuple[str, ...] = ()
     if wet.is_wet(element.numbers):
         carried = (
@@ -109,7 +110,7 @@ def _describe(request: Request, element: Element) -> Described:  # noqa: ARG001
 
 
 def _limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
-    make = _make_of(element.choices["construction"])
+    make = VENTURIS[element.choices["construction"]]
     found = standard_limits(
         source=cite("iso5167-4", make.clause),
         diameter=make.diameter,

@@ -55,3 +55,38 @@ def loss_ratio(*, diameter_ratio: Any, divergent_angle: float) -> Any:
     steep = 0.436 - 0.86 * beta + 0.59 * beta * beta
     share = (np.rad2deg(divergent_angle) - 7.0) / 8.0
     return gentle + (steep - gentle) * np.clip(share, 0.0, 1.0)
+
+
+#: construction -> ReD, C and its uncertainty [%] below the limits of use (annex B, informative;
+#: from memory); the last node is the limit, joined to the constant of 5.5
+_LOW_REYNOLDS = {
+    "as cast": (
+        (4e4, 6e4, 1e5, 1.5e5, 2e5),
+        (0.957, 0.966, 0.976, 0.982, 0.984),
+        (2.5, 2.0, 1.5, 1.0, 0.7),
+    ),
+    "machined convergent": ((5e4, 1e5, 2e5), (0.970, 0.977, 0.995), (3.0, 2.5, 1.0)),
+    "welded sheet iron": (
+        (4e4, 6e4, 1e5, 2e5),
+        (0.960, 0.970, 0.980, 0.985),
+        (3.0, 2.5, 2.5, 1.5),
+    ),
+}
+
+
+def uncertainty(*, construction: str, reynolds_number: Any) -> Any:
+    """Return the relative expanded uncertainty of the constant C, k = 2 [-].
+
+    That of 5.5 within the limits of use. Below them C falls, which annex B estimates: the
+    uncertainty of that estimate and its distance from the constant are added.
+
+    Args:
+        construction: key of :data:`VENTURIS`
+        reynolds_number: ReD [-]
+    """
+    make = VENTURIS[construction]
+    nodes, coefficients, percents = _LOW_REYNOLDS[construction]
+    at = np.log(reynolds_number)
+    expected = np.interp(at, np.log(nodes), coefficients)
+    doubt = np.interp(at, np.log(nodes), percents) / 100.0
+    return doubt + abs(make.discharge_coefficient - expected) / make.discharge_coefficient

@@ -105,3 +105,33 @@ def test_largest_plate():
     """ISO 5167-2:2003, 5.1.5.3: 0.05 D; up to 3.2 mm for D from 50 mm to 64 mm."""
     assert orifice_plate.largest_thickness(inside_diameter=0.055) == pytest.approx(0.0032)
     assert orifice_plate.largest_thickness(inside_diameter=0.2) == pytest.approx(0.01)
+
+
+@pytest.mark.parametrize("construction", list(iso5167_4.VENTURIS))
+def test_uncertainty_grows_below_the_limit_of_use(construction):
+    """ISO 5167-4:2003, 5.5 within the limits, annex B below them (from memory); no jump between."""
+    make = iso5167_4.VENTURIS[construction]
+    reynolds = np.array([4e4, 1e5, 2e5 * (1 - 1e-9), 2e5, 1e6])
+    found = iso5167_4.uncertainty(construction=construction, reynolds_number=reynolds)
+    np.testing.assert_allclose(found[2:], make.uncertainty, rtol=1e-6)
+    assert found[0] > found[1] > make.uncertainty
+
+
+def test_low_reynolds_number_of_a_cast_tube():
+    """Annex B: C about 0.976 ± 1.5 % at ReD 1e5, so that 0.984 is 0.8 % + 1.5 % in doubt."""
+    found = iso5167_4.uncertainty(construction="as cast", reynolds_number=1e5)
+    assert found == pytest.approx(0.015 + 0.008 / 0.984)
+
+
+def test_annex_b_beside_the_general_library():
+    """`fluids` carries the coefficients of annex B."""
+    flow_meter = pytest.importorskip("fluids.flow_meter")
+    pairs = zip(
+        flow_meter.as_cast_convergent_venturi_Res[1:],
+        flow_meter.as_cast_convergent_venturi_Cs[1:],
+        (0.020, 0.015, 0.010),
+        strict=True,
+    )
+    for reynolds, coefficient, doubt in pairs:
+        found = iso5167_4.uncertainty(construction="as cast", reynolds_number=reynolds)
+        assert found == pytest.approx(doubt + abs(0.984 - coefficient) / 0.984)
