@@ -5,7 +5,7 @@
 * :func:`settle`  what was left unverified about a phase, found in a process of its own
 * :func:`warm`  loads what a tag needs, before a screen starts or in an idle moment
 * :func:`states`  fluid and conditions -> states (what-if)
-* :mod:`specsheet.fluid.names`  substances by name, for form and messages
+* :mod:`specsheet.fluid.names`, :mod:`specsheet.fluid.solutes`  by name, for form and messages
 
 Each kind of fluid is one module of ``backends``. Importing this package loads neither numpy nor
 the fluid library: both wait until a state is asked for.

@@ -52,6 +52,9 @@ def _substance(tag: Tag) -> Built:
     item = names.find(text)
     if item is None:
         return Built(None, (unknown("fluid.substance", text),))
+    if humidity.stated(tag):
+        wet = humidity.add(tag, AIR if item.key == "air" else ((item.key, 1.0),))
+        return Built(wet.fluid, wet.findings)
     if item.key == "water":
         return Built(Water(tag.phase))
     return Built(Pure(item.key, tag.phase, _combustion(tag)))

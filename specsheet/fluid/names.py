@@ -128,14 +128,29 @@ def search(text: str, limit: int = 20) -> tuple[Substance, ...]:
 
     Those that start with it come first. An empty text returns the first of the list.
     """
+    words = {
+        key: (key, item.name, *item.names, item.formula, item.cas)
+        for key, item in substances().items()
+    }
+    return tuple(substances()[key] for key in ranked(text, words, limit))
+
+
+def ranked(text: str, words: Mapping[str, Iterable[str]], limit: int) -> tuple[str, ...]:
+    """Return the keys whose words hold a text: equal first, then starting, then holding it.
+
+    Args:
+        text: what was typed so far.
+        words: key -> every word it is known by.
+        limit: at most so many.
+    """
     wanted = normal(text)
-    ranked: list[tuple[int, str]] = []
-    for key, item in substances().items():
-        words = [normal(word) for word in (key, item.name, *item.names, item.formula, item.cas)]
-        if wanted in words:
-            ranked.append((0, key))
-        elif any(word.startswith(wanted) for word in words):
-            ranked.append((1, key))
-        elif any(wanted in word for word in words):
-            ranked.append((2, key))
-    return tuple(substances()[key] for _, key in sorted(ranked)[:limit])
+    found: list[tuple[int, str]] = []
+    for key, known in words.items():
+        plain = [normal(word) for word in known]
+        if wanted in plain:
+            found.append((0, key))
+        elif any(word.startswith(wanted) for word in plain):
+            found.append((1, key))
+        elif any(wanted in word for word in plain):
+            found.append((2, key))
+    return tuple(key for _, key in sorted(found)[:limit])

@@ -171,3 +171,12 @@ def find(text: str) -> Solute | None:
 def nearest(text: str, count: int = 3) -> tuple[str, ...]:
     """Return the names nearest to a text that names no solute, best first."""
     return names.closest(text, _index(), lambda hit: solutes()[_index()[hit]].name, count)
+
+
+def search(text: str, limit: int = 20) -> tuple[Solute, ...]:
+    """Return the solutes whose key, names, formula or CAS number hold the text, best first."""
+    words = {
+        key: (key, item.name, *item.names, item.formula, item.cas)
+        for key, item in solutes().items()
+    }
+    return tuple(solutes()[key] for key in names.ranked(text, words, limit))

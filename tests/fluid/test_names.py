@@ -153,3 +153,11 @@ def test_what_is_no_substance_is_shown_the_way(text: str, words: str) -> None:
     said = finding(fluid.derive(stated), "substance-unknown")
     assert said.field == "fluid.substance"
     assert words in said.message
+
+
+def test_solutes_are_searched_alike() -> None:
+    assert [item.key for item in solutes.search("caus")] == [
+        "potassium_hydroxide",
+        "sodium_hydroxide",
+    ]
+    assert solutes.search("7647-14-5")[0].key == "sodium_chloride"

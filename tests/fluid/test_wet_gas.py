@@ -131,3 +131,14 @@ def test_humidity_that_makes_no_sense(more: str, code: str) -> None:
 def test_humidity_above_boiling_is_refused() -> None:
     result = fluid.derive(tag(AIR_60, point("0 bar(g)", "150 degC")))
     assert finding(result, "humidity-range").field == "points.normal.temperature"
+
+
+@pytest.mark.parametrize("name", ["air", "nitrogen"])
+def test_humidity_of_a_pure_gas_is_not_passed_over(name: str) -> None:
+    head = f'kind = "substance"\nsubstance = "{name}"\nphase = "gas"\n'
+    dry = fluid.derive(tag(head, point("1 bar(g)", "40 degC")))
+    wet = fluid.derive(tag(head + 'relative_humidity = "80 %"', point("1 bar(g)", "40 degC")))
+    assert wet.constants["molar_mass"].value < dry.constants["molar_mass"].value
+    assert wet.points[0] is not None
+    # 80 % of 7.384 kPa is a dew point of 36.0 degC
+    assert wet.points[0].value("dew_temperature") == pytest.approx(309.15, abs=0.15)
