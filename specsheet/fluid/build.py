@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable
 
 from specsheet import packs
@@ -14,6 +15,7 @@ from specsheet.fluid.backends.pure import Pure
 from specsheet.fluid.backends.water import Water
 from specsheet.fluid.build_liquids import Built
 from specsheet.fluid.model import caution, stop
+from specsheet.quantity.value import Quantity
 from specsheet.tag import Point, Tag
 
 
@@ -123,28 +125,28 @@ def _mixture(tag: Tag) -> Built:
 
 def _given(tag: Tag) -> Built:
     rows = tuple(row for point in tag.points if (row := _row(tag, point)) is not None)
-    return Built(Given(tag.phase, rows, tag.si("fluid.molar_mass")))
+    return Built(Given(tag.phase, rows, _usable(tag, tag.quantity("fluid.molar_mass"))))
 
 
 def _row(tag: Tag, point: Point) -> given_backend.Row | None:
     """Return what a point states; None where pressure or temperature is missing."""
-    pressure, temperature = point.quantity("pressure"), point.quantity("temperature")
+    temperature, pressure, density, factor = (
+        _usable(tag, point.quantity(key))
+        for key in ("temperature", "pressure", "density", "compressibility")
+    )
     if pressure is None or temperature is None:
         return None
-    density, viscosity = point.quantity("density"), point.quantity("viscosity")
-    factor = point.quantity("compressibility")
-    dynamic = None
-    if viscosity is not None and viscosity.kind == "dynamic_viscosity":
-        dynamic = viscosity.value
-    elif viscosity is not None and density is not None:
-        dynamic = viscosity.value * density.value
-    return given_backend.Row(
-        temperature.value,
-        tag.absolute(pressure),
-        None if density is None else density.value,
-        dynamic,
-        None if factor is None else factor.value,
-    )
+    stated = point.quantity("viscosity")
+    viscosity = _usable(tag, stated)
+    if stated is not None and stated.kind == "kinematic_viscosity" and viscosity is not None:
+        viscosity = None if density is None else viscosity * density
+    return given_backend.Row(temperature, pressure, density, viscosity, factor)
+
+
+def _usable(tag: Tag, quantity: Quantity | None) -> float | None:
+    """Return the SI value of a quantity; None where it is missing or not above zero."""
+    value = math.nan if quantity is None else tag.absolute(quantity)
+    return value if math.isfinite(value) and value > 0.0 else None
 
 
 def _humid_air(tag: Tag) -> Built:

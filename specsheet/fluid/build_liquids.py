@@ -96,8 +96,12 @@ def petroleum(tag: Tag) -> Built:
     density = tag.si("fluid.density_15")
     gravity = tag.si("fluid.api_gravity")
     field = "fluid.density_15"
-    if density is None and gravity is not None and gravity > -131.0:
-        density, field = _density_15(gravity, product), "fluid.api_gravity"
+    if density is None and gravity is not None:
+        field = "fluid.api_gravity"
+        if not -10.0 <= gravity <= 105.0:
+            message = f"An API gravity from -10 to 105 was wanted, {gravity:.5g} came."
+            return _refuse("fluid-limit", field, message)
+        density = _density_15(gravity, product)
     if density is None:
         message = "State fluid.density_15 or fluid.api_gravity: the density starts from it."
         return _refuse("density-missing", "fluid.density_15", message)

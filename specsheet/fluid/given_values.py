@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Mapping
 from dataclasses import replace
 
@@ -69,7 +70,7 @@ def apply(tag: Tag, point: Point, state: State, molar_mass: float | None) -> Sta
             continue
         stated = tag.absolute(quantity)
         findings += _unusable(key, stated) or _compare(key, stated, values.get(key), tolerance)
-        if stated > 0.0:
+        if _sound(stated):
             values[key] = given(stated, uncertainty)
     _follow_density(point, state, values, molar_mass)
     viscosity = point.quantity("viscosity")
@@ -94,7 +95,7 @@ def rescued(tag: Tag, condition: Condition, outcome: Outcome) -> Outcome:
         outcome: the refusal.
     """
     temperature, pressure = condition.temperature, condition.pressure
-    if temperature is None or pressure is None or temperature <= 0.0 or pressure <= 0.0:
+    if temperature is None or pressure is None or not (_sound(temperature) and _sound(pressure)):
         return outcome
     if any(item.code not in _BEYOND for item in outcome.findings):
         return outcome
@@ -105,8 +106,12 @@ def rescued(tag: Tag, condition: Condition, outcome: Outcome) -> Outcome:
     return Outcome(State(temperature, pressure, tag.phase, {}, findings))
 
 
+def _sound(value: float) -> bool:
+    return math.isfinite(value) and value > 0.0
+
+
 def _unusable(key: str, stated: float) -> list[Finding]:
-    if stated > 0.0:
+    if _sound(stated):
         return []
     text = f"A {_LABELS[key]} above zero was wanted, {stated:g} came; it is not used."
     return [caution("given-unusable", key, text)]
@@ -159,7 +164,7 @@ def _viscosity(stated: Quantity, values: dict[str, Property]) -> list[Finding]:
             )
             return [caution("given-unusable", "viscosity", text)]
         dynamic = stated.value * density.value
-    if dynamic <= 0.0:
+    if not _sound(dynamic):
         return _unusable("viscosity", dynamic)
     findings = _compare("viscosity", dynamic, values.get("viscosity"), tolerance)
     values["viscosity"] = given(dynamic, uncertainty)

@@ -100,7 +100,10 @@ def saturated(dry: Composition, temperature: float, pressure: float) -> float:
     Raises:
         Refused: water alone would fill the space, or there is no such state.
     """
-    if temperature < 173.15:
+    if not pressure >= 1.0:
+        text = f"A pressure was wanted for the humidity, {bar(pressure)} came."
+        raise Refused(stop("fluid-limit", "pressure", text))
+    if not temperature >= 173.15:
         text = f"Humidity is described from -100 °C; {celsius(temperature)} came."
         raise Refused(stop("fluid-limit", "temperature", text))
     fraction = water_in_gas.saturation(temperature) / pressure
