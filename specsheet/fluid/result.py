@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Mapping
 from dataclasses import replace
 
+from specsheet import packs
 from specsheet.findings import Finding, Level
 from specsheet.fluid import base_values, envelope, evaluate, given_values, mixture_phase
 from specsheet.fluid.backends.mixture import Mixture
@@ -13,10 +14,13 @@ from specsheet.fluid.backends.wet_gas import WetGas
 from specsheet.fluid.build import fluid_of
 from specsheet.fluid.lock import LOCK
 from specsheet.fluid.model import Condition, Fluid, caution
-from specsheet.fluid.phases import UNVERIFIED
+from specsheet.fluid.phases import LIQUID, UNVERIFIED
 from specsheet.fluid.state import FluidResult, Property, State
 from specsheet.quantity.value import Base
 from specsheet.tag import Point, Tag
+
+#: application of a family that meters with a free surface, as profiles name it
+OPEN_CHANNEL = "open channel"
 
 
 def derive(tag: Tag) -> FluidResult:
@@ -67,14 +71,24 @@ def settle(tag: Tag, seconds: float = 10.0) -> bool:
 
 
 def condition_of(tag: Tag, point: Point) -> Condition:
-    """Return where the fluid is wanted at an operating point."""
+    """Return where the fluid is wanted at an operating point; the air's pressure in a channel."""
     pressure, temperature = point.quantity("pressure"), point.quantity("temperature")
     dryness = point.quantity("dryness_fraction")
+    absolute = None if pressure is None else tag.absolute(pressure)
+    if absolute is None and temperature is not None and _has_free_surface(tag):
+        absolute = tag.atmospheric_pressure
     return Condition(
         None if temperature is None else temperature.value,
-        None if pressure is None else tag.absolute(pressure),
+        absolute,
         None if dryness is None else dryness.value,
     )
+
+
+def _has_free_surface(tag: Tag) -> bool:
+    """Tell whether a liquid is metered by a family for open channels."""
+    if tag.phase != LIQUID or tag.family not in packs.family_keys():
+        return False
+    return OPEN_CHANNEL in packs.profile(tag.family).applies_to
 
 
 def _points(

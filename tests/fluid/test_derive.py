@@ -6,9 +6,9 @@ import math
 import random
 
 import pytest
-from fluid_tags import point, tag
+from fluid_tags import HEAD, point, tag
 
-from specsheet import fluid
+from specsheet import fluid, tagfile
 from specsheet.fields import entry, term
 from specsheet.findings import Level
 from specsheet.fluid.model import Condition
@@ -137,3 +137,14 @@ def test_warm_loads_without_a_word(capfd: pytest.CaptureFixture[str]) -> None:
     fluid.warm()
     captured = capfd.readouterr()
     assert (captured.out, captured.err) == ("", "")
+
+
+def test_a_channel_has_the_pressure_of_the_air() -> None:
+    text = f'{HEAD.replace("vortex", "weir_vnotch")}[fluid]\nkind = "substance"\n'
+    text += 'substance = "water"\nphase = "liquid"\n' + point("", "15 degC", flow="20 m3/h")
+    reading = tagfile.loads(text)
+    assert reading.tag is not None
+    result = fluid.derive(reading.tag)
+    assert result.points[0] is not None
+    assert result.points[0].pressure == 101325.0
+    assert result.findings == ()
