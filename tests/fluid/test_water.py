@@ -201,3 +201,49 @@ def test_supercritical_water_is_noted() -> None:
     result = fluid.derive(tag(STEAM, point("240 bar(g)", "400 degC")))
     assert "supercritical" in codes(result)
     assert stops(result) == []
+
+
+# IAPWS-IF97 (2007), table 33 (region 3): T, p, density, enthalpy; reached from T and p backwards
+@pytest.mark.parametrize(
+    ("temperature", "pressure", "density", "enthalpy", "tolerance"),
+    [
+        (650.0, 22293064.3, 200.0, 2375124.01, 1e-4),
+        (750.0, 78309563.9, 500.0, 2258688.45, 1e-5),
+    ],
+)
+def test_region_3(
+    temperature: float, pressure: float, density: float, enthalpy: float, tolerance: float
+) -> None:
+    found = state("gas", temperature, pressure)
+    assert found.value("density") == pytest.approx(density, rel=tolerance)
+    assert found.value("specific_enthalpy") == pytest.approx(enthalpy, rel=tolerance)
+
+
+def at_density(temperature: float, density: float) -> State:
+    """Return the state of steam of a density, by halving the pressure."""
+    low, high = 1e3, 49e6
+    for _ in range(80):
+        middle = 0.5 * (low + high)
+        found = state("gas", temperature, middle)
+        low, high = (middle, high) if (found.value("density") or 0.0) < density else (low, middle)
+    return found
+
+
+# IAPWS R12-08, table 4 (temperature, density, viscosity), where IAPWS-IF97 reaches
+@pytest.mark.parametrize(
+    ("temperature", "density", "viscosity"),
+    [
+        (433.15, 1.0, 1.4538324e-5),
+        (873.15, 1.0, 3.2619287e-5),
+        (1173.15, 1.0, 4.4217245e-5),
+    ],
+)
+def test_viscosity_release(temperature: float, density: float, viscosity: float) -> None:
+    assert at_density(temperature, density).value("viscosity") == pytest.approx(viscosity, rel=2e-7)
+
+
+def test_conductivity_release() -> None:
+    # IAPWS R15-11, table 4: 298.15 K, 998 kg/m3 (2.2 MPa), there without the critical part
+    found = state("liquid", 298.15, 2.18e6)
+    assert found.value("density") == pytest.approx(998.0, abs=0.05)
+    assert found.value("thermal_conductivity") == pytest.approx(0.607712868, rel=2e-3)
