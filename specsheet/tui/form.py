@@ -116,8 +116,12 @@ def beside(session: Session, row: Row) -> str:
     text = text_in(session, row)
     if not text:
         return hint(session, row)
-    known = row.entry.path == "family" and text in packs.family_keys()
-    return packs.profile(text).title if known else ""
+    return family_title(text) if row.entry.path == "family" else ""
+
+
+def family_title(key: str) -> str:
+    """Return the words for a meter family; the key itself where it is not known."""
+    return packs.profile(key).title if key in packs.family_keys() else key
 
 
 def hint(session: Session, row: Row) -> str:

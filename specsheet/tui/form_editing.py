@@ -14,14 +14,14 @@ from specsheet.tui.commands import EDITING, FORM
 from specsheet.tui.dialogs import Choice, Pick, Prompt, Tell, matching
 from specsheet.tui.families import family_choices
 from specsheet.tui.fields import Committed, Editor
-from specsheet.tui.form_view import FormView
+from specsheet.tui.form_focus import FormFocus
 from specsheet.tui.pages import GridPage, address_in
 from specsheet.tui.session import COMPOSITION
 
 _SUBSTANCES = ("fluid.substance", COMPOSITION)
 
 
-class FormEditing(FormView):
+class FormEditing(FormFocus):
     """The part of the form that edits."""
 
     async def on_committed(self, message: Committed) -> None:

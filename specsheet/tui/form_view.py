@@ -4,10 +4,8 @@ from __future__ import annotations
 
 import asyncio
 from collections.abc import Mapping
-from typing import ClassVar
 
 from textual.app import ComposeResult
-from textual.binding import Binding, BindingType
 from textual.containers import Container, Vertical
 from textual.widget import Widget
 
@@ -26,24 +24,7 @@ from specsheet.tui.protocol import Answer, Derived, Failed, Printed
 from specsheet.tui.readout import Item
 from specsheet.tui.session import Session
 
-_PANES = ("findings", "derived", "ruler")
-_MOVES = (
-    ("enter,down", "go(1)"),
-    ("up", "go(-1)"),
-    ("tab", "along(1)"),
-    ("shift+tab", "along(-1)"),
-)
-
-
-def _bindings() -> list[BindingType]:
-    moves: list[BindingType] = [
-        Binding(keys, action, show=False, priority=True) for keys, action in _MOVES
-    ]
-    commands = [
-        Binding(command.keys, command.action, command.title, show=False, priority=command.moves)
-        for command in FORM
-    ]
-    return [*moves, *commands, Binding("escape", "to_form", show=False)]
+PANES = ("findings", "derived", "ruler")
 
 
 class FormView(CalmScreen):
@@ -59,7 +40,6 @@ class FormView(CalmScreen):
         (16, "-low"),
         (36, "-high"),
     ]
-    BINDINGS: ClassVar[list[BindingType]] = _bindings()
 
     def __init__(self, session: Session, evaluator: Evaluator, *, greeting: str = "") -> None:
         super().__init__()
@@ -69,8 +49,8 @@ class FormView(CalmScreen):
         self.pages: dict[str, Page] = {}
         self.section = "fluid" if session.get(Address("tag")) else ""
         self._last_editor: Editor | None = None
-        self._shown_pane = "findings"
-        self._items: tuple[Item, ...] = ()
+        self.shown_pane = "findings"
+        self.found: tuple[Item, ...] = ()
         # Answers arrive while a page is being mounted: pages change one at a time.
         self._syncing = asyncio.Lock()
 
@@ -100,7 +80,7 @@ class FormView(CalmScreen):
         self.query_one("#foot", Bar).set_line(footer(FORM))
         told = "Too small: 60 x 16 is the least. Nothing is lost."
         self.query_one("#too-small", Bar).set_line(((told, "head"),))
-        self._show_pane(self._shown_pane)
+        self.show_pane(self.shown_pane)
         self._draw_frame()
         self.call_after_refresh(self.begin)
 
@@ -214,10 +194,10 @@ class FormView(CalmScreen):
             Item(Level.STOP, str(address), self.session.name(address), f"not stored: {told.reason}")
             for address, told in self.session.refused.items()
         ]
-        self._items = readout.items(
+        self.found = readout.items(
             self.frame.sheet, self.frame.troubles, refused, self._name_of_field
         )
-        return self._items
+        return self.found
 
     def _name_of_field(self, field: str) -> str:
         address = form.address_of(self.session, field) if field else None
@@ -226,8 +206,8 @@ class FormView(CalmScreen):
     def _draw_frame(self) -> None:
         session = self.session
         self.query_one("#title", Bar).set_line(*self.frame.title(session))
-        self.query_one("#scale", Bar).set_line(scale(self.section, self._items))
-        self.query_one("#summary", Bar).set_line(self.frame.summary(self._items))
+        self.query_one("#scale", Bar).set_line(scale(self.section, self.found))
+        self.query_one("#summary", Bar).set_line(self.frame.summary(self.found))
 
     def _draw_detail(self) -> None:
         detail = self.query_one(".detail", Column)
@@ -253,7 +233,7 @@ class FormView(CalmScreen):
 
     def _draw_panes(self) -> None:
         self._collect()
-        for pane in _PANES:
+        for pane in PANES:
             self._draw_pane(pane)
         self._draw_frame()
 
@@ -263,7 +243,7 @@ class FormView(CalmScreen):
         owners: list[int] = []
         content: list[Line]
         if pane == "findings":
-            content, owners = readout.finding_lines(self._items, width)
+            content, owners = readout.finding_lines(self.found, width)
             content = content or [((self.frame.quiet, "dim"),)]
         elif pane == "ruler":
             content = readout.ruler_lines(self.frame.sheet, width)
@@ -272,96 +252,15 @@ class FormView(CalmScreen):
             content = readout.derived(sheet, width) if sheet else [((self.frame.quiet, "dim"),)]
         lines.set_content(content, owners)
         title = {"findings": "Findings", "derived": "Derived", "ruler": "Range"}[pane]
-        extra = readout.counts(self._items) if pane == "findings" else self.frame.state
+        extra = readout.counts(self.found) if pane == "findings" else self.frame.state
         if pane == "derived" and not extra:
             extra = readout.LEGEND
         head = self.query_one(f"#{pane}-head", Bar)
         head.set_line(self.frame.rule(title, extra, head.size.width, lines.has_focus))
 
-    # Keys
-
-    def check_action(
-        self,
-        action: str,
-        parameters: tuple[object, ...],  # noqa: ARG002 (the signature is Textual's)
-    ) -> bool | None:
-        """Leave the keys of movement to whatever is no editor."""
-        editing = isinstance(self.focused, TextEditor | ChoiceEditor)
-        if action in ("go", "along"):
-            return editing
-        if action == "section":
-            return editing or self.focused is None
-        return True
-
-    def action_go(self, step: int) -> None:
-        """Go to the next row, or the one before; at the end stay."""
-        order = [e for e in self.page.editors if self.editor and e.index == self.editor.index]
-        self._focus_next(order, step)
-
-    def action_along(self, step: int) -> None:
-        """Go to the next editor: along the points in a grid, else the next row."""
-        editor = self.editor
-        if isinstance(self.page, GridPage) and editor is not None:
-            target = self.page.next_along(editor, step)
-            self.set_focus(target or editor)
-        else:
-            self._focus_next(list(self.page.editors), step)
-
-    def action_across(self, step: int) -> None:
-        """Go to the same entry of the next operating point."""
-        if isinstance(self.page, GridPage) and self.editor is not None:
-            self.set_focus(self.page.beside(self.editor, step) or self.editor)
-
-    def _focus_next(self, order: list[Editor], step: int) -> None:
-        if self.editor in order:
-            place = order.index(self.editor) + step
-            self.set_focus(order[max(0, min(len(order) - 1, place))])
-
-    async def action_section(self, step: int) -> None:
-        """Go to the next section, or the one before."""
-        keys = [section.key for section in SECTIONS]
-        await self.open_section(keys[(keys.index(self.section) + step) % len(keys)])
-
-    def action_pane(self, step: int) -> None:
-        """Move the focus round form and panes."""
-        ring = ("form", *_PANES)
-        here = self.focused.id if isinstance(self.focused, Lines) else "form"
-        pane = ring[(ring.index(here or "form") + step) % len(ring)]
-        if pane == "form":
-            self.set_focus(self.editor or next(iter(self.page.editors), None))
-        else:
-            self._show_pane(pane)
-            self.query_one(f"#{pane}", Lines).focus()
-
-    def action_side(self) -> None:
-        """Show the next pane below the form, without leaving the field."""
-        place = _PANES.index(self._shown_pane)
-        self._show_pane(_PANES[(place + 1) % len(_PANES)])
-
-    async def action_next_finding(self) -> None:
-        """Go to the entry of the next finding, round the list."""
-        lines = self.query_one("#findings", Lines)
-        for _ in self._items:
-            lines.cycle()
-            address = form.address_of(self.session, self._items[lines.cursor].field)
-            if address is not None:
-                await self.go_to(address)
-                self.say(self._items[lines.cursor].message)
-                return
-        self.say("no finding points at an entry")
-
-    async def on_lines_chosen(self, message: Lines.Chosen) -> None:
-        """Go to the entry that a finding is about."""
-        item = self._items[message.item]
-        address = form.address_of(self.session, item.field) if item.field else None
-        if address is None:
-            self.say("this finding is about no single entry")
-        else:
-            await self.go_to(address)
-
-    def _show_pane(self, pane: str) -> None:
+    def show_pane(self, pane: str) -> None:
         """Show a pane where only one has room. (A class on the screen would restyle all of it.)"""
-        self._shown_pane = pane
+        self.shown_pane = pane
         wide, low = self.has_class("-wide"), self.has_class("-low")
         for name in ("findings", "derived"):
             for part in (f"#{name}", f"#{name}-head"):
@@ -391,4 +290,4 @@ class FormView(CalmScreen):
 
     def _redraw(self) -> None:
         self._draw_detail()
-        self._show_pane(self._shown_pane)
+        self.show_pane(self.shown_pane)

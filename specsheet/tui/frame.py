@@ -46,7 +46,8 @@ class Frame:
     def title(self, session: Session) -> tuple[Line, Line]:
         """Return the first line: which tag, and whether it is saved."""
         left = [(f" {session.get(Address('tag')) or session.path.name}", "head")]
-        told = [session.get(Address(key)) for key in ("service", "family", "status")]
+        family = form.family_title(session.get(Address("family")))
+        told = (session.get(Address("service")), family, session.get(Address("status")))
         left += [(f"  {text}", "label") for text in told if text]
         words = []
         if session.refused:

@@ -230,4 +230,6 @@ def summary(sheet: Sheet | None, found: Sequence[Item]) -> str:
     if tight is None:
         return told
     flips = f" ({tight.flips})" if tight.flips else ""
-    return f"{told}; reserve {tight.reserve}{flips} to {tight.label.lower()} at {tight.point}"
+    words = "reserve" if tight.holds else "does not hold before"
+    what = f"{tight.label[:1].lower()}{tight.label[1:]} at {tight.point}"
+    return f"{told}; {what}: {words} {tight.reserve}{flips}"

@@ -10,6 +10,9 @@ from textual.app import ComposeResult
 from specsheet.tui.compat import CalmScreen
 from specsheet.tui.lines import Bar
 
+#: time [s] in which the screen paints itself: its update timer runs 60 times a second
+_PAINTED = 1 / 30
+
 
 class WaitingScreen(CalmScreen):
     """What is opened, and that it is being opened."""
@@ -28,4 +31,4 @@ class WaitingScreen(CalmScreen):
         """Draw, and go on behind the drawing."""
         self.query_one("#title", Bar).set_line(((f" specsheet  {self._path}", "head"),))
         self.query_one("#summary", Bar).set_line(((" opening ...", "dim"),))
-        self.call_after_refresh(self._go_on)
+        self.call_after_refresh(self.set_timer, _PAINTED, self._go_on)

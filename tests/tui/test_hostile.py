@@ -62,7 +62,7 @@ def test_every_screen_shows_the_text_as_typed(hostile_file: Path, size: tuple[in
             for section in SECTIONS:
                 await form.open_section(section.key)
                 await form.action_everything()
-                for key in ("f7", "f7", "f7"):
+                for key in ("f7", "f7", "f7") if size[0] < 110 else ():
                     await send(pilot, key)
                     shown.append(screen_text(app))
                 await send(pilot, "f1")
