@@ -175,3 +175,17 @@ def test_hot_flue_gas_has_a_state() -> None:
     assert state_.value("density") == pytest.approx(
         101325 * mass / (8.314462618 * 1173.15), rel=1e-3
     )
+
+
+@pytest.mark.parametrize(
+    "mixture",
+    ["methane = 0.9, ethane = 0.07, propane = 0.03", "propane = 0.6, n_butane = 0.4"],
+)
+def test_a_liquefied_gas_has_no_volume_at_base(mixture: str) -> None:
+    text = f'kind = "mixture"\nphase = "liquid"\nmixture = {{ {mixture} }}'
+    temperature = "-160 degC" if "methane" in mixture else "10 degC"
+    result = fluid.derive(tag(text, point("12 bar(g)", temperature)))
+    assert [item.value("density") for item in result.bases.values()] == [None]
+    assert finding(result, "base-gas").level == "note"
+    assert result.points[0] is not None
+    assert result.points[0].phase == "liquid"

@@ -114,7 +114,7 @@ class Mixture:
         state = self._updated(base.temperature, base.pressure)
         values = self._properties(state, base.temperature, base.pressure)
         if self.phase != GAS:
-            return self._liquid_base(base, values)
+            return self._liquid_base(base, values, _dense(LIQUID, state))
         density = values["density"].value
         values.update(
             calorific.by_volume(self.composition, density, self.combustion_temperature, base)
@@ -131,14 +131,14 @@ class Mixture:
             findings = (note("base-hypothetical", "", text, cite("iso6976")),)
         return State(base.temperature, base.pressure, GAS, values, findings)
 
-    def _liquid_base(self, base: Base, values: dict[str, Property]) -> State:
+    def _liquid_base(self, base: Base, values: dict[str, Property], phase: str) -> State:
         """Return the liquid at base; without a density where it boils there."""
         bubble = mixture_phase.bubble_pressure(self.composition, base.temperature)
-        if bubble is None or bubble < base.pressure:
+        if phase == LIQUID and (bubble is None or bubble < base.pressure):
             return State(base.temperature, base.pressure, LIQUID, values)
         text = (
-            f"The liquid boils at the base condition (bubble pressure {bar(bubble)}), so a volume "
-            "of it there has no meaning: state its flow by mass."
+            "The liquid would boil at the base condition, so a volume of it there has no meaning: "
+            "state its flow by mass."
         )
         findings = (note("base-gas", "", text),)
         return State(base.temperature, base.pressure, TWO_PHASE, {}, findings)
