@@ -61,11 +61,27 @@ def fluids() -> Any:
 @contextlib.contextmanager
 def _quiet() -> Iterator[None]:
     """Keep standard output clean and the slow tables off while the library loads."""
-    sys.stdout.flush()
-    saved = os.dup(1)
-    silence = os.open(os.devnull, os.O_WRONLY)
     before = os.environ.get(_SWITCH)
     os.environ[_SWITCH] = "1"
+    try:
+        with _silenced():
+            yield
+    finally:
+        if before is None:
+            del os.environ[_SWITCH]
+
+
+@contextlib.contextmanager
+def _silenced() -> Iterator[None]:
+    """Send standard output of the whole process nowhere; a process without one needs nothing."""
+    if sys.stdout is not None:
+        sys.stdout.flush()
+    try:
+        saved = os.dup(1)
+    except OSError:
+        yield
+        return
+    silence = os.open(os.devnull, os.O_WRONLY)
     os.dup2(silence, 1)
     try:
         yield
@@ -74,8 +90,6 @@ def _quiet() -> Iterator[None]:
         os.dup2(saved, 1)
         os.close(saved)
         os.close(silence)
-        if before is None:
-            os.environ.pop(_SWITCH, None)
 
 
 def _flush() -> None:
