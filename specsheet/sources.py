@@ -103,7 +103,6 @@ _SOURCES = (
     Source("yoon-thodos", "Yoon and Thodos (1970)", "viscosity of gases", "published values"),
     # Base conditions
     Source("din1343", "DIN 1343:1990", "reference condition 0 degC, 101.325 kPa"),
-    Source("iso13443", "ISO 13443:1996", "natural gas: reference conditions 15 degC, 101.325 kPa"),
 )
 
 SOURCES: dict[str, Source] = {source.key: source for source in _SOURCES}

@@ -16,6 +16,7 @@ from specsheet.line.dimensions import (
     wall,
 )
 from specsheet.quantity.value import Quantity, Refusal
+from specsheet.sources import cite
 from specsheet.tag import Tag
 
 #: DN whose outside diameter differs by more than 1 % between ASME and EN 10220, series 1 [mm]
@@ -205,7 +206,7 @@ def _schedule_remarks(tag: Tag, dn: int, found: Wall, origin: Origin) -> tuple[F
             f"DN {dn} is {found.outside * 1000:.1f} mm outside by ASME but {other:.1f} mm by "
             "EN 10220: if the pipe is of the other series, state its outside diameter."
         )
-        source = "EN 10220 (from memory)"
+        source = cite("en10220")
         remarks.append(Finding(Level.CAUTION, "two-series", "line.size", message, source=source))
     return tuple(remarks)
 

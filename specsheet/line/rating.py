@@ -23,6 +23,7 @@ from specsheet.line.flange import (
     standard,
 )
 from specsheet.line.material import Material, find_material
+from specsheet.sources import cite
 from specsheet.tag import Tag
 
 _WANTED = "require.rating"
@@ -191,9 +192,7 @@ def _size(rating: Rating, nominal: int) -> Iterator[Finding]:
             f"{standard(CLASS)} covers flanges to NPS 24 (DN 600); for DN {nominal} state ASME "
             "B16.47 series A or B, or the drawing of the flange."
         )
-        yield Finding(
-            Level.CAUTION, "rating-size", _WANTED, message, source="ASME B16.47 (from memory)"
-        )
+        yield Finding(Level.CAUTION, "rating-size", _WANTED, message, source=cite("asme-b16.47"))
     elif rating.number == 2500 and nominal > _LARGEST_DN_2500:
         message = "Class 2500 ends at NPS 12 (DN 300): state another rating or a flange by drawing."
         source = f"{standard(CLASS)} (from memory)"

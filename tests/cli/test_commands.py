@@ -7,7 +7,7 @@ import re
 from pathlib import Path
 
 import pytest
-from cli_process import call, demo_job, run
+from cli_process import DEMO_TAGS, call, demo_job, run
 
 from specsheet import packs, tagfile
 from specsheet.cli.parser import build_parser
@@ -47,7 +47,7 @@ def test_demo_writes_the_job_and_prints_every_tag(tmp_path: Path) -> None:
     assert told.returncode == 0, told.stderr
     written = tmp_path / "output" / "demo"
     tags = sorted(path.stem for path in (written / "tags").glob("*.toml"))
-    assert len(tags) == 11
+    assert tags == list(DEMO_TAGS)
     sheets = {path.stem: path.read_bytes() for path in (tmp_path / "output").glob("*.pdf")}
     assert sorted(sheets) == tags
     assert all(content.startswith(PDF_MAGIC) for content in sheets.values())
@@ -141,7 +141,7 @@ def test_check_lists_each_finding_with_file_level_and_code(job: Path) -> None:
     lines = told.stdout.splitlines()
     assert lines
     assert all(pattern.match(line) for line in lines), lines
-    assert told.stderr.startswith("11 tags: ")
+    assert told.stderr.startswith(f"{len(DEMO_TAGS)} tags: ")
 
 
 def test_check_says_by_what_margin(job: Path) -> None:

@@ -6,7 +6,7 @@ import sys
 from pathlib import Path
 
 import pytest
-from cli_process import demo_job
+from cli_process import DEMO_TAGS, demo_job
 
 if sys.platform == "win32":
     pytest.skip("needs a pseudo-terminal", allow_module_level=True)
@@ -68,4 +68,4 @@ def test_demo_ends_in_the_form(tmp_path: Path) -> None:
         terminal.until("FT-7103")
         terminal.press(QUIT)
         assert terminal.end() == 0
-    assert len(list((tmp_path / "output").glob("*.pdf"))) == 11
+    assert len(list((tmp_path / "output").glob("*.pdf"))) == len(DEMO_TAGS)

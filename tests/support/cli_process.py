@@ -17,6 +17,8 @@ from specsheet.cli import main
 
 ROOT = Path(specsheet.__file__).resolve().parents[1]
 DEMO = packs.folder() / "demo"
+#: tag numbers of the embedded job
+DEMO_TAGS = tuple(sorted(path.stem for path in (DEMO / "tags").glob("*.toml")))
 
 
 def environment(**extra: str) -> dict[str, str]:

@@ -19,6 +19,12 @@ from types import TracebackType
 from cli_process import environment
 
 
+def _environment() -> dict[str, str]:
+    """Return the environment of a terminal; a size told there would overrule the terminal's own."""
+    made = environment(TERM="xterm-256color", TEXTUAL_ANIMATIONS="none")
+    return {key: text for key, text in made.items() if key not in ("COLUMNS", "LINES")}
+
+
 class Terminal:
     """The interpreter with arguments, in a pseudo-terminal; a context manager that ends it."""
 
@@ -37,7 +43,7 @@ class Terminal:
             stdout=slave,
             stderr=slave,
             start_new_session=True,
-            env=environment(TERM="xterm-256color", TEXTUAL_ANIMATIONS="none"),
+            env=_environment(),
         )
         os.close(slave)
 
