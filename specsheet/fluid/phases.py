@@ -5,6 +5,7 @@ from __future__ import annotations
 from specsheet.findings import Finding
 from specsheet.fluid.model import bar, caution, celsius, note, stop
 from specsheet.fluid.state import State
+from specsheet.sources import PRACTICE
 
 LIQUID = "liquid"
 GAS = "gas"
@@ -13,9 +14,12 @@ SUPERCRITICAL = "supercritical"
 SOLID = "solid"
 UNVERIFIED = "unverified"
 
+#: pressure by vapour pressure, below which a liquid is called near boiling
+NEAR = 1.05
+
 
 def disagreement(stated: str, state: State) -> Finding | None:
-    """Return the finding for a stated phase that the state contradicts, or None."""
+    """Return what is to be said of a stated phase beside the computed one, or None."""
     found = state.phase
     if found == SOLID:
         return stop(
@@ -36,6 +40,8 @@ def disagreement(stated: str, state: State) -> Finding | None:
             "critical point, dense as a liquid and compressible as a gas: make sure that the meter "
             "suits it.",
         )
+    if stated == LIQUID and found == LIQUID:
+        return _near_boiling(state)
     if found == UNVERIFIED:
         return caution(
             "phase-unverified",
@@ -64,6 +70,22 @@ def _flashing(state: State) -> Finding:
         "fluid.phase",
         f"Liquid is stated, but {where} the fluid {amount}. Correct the phase, the pressure or the "
         "temperature.",
+    )
+
+
+def _near_boiling(state: State) -> Finding | None:
+    """Return the caution for a liquid that a small loss of pressure would make boil."""
+    vapour = state.value("vapour_pressure")
+    if vapour is None or state.pressure > NEAR * vapour:
+        return None
+    spare = max(state.pressure - vapour, 0.0)
+    return caution(
+        "near-boiling",
+        "pressure",
+        f"The pressure is only {spare / 1e5:.3g} bar above the vapour pressure {bar(vapour)}: the "
+        "loss of pressure in the meter may make the liquid flash. Meter it where the pressure is "
+        "higher or the liquid colder.",
+        PRACTICE,
     )
 
 

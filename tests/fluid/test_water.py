@@ -247,3 +247,13 @@ def test_conductivity_release() -> None:
     found = state("liquid", 298.15, 2.18e6)
     assert found.value("density") == pytest.approx(998.0, abs=0.05)
     assert found.value("thermal_conductivity") == pytest.approx(0.607712868, rel=2e-3)
+
+
+def test_water_about_to_boil_is_a_caution() -> None:
+    # 120 degC boils at 1.987 bar(a)
+    near = fluid.derive(tag(WATER, point("2.05 bar(a)", "120 degC")))
+    far = fluid.derive(tag(WATER, point("3 bar(a)", "120 degC")))
+    saturated = fluid.derive(tag(WATER, point("2 bar(a)")))
+    assert "0.063" in finding(near, "near-boiling").message
+    assert "near-boiling" not in codes(far)
+    assert "near-boiling" in codes(saturated)
