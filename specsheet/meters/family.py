@@ -12,7 +12,7 @@ from dataclasses import dataclass, field, replace
 import numpy as np
 from numpy.typing import NDArray
 
-from specsheet.findings import Finding, Level, Origin
+from specsheet.findings import Finding, Origin
 from specsheet.findings import Given as Given  # every family takes both from here
 from specsheet.findings import Limit as Limit
 from specsheet.line.pipe import Pipe

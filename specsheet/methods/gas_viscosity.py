@@ -73,7 +73,7 @@ def vapour_equation(*, temperature: float, c1: float, c2: float, c3: float, c4: 
 
     Source: Perry's Handbook, 8th edition, table 2-312.
     """
-    return c1 * temperature**c2 / (1.0 + c3 / temperature + c4 / temperature**2)
+    return float(c1 * temperature**c2 / (1.0 + c3 / temperature + c4 / temperature**2))
 
 
 def liquid_equation(
@@ -109,4 +109,4 @@ def yoon_thodos(
         - 20.4 * math.exp(-0.449 * reduced)
         + 19.4 * math.exp(-4.058 * reduced)
     )
-    return 1e-8 * shape / scale
+    return float(1e-8 * shape / scale)

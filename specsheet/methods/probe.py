@@ -56,8 +56,10 @@ def natural_frequency(
     inertia = np.pi / 64.0 * (width**4 - inside**4)
     metal = STEEL_DENSITY * np.pi / 4.0 * (width**2 - inside**2)
     fluid = fluid_density * np.pi / 4.0 * (inside**2 + width**2)
-    return eigenvalue**2 / (2.0 * np.pi * length**2) * np.sqrt(
-        STEEL_MODULUS * inertia / (metal + fluid)
+    return (
+        eigenvalue**2
+        / (2.0 * np.pi * length**2)
+        * np.sqrt(STEEL_MODULUS * inertia / (metal + fluid))
     )
 
 

@@ -1,8 +1,8 @@
 """Seawater: what the salt adds to pure water, and its viscosity.
 
 Sources: IAPWS R13-08 (saline part; coefficients in ``profiles/fluids/seawater.toml``) with pure
-water by IAPWS-IF97, as IAPWS advisory note 5 has it; M. H. Sharqawy, J. H. Lienhard and S. M. Zubair,
-Desalination and Water Treatment 16 (2010) 354 (viscosity and vapour pressure; from memory).
+water by IAPWS-IF97, as IAPWS advisory note 5 has it; M. H. Sharqawy, J. H. Lienhard and S. M.
+Zubair, Desalination and Water Treatment 16 (2010) 354 (viscosity and vapour pressure; from memory).
 """
 
 from __future__ import annotations

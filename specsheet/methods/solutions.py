@@ -50,7 +50,7 @@ def laliberte_viscosity(
     v1, v2, v3, v4, v5, v6 = coefficients
     power = (v1 * solute_fraction**v2 + v3) / (v4 * celsius + 1.0)
     solute = 1e-3 * math.exp(power) / (v5 * solute_fraction**v6 + 1.0)
-    return water_viscosity ** (1.0 - solute_fraction) * float(solute) ** solute_fraction
+    return float(water_viscosity ** (1.0 - solute_fraction) * solute**solute_fraction)
 
 
 def water_mole_fraction(*, solute_fraction: float, molar_mass: float, ions: int) -> float:
