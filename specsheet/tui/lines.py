@@ -48,7 +48,9 @@ def strip_of(
         text = safe(text)
         size = cell_len(text)
         if size > left:
-            text, size = set_cell_size(text, left), left
+            # A cut text shows that it is cut: the rest of a number would be another number.
+            mark = safe("…")[:1] if left else ""
+            text, size = set_cell_size(text, max(0, left - 1)) + mark, left
         if text:
             segments.append(Segment(text, style))
         left -= size

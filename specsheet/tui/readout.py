@@ -24,6 +24,7 @@ LEGEND = "g given  a assumed  t typical"
 _LABEL = 32
 _LEAST_LABEL = 20
 _GAP = 2
+_LONGEST_NAME = 12
 
 
 @dataclass(frozen=True, slots=True)
@@ -78,8 +79,11 @@ def _table(table: Table, width: int) -> list[Line]:
     lines: list[Line] = []
     if table.columns:
         label, column = _columns(table, width)
-        lines.append(_heading(table, label, column))
-        lines += [_multiple(row, label, column) for row in table.rows]
+        step = max(1, (width - label) // column)
+        for start in range(0, len(table.columns), step):
+            part = slice(start, start + step)
+            lines.append(_heading(table, part, label, column))
+            lines += [_multiple(row, part, label, column) for row in table.rows]
     else:
         lines.append(((table.title, "head"),))
         label = min(_LABEL, max(_LEAST_LABEL, width // 2))
@@ -90,24 +94,29 @@ def _table(table: Table, width: int) -> list[Line]:
 
 
 def _columns(table: Table, width: int) -> tuple[int, int]:
-    """Return the width of the label and of one column: labels give way first."""
-    texts = [cell.text for row in table.rows for cell in row.cells] + list(table.columns)
+    """Return the width of the label and of one column: labels give way first.
+
+    A number is never cut: columns that do not fit go below one another.
+    """
+    texts = [cell.text for row in table.rows for cell in row.cells]
+    texts += [name[:_LONGEST_NAME] for name in table.columns]
     column = max(len(text) for text in texts) + _GAP + 1
     room = width - column * len(table.columns)
     return max(_LEAST_LABEL, min(_LABEL + 6, room)), column
 
 
-def _heading(table: Table, label: int, column: int) -> Line:
-    names = "".join(f"{name[: column - _GAP]:>{column - 1}} " for name in table.columns)
-    return ((f"{_cut(table.title, label):<{label}}", "head"), (names, "label"))
+def _heading(table: Table, part: slice, label: int, column: int) -> Line:
+    names = "".join(f"{name[:_LONGEST_NAME]:>{column - 1}} " for name in table.columns[part])
+    title = _cut(table.title, label - 1)
+    return ((f"{title:<{label}}", "head"), (names, "label"))
 
 
-def _multiple(row: Row, label: int, column: int) -> Line:
+def _multiple(row: Row, part: slice, label: int, column: int) -> Line:
     unit = f" {row.unit}" if row.unit else ""
     words = _cut(row.label, label - len(unit) - 1)
     head = f"{words}{unit}"
     pieces = [(words, "label"), (unit, "dim"), (" " * (label - len(head)), "text")]
-    for cell in row.cells:
+    for cell in row.cells[part]:
         pieces.append((f"{cell.text:>{column - 1}}", "text"))
         pieces.append((_letter(cell.origin), "dim"))
     if len(row.cells) == 1 and row.note:
@@ -230,6 +239,7 @@ def summary(sheet: Sheet | None, found: Sequence[Item]) -> str:
     if tight is None:
         return told
     flips = f" ({tight.flips})" if tight.flips else ""
-    words = "reserve" if tight.holds else "does not hold before"
     what = f"{tight.label[:1].lower()}{tight.label[1:]} at {tight.point}"
-    return f"{told}; {what}: {words} {tight.reserve}{flips}"
+    if tight.holds:
+        return f"{told}; reserve {tight.reserve}{flips} to {what}"
+    return f"{told}; {what} does not hold; it would at {tight.reserve}{flips}"

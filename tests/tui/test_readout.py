@@ -2,11 +2,16 @@
 
 from __future__ import annotations
 
-import pytest
+from dataclasses import replace
 
-from specsheet.findings import Level
+import pytest
+from rich.style import Style
+
+from specsheet.findings import Level, Origin
+from specsheet.sheet.model import Cell, LimitRow, Row, Table
 from specsheet.tui import readout
 from specsheet.tui.glyphs import plain_ascii, printable
+from specsheet.tui.lines import strip_of
 from specsheet.tui.protocol import Trouble
 from specsheet.tui.readout import Item
 from tests.tui.conftest import sheet
@@ -67,3 +72,50 @@ def test_every_sign_of_ours_has_a_plain_form(text: str) -> None:
 
 def test_control_characters_cannot_reach_the_terminal() -> None:
     assert printable("a\x1b[2Jb\nc\td") == "a [2Jb c d"
+
+
+@pytest.mark.parametrize(
+    ("holds", "said"),
+    [
+        (True, "reserve +32 % (4.10 t/h) to velocity at normal"),
+        (False, "velocity at normal does not hold; it would at +32 % (4.10 t/h)"),
+    ],
+)
+def test_the_summary_tells_a_reserve_from_a_limit_that_does_not_hold(
+    holds: bool, said: str
+) -> None:
+    limit = LimitRow(
+        key="velocity",
+        label="Velocity",
+        symbol="v",
+        point="normal",
+        value="8",
+        allowed="at most 10",
+        unit="m/s",
+        holds=holds,
+        level=Level.CAUTION,
+        verdict="",
+        reserve="+32 %",
+        flips="4.10 t/h",
+        message="",
+        source="",
+    )
+    told = readout.summary(replace(sheet(), limits=(limit,)), ())
+    assert told == f"no findings; {said}"
+
+
+@pytest.mark.parametrize("width", [34, 46, 60, 80])
+def test_no_number_is_ever_cut(width: int) -> None:
+    names = tuple(f"case {number}" for number in range(7))
+    cells = tuple(Cell(f"{1234567 + number}", Origin.DERIVED) for number in range(7))
+    table = Table("points", "Points", names, (Row("mass_flow", "Mass flow", "qm", cells, "kg/h"),))
+    lines = text_of(readout.derived(replace(sheet(), points=table), width))
+    joined = "\n".join(lines)
+    assert all(cell.text in joined for cell in cells)
+    assert max(len(line.rstrip()) for line in lines) <= width
+
+
+def test_a_cut_line_shows_that_it_is_cut() -> None:
+    strip = strip_of([("12345678", Style())], 5, Style())
+    assert strip.text == "1234…"
+    assert strip_of([("12345", Style())], 5, Style()).text == "12345"
