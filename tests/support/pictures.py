@@ -18,7 +18,7 @@ FOLDER = ROOT / "output" / "sample"
 #: tags whose sheets are kept: steam through a plate, one not to be bought, gas through a Coriolis
 SHEETS = ("FT-2104", "FT-2305", "FT-3410")
 FORM = FOLDER / "form.png"
-_SIZE = (132, 40)
+_SIZE = (152, 40)
 _FONT = "JetBrains Mono"
 
 
