@@ -20,6 +20,9 @@ from specsheet.findings import Level
 from specsheet.render import pdf
 from specsheet.tui import terminal
 
+#: spaces between two columns of the summary, and the least that is shown of a service
+_GAP, _LEAST_SERVICE = 2, 12
+
 
 def run(arguments: Namespace) -> int | Status:
     """Run the demo; ends with 0 although some of its tags are wrong on purpose.
@@ -67,15 +70,25 @@ def _print_all(folder: Path, output: Path) -> list[Evaluation]:
 
 def _show(evaluations: list[Evaluation]) -> None:
     """Write the summary table to stdout."""
+    console = Console()
     table = Table(box=None, pad_edge=False)
     table.add_column("tag", no_wrap=True)
-    table.add_column("service", no_wrap=True, overflow="ellipsis")
+    width = _room_for_service(console.width, evaluations)
+    table.add_column("service", no_wrap=True, overflow="ellipsis", max_width=width)
     table.add_column("family", no_wrap=True)
     for level in Level:
-        table.add_column(level, justify="right", min_width=len(level))
+        table.add_column(level, justify="right", no_wrap=True)
     for evaluation in evaluations:
         tag = evaluation.tag
         counts = Counter(finding.level for finding in evaluation.findings)
         cells = (tag.name, tag.text("service"), tag.family, *(str(counts[x]) for x in Level))
         table.add_row(*(Text(cell) for cell in cells))
-    Console().print(table)
+    console.print(table)
+
+
+def _room_for_service(width: int, evaluations: list[Evaluation]) -> int:
+    """Return how wide the services may be so that nothing else is cut [characters]."""
+    tag = max((len(item.tag.name) for item in evaluations), default=0)
+    family = max((len(item.tag.family) for item in evaluations), default=0)
+    levels = sum(len(level) + _GAP for level in Level)
+    return max(_LEAST_SERVICE, width - tag - family - levels - 2 * _GAP)
