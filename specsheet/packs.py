@@ -62,6 +62,32 @@ class ProfileLimit:
 
 
 @dataclass(frozen=True, slots=True)
+class Remark:
+    """What usual practice says of a family in a kind of service, from its profile.
+
+    Attributes:
+        code: code of the finding.
+        when: words of the service that it is about, any of them; "any" for every service.
+        unless: words that lift it.
+        phase: "liquid", "gas" or "" for both.
+        level: level of the finding.
+        message: what speaks against the family, and what to do.
+        source: citation, "common practice, no source" or "from memory".
+        choosing: whether it counts only while a family is being chosen: whoever has chosen the
+            family knows it.
+    """
+
+    code: str
+    when: tuple[str, ...]
+    unless: tuple[str, ...]
+    phase: str
+    level: str
+    message: str
+    source: str
+    choosing: bool
+
+
+@dataclass(frozen=True, slots=True)
 class Typical:
     """A figure usual for the family, printed as typical, for the bidder to confirm."""
 
@@ -103,6 +129,7 @@ class Profile:
         entries: what the user may state under ``[meter]``.
         reply: what a bidder must state.
         limits: usual limits of use.
+        remarks: what usual practice says of the family in certain services.
         typical: usual figures by name (SI).
         straight: straight-length rules, raw (read by :mod:`specsheet.line`).
         wetted: wetted parts and their usual materials.
@@ -128,6 +155,7 @@ class Profile:
     entries: tuple[Entry, ...] = ()
     reply: tuple[Entry, ...] = ()
     limits: tuple[ProfileLimit, ...] = ()
+    remarks: tuple[Remark, ...] = ()
     typical: Mapping[str, Typical] = field(default_factory=dict)
     straight: Mapping[str, Any] = field(default_factory=dict)
     wetted: Mapping[str, tuple[str, ...]] = field(default_factory=dict)
@@ -161,6 +189,19 @@ def _limit(raw: Mapping[str, Any]) -> ProfileLimit:
         level=raw["level"],
         message=raw["message"],
         source=raw["source"],
+    )
+
+
+def _remark(raw: Mapping[str, Any]) -> Remark:
+    return Remark(
+        code=raw["code"],
+        when=tuple(raw["when"]),
+        unless=tuple(raw.get("unless", ())),
+        phase=raw.get("phase", ""),
+        level=raw["level"],
+        message=raw["message"],
+        source=raw["source"],
+        choosing=raw.get("choosing", False),
     )
 
 
@@ -206,6 +247,7 @@ def profile(key: str) -> Profile:
         entries=tuple(_entry("meter", item) for item in raw.get("entries", ())),
         reply=tuple(_entry("reply", item) for item in raw.get("reply", ())),
         limits=tuple(_limit(item) for item in raw.get("limits", ())),
+        remarks=tuple(_remark(item) for item in raw.get("remarks", ())),
         typical={
             name: Typical(item["value"], item["source"])
             for name, item in raw.get("typical", {}).items()

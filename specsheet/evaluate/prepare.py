@@ -8,11 +8,14 @@ from math import nan
 import numpy as np
 
 from specsheet import fluid, line
+from specsheet.evaluate.remarks import service_words
 from specsheet.evaluate.sanity import check_statements
 from specsheet.evaluate.stream import Points, points_of
 from specsheet.findings import Finding
 from specsheet.fluid.state import FluidResult
 from specsheet.line import Pipe, PipeResult
+from specsheet.line.service import Service as ServiceFacts
+from specsheet.line.service import service_facts
 from specsheet.meters.family import Request
 from specsheet.packs import Profile
 from specsheet.tag import Tag
@@ -35,6 +38,8 @@ class Prepared:
         points: the operating points that can be evaluated.
         pipe: the pipe; its ``pipe`` is None where it cannot be had.
         statements: what is wrong with the statements as such.
+        facts: the facts of the service.
+        words: what it is, in words ("steam", "oxygen_enriched", "solids", "viscous").
     """
 
     tag: Tag
@@ -42,6 +47,8 @@ class Prepared:
     points: Points
     pipe: PipeResult
     statements: tuple[Finding, ...]
+    facts: ServiceFacts
+    words: frozenset[str]
 
     def findings(self, profile: Profile | None) -> tuple[Finding, ...]:
         """Return what is wrong before a meter is looked at.
@@ -57,7 +64,16 @@ def prepare(tag: Tag) -> Prepared:
     """Derive fluid, operating points and pipe of one tag. Never raises on user data."""
     state = fluid.derive(tag)
     points = points_of(tag, state)
-    return Prepared(tag, state, points, line.pipe_of(tag), check_statements(tag, points))
+    facts = service_facts(tag, state)
+    return Prepared(
+        tag,
+        state,
+        points,
+        line.pipe_of(tag),
+        check_statements(tag, points),
+        facts,
+        service_words(tag, facts, points),
+    )
 
 
 def in_channel(prepared: Prepared, profile: Profile | None) -> bool:

@@ -10,11 +10,13 @@ from collections.abc import Iterator
 from dataclasses import dataclass
 
 from specsheet.evaluate.prepare import CHANNEL, Prepared, has_pressure, overpressure
+from specsheet.evaluate.remarks import remarks
 from specsheet.evaluate.result import Check
 from specsheet.evaluate.words import facts, number
 from specsheet.fields.terms import in_sentence
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.fluid.state import State
+from specsheet.line import unsuited_parts
 from specsheet.packs import Profile, ProfileLimit
 from specsheet.sources import PRACTICE
 from specsheet.tag import Tag
@@ -56,7 +58,9 @@ class Service:
 
 def judge_service(prepared: Prepared, profile: Profile) -> Service:
     """Judge a family by the service alone."""
-    findings = [*_suitable(prepared, profile)]
+    said = remarks(profile, prepared.tag.phase, prepared.words, choosing=False)
+    unsuited = unsuited_parts(profile, prepared.facts, prepared.words)
+    findings = [*_suitable(prepared, profile), *said, *unsuited]
     checks: list[Check] = []
     unknown: list[str] = []
     values = _values(prepared)

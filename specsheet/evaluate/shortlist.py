@@ -19,6 +19,7 @@ from specsheet.evaluate.limits import limits_of
 from specsheet.evaluate.model import model_of
 from specsheet.evaluate.prepare import NO_PIPE, Prepared, prepare
 from specsheet.evaluate.prepare import request as requested
+from specsheet.evaluate.remarks import remarks
 from specsheet.evaluate.reserve import margin, scaled
 from specsheet.evaluate.result import Result
 from specsheet.evaluate.service import Service, judge_habits, judge_service
@@ -34,6 +35,10 @@ from specsheet.tagfile import with_family
 
 #: limits of the line, which no choice of a family mends
 _OF_LINE = ("line-velocity-high", "line-velocity-low")
+#: stops of the flanges that a meter without flanges escapes
+_OF_FLANGES = ("rating-exceeded", "rating-temperature")
+#: uncertainties that part good from fair and poor [-]; common practice
+_CLASSES = (0.01, 0.02, 0.05)
 _RANK = {Level.STOP: 0, Level.CAUTION: 1, Level.NOTE: 2}
 
 
@@ -87,9 +92,11 @@ class Shortlist:
 
     Attributes:
         tag: the tag.
-        findings: what is wrong whatever the family; stops there leave nothing to judge by.
+        findings: what is wrong whatever the family, flanges, materials and hazards of the line
+            included.
         candidates: every family. Those that fit come first; then those sized by equations before
-            those judged by limits, fewer cautions, less uncertainty, less energy.
+            those judged by limits, fewer cautions, an uncertainty that is good enough, no moving
+            parts, less energy.
     """
 
     tag: Tag
@@ -100,41 +107,73 @@ class Shortlist:
 def shortlist(tag: Tag) -> Shortlist:
     """Hold every family against one tag. Never raises on user data."""
     prepared = prepare(tag)
-    found = [candidate(prepared, packs.profile(key)) for key in packs.family_keys()]
+    pipe = prepared.pipe.pipe
+    beside = (
+        *line.rate(tag, prepared.fluid, nominal=pipe.nominal if pipe else 0).findings,
+        *line.materials(tag, None, prepared.fluid).findings,
+        *line.cautions(tag, prepared.fluid).findings,
+    )
+    of_flanges = tuple(item for item in _stops(beside) if item.code in _OF_FLANGES)
+    found = [
+        candidate(prepared, packs.profile(key), of_flanges=of_flanges)
+        for key in packs.family_keys()
+    ]
     # a pipe that is missing is a reason with each family that needs one, not with a channel
     of_pipe = _stops(prepared.pipe.findings)
-    common = dict.fromkeys(item for item in prepared.findings(None) if item not in of_pipe)
+    common = dict.fromkeys(
+        item for item in (*prepared.findings(None), *beside) if item not in of_pipe
+    )
     worst = sorted(common, key=lambda item: _RANK[item.level])
-    return Shortlist(tag, tuple(worst), tuple(sorted(found, key=_merit)))
+    wanted = max(tag.si("require.uncertainty") or 0.0, _CLASSES[0])
+    return Shortlist(tag, tuple(worst), tuple(sorted(found, key=lambda one: _merit(one, wanted))))
 
 
-def _merit(candidate: Candidate) -> tuple[float | str, ...]:
+def _merit(candidate: Candidate, wanted: float) -> tuple[float | str, ...]:
+    """Return the key of the order; ``wanted`` is the uncertainty that is good enough.
+
+    Better than good enough earns nothing: there what runs without moving parts and without loss
+    comes first.
+    """
     large = float("inf")
+    doubt = large if candidate.uncertainty is None else candidate.uncertainty
     return (
         _ORDER.index(candidate.verdict),
         not candidate.by_equations,
         len(candidate.reasons),
-        large if candidate.uncertainty is None else candidate.uncertainty,
+        sum(doubt > edge for edge in (wanted, *_CLASSES) if edge >= wanted),
+        candidate.profile.moving_parts,
         large if candidate.yearly_energy is None else candidate.yearly_energy,
+        doubt,
         candidate.profile.key,
     )
 
 
-def candidate(prepared: Prepared, profile: Profile) -> Candidate:
-    """Hold one family against a prepared tag. Never raises on user data."""
+def candidate(
+    prepared: Prepared, profile: Profile, *, of_flanges: tuple[Finding, ...] = ()
+) -> Candidate:
+    """Hold one family against a prepared tag. Never raises on user data.
+
+    Args:
+        prepared: the tag without a meter.
+        profile: the family.
+        of_flanges: stops on the flange rating asked for; they concern meters in the line.
+    """
     family = registry.family(profile.key)
     service = judge_service(prepared, profile)
+    in_line = "closed pipe" in profile.applies_to
+    said = (*(of_flanges if in_line else ()), *service.findings)
     own = prepared.tag.family == profile.key
     tag = prepared.tag if own else with_family(prepared.tag, profile.key)
-    request = None if service.stopped else requested(prepared, profile, tag)
+    request = None if _stops(said) else requested(prepared, profile, tag)
     if request is None:
-        missing = () if service.stopped else _stops(prepared.findings(profile))
-        reasons = _deciding((*service.findings, *missing))
+        missing = () if _stops(said) else _stops(prepared.findings(profile))
+        reasons = _deciding((*said, *missing))
         return Candidate(
             profile, Verdict.UNFIT, family is not None, reasons, unknown=service.unknown
         )
     habits = () if family is not None else judge_habits(prepared, profile)
-    return _sized(request, family, (*service.findings, *habits), service)
+    choosing = remarks(profile, tag.phase, prepared.words, choosing=True)
+    return _sized(request, family, (*said, *habits, *choosing), service)
 
 
 def _stops(findings: Iterable[Finding]) -> tuple[Finding, ...]:

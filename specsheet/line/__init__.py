@@ -6,7 +6,7 @@ stated: what is wrong becomes a finding.
 
 from specsheet.line.assess import LineResult, assess
 from specsheet.line.cautions import CautionResult, cautions
-from specsheet.line.compatibility import MaterialResult, materials
+from specsheet.line.compatibility import MaterialResult, materials, unsuited_parts
 from specsheet.line.pipe import Pipe
 from specsheet.line.piping import PipeResult, pipe_of
 from specsheet.line.rating import RatingResult, rate
@@ -27,5 +27,6 @@ __all__ = [
     "pipe_of",
     "rate",
     "straight",
+    "unsuited_parts",
     "velocity_limits",
 ]

@@ -86,6 +86,39 @@ def materials(
     return MaterialResult((*notes, _CLOSING), tuple(dict.fromkeys(findings)))
 
 
+def unsuited_parts(
+    profile: Profile, service: Service, words: frozenset[str]
+) -> tuple[Finding, ...]:
+    """Return a caution for each wetted part of a family of which every usual material is to avoid.
+
+    Args:
+        profile: the family's profile with its wetted parts.
+        service: facts of the service.
+        words: its words and dangers.
+    """
+    rules = table("compatibility")["rule"]
+    avoided = {
+        index
+        for index, rule in enumerate(rules)
+        if rule["verdict"] == "avoid" and _holds(rule, service, words)
+    }
+    found = []
+    for name, choices in profile.wetted.items():
+        known = [text for text in choices if text != _AS_LINE]
+        hits = [avoided & _rules_about(text) for text in known]
+        if not known or not all(hits):
+            continue
+        rule = rules[min(hits[0])]
+        message = (
+            f"{profile.title}: {name} usually of {' or '.join(known)}, but {rule['text']}. Only "
+            "with another material, which the bidder names."
+        )
+        found.append(
+            Finding(Level.CAUTION, "material-unsuited", "family", message, source=rule["source"])
+        )
+    return tuple(found)
+
+
 def _parts(tag: Tag, profile: Profile | None) -> Iterator[_Part]:
     line = tag.text("line.material")
     if line:

@@ -94,12 +94,42 @@ def test_enough_conductivity_is_silent():
     assert codes(FAMILY.size(magnetic())) == set()
 
 
-def test_unknown_conductivity_gas_and_petroleum():
-    assert "conductivity-missing" in codes(
-        FAMILY.size(magnetic(fluid__electrical_conductivity=None))
-    )
-    oil = magnetic(fluid__electrical_conductivity=None, fluid__kind="petroleum")
-    assert "hydrocarbon-does-not-conduct" in codes(FAMILY.size(oil))
+@pytest.mark.parametrize(
+    ("fluid", "temperature", "code", "level"),
+    [  # common practice, no source
+        ({"kind": "substance", "substance": "water"}, 288.0, "conductivity-assumed", Level.NOTE),
+        ({"kind": "substance", "substance": "water"}, 400.0, "conductivity-missing", Level.CAUTION),
+        ({"kind": "slurry", "substance": "water"}, 300.0, "conductivity-assumed", Level.NOTE),
+        ({"kind": "given", "substance": ""}, 300.0, "conductivity-missing", Level.CAUTION),
+        ({"kind": "petroleum", "substance": ""}, 300.0, "hydrocarbon-does-not-conduct", Level.STOP),
+        *(
+            ({"kind": "substance", "substance": name}, 280.0, "liquid-does-not-conduct", Level.STOP)
+            for name in ("toluene", "ethylene glycol", "methanol", "ammonia", "R134a", "nitrogen")
+        ),
+        (
+            {"kind": "solution", "solute": "ethylene glycol", "substance": ""},
+            300.0,
+            "conductivity-missing",
+            Level.CAUTION,
+        ),
+    ],
+)
+def test_unknown_conductivity(fluid, temperature, code, level):
+    entries = {f"fluid__{key}": value for key, value in fluid.items()}
+    water = {**tools.water(3), "temperature": np.full(3, temperature)}
+    request = magnetic(fluid=water, fluid__electrical_conductivity=None, **entries)
+    found = {(item.code, item.level) for item in FAMILY.size(request).findings}
+    assert (code, level) in found
+
+
+@pytest.mark.parametrize("fluid", [{"kind": "seawater"}, {"kind": "solution", "solute": "NaOH"}])
+def test_salt_water_and_lye_conduct_by_nature(fluid):
+    entries = {f"fluid__{key}": value for key, value in fluid.items()}
+    found = codes(FAMILY.size(magnetic(fluid__electrical_conductivity=None, **entries)))
+    assert not any("conduct" in code for code in found)
+
+
+def test_a_gas_induces_nothing():
     gas = tools.request("magnetic", [0.1, 0.5, 1.0], tools.steam(3), phase="gas")
     found = FAMILY.size(gas).findings
     assert ("gas-does-not-conduct", Level.STOP) in {(item.code, item.level) for item in found}

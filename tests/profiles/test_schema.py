@@ -33,7 +33,14 @@ WANTED = {
     "clauses": dict,
     "wetted": dict,
 }
-ALLOWED = {"straight": dict, "orientations": list, "entries": list, "limits": list, "typical": dict}
+ALLOWED = {
+    "straight": dict,
+    "orientations": list,
+    "entries": list,
+    "limits": list,
+    "remarks": list,
+    "typical": dict,
+}
 USUAL = (
     "sizes",
     "turndown",
@@ -54,6 +61,7 @@ ENTRY = (
     "symbol",
 )
 LIMIT = ("quantity", "low", "high", "phase", "level", "message", "source")
+REMARK = ("code", "when", "unless", "phase", "level", "message", "source", "choosing")
 STRAIGHT = (
     "source",
     "betas",
@@ -81,6 +89,7 @@ def is_source(text: object) -> bool:
 def figures(raw: dict[str, Any]) -> list[tuple[str, object]]:
     """Return every figure's name with its source."""
     found = [(f"limits: {item.get('quantity')}", item.get("source")) for item in raw["limits"]]
+    found += [(f"remarks: {r.get('code')}", r.get("source")) for r in raw.get("remarks", [])]
     for table in ("usual", "typical"):
         found.extend(
             (f"{table}.{name}", item.get("source") if isinstance(item, dict) else None)
@@ -110,6 +119,8 @@ def faults(key: str, raw: dict[str, Any]) -> list[str]:
     wrong.extend(_usual(raw))
     for item in raw["limits"]:
         wrong.extend(_limit(item))
+    for item in raw.get("remarks", []):
+        wrong.extend(_remark(item))
     for table in ("entries", "reply"):
         for item in raw.get(table, []):
             wrong.extend(f"{table}: {fault}" for fault in _entry(item))
@@ -183,6 +194,21 @@ def _limit(item: dict[str, Any]) -> list[str]:
     message = item.get("message", "")
     if not message or message.endswith(".") or (message[0].isupper() and not message[:2].isupper()):
         wrong.append(f"limits, {name}: the message goes on a sentence: small letter, no full stop")
+    return wrong
+
+
+def _remark(item: dict[str, Any]) -> list[str]:
+    name = item.get("code", "")
+    wrong = [f"remarks, {name}: {key} is not known" for key in item if key not in REMARK]
+    if not name or not item.get("when"):
+        wrong.append(f"remarks, {name}: code and when are wanted")
+    if item.get("level") not in set(Level):
+        wrong.append(f"remarks, {name}: level is stop, caution or note")
+    if item.get("phase", "") not in ("", "liquid", "gas"):
+        wrong.append(f"remarks, {name}: phase is liquid or gas")
+    message = item.get("message", "")
+    if not message or message.endswith(".") or message[0].isupper():
+        wrong.append(f"remarks, {name}: the message goes on a sentence: small letter, no full stop")
     return wrong
 
 

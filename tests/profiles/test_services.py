@@ -35,8 +35,8 @@ CASES = {
     "pitot_tube": ("duct", "boiling water", "cavitation"),
     "pitot_averaging": ("compressed air", "flare", "probe-resonance"),
     "probe_multihole": ("duct", "boiling water", "cavitation"),
-    "laminar_element": ("purge air", "brook", "line-size-missing"),
-    "variable_area_float": ("house water", "brook", "line-size-missing"),
+    "laminar_element": ("purge air", "penstock", "capillary-count-limit"),
+    "variable_area_float": ("house water", "penstock", "inside-diameter-hot-limit"),
     "variable_area_spring": ("fuel oil", "boiling water", "cavitation"),
     # Rotating: bearings and solids; water meters are for water (ISO 4064-1)
     "turbine_axial": ("water", "sludge", "solids"),

@@ -128,6 +128,68 @@ SERVICES: dict[str, tuple[str, str, tuple[str, str, str], str]] = {
         ("2 t/h", "3.1 t/h", "3.9 t/h"),
         'pressure = "7 bar(g)"\ntemperature = "185 degC"\n',
     ),
+    "cooling water": (
+        _WATER + 'electrical_conductivity = "800 uS/cm"\nsolids = "0 %"\nbubbles = "0 %"\n',
+        'size = "DN 300"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("250 m3/h", "500 m3/h", "700 m3/h"),
+        'pressure = "4 bar(g)"\ntemperature = "28 degC"\n',
+    ),
+    "demineralised water": (
+        _WATER + 'electrical_conductivity = "0.2 uS/cm"\nsolids = "0 %"\nbubbles = "0 %"\n',
+        'size = "DN 50"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("5 m3/h", "10 m3/h", "15 m3/h"),
+        'pressure = "6 bar(g)"\ntemperature = "25 degC"\n',
+    ),
+    "seawater": (
+        'kind = "seawater"\nphase = "liquid"\nsalinity = "35 g/kg"\n'
+        'electrical_conductivity = "50 mS/cm"\nsolids = "0 %"\nbubbles = "0 %"\n',
+        'size = "DN 400"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("500 m3/h", "900 m3/h", "1200 m3/h"),
+        'pressure = "3 bar(g)"\ntemperature = "12 degC"\n',
+    ),
+    "caustic": (
+        'kind = "solution"\nsolute = "sodium hydroxide"\nmass_fraction = "20 %"\n'
+        'phase = "liquid"\nelectrical_conductivity = "300 mS/cm"\nph = 14\n'
+        'solids = "0 %"\nbubbles = "0 %"\nhazards = ["corrosive"]\n',
+        'size = "DN 50"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("4 m3/h", "8 m3/h", "12 m3/h"),
+        'pressure = "5 bar(g)"\ntemperature = "30 degC"\n',
+    ),
+    "digestate": (
+        'kind = "slurry"\nsubstance = "water"\nphase = "liquid"\nsolids = "5 %"\n'
+        'solids_density = "1300 kg/m3"\nelectrical_conductivity = "9 mS/cm"\n',
+        'size = "DN 150"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("30 m3/h", "60 m3/h", "90 m3/h"),
+        'pressure = "3 bar(g)"\ntemperature = "39 degC"\nviscosity = "60 mPa s"\n',
+    ),
+    "biogas": (
+        'kind = "mixture"\nphase = "gas"\n'
+        "mixture = { methane = 0.58, carbon_dioxide = 0.38, water = 0.04 }\n",
+        'size = "DN 150"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("80 m3/h", "250 m3/h", "350 m3/h"),
+        'pressure = "40 mbar(g)"\ntemperature = "38 degC"\n',
+    ),
+    "natural gas": (
+        'kind = "mixture"\nphase = "gas"\n'
+        "mixture = { methane = 0.93, ethane = 0.04, nitrogen = 0.02, carbon_dioxide = 0.01 }\n",
+        'size = "DN 200"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("200 m3/h", "900 m3/h", "1400 m3/h"),
+        'pressure = "45 bar(g)"\ntemperature = "10 degC"\n',
+    ),
+    "oxygen": (
+        'kind = "substance"\nsubstance = "oxygen"\nphase = "gas"\n',
+        'size = "DN 80"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("50 m3/h", "120 m3/h", "200 m3/h"),
+        'pressure = "15 bar(g)"\ntemperature = "20 degC"\n',
+    ),
+    "insulating oil": (
+        'kind = "petroleum"\nphase = "liquid"\nproduct = "lubricating oil"\n'
+        'solids = "0 %"\nbubbles = "0 %"\n',
+        'size = "DN 80"\nupstream_length = "20 D"\ndownstream_length = "5 D"\n',
+        ("10 m3/h", "20 m3/h", "40 m3/h"),
+        'pressure = "4 bar(g)"\ntemperature = "40 degC"\n'
+        'density = "870 kg/m3"\nviscosity = "10 mPa s"\nvapour_pressure = "0.1 kPa(a)"\n',
+    ),
     "brook": (
         _WATER + 'solids = "0.05 %"\n',
         "",

@@ -3,10 +3,15 @@
 from __future__ import annotations
 
 from specsheet.findings import Finding, Level
+from specsheet.fluid import solutes
+from specsheet.line.service import substance_key
 from specsheet.meters.family import Limit, Request
 from specsheet.sources import PRACTICE
+from specsheet.tag import Tag
 
 _FIELD = "fluid.electrical_conductivity"
+#: hotter water is condensate or boiler water as a rule, hence treated [K]; common practice
+_TREATED = 363.15
 
 
 def conductivity_findings(request: Request) -> tuple[Finding, ...]:
@@ -23,7 +28,8 @@ def conductivity_findings(request: Request) -> tuple[Finding, ...]:
                 source=PRACTICE,
             ),
         )
-    return () if tag.si(_FIELD) is not None else (_unknown(request),)
+    unknown = _unknown(request) if tag.si(_FIELD) is None else None
+    return () if unknown is None else (unknown,)
 
 
 def conductivity_limits(request: Request) -> tuple[Limit, ...]:
@@ -56,14 +62,35 @@ def conductivity_limits(request: Request) -> tuple[Limit, ...]:
     )
 
 
-def _unknown(request: Request) -> Finding:
-    """Return the finding on a conductivity that is not stated."""
-    if request.tag.text("fluid.kind") == "petroleum":
+def _unknown(request: Request) -> Finding | None:
+    """Return the finding on a conductivity that is not stated, as the kind of liquid has it."""
+    tag = request.tag
+    kind = tag.text("fluid.kind")
+    if kind == "petroleum":
+        return _does_not_conduct(
+            "hydrocarbon-does-not-conduct", "Petroleum liquids do not conduct and induce no voltage"
+        )
+    parts = _substances(tag)
+    if kind in ("substance", "mixture") and parts and "water" not in parts:
+        return _does_not_conduct(
+            "liquid-does-not-conduct",
+            "Pure liquids other than water and their mixtures (hydrocarbons, alcohols, glycols, "
+            "refrigerants, liquefied gases) do not conduct, or hardly, and induce no voltage",
+        )
+    if kind == "seawater":
+        return None
+    if kind == "solution":
+        solute = solutes.find(tag.text("fluid.solute"))
+        if solute is not None and solute.ions > 1:
+            return None
+    hot = float(request.stream.temperature.max()) > _TREATED
+    if parts == {"water"} and not hot:
         return Finding(
-            Level.STOP,
-            "hydrocarbon-does-not-conduct",
+            Level.NOTE,
+            "conductivity-assumed",
             _FIELD,
-            "Petroleum liquids do not conduct and induce no voltage; choose another family.",
+            "The water is taken to be drinking, cooling or waste water, which conducts enough; "
+            "state the conductivity if it is demineralised water or condensate.",
             source=PRACTICE,
         )
     least = request.profile.typical["least_conductivity"].value
@@ -75,3 +102,18 @@ def _unknown(request: Request) -> Finding:
         "Demineralised water, condensate and most organic liquids conduct less.",
         source=PRACTICE,
     )
+
+
+def _substances(tag: Tag) -> set[str]:
+    """Return the keys of the substances of a liquid, as far as they are stated."""
+    if tag.text("fluid.kind") == "mixture":
+        return {substance_key(name) for name in tag.table("fluid.mixture")}
+    return {substance_key(name)} if (name := tag.text("fluid.substance")) else set()
+
+
+def _does_not_conduct(code: str, words: str) -> Finding:
+    message = (
+        f"{words}; choose another family, for example ultrasonic or Coriolis. If a measurement "
+        "says otherwise, state the conductivity."
+    )
+    return Finding(Level.STOP, code, _FIELD, message, source=PRACTICE)
