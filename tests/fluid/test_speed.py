@@ -56,9 +56,9 @@ def forget() -> None:
 
 
 def best(action: Callable[[], object]) -> float:
-    """Return the shortest of seven runs [s]."""
+    """Return the shortest of thirty runs [s]: others share the machine."""
     times = []
-    for _ in range(7):
+    for _ in range(30):
         forget()
         start = time.perf_counter()
         action()
