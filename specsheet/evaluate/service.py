@@ -74,11 +74,44 @@ def judge_service(prepared: Prepared, profile: Profile) -> Service:
             unknown.append(in_sentence(limit.quantity))
             findings.extend(_not_stated(prepared.tag, limit))
             continue
-        check = _checked(limit, value)
+        check = _checked(limit, value, _driver(prepared, limit))
         checks.append(check)
         if not check.holds:
             findings.append(_broken(prepared.tag, check))
+    findings.extend(_design_temperature(prepared.tag, profile))
     return Service(tuple(checks), tuple(findings), tuple(dict.fromkeys(unknown)))
+
+
+def _design_temperature(tag: Tag, profile: Profile) -> Iterator[Finding]:
+    """Say where the design reaches beyond the usual temperatures of the family."""
+    for limit in profile.limits:
+        if limit.quantity != "temperature" or limit.phase not in ("", tag.phase):
+            continue
+        for entry, bound, sign in (
+            ("design.temperature", limit.high, 1.0),
+            ("design.minimum_temperature", limit.low, -1.0),
+        ):
+            stated = tag.si(entry)
+            if stated is None or bound is None or sign * (stated - bound) <= 0.0:
+                continue
+            said = facts("temperature", stated, (limit.low, limit.high), tag.table("job.units"))
+            yield Finding(
+                Level.CAUTION,
+                "design-temperature-limit",
+                entry,
+                _capital(f"design {said}: {limit.message}."),
+                source=limit.source,
+                reserve=Reserve("temperature", bound, (bound - stated) / stated),
+            )
+
+
+def _driver(prepared: Prepared, limit: ProfileLimit) -> tuple[str, float] | None:
+    """Return what moves a margin to saturation, and its value: the temperature of the point."""
+    if limit.quantity != "saturation_margin":
+        return None
+    states = [state for state in prepared.fluid.points if state is not None]
+    known = [(margin, s.temperature) for s in states if (margin := _saturation(s)) is not None]
+    return ("temperature", min(known)[1])
 
 
 def judge_habits(prepared: Prepared, profile: Profile) -> tuple[Finding, ...]:
@@ -165,13 +198,16 @@ def _not_stated(tag: Tag, limit: ProfileLimit) -> Iterator[Finding]:
     )
 
 
-def _checked(limit: ProfileLimit, value: float) -> Check:
+def _checked(limit: ProfileLimit, value: float, driver: tuple[str, float] | None) -> Check:
     low, high = limit.low, limit.high
     broken = low is not None and value < low
     holds = not broken and (high is None or value <= high)
     bound = low if broken or high is None else high
     reserve = None
-    if value and bound is not None:
+    if driver is not None and bound is not None:
+        key, present = driver
+        reserve = Reserve(key, present + bound - value, (bound - value) / present)
+    elif value and bound is not None:
         reserve = Reserve(limit.quantity, bound, (bound - value) / value)
     level, message, source = Level(limit.level), limit.message, limit.source
     return Check(limit.quantity, "", value, low, high, holds, level, message, source, reserve)

@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
-from specsheet.findings import Finding
+from dataclasses import replace
+
+from specsheet.findings import Finding, Reserve
 from specsheet.fluid.model import bar, caution, celsius, note, stop
 from specsheet.fluid.state import State
 from specsheet.sources import PRACTICE
@@ -58,12 +60,13 @@ def _flashing(state: State) -> Finding:
     where = f"at {celsius(state.temperature)} and {bar(state.pressure)}"
     vapour = state.value("vapour_pressure")
     if vapour is not None and state.pressure <= vapour:
-        return stop(
+        boils = stop(
             "flashing",
             "pressure",
             f"Liquid is stated, but {where} the fluid boils: its vapour pressure is {bar(vapour)}. "
             "Raise the pressure above it, lower the temperature, or state gas.",
         )
+        return replace(boils, reserve=_to(vapour, state))
     amount = "is partly gas" if state.phase == TWO_PHASE else "is a gas"
     return stop(
         "phase-disagrees",
@@ -79,7 +82,7 @@ def _near_boiling(state: State) -> Finding | None:
     if vapour is None or state.pressure > NEAR * vapour:
         return None
     spare = max(state.pressure - vapour, 0.0)
-    return caution(
+    near = caution(
         "near-boiling",
         "pressure",
         f"The pressure is only {spare / 1e5:.3g} bar above the vapour pressure {bar(vapour)}: the "
@@ -87,6 +90,12 @@ def _near_boiling(state: State) -> Finding | None:
         "higher or the liquid colder.",
         PRACTICE,
     )
+    return replace(near, reserve=_to(vapour, state))
+
+
+def _to(vapour: float, state: State) -> Reserve:
+    """Return the change of pressure that brings a state to its vapour pressure."""
+    return Reserve("pressure", vapour, vapour / state.pressure - 1.0)
 
 
 def _condensing(state: State) -> Finding:

@@ -10,7 +10,7 @@ from specsheet.fluid.state import FluidResult
 from specsheet.line.cautions import cautions
 from specsheet.line.compatibility import materials
 from specsheet.line.pipe import Pipe
-from specsheet.line.rating import rate
+from specsheet.line.rating import Margin, rate
 from specsheet.line.straight import straight
 from specsheet.packs import Profile
 from specsheet.tag import Tag
@@ -26,12 +26,14 @@ class LineResult:
         findings: what does not hold or must be decided.
         additional_uncertainty: of the flow, by reduced straight lengths, to be added
             arithmetically to the expanded uncertainty [-].
+        margin: how near the hardest demand comes to what the flange rating allows.
     """
 
     values: Mapping[str, Given]
     notes: Mapping[str, tuple[str, ...]]
     findings: tuple[Finding, ...]
     additional_uncertainty: float = 0.0
+    margin: Margin | None = None
 
 
 def assess(
@@ -60,7 +62,7 @@ def assess(
     notes = {"Flange rating": rating.notes, "Materials": wetted.notes, "Cautions": warned.notes}
     findings = (*rating.findings, *wetted.findings, *warned.findings)
     if profile is None or pipe is None:
-        return LineResult(values, notes, findings)
+        return LineResult(values, notes, findings, margin=rating.margin)
     runs = straight(
         tag,
         profile,
@@ -73,4 +75,5 @@ def assess(
         {"Straight lengths": runs.notes, **notes},
         (*runs.findings, *findings),
         runs.additional_uncertainty,
+        rating.margin,
     )

@@ -123,10 +123,7 @@ def allowed(rating: Rating, material: Material | None, temperature: float) -> Al
         floor = lowest_temperature(rating.system) - _CELSIUS
         reason = f"the ratings hold from {floor:.0f} degC up"
         return Allowed(None, standard(rating.system), reason)
-    if rating.system == CLASS:
-        curve = _class_curve(material.group, int(rating.number))
-    else:
-        curve = _pn_curve(material.kind, rating.number)
+    curve = _curve_of(rating, material)
     if curve is None:
         group = f"group {material.group}" if material.group else "no group of the standard"
         name = f"{rating} in {material.name} ({group})"
@@ -146,6 +143,30 @@ def _on_curve(curve: _Curve, temperature: float) -> Allowed:
     whose = "the standard" if curve.complete else "the table here"
     reason = f"{whose} ends at {last:.0f} degC for this material"
     return Allowed(None, curve.source, reason, forbidden=curve.complete)
+
+
+def hottest(rating: Rating, material: Material | None, pressure: float) -> float | None:
+    """Return the temperature up to which a rating allows a gauge pressure [K].
+
+    Solved along the rating's table; None where the rating never allows it or is not known. Where
+    the table ends before, its last temperature: beyond it nothing is said.
+    """
+    curve = _curve_of(rating, material)
+    if curve is None or curve.pressures[0] < pressure:
+        return None
+    points = zip(curve.temperatures, curve.pressures, strict=True)
+    for (low, first), (high, second) in pairwise(points):
+        if second < pressure:
+            return low + (high - low) * (first - pressure) / (first - second)
+    return curve.temperatures[-1]
+
+
+def _curve_of(rating: Rating, material: Material | None) -> _Curve | None:
+    if material is None:
+        return None
+    if rating.system == CLASS:
+        return _class_curve(material.group, int(rating.number))
+    return _pn_curve(material.kind, rating.number)
 
 
 @cache

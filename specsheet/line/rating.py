@@ -15,6 +15,7 @@ from specsheet.line.flange import (
     Rating,
     allowed,
     classes,
+    hottest,
     lowest_temperature,
     parse_rating,
     pressure_numbers,
@@ -37,6 +38,26 @@ _NEAR_GRAPHITE = 673.15
 
 
 @dataclass(frozen=True, slots=True)
+class Margin:
+    """How near a demand comes to what the rating allows.
+
+    Attributes:
+        rating: the rating in words.
+        demand: pressure and temperature that must be borne together.
+        pressure: gauge pressure allowed at that temperature [Pa]
+        temperature: temperature up to which that pressure is allowed [K]; None where the rating
+            allows it at none.
+        source: citation of the table.
+    """
+
+    rating: str
+    demand: Demand
+    pressure: float
+    temperature: float | None
+    source: str
+
+
+@dataclass(frozen=True, slots=True)
 class RatingResult:
     """The flange rating of a tag.
 
@@ -44,11 +65,13 @@ class RatingResult:
         values: flange_rating, and allowable_pressure (gauge) at the design temperature.
         notes: what the rating rests on and what it does not cover.
         findings: what does not hold or must be decided.
+        margin: of the demand that comes nearest to what is allowed; None where nothing is known.
     """
 
     values: Mapping[str, Given]
     notes: tuple[str, ...]
     findings: tuple[Finding, ...] = ()
+    margin: Margin | None = None
 
 
 def rate(tag: Tag, fluid: FluidResult | None = None, *, nominal: int = 0) -> RatingResult:
@@ -84,7 +107,22 @@ def rate(tag: Tag, fluid: FluidResult | None = None, *, nominal: int = 0) -> Rat
     findings.extend(_cold(tag, chosen, material, demands))
     findings.extend(_test(tag, chosen, material, demands))
     notes = (*_general_notes(tag, material_text, material, demands), *_test_notes(chosen, material))
-    return RatingResult(values, notes, tuple(dict.fromkeys(findings)))
+    nearest = _margin(chosen, material, demands)
+    return RatingResult(values, notes, tuple(dict.fromkeys(findings)), nearest)
+
+
+def _margin(rating: Rating, material: Material | None, demands: Demands) -> Margin | None:
+    """Return the margin of the demand that uses most of what is allowed."""
+    known = [
+        (demand, found.pressure, found.source)
+        for demand in demands.every
+        if (found := allowed(rating, material, demand.temperature)).pressure
+    ]
+    if not known:
+        return None
+    demand, pressure, source = max(known, key=lambda item: item[0].pressure / item[1])
+    flips = hottest(rating, material, demand.pressure)
+    return Margin(str(rating), demand, pressure, flips, source)
 
 
 def _material(tag: Tag) -> tuple[Material | None, str]:
@@ -258,8 +296,8 @@ def _general_notes(
     tag: Tag, material_text: str, material: Material | None, demands: Demands
 ) -> tuple[str, ...]:
     notes = [f"The rating is that of flanges of {material_text}."]
-    hottest = max((demand.temperature for demand in demands.every), default=0.0)
-    if material is not None and material.group == "1.1" and hottest > _NEAR_GRAPHITE:
+    warmest = max((demand.temperature for demand in demands.every), default=0.0)
+    if material is not None and material.group == "1.1" and warmest > _NEAR_GRAPHITE:
         notes.append(
             "Carbon steel turns to graphite in long service above 425 °C (ASME B16.5, note 1 to "
             "table 2-1.1)."
