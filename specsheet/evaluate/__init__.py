@@ -12,10 +12,14 @@
 * :mod:`specsheet.evaluate.summary`  turndown and cost
 * :mod:`specsheet.evaluate.shortlist` every family held against one tag
 * :mod:`specsheet.evaluate.whatif`   the verdict against one figure
+* :mod:`specsheet.evaluate.measured` the flow from a measured signal
+* :mod:`specsheet.evaluate.signals`  which signal a measured figure is
+* :mod:`specsheet.evaluate.settled`  the same with patience for an undecided phase
 * :mod:`specsheet.evaluate.assemble` arrays to results with origin and source
 """
 
 from specsheet.evaluate.pipeline import evaluate
 from specsheet.evaluate.result import Evaluation
+from specsheet.evaluate.settled import evaluate_settled, unsettled
 
-__all__ = ["Evaluation", "evaluate"]
+__all__ = ["Evaluation", "evaluate", "evaluate_settled", "unsettled"]

@@ -6,12 +6,14 @@ import asyncio
 import contextlib
 import sys
 from collections.abc import Callable
+from dataclasses import replace
 from typing import Protocol
 
 from specsheet.tui.protocol import (
     HEADER,
     Answer,
     Derive,
+    Derived,
     Failed,
     Print,
     Request,
@@ -95,6 +97,17 @@ class WorkerEvaluator:
             stale = isinstance(request, Derive) and request.number != self._newest
             if not stale:
                 self._listener(answer)
+                self._settle(request, answer)
+
+    def _settle(self, request: Request, answer: Answer) -> None:
+        """Ask again where the answer left a phase open and nothing newer waits."""
+        if (
+            isinstance(request, Derive)
+            and isinstance(answer, Derived)
+            and answer.unsettled
+            and not self._waiting
+        ):
+            self._ask(replace(request, settle=True))
 
     async def _answer(self, request: Request) -> Answer:
         for _ in range(ATTEMPTS):

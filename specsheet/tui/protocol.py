@@ -19,11 +19,15 @@ HEADER = struct.Struct(">I")
 
 @dataclass(frozen=True, slots=True)
 class Derive:
-    """Ask for the sheet of a tag file's text; ``path`` tells where its job stands."""
+    """Ask for the sheet of a tag file's text; ``path`` tells where its job stands.
+
+    ``settle`` grants the time to decide a phase that a first answer left open.
+    """
 
     number: int
     text: str
     path: str
+    settle: bool = False
 
 
 @dataclass(frozen=True, slots=True)
@@ -52,11 +56,13 @@ class Derived:
         number: number of the request.
         sheet: the finished sheet; None where nothing could be read.
         troubles: entries that could not be used.
+        unsettled: whether asking again with ``settle`` may tell more.
     """
 
     number: int
     sheet: Sheet | None
     troubles: tuple[Trouble, ...] = ()
+    unsettled: bool = False
 
 
 @dataclass(frozen=True, slots=True)

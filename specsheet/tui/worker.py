@@ -19,12 +19,14 @@ from specsheet.tui.protocol import receive as receive_from
 def answer(request: Any) -> Answer:
     """Answer one request; a mistake of ours becomes a message and never ends the worker."""
     try:
-        return _sheet(request) if isinstance(request, Derive) else _print(request)
+        if isinstance(request, Derive):
+            return _sheet(request, settle=request.settle)
+        return _print(request)
     except Exception as error:
         return Failed(request.number, f"{type(error).__name__}: {error}")
 
 
-def _sheet(request: Derive | Print) -> Derived:
+def _sheet(request: Derive | Print, *, settle: bool) -> Derived:
     from specsheet import evaluate, sheet, tagfile
 
     job = tagfile.find_job(request.path)
@@ -33,13 +35,16 @@ def _sheet(request: Derive | Print) -> Derived:
     troubles = tuple(Trouble(problem.field, problem.message) for problem in problems)
     if reading.tag is None:
         return Derived(request.number, None, troubles)
-    return Derived(request.number, sheet.build(evaluate.evaluate(reading.tag)), troubles)
+    run = evaluate.evaluate_settled if settle else evaluate.evaluate
+    evaluation = run(reading.tag)
+    unsettled = not settle and evaluate.unsettled(evaluation)
+    return Derived(request.number, sheet.build(evaluation), troubles, unsettled)
 
 
 def _print(request: Print) -> Answer:
     from specsheet.render import pdf
 
-    derived = _sheet(request)
+    derived = _sheet(request, settle=True)
     if derived.sheet is None:
         reasons = "; ".join(f"{item.field}: {item.message}" for item in derived.troubles)
         return Failed(request.number, f"nothing to print: {reasons}")

@@ -214,3 +214,31 @@ def test_closing_ends_the_process() -> None:
             os.kill(int(told(found)[1]), 0)
 
     run(main)
+
+
+#: a worker that leaves every phase open at first, and says with what patience it was asked
+_OPEN = """
+import os, sys
+from specsheet.tui.protocol import Derived, Trouble, frame, receive
+out = os.fdopen(os.dup(1), "wb")
+while (request := receive(sys.stdin.buffer)) is not None:
+    asked = (Trouble(request.text, str(request.settle)),)
+    out.write(frame(Derived(request.number, None, asked, unsettled=not request.settle)))
+    out.flush()
+"""
+
+
+def test_an_open_phase_is_asked_for_again_with_patience() -> None:
+    answers: list[Answer] = []
+
+    async def scene() -> None:
+        evaluator = WorkerEvaluator((sys.executable, "-c", _OPEN))
+        evaluator.listen(answers.append)
+        evaluator.derive("text", "")
+        while len(answers) < 2:
+            await asyncio.sleep(0.01)
+        await evaluator.close()
+
+    run(scene)
+    patience = [item.troubles[0].message for item in answers if isinstance(item, Derived)]
+    assert patience == ["False", "True"]

@@ -8,7 +8,7 @@ from collections import Counter
 from specsheet.cli.inputs import read_all, supposed
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status, verdict
-from specsheet.evaluate import evaluate
+from specsheet.evaluate import evaluate_settled
 from specsheet.findings import Finding, Level
 
 
@@ -24,7 +24,7 @@ def run(arguments: Namespace) -> Status:
         refused = any(reading.tag is None for reading in readings)
     tags = [reading.tag for reading in readings if reading.tag is not None]
     for tag in tags:
-        for finding in evaluate(tag).findings:
+        for finding in evaluate_settled(tag).findings:
             counts[finding.level] += 1
             if arguments.all or finding.level is not Level.NOTE:
                 data(_line(tag.path, finding))

@@ -15,7 +15,7 @@ from specsheet import packs, sheet, tagfile, tui
 from specsheet.cli.inputs import read_all
 from specsheet.cli.narrate import say
 from specsheet.cli.status import Status
-from specsheet.evaluate import Evaluation, evaluate
+from specsheet.evaluate import Evaluation, evaluate_settled
 from specsheet.findings import Level
 from specsheet.render import pdf
 from specsheet.tui import terminal
@@ -62,7 +62,7 @@ def _print_all(folder: Path, output: Path) -> list[Evaluation]:
     with Progress(*columns, console=Console(stderr=True)) as progress:
         for reading in progress.track(readings, description="printing"):
             if reading.tag is not None:
-                evaluation = evaluate(reading.tag)
+                evaluation = evaluate_settled(reading.tag)
                 pdf.write(sheet.build(evaluation), output / pdf.file_name(reading.tag.name))
                 done.append(evaluation)
     return done

@@ -9,7 +9,7 @@ from specsheet import sheet
 from specsheet.cli.inputs import read_all
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status, verdict
-from specsheet.evaluate import evaluate
+from specsheet.evaluate import evaluate_settled
 from specsheet.findings import Level
 from specsheet.render import pdf
 
@@ -29,7 +29,7 @@ def run(arguments: Namespace) -> Status:
             say(f"{reading.tag.path}:1: tag: {target} is the sheet of {first}; not printed")
             unusable = True
             continue
-        evaluation = evaluate(reading.tag)
+        evaluation = evaluate_settled(reading.tag)
         levels.update(item.level for item in evaluation.findings)
         try:
             pdf.write(sheet.build(evaluation), target, paper=arguments.paper)
