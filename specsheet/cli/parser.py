@@ -109,11 +109,22 @@ def _new(commands: Commands[ArgumentParser]) -> None:
 
 
 def _derive(commands: Commands[ArgumentParser]) -> None:
-    more = "The JSON holds SI numbers under the standard terms, each with its origin and source."
+    more = (
+        "The JSON holds SI numbers under the standard terms, each with its origin and source.\n\n"
+        "With --signal the flow is found that gives a measured signal, at the conditions of\n"
+        "every operating point. A current or a percentage is read as the output is specified:\n"
+        "linear in flow unless the tag says otherwise. State other conditions in the file, or\n"
+        "suppose them: --set points.normal.pressure='6.4 bar(g)'."
+    )
     derive = _command(
         commands, "derive", "derive everything and write the sheet as text or JSON", more
     )
     derive.add_argument("file", help="tag file")
+    derive.add_argument(
+        "--signal",
+        metavar="VALUE",
+        help="write the flow that gives this signal instead, as '125 mbar', '12.4 mA' or '52 %%'",
+    )
     derive.add_argument("--json", action="store_true", help="JSON with SI numbers")
     derive.add_argument("--strict", action="store_true", help=_STRICT_HELP)
     _add_set(derive)

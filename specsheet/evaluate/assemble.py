@@ -37,11 +37,21 @@ def point_results(
         row.update(_flows(tag, fluid, point, points.mass_flows[index], fluid.points[index]))
         if index in points.indices:
             lane = points.indices.index(index)
-            for key, array in values.items():
-                if key not in row and not np.isnan(array[lane]):
-                    row[key] = _derived(float(array[lane]), derivations.get(key))
+            for key, result in derived_at(values, lane, derivations).items():
+                row.setdefault(key, result)
         results.append(PointResult(point.name, row))
     return tuple(results)
+
+
+def derived_at(
+    values: Mapping[str, Array], lane: int, derivations: Mapping[str, Derivation]
+) -> dict[str, Result]:
+    """Return what is known at one lane of a response, by glossary key."""
+    return {
+        key: _derived(float(array[lane]), derivations.get(key))
+        for key, array in values.items()
+        if not np.isnan(array[lane])
+    }
 
 
 def _derived(value: float, derivation: Derivation | None) -> Result:
@@ -91,11 +101,17 @@ def _flows(
     tag: Tag, fluid: FluidResult, point: Point, mass: float | None, state: State | None
 ) -> dict[str, Result]:
     """Return the flow of one point in every kind that can be had, the stated one as typed."""
-    row: dict[str, Result] = {}
     stated = point.quantity("flow")
     if stated is None or mass is None:
-        return row
-    row["mass_flow"] = Result(mass, Origin.DERIVED)
+        return {}
+    row = flows_of(tag, fluid, mass, state)
+    row[_FLOW_KEYS[stated.kind]] = _as_stated(tag, stated)
+    return row
+
+
+def flows_of(tag: Tag, fluid: FluidResult, mass: float, state: State | None) -> dict[str, Result]:
+    """Return a mass flow [kg/s] in every kind of flow that can be had, by glossary key."""
+    row = {"mass_flow": Result(mass, Origin.DERIVED)}
     density = None if state is None else state.value("density")
     if density:
         row["volume_flow"] = Result(mass / density, Origin.DERIVED)
@@ -111,7 +127,6 @@ def _flows(
             Origin.DERIVED,
             method=f"{tag.text('fluid.energy_basis')} calorific value",
         )
-    row[_FLOW_KEYS[stated.kind]] = _as_stated(tag, stated)
     return row
 
 

@@ -14,15 +14,17 @@ from specsheet.evaluate.by_limits import family_by_limits
 from specsheet.evaluate.checks import check_limits
 from specsheet.evaluate.common import COMMON_DERIVATIONS
 from specsheet.evaluate.limits import limits_of
-from specsheet.evaluate.model import model_of
+from specsheet.evaluate.model import Model, model_of
 from specsheet.evaluate.prepare import NO_PIPE, Prepared, prepare
 from specsheet.evaluate.prepare import request as requested
 from specsheet.evaluate.reserve import scaled
 from specsheet.evaluate.result import Evaluation, Result, Sweep
 from specsheet.evaluate.service import judge_habits, judge_service
+from specsheet.evaluate.state import phase_checks, rating_checks
 from specsheet.evaluate.stream import joined
 from specsheet.findings import Finding, Level
 from specsheet.fluid.state import FluidResult
+from specsheet.line import LineResult
 from specsheet.meters import registry
 from specsheet.meters.family import Element, Family, Given, Request, Stream
 from specsheet.packs import Profile
@@ -89,15 +91,7 @@ def _with_meter(
     """Return the evaluation with the meter in the line; adds to ``findings``."""
     tag, state, points = request.tag, prepared.fluid, prepared.points
     element = family.size(request)
-    beside = line.assess(
-        tag,
-        request.profile,
-        None if request.pipe is NO_PIPE else request.pipe,
-        state,
-        beta=_number(element, "diameter_ratio"),
-        meter_diameter=_number(element, "meter_bore"),
-    )
-    model = model_of(request, family, element, beside.additional_uncertainty)
+    beside, model = put_into_line(prepared, request, family, element)
     stream, count = request.stream, len(request.names)
     swept = _swept(request, element)
     grid = scaled(stream)
@@ -123,7 +117,7 @@ def _with_meter(
         line={**evaluation.line, **_printed(beside.values)},
         notes={**element.notes, **beside.notes},
         summary=totals,
-        checks=checked.checks,
+        checks=(*checked.checks, *phase_checks(prepared), *rating_checks(beside.margin)),
         bands=checked.bands,
         budget=assemble.budget_lines(response.contributions, count),
         sweep=Sweep(swept.mass_flow, in_sweep, in_sweep.get("uncertainty", np.empty(0))),
@@ -131,18 +125,38 @@ def _with_meter(
     )
 
 
+def put_into_line(
+    prepared: Prepared, request: Request, family: Family, element: Element
+) -> tuple[LineResult, Model]:
+    """Return what the line says with this meter in it, and the meter as a function."""
+    beside = line.assess(
+        request.tag,
+        request.profile,
+        None if request.pipe is NO_PIPE else request.pipe,
+        prepared.fluid,
+        beta=_number(element, "diameter_ratio"),
+        meter_diameter=_number(element, "meter_bore"),
+        service=prepared.facts,
+    )
+    return beside, model_of(request, family, element, beside.additional_uncertainty)
+
+
 def _without_meter(
     evaluation: Evaluation, prepared: Prepared, findings: list[Finding]
 ) -> Evaluation:
     """Return the evaluation with what the line alone can say; adds to ``findings``."""
     tag = evaluation.tag
-    beside = line.assess(tag, evaluation.profile, prepared.pipe.pipe, prepared.fluid)
+    pipe = prepared.pipe.pipe
+    beside = line.assess(
+        tag, evaluation.profile, pipe, prepared.fluid, service=prepared.facts
+    )
     findings.extend(beside.findings)
     return replace(
         evaluation,
         points=assemble.point_results(tag, prepared.fluid, prepared.points, {}, {}),
         line={**evaluation.line, **_printed(beside.values)},
         notes=beside.notes,
+        checks=(*phase_checks(prepared), *rating_checks(beside.margin)),
     )
 
 

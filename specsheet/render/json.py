@@ -33,18 +33,19 @@ def document(evaluation: Evaluation) -> dict[str, Any]:
         "tag": evaluation.tag.name,
         "family": evaluation.tag.family,
         "points": [
-            {"name": point.name, "values": _values(point.values)} for point in evaluation.points
+            {"name": point.name, "values": values_data(point.values)} for point in evaluation.points
         ],
-        "element": _values(evaluation.element),
-        "base": _values(evaluation.base),
-        "fluid": _values(evaluation.fluid),
-        "line": _values(evaluation.line),
-        "summary": _values(evaluation.summary),
+        "element": values_data(evaluation.element),
+        "base": values_data(evaluation.base),
+        "fluid": values_data(evaluation.fluid),
+        "line": values_data(evaluation.line),
+        "summary": values_data(evaluation.summary),
         "findings": [finding_data(finding) for finding in evaluation.findings],
     }
 
 
-def _values(values: Mapping[str, Result]) -> dict[str, Any]:
+def values_data(values: Mapping[str, Result]) -> dict[str, Any]:
+    """Return values by glossary key, in the order of the glossary; without those that are none."""
     made = {key: value_data(key, values[key]) for key in ordered(values)}
     return {key: value for key, value in made.items() if value is not None}
 

@@ -236,3 +236,31 @@ def test_schema_is_json() -> None:
 def test_output_is_utf8_in_any_locale(job: Path, monkeypatch: pytest.MonkeyPatch) -> None:
     monkeypatch.setenv("PYTHONIOENCODING", "latin-1")
     assert "Δp" in run("derive", job / "tags" / "FT-2104.toml").stdout
+
+
+def test_derive_finds_the_flow_from_a_signal(job: Path) -> None:
+    told = run("derive", job / "tags" / "FT-2104.toml", "--signal", "125 mbar")
+    assert told.returncode == 0, told.stderr
+    assert told.stdout.startswith("FT-2104  flow from 125 mbar (differential pressure)\n")
+    assert max(map(len, told.stdout.splitlines())) <= 80
+    as_json = run("derive", job / "tags" / "FT-2104.toml", "--signal", "125 mbar", "--json")
+    document = json.loads(as_json.stdout)
+    assert document["signal"] == {
+        "text": "125 mbar",
+        "key": "differential_pressure",
+        "value": pytest.approx(12500.0),
+    }
+    assert [point["name"] for point in document["points"]] == ["minimum", "normal", "maximum"]
+    flow = document["points"][1]["values"]["mass_flow"]
+    assert flow["unit"] == "kg/s"
+    shown = re.search(r"^Mass flow +kg/h +\d+ +(\d+)", told.stdout, re.MULTILINE)
+    assert shown
+    assert float(shown[1]) == pytest.approx(flow["value"] * 3600.0, rel=5e-4)
+
+
+@pytest.mark.parametrize("signal", ["12,4 mA", "9 bar", "5 m3/h"])
+def test_derive_refuses_a_signal_that_cannot_be(job: Path, signal: str) -> None:
+    told = run("derive", job / "tags" / "FT-2104.toml", "--signal", signal)
+    assert told.returncode == 2
+    assert signal in told.stdout + told.stderr
+    assert "Traceback" not in told.stderr
