@@ -9,7 +9,7 @@ from math import log
 import numpy as np
 
 from specsheet.evaluate.model import Model
-from specsheet.evaluate.reserve import FACTORS, NO_FLIPS, Flips, find_flips, margin
+from specsheet.evaluate.reserve import FACTORS, NO_FLIPS, Bounds, Flips, find_flips, margin
 from specsheet.evaluate.result import Band, Check
 from specsheet.evaluate.words import facts
 from specsheet.fields.terms import in_sentence
@@ -59,8 +59,8 @@ def check_limits(
     checks: list[Check] = []
     findings: list[Finding] = []
     bands: list[Band] = []
-    for limit, own in zip(driven, crossings, strict=True):
-        judged = _judge_flow(request, limit, values[limit.key], own)
+    for limit, own, inside in zip(driven, crossings, _margins(driven, values), strict=True):
+        judged = _judge_flow(request, limit, values[limit.key], inside, own)
         checks.append(judged)
         findings.extend(_findings(request, limit, judged, values[limit.key]))
         band = _band(request, limit, own)
@@ -101,11 +101,24 @@ def _by_limit(flips: Flips, count: int) -> list[list[_Crossing]]:
     return found
 
 
+def _margins(limits: Sequence[Limit], values: Mapping[str, Array]) -> list[list[float]]:
+    """Return the margins of every limit at every point."""
+    if not limits:
+        return []
+    found: list[list[float]] = (
+        Bounds.of(limits).margins(np.array([values[limit.key] for limit in limits])).tolist()
+    )
+    return found
+
+
 def _judge_flow(
-    request: Request, limit: Limit, values: Array, crossings: Sequence[_Crossing]
+    request: Request,
+    limit: Limit,
+    values: Array,
+    inside: Sequence[float],
+    crossings: Sequence[_Crossing],
 ) -> Check:
     """Judge a limit that the flow drives, at the point where it is tightest."""
-    inside = margin(limit, values).tolist()
     broken = [index for index, share in enumerate(inside) if share < 0.0]
     nearest: dict[int, _Crossing] = {}
     for crossing in sorted(crossings, key=lambda item: -item.distance):

@@ -11,6 +11,7 @@ from specsheet.line.cautions import cautions
 from specsheet.line.compatibility import materials
 from specsheet.line.pipe import Pipe
 from specsheet.line.rating import Margin, rate
+from specsheet.line.service import Service
 from specsheet.line.straight import straight
 from specsheet.packs import Profile
 from specsheet.tag import Tag
@@ -44,6 +45,7 @@ def assess(
     *,
     beta: float | None = None,
     meter_diameter: float | None = None,
+    service: Service | None = None,
 ) -> LineResult:
     """Judge straight lengths, flange rating, materials and cautions of one tag.
 
@@ -54,10 +56,11 @@ def assess(
         fluid: states at the operating points.
         beta: diameter ratio, where the family has one [-].
         meter_diameter: bore of the meter, where straight lengths count in it [m].
+        service: facts of the service, where the caller has them already.
     """
     rating = rate(tag, fluid, nominal=pipe.nominal if pipe else 0)
-    wetted = materials(tag, profile, fluid)
-    warned = cautions(tag, fluid)
+    wetted = materials(tag, profile, fluid, service=service)
+    warned = cautions(tag, fluid, service=service)
     values: dict[str, Given] = dict(rating.values)
     notes = {"Flange rating": rating.notes, "Materials": wetted.notes, "Cautions": warned.notes}
     findings = (*rating.findings, *wetted.findings, *warned.findings)

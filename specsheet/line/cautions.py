@@ -64,9 +64,17 @@ class CautionResult:
     findings: tuple[Finding, ...] = ()
 
 
-def cautions(tag: Tag, fluid: FluidResult | None = None) -> CautionResult:
-    """Return the cautions that the service of a tag calls for, and what contradicts them."""
-    service = service_facts(tag, fluid)
+def cautions(
+    tag: Tag, fluid: FluidResult | None = None, *, service: Service | None = None
+) -> CautionResult:
+    """Return the cautions that the service of a tag calls for, and what contradicts them.
+
+    Args:
+        tag: the tag.
+        fluid: states at the operating points.
+        service: facts of the service, where the caller has them already.
+    """
+    service = service_facts(tag, fluid) if service is None else service
     known = dangers(service)
     asked = {
         name

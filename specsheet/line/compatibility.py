@@ -48,7 +48,11 @@ class _Part:
 
 
 def materials(
-    tag: Tag, profile: Profile | None, fluid: FluidResult | None = None
+    tag: Tag,
+    profile: Profile | None,
+    fluid: FluidResult | None = None,
+    *,
+    service: Service | None = None,
 ) -> MaterialResult:
     """Return the notes on the materials that the fluid touches.
 
@@ -56,8 +60,9 @@ def materials(
         tag: the tag; ``require.body_material`` and ``line.material`` count as wetted.
         profile: the family's profile with its wetted parts, or None.
         fluid: states at the operating points, where saturation decides temperature or pressure.
+        service: facts of the service, where the caller has them already.
     """
-    service = service_facts(tag, fluid)
+    service = service_facts(tag, fluid) if service is None else service
     words = service.words | dangers(service)
     lines: dict[str, list[str]] = {verdict: [] for verdict in _ORDER}
     findings: list[Finding] = []
