@@ -12,7 +12,7 @@ from textual.widget import Widget
 
 from specsheet.tui.compat import Field, run_own_binding
 from specsheet.tui.form import Row
-from specsheet.tui.lines import strip_of
+from specsheet.tui.lines import Toned
 
 
 class Committed(Message):
@@ -80,10 +80,9 @@ class TextEditor(Field, Editor):
             self.post_message(Committed(self))
 
 
-class ChoiceEditor(Editor, can_focus=True):
+class ChoiceEditor(Toned, Editor, can_focus=True):
     """A value out of a few: left and right change it, space opens the list."""
 
-    COMPONENT_CLASSES: ClassVar[set[str]] = {"choice--arrow"}
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("right,plus", "cycle(1)", show=False),
         Binding("left,minus", "cycle(-1)", show=False),
@@ -146,6 +145,5 @@ class ChoiceEditor(Editor, can_focus=True):
         width = self.size.width
         if y:
             return Strip.blank(width, self.rich_style)
-        arrow = self.get_component_rich_style("choice--arrow")
-        pieces = [("< ", arrow), (self.value, self.rich_style)]
-        return strip_of(pieces, width - 2, self.rich_style, [(" >", arrow)])
+        value = self.toned((("< ", "dim"), (self.value, "own")), width - 2)
+        return Strip.join([value, self.toned(((" >", "dim"),), 2)])

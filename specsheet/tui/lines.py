@@ -16,15 +16,12 @@ from textual.strip import Strip
 from textual.widget import Widget
 
 from specsheet.tui.glyphs import plain_ascii, printable, wants_ascii
+from specsheet.tui.theme import INK, PLAIN_TONES, TONES
 
 #: a piece of text with the name of its tone
 Piece = tuple[str, str]
 #: one line
 Line = tuple[Piece, ...]
-
-#: component classes shared by all line widgets
-TONES = ("text", "dim", "label", "head", "good", "stop", "caution", "note", "here", "accent")
-_CLASSES = {f"tone--{tone}" for tone in TONES}
 
 _ASCII = wants_ascii()
 
@@ -39,9 +36,8 @@ def strip_of(
     pieces: Sequence[tuple[str, Style]],
     width: int,
     filler: Style,
-    tail: Sequence[tuple[str, Style]] = (),
 ) -> Strip:
-    """Return pieces of text cut or filled to ``width`` cells, then the tail."""
+    """Return pieces of text cut or filled to ``width`` cells."""
     segments: list[Segment] = []
     left = max(0, width)
     for text, style in pieces:
@@ -56,22 +52,19 @@ def strip_of(
         left -= size
     if left:
         segments.append(Segment(" " * left, filler))
-    segments += [Segment(safe(text), style) for text, style in tail]
     return Strip(segments)
 
 
 class Toned(Widget):
     """A widget whose lines are pieces in named tones."""
 
-    COMPONENT_CLASSES: ClassVar[set[str]] = _CLASSES
-
     def toned(self, line: Line, width: int, *, ground: str = "") -> Strip:
         """Return a line drawn in its tones, on the ground of another tone where one is named."""
-        base = self.get_component_rich_style(f"tone--{ground}") if ground else self.rich_style
-        pieces = [
-            (text, base if ground else self.get_component_rich_style(f"tone--{tone}"))
-            for text, tone in line
-        ]
+        tones = TONES if self.app.theme == INK else PLAIN_TONES
+        base = self.rich_style
+        if ground:
+            base += tones[ground]
+        pieces = [(text, base if ground else base + tones[tone]) for text, tone in line]
         return strip_of(pieces, width, base)
 
 
@@ -133,7 +126,6 @@ class Bar(Toned):
 class Lines(ScrollView, Toned, can_focus=True):
     """Lines to read and scroll; with items, a cursor goes over them and Enter chooses one."""
 
-    COMPONENT_CLASSES: ClassVar[set[str]] = _CLASSES
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("up,k", "step(-1)", show=False),
         Binding("down,j", "step(1)", show=False),
