@@ -14,11 +14,13 @@ from specsheet.render.json import SCHEMA, finding_data, reserve_data, si_unit
 
 _WIDTH = 100
 _HEADINGS = (
-    *("family", "basis", "size", "U at min", "loss at max", "energy/year", "straight", "moves"),
+    *("family", "basis", "size", "reserve", "U at min", "loss at max", "energy/year"),
+    *("straight", "moves"),
 )
-_NUMBERS = (3, 4, 5, 6)  # columns set flush right
+_NUMBERS = (3, 4, 5, 6, 7)  # columns set flush right
 _NOTES = (
-    "basis: sized by equations, or judged by the usual limits of the family only. U: expanded "
+    "basis: sized by equations, or judged by the usual limits of the family only. reserve: change "
+    "of the flow that crosses the nearest limit. U: expanded "
     "(k = 2), the usual figure where judged by limits. straight: wanted upstream. Prices are not "
     "known here: the order is by verdict, basis, number of conditions, uncertainty (good enough, "
     "below 2 %, below 5 %, more), moving parts and energy."
@@ -37,6 +39,37 @@ def text(found: Shortlist) -> str:
             lines += [f"{verdict} ({len(chosen)})", *_block(found, verdict, chosen), ""]
     lines += textwrap.wrap(_NOTES, _WIDTH)
     return "\n".join(lines) + "\n"
+
+
+#: verdicts in one word, for a narrow row
+_SHORT = {Verdict.FITS: "fits", Verdict.CONDITIONS: "if", Verdict.UNFIT: "no"}
+_CELLS = (0, 2, 3, 4, 5)  # of a row: family, size, reserve, uncertainty, loss
+
+
+def rows(found: Shortlist) -> tuple[str, ...]:
+    """Return one short line for every candidate, in their order and in columns."""
+    cells = []
+    for item in found.candidates:
+        row = _row(found, item)
+        unfit = item.verdict is Verdict.UNFIT
+        rest = [row[at] for at in _CELLS[1:]] if not unfit else [""] * (len(_CELLS) - 1)
+        cells.append((_SHORT[item.verdict], row[0], *rest))
+    widths = [max(len(row[at]) for row in cells) for at in range(len(cells[0]))]
+    return tuple(
+        "  ".join(f"{c:<{w}}" for c, w in zip(row, widths, strict=True)).rstrip() for row in cells
+    )
+
+
+def details(item: Candidate) -> str:
+    """Return what decides, and what is not known, in sentences."""
+    parts = [reason.message for reason in item.reasons]
+    if item.verdict is not Verdict.UNFIT:
+        parts.append("Moving parts." if item.profile.moving_parts else "No moving parts.")
+        if item.upstream is not None:
+            parts.append(f"Straight length upstream: {item.upstream:.2f} m.")
+    if item.unknown:
+        parts.append(f"Not known: {', '.join(item.unknown)}.")
+    return " ".join(parts)
 
 
 def _block(found: Shortlist, verdict: Verdict, chosen: Sequence[Candidate]) -> list[str]:
@@ -68,6 +101,7 @@ def _row(found: Shortlist, item: Candidate) -> tuple[str, ...]:
         item.profile.key,
         "equations" if item.by_equations else "limits",
         item.size or "line",
+        "" if item.reserve is None else f"{100.0 * item.reserve.fraction:+.0f} %",
         shown("uncertainty", item.uncertainty),
         shown("pressure_loss", item.loss),
         shown("yearly_energy", item.yearly_energy),

@@ -63,6 +63,10 @@ FORM: tuple[Command, ...] = (
     Command("add_item", "f2", "Add an operating point or revision", "", "", "F2"),
     Command("remove_item", "f3", "Remove this operating point", "", "", "F3"),
     Command("next_finding", "f9", "Go to the next finding", "", "", "F9", True),
+    Command(
+        "shortlist", "f11", "Families that fit", "Every family; one can be adopted.", "", "F11"
+    ),
+    Command("what_if", "ctrl+t", "What if this entry held another value", "", "", "Ctrl+T"),
     Command("keys", "f10", "Keys and how the form works", "", "", "F10"),
     Command("back", "ctrl+o", "Back to the list of tags", "", "", "Ctrl+O"),
     Command("quit", "ctrl+q", "Quit", "Asks when something is not saved.", "Quit", "Ctrl+Q"),

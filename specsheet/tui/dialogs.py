@@ -134,7 +134,7 @@ class Ask(ModalScreen[str]):
         self.dismiss(value)
 
 
-class _DialogField(Field):
+class DialogField(Field):
     """The field of a dialog: Enter, Esc and the arrows belong to the dialog."""
 
     BINDINGS: ClassVar[list[BindingType]] = [
@@ -153,7 +153,7 @@ class Prompt(ModalScreen[str]):
     def __init__(self, question: str, text: str = "") -> None:
         super().__init__()
         self._question = question
-        self._field = _DialogField(text)
+        self._field = DialogField(text)
 
     def compose(self) -> ComposeResult:
         """Lay out the question and the field."""
@@ -204,7 +204,7 @@ class Pick(ModalScreen[str]):
         self._find = find
         self._now = now
         self._free = free
-        self._field = _DialogField("", placeholder="type to search")
+        self._field = DialogField("", placeholder="type to search")
         self._lines = Lines(id="dialog-lines")
         self.found: Sequence[Choice] = ()
         self._searched: str | None = None

@@ -12,11 +12,13 @@ from typing import Protocol
 from specsheet.tui.protocol import (
     HEADER,
     Answer,
+    Compare,
     Derive,
     Derived,
     Failed,
     Print,
     Request,
+    Suppose,
     frame,
     unpack,
 )
@@ -41,6 +43,12 @@ class Evaluator(Protocol):
 
     def print(self, text: str, path: str, folder: str) -> int:
         """Ask for a PDF in a folder; return the number of the request."""
+
+    def compare(self, text: str, path: str) -> int:
+        """Ask how every family suits a text; return the number of the request."""
+
+    def suppose(self, text: str, path: str, entry: str, first: str, last: str = "") -> int:
+        """Ask what would be if an entry held another value; return the number of the request."""
 
     async def close(self) -> None:
         """End the worker."""
@@ -67,13 +75,25 @@ class WorkerEvaluator:
         """Ask for the sheet of a text; an older request that waits is dropped."""
         self._number += 1
         self._newest = self._number
-        self._waiting = [item for item in self._waiting if isinstance(item, Print)]
+        self._waiting = [item for item in self._waiting if not isinstance(item, Derive)]
         self._ask(Derive(self._number, text, path))
 
     def print(self, text: str, path: str, folder: str) -> int:
-        """Ask for a PDF in a folder; printing goes before deriving."""
+        """Ask for a PDF in a folder; whatever was asked for goes before deriving."""
         self._number += 1
         self._ask(Print(self._number, text, path, folder))
+        return self._number
+
+    def compare(self, text: str, path: str) -> int:
+        """Ask how every family suits a text."""
+        self._number += 1
+        self._ask(Compare(self._number, text, path))
+        return self._number
+
+    def suppose(self, text: str, path: str, entry: str, first: str, last: str = "") -> int:
+        """Ask what would be if an entry held another value."""
+        self._number += 1
+        self._ask(Suppose(self._number, text, path, entry, first, last))
         return self._number
 
     async def close(self) -> None:
@@ -91,7 +111,7 @@ class WorkerEvaluator:
 
     async def _work(self) -> None:
         while self._waiting:
-            self._waiting.sort(key=lambda item: not isinstance(item, Print))
+            self._waiting.sort(key=lambda item: isinstance(item, Derive))
             request = self._waiting.pop(0)
             answer = await self._answer(request)
             stale = isinstance(request, Derive) and request.number != self._newest

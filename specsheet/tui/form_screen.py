@@ -10,7 +10,7 @@ from specsheet.tagfile.source import read_text
 from specsheet.tagfile.syntax import parse
 from specsheet.tui.dialogs import Ask, Choice, Prompt, Tell
 from specsheet.tui.evaluator import Evaluator
-from specsheet.tui.form_editing import FormEditing
+from specsheet.tui.form_asking import FormAsking
 from specsheet.tui.journal import Leftover
 from specsheet.tui.saving import Conflict, Outcome
 from specsheet.tui.session import Session
@@ -28,7 +28,7 @@ _OVERWRITE = Choice("overwrite", "Write my text over what is on disk", key="o")
 _RELOAD = Choice("reload", "Take what is on disk; undo brings my text back", key="l")
 
 
-class FormScreen(FormEditing):
+class FormScreen(FormAsking):
     """One tag."""
 
     def __init__(

@@ -41,6 +41,35 @@ class Print:
 
 
 @dataclass(frozen=True, slots=True)
+class Compare:
+    """Ask how every meter family suits a tag file's text."""
+
+    number: int
+    text: str
+    path: str
+
+
+@dataclass(frozen=True, slots=True)
+class Suppose:
+    """Ask what would be if one entry held another value, or several in turn; no file is touched.
+
+    Attributes:
+        number: number of the request.
+        text, path: as in :class:`Derive`.
+        entry: path of the entry ("points.maximum.flow").
+        first: the value, or the first of several.
+        last: the last of several, "" for one value.
+    """
+
+    number: int
+    text: str
+    path: str
+    entry: str
+    first: str
+    last: str = ""
+
+
+@dataclass(frozen=True, slots=True)
 class Trouble:
     """One entry of the file that could not be used."""
 
@@ -74,6 +103,31 @@ class Printed:
 
 
 @dataclass(frozen=True, slots=True)
+class Fit:
+    """One meter family held against the tag: its key, a row of words, and what decides."""
+
+    family: str
+    row: str
+    detail: str
+
+
+@dataclass(frozen=True, slots=True)
+class Compared:
+    """The answer to :class:`Compare`: the families, the best first."""
+
+    number: int
+    fits: tuple[Fit, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Supposed:
+    """The answer to :class:`Suppose`: what changes, or the table of verdicts, as lines."""
+
+    number: int
+    lines: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True)
 class Failed:
     """The answer to a request that broke: words for the user."""
 
@@ -81,8 +135,8 @@ class Failed:
     message: str
 
 
-Request = Derive | Print
-Answer = Derived | Printed | Failed
+Request = Derive | Print | Compare | Suppose
+Answer = Derived | Printed | Compared | Supposed | Failed
 
 
 def frame(message: Request | Answer) -> bytes:

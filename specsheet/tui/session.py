@@ -16,6 +16,7 @@ from pathlib import Path
 from typing import Any
 
 from specsheet.fields import Entry
+from specsheet.tagfile.adopt import adopt
 from specsheet.tagfile.document import EditError
 from specsheet.tagfile.known import family_entries
 from specsheet.tagfile.syntax import parse
@@ -237,6 +238,23 @@ class Session:
         """Add a line to the revision block; return why that cannot be, or ""."""
         change = f"revision {mark} added"
         return self._try(change, lambda: edits.add_revision(self.text, mark, day))
+
+    def adopt(self, family: str) -> str:
+        """Make the tag one of another family; return what of ``[meter]`` it does not take, or "".
+
+        Entries that the new family does not know go behind a "#" in the file, as
+        :func:`specsheet.tagfile.adopt` has it; undo brings the old family back.
+        """
+        try:
+            made = adopt(self.text, family)
+        except EditError as error:
+            return f"not adopted: {error}"
+        meter = [address for address in self.refused if address.section == "meter"]
+        refused = {a: told for a, told in self.refused.items() if a not in meter}
+        self._change(f"family {family} adopted", State(made.text, refused))
+        return f"{family} adopted" + (
+            f"; set aside: {', '.join(made.dropped)}" if made.dropped else ""
+        )
 
     def undo(self) -> str:
         """Take back the last change; return words for it, or "" when there is none."""

@@ -12,7 +12,18 @@ import sys
 from pathlib import Path
 from typing import Any, BinaryIO
 
-from specsheet.tui.protocol import Answer, Derive, Derived, Failed, Print, Printed, Trouble, frame
+from specsheet.tui.protocol import (
+    Answer,
+    Compare,
+    Derive,
+    Derived,
+    Failed,
+    Print,
+    Printed,
+    Suppose,
+    Trouble,
+    frame,
+)
 from specsheet.tui.protocol import receive as receive_from
 
 
@@ -21,6 +32,10 @@ def answer(request: Any) -> Answer:
     try:
         if isinstance(request, Derive):
             return _sheet(request, settle=request.settle)
+        if isinstance(request, Compare | Suppose):
+            from specsheet.tui import questions
+
+            return questions.answer(request)
         return _print(request)
     except Exception as error:
         return Failed(request.number, f"{type(error).__name__}: {error}")

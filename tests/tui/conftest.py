@@ -22,7 +22,8 @@ from specsheet.sheet.model import (
     Tick,
     Window,
 )
-from specsheet.tui.protocol import Answer, Derived, Printed
+from specsheet.tui.protocol import Answer, Compare, Derived, Printed, Suppose
+from specsheet.tui.worker import answer
 
 TAG = """\
 schema = 1
@@ -147,6 +148,20 @@ class AtOnce:
         answer = Printed(self._number, f"{folder}/FT-1001.pdf")
         asyncio.get_running_loop().call_soon(self._listener, answer)
         return self._number
+
+    def compare(self, text: str, path: str) -> int:
+        """Answer as the worker would."""
+        self._number += 1
+        return self._answered(Compare(self._number, text, path))
+
+    def suppose(self, text: str, path: str, entry: str, first: str, last: str = "") -> int:
+        """Answer as the worker would."""
+        self._number += 1
+        return self._answered(Suppose(self._number, text, path, entry, first, last))
+
+    def _answered(self, request: Compare | Suppose) -> int:
+        asyncio.get_running_loop().call_soon(self._listener, answer(request))
+        return request.number
 
     async def close(self) -> None:
         self.closed = True
