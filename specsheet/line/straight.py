@@ -18,12 +18,15 @@ from specsheet import quantity
 from specsheet.findings import Finding, Given, Level, Origin
 from specsheet.packs import Profile
 from specsheet.quantity.value import StraightLength
+from specsheet.sources import PRACTICE
 from specsheet.tag import Tag
 
 #: additional relative uncertainty with a reduced length (ISO 5167-2:2003, 6.2, from memory)
 REDUCED_UNCERTAINTY = 0.005
 _REMEDY = "lengthen the run, fit a flow conditioner, or choose a family that needs less"
 _FITTING = "line.upstream_fitting"
+#: fittings that leave swirl or a jet behind which tables do not cover; common practice
+_DISTURBING = ("control valve", "swirl")
 
 
 @dataclass(frozen=True, slots=True)
@@ -103,6 +106,8 @@ def straight(
                 f"{side.name.capitalize()}: the straight length wanted{side.behind} is not known; "
                 "the bidder states it."
             )
+            if side.name == "upstream" and rules and fitting in _DISTURBING:
+                findings.append(_not_listed(side))
             continue
         values[f"{side.name}_length"] = Given(side.wanted * of, Origin.DERIVED, source)
         if side.wanted == 0.0:
@@ -113,6 +118,17 @@ def straight(
         findings.extend(found)
         additional = max(additional, extra)
     return StraightResult(values, tuple(notes), tuple(findings), additional)
+
+
+def _not_listed(side: _Side) -> Finding:
+    """Return the caution for a fitting after which no length is known to be enough."""
+    message = (
+        f"No straight length{side.behind} is known to be enough for the family; {_REMEDY}, and "
+        "have the bidder confirm it."
+    )
+    return Finding(
+        Level.CAUTION, "upstream-length-not-listed", side.entry, message, source=PRACTICE
+    )
 
 
 def _words(fitting: str) -> str:

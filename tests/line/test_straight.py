@@ -4,8 +4,9 @@ from dataclasses import replace
 
 import pytest
 from line_tags import line_tag
+from services import service_text
 
-from specsheet import packs
+from specsheet import packs, tagfile
 from specsheet.findings import Level
 from specsheet.line.straight import REDUCED_UNCERTAINTY, straight
 
@@ -155,3 +156,28 @@ def test_every_profile_has_a_table_that_can_be_read():
         for lengths in tables:
             if lengths is not rules.get("betas"):
                 assert len(lengths) in (1, len(rules.get("betas", [1.0]))), (key, lengths)
+
+
+@pytest.mark.parametrize("key", packs.family_keys())
+@pytest.mark.parametrize(
+    "fitting", ["single bend", "two bends out of plane", "control valve", "swirl"]
+)
+def test_every_family_names_the_remedy_where_the_run_is_too_short(key: str, fitting: str) -> None:
+    """A tenth of a diameter is too short for any family that wants a length at all."""
+    profile = packs.profile(key)
+    phase = profile.phases[0]
+    tag = tagfile.suppose(
+        service_text("water" if phase == "liquid" else "compressed air", key),
+        [("line.upstream_fitting", fitting), ("line.upstream_length", "0.1 D")],
+    ).tag
+    assert tag is not None
+    found = straight(tag, profile, 0.6, pipe_diameter=0.1)
+    wanted = found.values.get("upstream_length")
+    if wanted is None:
+        said = "upstream-length-not-listed" in {item.code for item in found.findings}
+        listed = bool(profile.straight) and fitting in ("control valve", "swirl")
+        assert said is listed
+        assert listed or any("the bidder states it" in note for note in found.notes)
+    elif float(wanted.value) > 0.0:
+        messages = [i.message for i in found.findings if i.code.startswith("upstream-length")]
+        assert any("flow conditioner" in text and "choose a family" in text for text in messages)
