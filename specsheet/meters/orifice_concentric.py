@@ -7,7 +7,7 @@ import math
 import numpy as np
 
 from specsheet.findings import Level, Origin
-from specsheet.meters.dp import adapters, plate
+from specsheet.meters.dp import adapters, plate, wet, wet_plate
 from specsheet.meters.dp.build import family, standard_limits
 from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
@@ -34,7 +34,7 @@ def _coefficient_uncertainty(lanes: Lanes) -> Array:
         reynolds_number=lanes.reynolds_number,
         inside_diameter=lanes.inside_diameter,
     )
-    return found
+    return wet_plate.uncertainty(found) if wet.is_wet(lanes.numbers) else found
 
 
 def _prepare(request: Request) -> Prepared:
@@ -45,11 +45,12 @@ def _prepare(request: Request) -> Prepared:
         "corner": thickness,
         "flange": 2.0 * 0.0254 + thickness,
     }.get(taps, 1.5 * request.pipe.inside_diameter)
+    carried, printed, findings = wet.read(request)
     return Prepared(
-        {**read.numbers, "tapping_distance": distance},
+        {**read.numbers, **carried, "tapping_distance": distance},
         {"taps": taps},
-        read.values,
-        read.findings,
+        {**read.values, **printed},
+        (*read.findings, *findings),
     )
 
 
@@ -97,7 +98,8 @@ def _describe(request: Request, element: Element) -> Described:
         # The uniform equivalent roughness is about π times the arithmetical mean deviation Ra.
         mean = roughness / math.pi / inside
         values["relative_roughness"] = Given(mean, Origin.DERIVED, cite("iso5167-1", "7.1.5"))
-    notes = {"element": (*_make(element, bevelled), *common.notes["element"])}
+    carried = (wet_plate.NOTE,) if wet.is_wet(element.numbers) else ()
+    notes = {"element": (*carried, *_make(element, bevelled), *common.notes["element"])}
     return Described(values, notes, common.findings)
 
 
@@ -139,6 +141,7 @@ def _limits(element: Element, request: Request) -> tuple[Limit, ...]:
             clause,
         ),
         *plate.bending_limits(),
+        *wet_plate.limits(element),
     ]
     if np.isfinite(request.pipe.roughness):
         found.append(_roughness(ratio, inside, request))
@@ -185,6 +188,7 @@ _DERIVATIONS = (
         ("inside_diameter_hot",),
     ),
     *plate.DERIVATIONS,
+    *wet_plate.DERIVATIONS,
 )
 
 FAMILY = family(
@@ -201,6 +205,8 @@ FAMILY = family(
         describe=_describe,
         derivations=_DERIVATIONS,
         prepare=_prepare,
+        over_reading=wet_plate.over_reading,
+        more=wet_plate.more,
         shape=plate.HOLED,
     )
 )

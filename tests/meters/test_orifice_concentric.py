@@ -248,3 +248,44 @@ def test_64_bores_as_one_array():
             best = min(best, time.perf_counter() - start)
         times.append(best)
     assert times[0] <= 0.5 * times[1]
+
+
+WET = {"liquid_ratio": "20 %", "liquid_density": "800 kg/m3"}
+
+
+def test_wet_gas_raises_the_differential_pressure_by_the_over_reading():
+    """ISO/TR 11583: the plate sees φ times the flow, so about φ² times the Δp of dry gas."""
+    responses = []
+    for given in ({}, WET):
+        request = steam(bore="90 mm", **given)
+        element = FAMILY.size(request)
+        responses.append(FAMILY.at(element, request.stream))
+    dry, wet = responses
+    bare = [item["differential_pressure"] * item["expansibility"] ** 2 for item in responses]
+    np.testing.assert_allclose(bare[1] / bare[0], wet["over_reading"] ** 2, rtol=1e-9)
+    assert "over_reading" not in dry
+    assert (wet["over_reading"] > 1.02).all()
+
+
+def test_wet_gas_limits_cross():
+    """ISO/TR 11583, clause 7: X to 0.3, Frg from 0.2, ρ/ρl from 0.014, β 0.24 to 0.73."""
+    request = steam(bore="90 mm", **WET | {"liquid_ratio": "900 %"})
+    element = FAMILY.size(request)
+    found = {limit.code: limit for limit in FAMILY.limits(element, request)}
+    values = FAMILY.at(element, request.stream)
+    assert values["lockhart_martinelli"][0] > found["wet-gas-liquid"].high
+    slow = FAMILY.at(element, request.stream.with_flow(request.stream.mass_flow / 100.0))
+    assert slow["froude_number"][0] < found["wet-gas-slow"].low
+    assert request.stream.density[0] < found["wet-gas-density"].low
+    assert (found["wet-gas-ratio"].low, found["wet-gas-ratio"].high) == (0.24, 0.73)
+    assert not [x for x in FAMILY.limits(FAMILY.size(steam()), steam()) if "wet" in x.code]
+
+
+def test_wet_gas_adds_to_the_uncertainty_of_the_coefficient():
+    shares = []
+    for given in ({}, WET):
+        request = steam(bore="90 mm", **given)
+        element = FAMILY.size(request)
+        values = FAMILY.at(element, request.stream)
+        shares.append(2.0 * FAMILY.budget(element, request.stream, values)[0].relative)
+    np.testing.assert_allclose(shares[1] ** 2, shares[0] ** 2 + 0.03**2)

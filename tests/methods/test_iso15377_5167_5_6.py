@@ -208,3 +208,27 @@ def test_over_reading_is_continuous_where_the_exponent_changes():
         for froude in (turn - 1e-9, turn + 1e-9)
     ]
     assert found[0] == pytest.approx(found[1], rel=1e-8)
+
+
+def test_wet_plate_at_the_exponent_of_chisholm():
+    """Where n = 1/4 the over-reading is Chisholm's (1977): X = 0.1, 50 and 800 kg/m3, 1.122497."""
+    froude = (0.3 / (np.sqrt(0.5) - 0.5)) ** 2
+    found = iso11583.plate_over_reading(
+        lockhart_martinelli=0.1, froude_number=froude, gas_density=50.0, liquid_density=800.0
+    )
+    assert found == pytest.approx(1.122497, rel=1e-6)
+
+
+def test_wet_plate_is_continuous_and_grows_with_liquid():
+    """The exponent's two parts, 0.214 and 0.2136, meet at Frg = 1.5 within 0.03 % of the flow."""
+    near = np.array([1.5 - 1e-9, 1.5 + 1e-9])
+    low, high = iso11583.plate_over_reading(
+        lockhart_martinelli=0.3, froude_number=near, gas_density=20.0, liquid_density=800.0
+    )
+    assert low == pytest.approx(high, rel=3e-4)
+    x = np.linspace(0.0, 0.3, 31)
+    over = iso11583.plate_over_reading(
+        lockhart_martinelli=x, froude_number=2.0, gas_density=20.0, liquid_density=800.0
+    )
+    assert over[0] == 1.0
+    assert (np.diff(over) > 0.0).all()
