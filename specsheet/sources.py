@@ -42,7 +42,7 @@ _SOURCES = (
     Source("iso5167-6", "ISO 5167-6:2019", "wedge meters", "published values"),
     Source("isotr15377", "ISO/TR 15377:1998", "plates beyond ISO 5167", "published values"),
     Source("isotr9464", "ISO/TR 9464:2008", "guidelines for the use of ISO 5167:2003"),
-    Source("isotr11583", "ISO/TR 11583:2012", "wet gas in Venturi tubes", "published values"),
+    Source("isotr11583", "ISO/TR 11583:2012", "wet gas, Venturi and plate", "published values"),
     Source("iso9300", "ISO 9300:2005", "critical flow Venturi nozzles"),
     Source("iso3966", "ISO 3966:2008", "Pitot static tubes", "published values"),
     Source("iso5802", "ISO 5802:2001", "fans: tests in situ, traverses", "published values"),

@@ -11,6 +11,8 @@ from specsheet.evaluate.words import number
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.family import Array, Request
 
+_WINDOW = "from limit to limit, at the normal point"
+
 
 def window(bands: Sequence[Band]) -> tuple[float | None, float | None]:
     """Return the mass flows between which every limit above a note holds [kg/s]."""
@@ -29,11 +31,13 @@ def summarise(
     low, high = window(bands)
     if low is not None and high is not None:
         available = high / low if high > low else 0.0
-        results["turndown_available"] = Result(
-            available, Origin.DERIVED, method="from limit to limit, at the normal point"
-        )
-    if low is not None:
-        results["lower_range_flow"] = Result(low, Origin.DERIVED)
+        results["turndown_available"] = Result(available, Origin.DERIVED, method=_WINDOW)
+    if low is None or high is None or low < high:
+        results |= {
+            key: Result(flow, Origin.DERIVED, method=_WINDOW)
+            for key, flow in (("lower_range_flow", low), ("largest_flow", high))
+            if flow is not None
+        }
     power = float(values["lost_power"][request.normal])
     if np.isfinite(power) and flows.size:
         hours = request.tag.si("job.hours_per_year") or 0.0

@@ -127,6 +127,7 @@ _TERMS = (
     Term("differential_pressure_range", "Upper range value, Δp", "Δpmax", "pressure_difference"),
     Term("upper_range_flow", "Flow at the upper range value", "qmax", "mass_flow"),
     Term("lower_range_flow", "Smallest flow within all limits", "qmin", "mass_flow"),
+    Term("largest_flow", "Largest flow within all limits", "", "mass_flow"),
     Term("second_range", "Second transmitter, upper range value", "", "pressure_difference"),
     Term("calibrated_range_low", "Transmitter calibrated from", "", "pressure_difference"),
     Term("calibrated_range_high", "Transmitter calibrated to", "", "pressure_difference"),

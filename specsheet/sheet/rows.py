@@ -21,8 +21,10 @@ if TYPE_CHECKING:
 
 _EMPTY = Cell(NOTHING)
 
+_PLACES = {key: place for place, key in enumerate(TERMS)}
+
 #: mass flows at the ends of the range, shown in the kind of flow that the user states
-_RANGE = ("upper_range_flow", "lower_range_flow")
+_RANGE = ("upper_range_flow", "lower_range_flow", "largest_flow")
 
 #: digits of a given value whose text is not at hand: enough for anything a user types
 _STATED = 8
@@ -189,5 +191,4 @@ def of_entry(tag: Tag, path: str, label: str, symbol: str = "") -> Row:
 
 def ordered(keys: Mapping[str, object] | Sequence[str]) -> list[str]:
     """Return glossary keys in the glossary's order, unknown ones last in their own order."""
-    places = {key: place for place, key in enumerate(TERMS)}
-    return sorted(keys, key=lambda key: places.get(key, len(places)))
+    return sorted(keys, key=lambda key: _PLACES.get(key, len(_PLACES)))
