@@ -289,3 +289,30 @@ def test_wet_gas_adds_to_the_uncertainty_of_the_coefficient():
         values = FAMILY.at(element, request.stream)
         shares.append(2.0 * FAMILY.budget(element, request.stream, values)[0].relative)
     np.testing.assert_allclose(shares[1] ** 2, shares[0] ** 2 + 0.03**2)
+
+
+def test_drain_hole_adds_to_the_uncertainty():
+    """Half of the flow that it lets pass, k = 2 (common practice, no source): 4 mm in 90 mm."""
+    request = steam(bore="90 mm", drain_hole="4 mm")
+    element = FAMILY.size(request)
+    values = FAMILY.at(element, request.stream)
+    parts = {part.key: part for part in FAMILY.budget(element, request.stream, values)}
+    change = (1.0 + 0.55 * (4.0 / 90.0) ** 2) ** 2 - 1.0
+    np.testing.assert_allclose(2.0 * parts["drain_hole"].relative, 0.5 * change)
+    assert parts["drain_hole"].origin is Origin.ASSUMED
+    request = steam(bore="90 mm")
+    element = FAMILY.size(request)
+    values = FAMILY.at(element, request.stream)
+    keys = [part.key for part in FAMILY.budget(element, request.stream, values)]
+    assert "drain_hole" not in keys
+
+
+def test_free_range_is_not_lost_in_the_static_pressure():
+    """Trade rule: not below 0.2 % of the static pressure where β can give more (no source)."""
+    fluid = tools.steam(3, pressure=40e5, density=14.0, temperature=650.0)
+    request = tools.request(
+        "orifice_concentric", [0.2, 0.4, 0.5], fluid, phase="gas", diameter=0.1541, nominal=150
+    )
+    element = FAMILY.size(request)
+    assert element.numbers["range"] >= 0.002 * 40e5
+    assert 0.1 <= element.values["diameter_ratio"].value < 0.6

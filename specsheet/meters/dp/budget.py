@@ -12,7 +12,8 @@ from specsheet.meters.dp.device import Device, Lanes
 from specsheet.meters.dp.response import lanes_of
 from specsheet.meters.family import Array, Contribution, Element, Stream
 from specsheet.methods import iso5167_1 as equation
-from specsheet.sources import cite
+from specsheet.methods import orifice_plate
+from specsheet.sources import PRACTICE, cite
 
 
 def contributions(
@@ -25,6 +26,7 @@ def contributions(
             _coefficient(device, element, lanes),
             *_expansion(device, stream, values),
             *_dimensions(element, values["diameter_ratio"]),
+            *_hole(element, lanes),
             density(stream),
             *transmitter.contributions(
                 element.numbers, element.choices, values["differential_pressure"]
@@ -90,6 +92,27 @@ def _dimensions(element: Element, diameter_ratio: Array) -> tuple[Contribution, 
             equation.bore_sensitivity(diameter_ratio=diameter_ratio) * bore / 2.0,
             Origin(element.choices.get("origin.bore_uncertainty", Origin.ASSUMED)),
             clause,
+        ),
+    )
+
+
+def _hole(element: Element, lanes: Lanes) -> tuple[Contribution, ...]:
+    """Return what a drain or vent hole adds: half of what it changes in the flow, as k = 2.
+
+    ISO/TR 15377 has a rule of its own, which was not seen.
+    """
+    hole = element.numbers.get("hole", 0.0)
+    if not hole:
+        return ()
+    bore = element.numbers["machined"]
+    change = (orifice_plate.effective_bore(bore=bore, hole=hole) / bore) ** 2 - 1.0
+    return (
+        Contribution(
+            "drain_hole",
+            "drain or vent hole, half of its correction",
+            np.full(lanes.mass_flow.shape, change / 4.0),
+            Origin.ASSUMED,
+            PRACTICE,
         ),
     )
 

@@ -22,6 +22,11 @@ _ROUNDS = 3
 #: above this diameter ratio nothing narrows the pipe any more [-]
 _WIDEST = 0.95
 
+#: a range below this share of the static pressure is left to the transmitter's static-pressure
+#: error [-], and what a decade below it costs beside a diameter ratio off its target [-] (both
+#: common practice, no source)
+_LEAST_SHARE, _SMALL_RANGE = 0.002, 0.5
+
 #: step to which a machined dimension is rounded, so that Δp falls [m]
 STEP = 1e-5
 
@@ -217,7 +222,9 @@ def _both(of: Task) -> Sized:
             + _excess(loss * back * back, _largest_loss(of.request))
             + (spans >= stream.pressure - np.nan_to_num(stream.vapour_pressure))
         )
-        score = np.where(~(ratios < _WIDEST), np.inf, abs(ratios - bounds.target) + 10.0 * broken)
+        small = np.log10(np.maximum(_LEAST_SHARE * stream.pressure / spans, 1.0))
+        wish = abs(ratios - bounds.target) + _SMALL_RANGE * small
+        score = np.where(~(ratios < _WIDEST), np.inf, wish + 10.0 * broken)
     index = int(np.argmin(score))
     if not np.isfinite(score[index]):
         sized = _machine(of, bounds.largest, float(spans[index]), Origin.DERIVED)
