@@ -6,8 +6,11 @@ import math
 from collections.abc import Iterable, Sequence
 
 from specsheet.findings import Origin
-from specsheet.sheet.model import Row, Sheet, Table
-from specsheet.sheet.words import MARKS
+from specsheet.sheet.model import Row, Sheet, Table, Working
+from specsheet.sheet.words import MARKS, named
+
+#: a space at which no line breaks
+FIXED = "\u00a0"
 
 
 def marks(origins: Iterable[Origin]) -> str:
@@ -42,6 +45,47 @@ def values(row: Row, part: slice) -> list[str]:
 def label(row: Row) -> str:
     """Return the label of a row with its note."""
     return f"{row.label} ({row.note})" if row.note else row.label
+
+
+def figures(row: Row) -> str:
+    """Return the values of a row at all points in one text: "1.2 | 3.1 | 3.6 t/h", "154.05 mm".
+
+    A line may break behind a bar and nowhere else.
+    """
+    texts = values(row, slice(0, len(row.cells)))
+    told = texts if len(set(texts)) > 1 else texts[:1]
+    joined = f"{FIXED}| ".join(fixed(text) for text in told)
+    return f"{joined}{FIXED}{fixed(row.unit)}" if row.unit else joined
+
+
+def fixed(text: str) -> str:
+    """Return a text in which no line breaks."""
+    return text.replace(" ", FIXED)
+
+
+def put_in(working: Working) -> str:
+    """Return the numbers put in: "● qm = 1.2 | 3.1 | 3.6 t/h;  ○ ρ = 4.03 kg/m³", or "".
+
+    An input goes by its symbol; by its words where it has none, or shares it in this working.
+    """
+    signs = [working.symbol, *(row.symbol for row in working.inputs)]
+    texts = []
+    for row in working.inputs:
+        alone = row.symbol and signs.count(row.symbol) == 1
+        name = row.symbol if alone else named(row.label, row.symbol).replace("  ", " ")
+        said = fixed(f"{mark(row)} {name} =".strip())
+        texts.append(f"{said}{FIXED}{figures(row)}")
+    return "; ".join(texts)
+
+
+def groups(workings: Iterable[Working]) -> list[list[Working]]:
+    """Return the workings with those put together that share equation, source and inputs."""
+    made: dict[tuple[object, ...], list[Working]] = {}
+    for working in workings:
+        shared = bool(working.equation)
+        key = (working.equation, working.source, working.inputs if shared else working.key)
+        made.setdefault(key, []).append(working)
+    return list(made.values())
 
 
 def portions(count: int, most: int) -> list[slice]:

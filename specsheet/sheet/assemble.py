@@ -22,6 +22,7 @@ from specsheet.sheet.model import (
 )
 from specsheet.sheet.rows import of_entry
 from specsheet.sheet.units import Units
+from specsheet.sheet.values import Values
 from specsheet.tag import Tag
 
 if TYPE_CHECKING:
@@ -51,17 +52,24 @@ STANDING_CAUTION = (
 _CAUTIONS = "cautions"
 
 
-def build(evaluation: Evaluation) -> Sheet:
-    """Return the sheet of one evaluated tag. Never raises on user data."""
+def build(evaluation: Evaluation, *, annexed: bool = True) -> Sheet:
+    """Return the sheet of one evaluated tag. Never raises on user data.
+
+    Args:
+        evaluation: the evaluation.
+        annexed: False leaves out the calculation annex and the sources that only it cites, for a
+            screen that shows neither.
+    """
     tag = evaluation.tag
     units = Units(tag)
     units.flow = flow = axis.of(evaluation, units)
+    values = Values(evaluation, units)
     points = tables.points(tag)
-    others = (*tables.by_point(evaluation, units), *tables.single(evaluation, units))
+    others = (*tables.by_point(values), *tables.single(evaluation, units))
     budget = tables.budget(evaluation)
     checked = limits.limits(evaluation, units, flow)
     findings = tuple(limits.finding(item, units, flow) for item in evaluation.findings)
-    workings = annex.build(evaluation, units)
+    workings = annex.build(values) if annexed else ()
     last = tag.revisions[-1] if tag.revisions else None
     every = [
         row for table in (points, *others, *((budget,) if budget else ())) for row in table.rows

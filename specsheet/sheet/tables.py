@@ -12,6 +12,7 @@ from specsheet.quantity.value import Base, Quantity
 from specsheet.sheet import rounding, rows, words
 from specsheet.sheet.model import CITATION_JOINT, NOTHING, Cell, Row, Table
 from specsheet.sheet.units import Units
+from specsheet.sheet.values import Values
 from specsheet.tag import Tag
 
 if TYPE_CHECKING:
@@ -66,22 +67,21 @@ def atmosphere(tag: Tag) -> Row:
     return rows.of_entry(tag, "job.atmospheric_pressure", "Atmospheric pressure")
 
 
-def by_point(evaluation: Evaluation, units: Units) -> list[Table]:
+def by_point(values: Values) -> list[Table]:
     """Return the values at the operating points: of the fluid, then of the meter."""
-    names = tuple(point.name for point in evaluation.points)
-    keys = rows.ordered({key: None for point in evaluation.points for key in point.values})
-    order = list(TERMS)
-    border = order.index(_FIRST_OF_THE_METER)
-    stated = pressures_stated(evaluation.tag)
+    names = tuple(point.name for point in values.evaluation.points)
+    order = {key: place for place, key in enumerate(TERMS)}
+    border = order[_FIRST_OF_THE_METER]
+    stated = pressures_stated(values.evaluation.tag)
     fluid: list[Row] = []
     meter: list[Row] = []
-    for key in keys:
-        results = [point.values.get(key) for point in evaluation.points]
+    for key in rows.ordered(values.varying):
+        results = values.results(key)
         if key in stated or all(result is None or rows.echoes(result, key) for result in results):
             continue  # stands in the table of operating points already
-        note = f"at {evaluation.tag.base.name}" if key == "base_volume_flow" else ""
-        early = key in TERMS and order.index(key) < border
-        (fluid if early else meter).append(rows.of_results(key, results, units, note))
+        row = values.row(key)
+        if row is not None:
+            (fluid if order.get(key, border) < border else meter).append(row)
     tables = (
         Table("fluid_points", "Fluid at the operating points", names, tuple(fluid)),
         Table("meter_points", "Meter at the operating points", names, tuple(meter)),

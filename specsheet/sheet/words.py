@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Mapping
 from datetime import date
+from functools import lru_cache
 
 from specsheet.fields import TERMS, entry
 from specsheet.findings import Level, Origin
@@ -28,6 +29,7 @@ _NUMBER = re.compile(
 _WATER = re.compile(r"H2O")
 
 
+@lru_cache(maxsize=2_000)
 def unit(text: str) -> str:
     """Return a unit as it is printed ("kg/m3" gives "kg/m³", "degC" gives "°C", "1" gives "")."""
     if text == "1":
@@ -49,6 +51,7 @@ def _raise(found: re.Match[str]) -> str:
     return {"2": "²", "3": "³"}[found.group(1)]
 
 
+@lru_cache(maxsize=4_000)
 def split(typed: str) -> tuple[str, str]:
     """Return the number, digit for digit, and the unit of a typed quantity.
 

@@ -1,126 +1,106 @@
-"""The calculation annex and the list of sources."""
+"""The calculation annex and the list of sources: two columns that fill one after the other."""
 
 from __future__ import annotations
 
-from specsheet.render.pdf import style, wrap
-from specsheet.render.pdf.grid import Column, Line, Text, grid
+from collections.abc import Sequence
+
+from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.page import Columns, Frame
 from specsheet.render.pdf.style import Style
-from specsheet.render.shared import mark, numbers, portions, values
-from specsheet.sheet.model import Row, Sheet, Working
+from specsheet.render.shared import FIXED, figures, groups, numbers, put_in
+from specsheet.sheet.model import Sheet, Working
 from specsheet.sheet.words import named
 
-_FEW = 3  # operating points that fit a column of the annex
-_LABEL, _UNIT, _VALUE = 78.0, 34.0, 36.0
-_SMALL = Style(7.0)
-_SMALL_STRONG = Style(7.0, True)
+_CITED = 26.0  # kept free for the numbers of the sources
+_APART = 8.0  # between the name of a value and its figures
+_NUMBER = 22.0  # for the number of a source in the list
+_GAP = 2.4  # above and below the rule between two workings
 
 
 def draw(frame: Frame, sheet: Sheet) -> None:
-    """Set the annex on pages of its own: equations with their numbers, methods, sources."""
-    with_numbers = [working for working in sheet.annex if working.inputs]
-    methods = [working for working in sheet.annex if not working.inputs]
-    if with_numbers:
-        _opening(frame)
-        few = all(len(working.columns) <= _FEW for working in with_numbers)
-        columns = Columns.of(frame, 2 if few else 1)
-        for working in with_numbers:
-            _working(columns, sheet, working)
-        frame.index = columns.index
-        frame.y = columns.y if columns.place == 0 else style.FOOT
-    _methods(frame, sheet, methods)
-    _sources(frame, sheet)
+    """Set the annex: every value with its equation and the numbers put in, then the sources."""
+    if sheet.annex:
+        _opening(frame, sheet)
+    columns = Columns.of(frame, 2)
+    for group in groups(sheet.annex):
+        _working(columns, sheet, group)
+    _sources(columns, sheet)
+    frame.index = columns.index
+    frame.y = columns.y if columns.place == 0 else style.FOOT
 
 
-def _opening(frame: Frame) -> None:
+def _opening(frame: Frame, sheet: Sheet) -> None:
     frame.keep(90.0)
     frame.heading("Calculation annex")
     frame.y -= 2.0
+    names = sheet.points.columns
+    order = f" Values that vary stand in the order {' | '.join(names)}." if len(names) > 1 else ""
     frame.paragraph(
-        "Every derived value with its equation, its source and the numbers put in. The numbers are "
-        "printed rounded; the program calculates with all digits, in SI units.",
+        "Every derived value with its equation, its source and the numbers put in; symbols are "
+        "those of the tables. The numbers are printed rounded; the program calculates with all "
+        f"digits, in SI units.{order}",
         style.QUIET,
     )
-    frame.y -= 6.0
+    frame.y -= 5.0
 
 
-def _working(frame: Columns, sheet: Sheet, working: Working) -> None:
-    """Set one value: name, equation, numbers put in, result."""
-    parts = _parts(frame, working)
-    equation = wrap.lines(frame.book.clean(working.equation), frame.width - 12.0, _SMALL.size)
-    rows = (len(working.inputs) + 2) * (style.BODY.leading + 3.6) * len(parts)
-    frame.skip(10.0)
-    frame.keep(min(30.0 + len(equation) * _SMALL.leading + rows, frame.full))
+def _working(frame: Columns, sheet: Sheet, group: Sequence[Working]) -> None:
+    """Set the values that one equation gives: names with results, equation, numbers put in."""
+    working = group[0]
+    equation = _lines(frame, working.equation or "–", frame.width - _CITED)
+    inputs = _lines(frame, put_in(working), frame.width - _CITED) if working.inputs else ()
+    count = len(equation) + len(inputs) + len(group)
+    frame.keep(min(count * style.FINE.leading + 2.0 * _GAP, frame.full))
+    for one in group:
+        _result(frame, one)
     cited = numbers(sheet, working.source)
+    frame.page.right(frame.x + frame.width, frame.y - style.FINE.size, cited, style.SMALL)
+    _set(frame, equation, style.FINE)
+    _set(frame, inputs, style.QUIET)
+    frame.y -= _GAP
+    frame.page.rule(frame.x, frame.x + frame.width, frame.y)
+    frame.y -= _GAP
+
+
+def _result(frame: Columns, working: Working) -> None:
+    """Set the name of a value and, at the right, its figures; below one another where too wide."""
     name = frame.book.clean(named(working.label, working.symbol))
-    for line in wrap.lines(name, frame.width - 40.0, style.SUBSECTION.size):
-        frame.page.text(frame.x, frame.y - 8.0, line, style.SUBSECTION)
-        frame.y -= style.SUBSECTION.leading
-    frame.page.right(frame.x + frame.width, frame.y + 2.5, cited, style.SMALL)
-    frame.y -= 2.0
-    top, column = frame.y, (frame.index, frame.place)
-    frame.paragraph(working.equation, _SMALL, indent=12.0)
-    if (frame.index, frame.place) == column:
-        frame.page.line(frame.x + 3.0, top, frame.x + 3.0, frame.y, style.MIDDLE, 1.6)
-    frame.y -= 2.0
-    for part in parts:
-        names = working.columns[part] or ("",)
-        lines = [_line(row, part) for row in working.inputs]
-        lines.append(_line(working.result, part, bold=True))
-        grid(frame, "", _columns(frame, names), lines, gap=0.0)
-
-
-def _parts(frame: Frame, working: Working) -> list[slice]:
-    """Return the operating points in portions that fit the frame."""
-    most = max(1, int((frame.width - _LABEL - _UNIT) / _value(frame)))
-    return portions(len(working.columns), most)
-
-
-def _value(frame: Frame) -> float:
-    """Return the width of a value: that of the sheet's own columns, in the smaller type."""
-    return max(_VALUE, frame.book.column * _SMALL.size / style.BODY.size)
-
-
-def _columns(frame: Frame, names: tuple[str, ...]) -> list[Column]:
-    each = min(_value(frame), (frame.width - _LABEL - _UNIT) / len(names))
-    return [
-        Column("", frame.width - _UNIT - each * len(names), _SMALL),
-        Column("", _UNIT, style.SMALL),
-        *(Column(name, each, _SMALL, True) for name in names),
-    ]
-
-
-def _line(row: Row, part: slice, bold: bool = False) -> Line:
-    look = _SMALL_STRONG if bold else _SMALL
-    label = Text(f"{mark(row)} {named(row.label, row.symbol)}".strip(), look)
-    cells = [Text(text, look) for text in values(row, part)]
-    return Line([label, row.unit, *cells])
-
-
-def _methods(frame: Frame, sheet: Sheet, workings: list[Working]) -> None:
-    """List the values that one method gives as a whole, without numbers of the sheet put in."""
-    columns = [
-        Column("Value", 190.0),
-        Column("Method", frame.width - 190.0 - 40.0),
-        Column("Source", 40.0, style.SMALL, True),
-    ]
-    lines = [
-        Line(
-            [
-                named(working.label, working.symbol),
-                working.equation or "–",
-                numbers(sheet, working.source),
-            ]
+    shown = frame.book.clean(figures(working.result)).replace(FIXED, " ")
+    wide = fonts.width(shown, style.FINE_STRONG.size)
+    if fonts.width(name, style.FINE_STRONG.size) + _APART + wide <= frame.width:
+        frame.keep(style.FINE_STRONG.leading)
+        frame.page.right(
+            frame.x + frame.width, frame.y - style.FINE_STRONG.size, shown, style.FINE_STRONG
         )
-        for working in workings
-    ]
-    grid(frame, "Methods", columns, lines)
+        _set(frame, (name,), style.FINE_STRONG)
+    else:
+        _set(frame, _lines(frame, name, frame.width), style.FINE_STRONG)
+        _set(frame, _lines(frame, figures(working.result), frame.width), style.FINE_STRONG)
 
 
-def _sources(frame: Frame, sheet: Sheet) -> None:
-    columns = [Column("", 26.0, style.QUIET), Column("", frame.width - 26.0)]
-    lines = [Line([f"[{number}]", source]) for number, source in enumerate(sheet.sources, start=1)]
-    grid(frame, "Sources", columns, lines)
+def _lines(frame: Frame, text: str, room: float) -> tuple[str, ...]:
+    return wrap.lines(frame.book.clean(text), room, style.FINE.size)
+
+
+def _set(frame: Frame, lines: Sequence[str], look: Style, indent: float = 0.0) -> None:
+    for line in lines:
+        frame.keep(look.leading)
+        frame.page.text(frame.x + indent, frame.y - look.size, line.replace(FIXED, " "), look)
+        frame.y -= look.leading
+
+
+def _sources(frame: Columns, sheet: Sheet) -> None:
+    if sheet.sources:
+        frame.skip(9.0)
+        frame.keep(60.0)
+        frame.heading("Sources")
+        frame.y -= 2.0
+    for number, source in enumerate(sheet.sources, start=1):
+        lines = _lines(frame, source, frame.width - _NUMBER)
+        frame.keep(style.FINE.leading)
+        frame.page.text(frame.x, frame.y - style.FINE.size, f"[{number}]", style.QUIET)
+        _set(frame, lines, style.FINE, _NUMBER)
+        frame.y -= 0.8
     if frame.book.missing:
         frame.skip(8.0)
         shown = ", ".join(f"U+{ord(letter):04X}" for letter in frame.book.missing)

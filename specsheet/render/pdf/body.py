@@ -2,13 +2,12 @@
 
 from __future__ import annotations
 
-import math
 from collections.abc import Sequence
 
 from specsheet.findings import Level, Origin
 from specsheet.render import shared
 from specsheet.render.pdf import fonts, head, style
-from specsheet.render.pdf.grid import Column, Line, Ornament, Text, grid
+from specsheet.render.pdf.grid import Column, Line, Ornament, Text, grid, halves
 from specsheet.render.pdf.page import Frame, Page, Place
 from specsheet.render.shared import mark, marks, numbers, portions, values
 from specsheet.sheet.model import FindingRow, LimitRow, Row, Sheet, Table
@@ -97,8 +96,8 @@ def _single_columns(width: float) -> list[Column]:
     rest = width - _MARK - _SOURCE
     return [
         Column("", _MARK, style.QUIET),
-        Column("", rest * 0.57),
-        Column("", rest * 0.43),
+        Column("", rest * 0.6, style.LISTED),
+        Column("", rest * 0.4, style.LISTED),
         Column("", _SOURCE, style.SMALL, True),
     ]
 
@@ -176,18 +175,15 @@ def _limit(sheet: Sheet, row: LimitRow) -> Line:
 
 
 def assumptions(frame: Frame, sheet: Sheet) -> None:
-    """List everything that nobody typed, two to a line, read down the left half first."""
-    half = frame.width / 2.0
-    one = [
+    """List everything that nobody typed, in two columns."""
+    rest = (frame.width - style.GUTTER) / 2.0 - _MARK
+    columns = [
         Column("", _MARK, style.QUIET),
-        Column("Nobody stated", half * 0.54 - _MARK),
-        Column("Assumed", half * 0.46),
+        Column("Nobody stated", rest * 0.58, style.LISTED),
+        Column("Assumed", rest * 0.42, style.LISTED),
     ]
-    entries = [[MARKS[Origin.ASSUMED], row.label, row.text] for row in sheet.assumptions]
-    count = math.ceil(len(entries) / 2)
-    right = [*entries[count:], ["", "", ""]]
-    lines = [Line([*entries[place], *right[place]]) for place in range(count)]
-    grid(frame, "Assumptions", [*one, *one], lines)
+    lines = [Line([MARKS[Origin.ASSUMED], row.label, row.text]) for row in sheet.assumptions]
+    halves(frame, "Assumptions", columns, lines)
 
 
 def clauses(frame: Frame, sheet: Sheet) -> None:

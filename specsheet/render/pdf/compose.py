@@ -6,6 +6,8 @@ from specsheet.render.pdf import annex, body, document, head, ruler, style
 from specsheet.render.pdf.page import Book, Frame, Pen
 from specsheet.sheet.model import Sheet
 
+_ANNEX = 0.4  # of a page: with less room left the annex starts overleaf
+
 
 def to_bytes(sheet: Sheet) -> bytes:
     """Return the sheet as a PDF document; equal sheets give equal bytes."""
@@ -40,6 +42,7 @@ def compose(sheet: Sheet, pdf: object) -> Book:
     body.reply(frame, sheet)
     body.revisions(frame, sheet)
     if sheet.annex or sheet.sources:
-        frame.turn()
+        frame.skip(14.0)
+        frame.keep(frame.full * _ANNEX)
         annex.draw(frame, sheet)
     return book

@@ -36,7 +36,6 @@ def open_canvas(sheet: Sheet) -> Canvas:
         initialFontName=fonts.NAME,
     )
     canvas._doc._timeStamp = _stamp(sheet.date or _NO_DATE)
-    canvas._doc.signature = hashlib.md5(repr(sheet).encode(), usedforsecurity=False)
     _describe(canvas, sheet)
     return canvas
 
@@ -68,14 +67,16 @@ def _describe(canvas: Canvas, sheet: Sheet) -> None:
 def close(canvas: Any, book: Book, sheet: Sheet) -> bytes:
     """Return the finished document: every page with its foot, outline and page labels."""
     _furnish(book, sheet)
-    for index, page in enumerate(book.pages):
+    contents = [page.content().encode("ascii") for page in book.pages]
+    canvas._doc.signature = hashlib.md5(b"".join(contents), usedforsecurity=False)
+    for index, content in enumerate(contents):
         for place, heading in enumerate(book.headings):
             if heading.page == index:
                 key = f"h{place}"
                 canvas.bookmarkHorizontal(key, 0, heading.top + 6.0)
                 canvas.addOutlineEntry(heading.title, key, level=0)
-        canvas._code.extend(page.code)
         canvas.showPage()
+        canvas._doc.Pages.pages[-1].stream = content  # as bytes: nothing left to encode
     canvas.addPageLabel(0, style="ARABIC", start=1, prefix=f"{sheet.tag}-")
     data: bytes = canvas.getpdfdata()
     return data

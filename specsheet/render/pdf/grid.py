@@ -12,7 +12,7 @@ from specsheet.render.pdf import style, wrap
 from specsheet.render.pdf.page import Frame, Page
 from specsheet.render.pdf.style import Style
 
-_PADDING = 3.6  # above and below the text of a row, together
+_PADDING = 2.4  # above and below the text of a row, together
 _BETWEEN = 6.0  # kept free at the right of each cell
 _TITLE = 34.0  # of the title and the headings
 _WHOLE = 0.26  # of a page: a table up to this height is not split
@@ -46,14 +46,27 @@ class Line(NamedTuple):
     ornament: Ornament | None = None
 
 
-class _Set(NamedTuple):
-    """One cell ready to be set: lines, style, left edge in the frame, width and side."""
+class _Cell(NamedTuple):
+    """One cell ready to be set: lines, style, and its left or its right edge in the frame."""
 
     lines: tuple[str, ...]
     look: Style
     x: float
-    width: float
     right: bool
+
+
+class _Row(NamedTuple):
+    """One row ready to be set: the cells that hold something, and how high they stand."""
+
+    cells: Sequence[_Cell]
+    ornament: Ornament | None
+    lines: int
+    leading: float
+    size: float  # of the largest letters
+
+    @property
+    def height(self) -> float:
+        return self.lines * self.leading + _PADDING
 
 
 def grid(
@@ -62,8 +75,8 @@ def grid(
     """Set a table with its title, ``gap`` below what stands above; nothing without rows."""
     if not rows:
         return
-    cells = [_cells(frame, columns, row) for row in rows]
-    heights = [_height(row) for row in cells]
+    made = [_made(frame, columns, row) for row in rows]
+    heights = [row.height for row in made]
     whole = _TITLE + sum(heights)
     start = _TITLE + min(sum(heights[:_START]), frame.full / 2.0)
     frame.skip(gap)
@@ -71,64 +84,84 @@ def grid(
     if title:
         frame.heading(title)
     _headings(frame, columns)
-    for place, (row, held) in enumerate(zip(rows, cells, strict=True)):
-        needed = sum(heights[place:]) if place == len(rows) - 2 else heights[place]
+    for place, row in enumerate(made):
+        needed = sum(heights[place:]) if place == len(made) - 2 else heights[place]
         if frame.room < needed <= frame.full - _TITLE:  # the last row is not left alone
             _overleaf(frame, title, columns)
-        _row(frame, title, columns, row, held)
+        _row(frame, title, columns, row)
+
+
+def halves(frame: Frame, title: str, columns: Sequence[Column], rows: Sequence[Line]) -> None:
+    """Set a long list under one title in two columns of equal height, the left one read first.
+
+    Args:
+        frame: where it is set.
+        title: heading across both columns.
+        columns: of one half; their widths fill ``(frame.width - style.GUTTER) / 2``.
+        rows: the rows; nothing is set without any.
+    """
+    if not rows:
+        return
+    heights = [_made(frame, columns, row).height for row in rows]
+    cut, left = 0, 0.0
+    while left < sum(heights) / 2.0:
+        left += heights[cut]
+        cut += 1
+    frame.skip(11.0)
+    frame.keep(_TITLE + min(left, frame.full / 4.0))
+    frame.heading(title)
+    wide = (frame.width - style.GUTTER) / 2.0
+    ends = []
+    for x, part in ((frame.x, rows[:cut]), (frame.x + wide + style.GUTTER, rows[cut:])):
+        half = Frame(frame.book, x, wide, frame.index, frame.y)
+        grid(half, "", columns, part, gap=0.0)
+        ends.append((half.index, -half.y))
+    frame.index, frame.y = max(ends)[0], -max(ends)[1]
 
 
 def _headings(frame: Frame, columns: Sequence[Column]) -> None:
     if not any(column.heading for column in columns):
         return
-    cells = _cells(
-        frame, columns, Line([Text(column.heading, style.HEADING) for column in columns])
-    )
-    height = _height(cells)
-    _draw(frame, cells, 0, max(len(cell.lines) for cell in cells))
-    frame.y -= height
+    row = _made(frame, columns, Line([Text(column.heading, style.HEADING) for column in columns]))
+    _draw(frame, row, 0, row.lines)
+    frame.y -= row.height
     frame.page.line(frame.x, frame.y, frame.x + frame.width, frame.y, style.GREY, 0.5)
 
 
-def _cells(frame: Frame, columns: Sequence[Column], row: Line) -> list[_Set]:
-    made = []
-    x = 0.0
-    for column, cell in zip(columns, row.cells, strict=True):
-        text, look = cell if isinstance(cell, Text) else (cell, column.look)
-        room = max(column.width - _BETWEEN, look.size)
-        lines = wrap.lines(frame.book.clean(text), room, look.size)
-        made.append(_Set(lines, look, x, column.width, column.right))
+def _made(frame: Frame, columns: Sequence[Column], line: Line) -> _Row:
+    """Return a row with its texts broken into lines."""
+    cells = []
+    x = leading = size = 0.0
+    count = 1
+    for column, cell in zip(columns, line.cells, strict=True):
+        text, look = (cell, column.look) if isinstance(cell, str) else cell
+        size = max(size, look.size)
+        leading = max(leading, look.leading)
+        if text:
+            room = max(column.width - _BETWEEN, look.size)
+            lines = wrap.lines(frame.book.clean(text), room, look.size)
+            edge = x + column.width - _BETWEEN if column.right else x
+            cells.append(_Cell(lines, look, edge, column.right))
+            count = max(count, len(lines))
         x += column.width
-    return made
+    return _Row(cells, line.ornament, count, leading, size)
 
 
-def _leading(cells: Sequence[_Set]) -> float:
-    return max(cell.look.leading for cell in cells)
-
-
-def _height(cells: Sequence[_Set]) -> float:
-    return max(len(cell.lines) for cell in cells) * _leading(cells) + _PADDING
-
-
-def _row(
-    frame: Frame, title: str, columns: Sequence[Column], row: Line, cells: Sequence[_Set]
-) -> None:
-    total = max(len(cell.lines) for cell in cells)
-    leading = _leading(cells)
+def _row(frame: Frame, title: str, columns: Sequence[Column], row: _Row) -> None:
     done = 0
-    while done < total:
-        fits = int((frame.room - _PADDING) / leading)
+    while done < row.lines:
+        fits = int((frame.room - _PADDING) / row.leading)
         if fits < 1:
             _overleaf(frame, title, columns)
             continue
-        count = min(fits, total - done)
-        height = count * leading + _PADDING
+        count = min(fits, row.lines - done)
+        height = count * row.leading + _PADDING
         if row.ornament and done == 0:
             row.ornament(frame.page, frame.x, frame.y, height)
-        _draw(frame, cells, done, count)
+        _draw(frame, row, done, count)
         frame.y -= height
         done += count
-    frame.page.line(frame.x, frame.y, frame.x + frame.width, frame.y, style.HAIRLINE, 0.4)
+    frame.page.rule(frame.x, frame.x + frame.width, frame.y)
 
 
 def _overleaf(frame: Frame, title: str, columns: Sequence[Column]) -> None:
@@ -140,13 +173,12 @@ def _overleaf(frame: Frame, title: str, columns: Sequence[Column]) -> None:
     _headings(frame, columns)
 
 
-def _draw(frame: Frame, cells: Sequence[_Set], start: int, count: int) -> None:
-    leading = _leading(cells)
-    baseline = frame.y - _PADDING / 2.0 - max(cell.look.size for cell in cells) * 0.93
-    for cell in cells:
-        for place, line in enumerate(cell.lines[start : start + count]):
-            y = baseline - place * leading
-            if cell.right:
-                frame.page.right(frame.x + cell.x + cell.width - _BETWEEN, y, line, cell.look)
-            else:
-                frame.page.text(frame.x + cell.x, y, line, cell.look)
+def _draw(frame: Frame, row: _Row, start: int, count: int) -> None:
+    page = frame.page
+    baseline = frame.y - _PADDING / 2.0 - row.size * 0.93
+    for lines, look, x, right in row.cells:
+        put = page.right if right else page.text
+        y = baseline
+        for line in lines[start : start + count]:
+            put(frame.x + x, y, line, look)
+            y -= row.leading

@@ -6,6 +6,7 @@ content, in the order they are made, so equal sheets give equal bytes.
 
 from __future__ import annotations
 
+import re
 from dataclasses import dataclass, field
 from functools import cache
 from typing import Any
@@ -16,20 +17,31 @@ from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.style import Style
 
 _ESCAPED = str.maketrans({"\\": r"\\", "(": r"\(", ")": r"\)"})
+_SPECIAL = re.compile(r"[\\()]").search
 
 _BOLD_STROKE = 0.035  # of the size: the stroke that makes a regular letter look bold
 
 
 class Pen:
-    """Writes text as page content in the font of one document; every text is encoded once."""
+    """Writes text as page content in the font of one document; every text is encoded once.
+
+    Attributes:
+        font: name of the font's first subset on the pages; nearly every text needs no other.
+    """
 
     def __init__(self, document: Any) -> None:
         self._document = document
         fonts.font().splitString(" ", document)  # opens the first subset
+        self.font: str = fonts.font().getSubsetInternalName(0, document)
         self._shown: dict[tuple[str, float], str] = {}
 
     def show(self, text: str, size: float) -> str:
-        """Return the operators that show a text at the place where the pen is."""
+        """Return the operators that show a text at the place where the pen is.
+
+        The first subset at ``size`` is taken for set, and is set again afterwards.
+        """
+        if text.isascii():  # the first subset of the font holds ASCII under its own codes
+            return f"({text.translate(_ESCAPED)}) Tj" if _SPECIAL(text) else f"({text}) Tj"
         known = self._shown.get((text, size))
         if known is None:
             known = self._shown[text, size] = self._encode(text, size)
@@ -37,21 +49,21 @@ class Pen:
 
     def _encode(self, text: str, size: float) -> str:
         font = fonts.font()
-        if text.isascii():  # the first subset of the font holds ASCII under its own codes
-            name = font.getSubsetInternalName(0, self._document)
-            return f"{name} {size:g} Tf ({text.translate(_ESCAPED)}) Tj"
-        return " ".join(
-            f"{font.getSubsetInternalName(subset, self._document)} {size:g} Tf "
-            f"({escapePDF(chunk)}) Tj"
-            for subset, chunk in font.splitString(text, self._document)
-        )
+        pieces = []
+        for subset, chunk in font.splitString(text, self._document):
+            shown = f"({escapePDF(chunk)}) Tj"
+            if subset:
+                name = font.getSubsetInternalName(subset, self._document)
+                shown = f"{name} {size:g} Tf {shown} {self.font} {size:g} Tf"
+            pieces.append(shown)
+        return " ".join(pieces)
 
 
 @cache
 def _look(look: Style) -> str:
-    """Return the operators that set colour and weight of a text."""
+    """Return the operators that set size, colour and weight of a text."""
     weight = f"2 Tr {look.size * _BOLD_STROKE:.3f} w {look.colour} RG" if look.bold else "0 Tr"
-    return f"{look.colour} rg {weight}"
+    return f"{look.size:g} Tf {look.colour} rg {weight}"
 
 
 @dataclass(frozen=True, slots=True)
@@ -77,17 +89,38 @@ class Heading:
 
 
 class Page:
-    """One page: its content as it is written."""
+    """One page: its content as it is written.
+
+    Texts that follow one another share one text object, and what is set already is not set again.
+    The rules between the rows of tables are drawn together, last.
+    """
 
     def __init__(self, pen: Pen) -> None:
         self._pen = pen
-        self.code: list[str] = []
+        self._code: list[str] = []
+        self._set: Style | None = None  # style of the open text object
+        self._rules: list[str] = []
+
+    def content(self) -> str:
+        """Return everything on the page as page content."""
+        rules = [f"{style.HAIRLINE} RG 0.4 w", *self._rules, "S"] if self._rules else []
+        return "\n".join([*self._code, *(("ET",) if self._set else ()), *rules, ""])
+
+    def _draw(self, code: str) -> None:
+        if self._set is not None:
+            self._code.append("ET")
+            self._set = None
+        self._code.append(code)
 
     def text(self, x: float, y: float, text: str, look: Style) -> None:
         """Set one line with its left end at x and its baseline at y."""
-        if text:
-            shown = self._pen.show(text, look.size)
-            self.code.append(f"BT {_look(look)} 1 0 0 1 {x:.2f} {y:.2f} Tm {shown} ET")
+        if not text:
+            return
+        if look != self._set:
+            start = "BT " if self._set is None else ""
+            self._code.append(f"{start}{self._pen.font} {_look(look)}")
+            self._set = look
+        self._code.append(f"1 0 0 1 {x:.2f} {y:.2f} Tm {self._pen.show(text, look.size)}")
 
     def right(self, x: float, y: float, text: str, look: Style) -> None:
         """Set one line with its right end at x."""
@@ -97,11 +130,15 @@ class Page:
         """Set one line with its middle at x."""
         self.text(x - fonts.width(text, look.size) / 2.0, y, text, look)
 
+    def rule(self, x1: float, x2: float, y: float) -> None:
+        """Draw the hairline below a row."""
+        self._rules.append(f"{x1:.2f} {y:.2f} m {x2:.2f} {y:.2f} l")
+
     def line(
         self, x1: float, y1: float, x2: float, y2: float, colour: str, thick: float = 0.5
     ) -> None:
         """Draw a straight line."""
-        self.code.append(f"{colour} RG {thick:g} w {x1:.2f} {y1:.2f} m {x2:.2f} {y2:.2f} l S")
+        self._draw(f"{colour} RG {thick:g} w {x1:.2f} {y1:.2f} m {x2:.2f} {y2:.2f} l S")
 
     def box(
         self, x: float, y: float, wide: float, high: float, fill: str = "", edge: str = ""
@@ -109,7 +146,7 @@ class Page:
         """Draw a rectangle from its lower left corner, filled, edged or both."""
         paint = "B" if fill and edge else "f" if fill else "S"
         colours = (f"{fill} rg " if fill else "") + (f"{edge} RG 0.6 w " if edge else "")
-        self.code.append(f"{colours}{x:.2f} {y:.2f} {wide:.2f} {high:.2f} re {paint}")
+        self._draw(f"{colours}{x:.2f} {y:.2f} {wide:.2f} {high:.2f} re {paint}")
 
     def shape(self, corners: list[tuple[float, float]], fill: str, edge: str = "") -> None:
         """Draw a closed polygon."""
@@ -117,7 +154,7 @@ class Page:
             f"{x:.2f} {y:.2f} {'m' if place == 0 else 'l'}" for place, (x, y) in enumerate(corners)
         )
         colours = f"{fill} rg " + (f"{edge} RG 0.8 w " if edge else "")
-        self.code.append(f"{colours}{path} h {'B' if edge else 'f'}")
+        self._draw(f"{colours}{path} h {'B' if edge else 'f'}")
 
 
 @dataclass
@@ -157,7 +194,8 @@ class Book:
     def clean(self, text: str) -> str:
         """Return a text that can be printed; what had to be replaced is remembered."""
         printable, missing = fonts.printable(text)
-        self.missing.update(dict.fromkeys(missing))
+        if missing:
+            self.missing.update(dict.fromkeys(missing))
         return printable
 
 

@@ -80,8 +80,10 @@ def _window(
     base = y - _BAR + 1.2
     if not window.open_low and window.low_text:
         wide = fonts.width(window.low_text, _END.size)
-        page.box(start - wide - 3.5, base - 1.0, wide + 2.0, _END.size, fill=style.WHITE)
-        page.text(start - wide - 2.5, base, window.low_text, _END)
+        # inside the bar where it would stand in the words at the left
+        at = start - wide - 2.5 if start - wide > left - 4.0 else start + 2.5
+        page.box(at - 1.0, base - 1.0, wide + 2.0, _END.size, fill=style.WHITE)
+        page.text(at, base, window.low_text, _END)
     if not window.open_high and window.high_text:
         wide = fonts.width(window.high_text, _END.size)
         page.box(end + 1.5, base - 1.0, wide + 2.0, _END.size, fill=style.WHITE)

@@ -32,7 +32,7 @@ class Style(NamedTuple):
     @property
     def leading(self) -> float:
         """Distance between two lines [pt]."""
-        return self.size * 1.28
+        return self.size * 1.25
 
 
 TAG = Style(23.0, True, ACCENT)
@@ -41,6 +41,11 @@ SECTION = Style(9.5, True, ACCENT)
 SUBSECTION = Style(8.0, True)
 BODY = Style(8.0)
 STRONG = Style(8.0, True)
+#: of the lists in two columns
+LISTED = Style(7.5)
+#: of the annex
+FINE = Style(7.0)
+FINE_STRONG = Style(7.0, True)
 QUIET = Style(7.0, False, GREY)
 SMALL = Style(6.5, False, GREY)
 HEADING = Style(7.0, True, GREY)

@@ -9,7 +9,7 @@ from specsheet.render import shared
 from specsheet.render.shared import mark, numbers, portions
 from specsheet.render.text import ruler
 from specsheet.render.text.layout import heading, table, wrapped
-from specsheet.sheet.model import Row, Sheet, Table
+from specsheet.sheet.model import Row, Sheet, Table, Working
 from specsheet.sheet.words import LEGEND, MARKS, named
 
 _NARROWEST = 80
@@ -144,18 +144,28 @@ def _prose(sheet: Sheet, width: int) -> list[str]:
 
 
 def _annex(sheet: Sheet, width: int) -> list[str]:
-    lines = heading("Calculation annex", width) if sheet.annex else []
-    for working in sheet.annex:
-        name = named(working.label, working.symbol)
-        lines += wrapped(f"{name} {numbers(sheet, working.source)}".rstrip(), width)
-        lines += [f"  {line}" for line in wrapped(working.equation or "–", width - 2)]
-        if not working.inputs:
-            continue
-        for part in portions(len(working.columns), (width - 49) // 11):
-            names = working.columns[part] or ("",)
-            rows = [[*_row(sheet, row, part)[:-1], ""] for row in (*working.inputs, working.result)]
-            lines += [f"  {line}".rstrip() for line in _by_point(rows, names, width - 2)]
-    return lines
+    """Return each equation with the values it gives and the numbers put in."""
+    if not sheet.annex:
+        return []
+    lines = heading("Calculation annex", width)
+    if len(sheet.points.columns) > 1:
+        order = " | ".join(sheet.points.columns)
+        lines += wrapped(f"Values that vary stand in the order {order}.", width)
+    for group in shared.groups(sheet.annex):
+        lines += [line for one in group for line in _result(one, width)]
+        working = group[0]
+        said = f"{working.equation or '–'} {numbers(sheet, working.source)}".rstrip()
+        for text in (said, shared.put_in(working)):
+            lines += [f"    {line}" for line in wrapped(text, width - 4)] if text else []
+    return [line.replace(shared.FIXED, " ") for line in lines]
+
+
+def _result(working: Working, width: int) -> list[str]:
+    name = named(working.label, working.symbol)
+    shown = shared.figures(working.result)
+    if len(name) + len(shown) + 2 <= width:
+        return [f"{name}{shown:>{width - len(name)}}"]
+    return [*wrapped(name, width), *(f"  {line}" for line in wrapped(shown, width - 2))]
 
 
 def _sources(sheet: Sheet, width: int) -> list[str]:
