@@ -39,6 +39,7 @@ class Prepared:
         pipe: the pipe; its ``pipe`` is None where it cannot be had.
         statements: what is wrong with the statements as such.
         facts: the facts of the service.
+        avoided: rules by which a material is to be avoided in the service.
         words: what it is, in words ("steam", "oxygen_enriched", "solids", "viscous").
     """
 
@@ -48,6 +49,7 @@ class Prepared:
     pipe: PipeResult
     statements: tuple[Finding, ...]
     facts: ServiceFacts
+    avoided: frozenset[int]
     words: frozenset[str]
 
     def findings(self, profile: Profile | None) -> tuple[Finding, ...]:
@@ -65,6 +67,7 @@ def prepare(tag: Tag) -> Prepared:
     state = fluid.derive(tag)
     points = points_of(tag, state)
     facts = service_facts(tag, state)
+    words = service_words(tag, facts, points)
     return Prepared(
         tag,
         state,
@@ -72,7 +75,8 @@ def prepare(tag: Tag) -> Prepared:
         line.pipe_of(tag),
         check_statements(tag, points),
         facts,
-        service_words(tag, facts, points),
+        line.avoided_rules(facts, words),
+        words,
     )
 
 

@@ -59,7 +59,7 @@ class Service:
 def judge_service(prepared: Prepared, profile: Profile) -> Service:
     """Judge a family by the service alone."""
     said = remarks(profile, prepared.tag.phase, prepared.words, choosing=False)
-    unsuited = unsuited_parts(profile, prepared.facts, prepared.words)
+    unsuited = unsuited_parts(profile, prepared.avoided)
     findings = [*_suitable(prepared, profile), *said, *unsuited]
     checks: list[Check] = []
     unknown: list[str] = []

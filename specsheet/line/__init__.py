@@ -6,7 +6,12 @@ stated: what is wrong becomes a finding.
 
 from specsheet.line.assess import LineResult, assess
 from specsheet.line.cautions import CautionResult, cautions
-from specsheet.line.compatibility import MaterialResult, materials, unsuited_parts
+from specsheet.line.compatibility import (
+    MaterialResult,
+    avoided_rules,
+    materials,
+    unsuited_parts,
+)
 from specsheet.line.pipe import Pipe
 from specsheet.line.piping import PipeResult, pipe_of
 from specsheet.line.rating import RatingResult, rate
@@ -22,6 +27,7 @@ __all__ = [
     "RatingResult",
     "StraightResult",
     "assess",
+    "avoided_rules",
     "cautions",
     "materials",
     "pipe_of",

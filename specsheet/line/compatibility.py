@@ -91,22 +91,25 @@ def materials(
     return MaterialResult((*notes, _CLOSING), tuple(dict.fromkeys(findings)))
 
 
-def unsuited_parts(
-    profile: Profile, service: Service, words: frozenset[str]
-) -> tuple[Finding, ...]:
+def avoided_rules(service: Service, words: frozenset[str]) -> frozenset[int]:
+    """Return which rules call a material one to avoid in a service; ``words`` with its dangers."""
+    return frozenset(
+        index
+        for index, rule in enumerate(table("compatibility")["rule"])
+        if rule["verdict"] == "avoid" and _holds(rule, service, words)
+    )
+
+
+def unsuited_parts(profile: Profile, avoided: frozenset[int]) -> tuple[Finding, ...]:
     """Return a caution for each wetted part of a family of which every usual material is to avoid.
 
     Args:
         profile: the family's profile with its wetted parts.
-        service: facts of the service.
-        words: its words and dangers.
+        avoided: as :func:`avoided_rules` has it.
     """
+    if not avoided:
+        return ()
     rules = table("compatibility")["rule"]
-    avoided = {
-        index
-        for index, rule in enumerate(rules)
-        if rule["verdict"] == "avoid" and _holds(rule, service, words)
-    }
     found = []
     for name, choices in profile.wetted.items():
         known = [text for text in choices if text != _AS_LINE]
