@@ -48,7 +48,7 @@ def _suppose(request: Suppose) -> Supposed:
     for changes in ((), ((request.entry, request.first),)):
         tag = tagfile.suppose(request.text, changes, request.path, job).tag
         assert tag is not None  # a text that parses gives a tag
-        pair.append(sheet.build(evaluate.evaluate(tag)))
+        pair.append(sheet.build(evaluate.evaluate(tag), annexed=False))
     before, after = pair
     lines = [f"Verdict now:     {before.verdict}", f"Verdict what-if: {after.verdict}", ""]
     return Supposed(request.number, (*lines, *_changes(diff(before, after))))

@@ -53,7 +53,8 @@ def _sheet(request: Derive | Print, *, settle: bool) -> Derived:
     run = evaluate.evaluate_settled if settle else evaluate.evaluate
     evaluation = run(reading.tag)
     unsettled = not settle and evaluate.unsettled(evaluation)
-    return Derived(request.number, sheet.build(evaluation), troubles, unsettled)
+    made = sheet.build(evaluation, annexed=isinstance(request, Print))
+    return Derived(request.number, made, troubles, unsettled)
 
 
 def _print(request: Print) -> Answer:
