@@ -120,7 +120,7 @@ def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: AR
         ),
         Limit(
             "signal_fraction",
-            0.05,
+            0.1,
             None,
             Level.CAUTION,
             "below-scale",

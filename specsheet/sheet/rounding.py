@@ -42,6 +42,9 @@ KEY_STEPS = {
     "edge_thickness": 1e-4,
     "upstream_length": 1e-3,
     "downstream_length": 1e-3,
+    "capillary_count": 1.0,
+    "path_count": 1.0,
+    "tube_count": 1.0,
 }
 
 #: the same by kind; a temperature is resolved to a tenth of a kelvin, a length to 0.01 mm

@@ -76,6 +76,8 @@ def test_bounds_keep_their_own_digits(value: float, text: str) -> None:
         ("viscosity", 1.52034e-5, "dynamic_viscosity", "mPa s", "0.0152"),
         ("signal_current", 0.0127213, "current", "mA", "12.72"),
         ("saturation_margin", 14.587, "temperature_difference", "K", "14.6"),
+        ("capillary_count", 59.0, "dimensionless", "1", "59"),  # a count has no decimals
+        ("path_count", 2.0, "dimensionless", "1", "2"),
     ],
 )
 def test_each_kind_has_its_own_significance(
