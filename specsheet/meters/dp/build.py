@@ -41,8 +41,8 @@ def _ratio(device: Device) -> Derivation:
 
 def size(device: Device, request: Request) -> Element:
     """Size or rate the device for a tag; what is wrong with it becomes a finding."""
-    task = sizing.led(sizing.task(device, request))
-    sized = sizing.solve(task)
+    settled = sizing.led(sizing.task(device, request))
+    task, sized = settled.task, settled.sized
     bare = task.element(sized.size, sized.span)
     second, remarks = sizing.second_range(task, bare)
     numbers = {**bare.numbers, "second_range": second, "machined": sized.machined}

@@ -112,22 +112,40 @@ def _or_nan(request: Request, key: str) -> float:
     return np.nan if value is None else value
 
 
-def led(of: Task) -> Task:
+@dataclass(frozen=True)
+class Led:
+    """A task with the point that leads it, and what it comes to."""
+
+    task: Task
+    sized: Sized
+
+
+def led(of: Task) -> Led:
     """Return the task led by the point that gives the largest Δp with the element as sized.
 
-    The first guess is the largest qm²/ρ; expansion of a gas can make another point harder.
+    The first guess is the largest qm²/ρ; expansion of a gas can make another point harder, but not
+    where all points stand under the same conditions.
     """
     stream = of.request.stream
+    sized = solve(of)
+    if _alike(stream):
+        return Led(of, sized)
     for _ in range(_ROUNDS):
-        sized = solve(of)
         found = respond(of.device, of.element(sized.size, sized.span), stream)
         pressure = found["differential_pressure"]
         if not np.isfinite(pressure).all() or int(np.argmax(pressure)) == of.lead:
-            return of
+            break
         lead = int(np.argmax(pressure))
         margin = of.flow / float(stream.mass_flow[of.lead])
         of = replace(of, lead=lead, flow=float(stream.mass_flow[lead]) * margin)
-    return of
+        sized = solve(of)
+    return Led(of, sized)
+
+
+def _alike(stream: Stream) -> bool:
+    """Tell whether only the flow differs between the points."""
+    columns = (stream.density, stream.pressure, stream.viscosity, stream.temperature)
+    return all(bool((column == column[0]).all()) for column in columns)
 
 
 def solve(of: Task) -> Sized:
