@@ -11,14 +11,20 @@ from typing import ClassVar
 
 from textual.app import App
 from textual.binding import Binding, BindingType
+from textual.reactive import Reactive
+from textual.screen import Screen
+from textual.theme import Theme
 
-from specsheet.tui.compat import wants_no_colour
+from specsheet.tui.compat import make_switchable, wants_no_colour
 from specsheet.tui.evaluator import Evaluator, WorkerEvaluator
+from specsheet.tui.start import first_screen
 from specsheet.tui.theme import INK, THEME
-from specsheet.tui.waiting import WaitingScreen
 
 #: signals that end the program; the terminal is put back and edits stay in the journal
 _SIGNALS = ("SIGTERM", "SIGHUP")
+
+#: the library's theme of the terminal's own colours
+_NO_COLOUR = "ansi-dark"
 
 
 class FormApp(App[int], inherit_bindings=False):
@@ -31,6 +37,9 @@ class FormApp(App[int], inherit_bindings=False):
         Binding("ctrl+c", "how_to_quit", show=False),
     ]
 
+    # The theme of the class and not one set later: that would read all style sheets twice.
+    theme: Reactive[str] = Reactive(lambda: _NO_COLOUR if wants_no_colour() else INK)
+
     def __init__(self, path: Path, evaluator: Evaluator | None = None) -> None:
         """Make the application.
 
@@ -38,31 +47,32 @@ class FormApp(App[int], inherit_bindings=False):
             path: a tag file, or the folder of a job or of tags.
             evaluator: what derives; by default a worker process.
         """
-        plain = wants_no_colour()
-        super().__init__(ansi_color=plain)
+        super().__init__(ansi_color=wants_no_colour())
         self.path = path
         self.evaluator: Evaluator = WorkerEvaluator() if evaluator is None else evaluator
         self.register_theme(THEME)
-        self.theme = "ansi-dark" if plain else INK
+
+    def get_theme(self, theme_name: str) -> Theme | None:
+        """Return a theme; ours is known before it can be registered."""
+        return THEME if theme_name == INK else super().get_theme(theme_name)
+
+    def get_default_screen(self) -> Screen[object]:
+        """Return the screen that is drawn first: what was asked for, with nothing before it."""
+        screen = first_screen(self.path, self.evaluator)
+        make_switchable(self, screen)
+        return screen
 
     def on_mount(self) -> None:
-        """Take the signals and draw the first screen; everything else is loaded behind it."""
+        """Take the signals."""
         if sys.platform != "win32":
             loop = asyncio.get_running_loop()
             for name in _SIGNALS:
                 number = getattr(signal, name)
                 loop.add_signal_handler(number, self._on_signal(number))
-        self.push_screen(WaitingScreen(self.path, self._open))
 
     async def on_unmount(self) -> None:
         """End the worker."""
         await self.evaluator.close()
-
-    def _open(self) -> None:
-        """Open what was asked for. The rooms below are imported here, behind the first screen."""
-        from specsheet.tui.start import first_screen
-
-        first_screen(self, self.path, self.evaluator)
 
     def _on_signal(self, number: int) -> Callable[[], object]:
         return lambda: self.call_later(self._end, 128 + number)

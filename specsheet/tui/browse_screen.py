@@ -13,9 +13,9 @@ from specsheet.tagfile.syntax import parse
 from specsheet.tui.commands import BROWSE
 from specsheet.tui.compat import CalmScreen
 from specsheet.tui.dialogs import Choice, Pick, Prompt, Tell, matching
-from specsheet.tui.entrance import enter
 from specsheet.tui.evaluator import Evaluator
 from specsheet.tui.families import family_choices
+from specsheet.tui.form_screen import FormScreen
 from specsheet.tui.frame import footer
 from specsheet.tui.lines import Bar, Line, Lines
 from specsheet.tui.opening import new_session, open_session
@@ -104,7 +104,7 @@ class BrowseScreen(CalmScreen):
         if isinstance(session, str):
             self.app.push_screen(Tell("Not opened", [session]))
         else:
-            enter(self.app, session, self.evaluator)
+            self.app.switch_screen(FormScreen(session, self.evaluator))
 
     def action_new(self) -> None:
         """Begin a new tag: its number, then its family."""
@@ -120,7 +120,8 @@ class BrowseScreen(CalmScreen):
 
             def chosen(family: str | None) -> None:
                 if family:
-                    enter(self.app, new_session(path, tag, family), self.evaluator)
+                    session = new_session(path, tag, family)
+                    self.app.switch_screen(FormScreen(session, self.evaluator))
 
             self.app.push_screen(
                 Pick("Meter family of the new tag", matching(family_choices())), chosen

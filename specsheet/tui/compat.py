@@ -5,15 +5,17 @@
   bindings of the screen (:class:`CalmScreen`).
 * A key in a field must not lay the screen out again, nor a focus move repaint it.
 * A field must not outlive its removal.
+* The first screen can be switched for another.
 * No text of the user is ever markup: :func:`plain` and :func:`show`.
 """
 
 from __future__ import annotations
 
 import os
-from typing import ClassVar
+from typing import Any, ClassVar
 
 from textual import events
+from textual.app import App
 from textual.binding import Binding, BindingType
 from textual.content import Content
 from textual.geometry import Size
@@ -86,6 +88,11 @@ class Field(Input, inherit_bindings=False):
     def on_unmount(self) -> None:
         """Let go of the signal that would keep a removed field alive."""
         self.screen.text_selection_started_signal.unsubscribe(self)
+
+
+def make_switchable(app: App[Any], screen: Screen[Any]) -> None:
+    """Let the first screen of an application be switched for another, as pushed screens can be."""
+    screen._push_result_callback(app, None)
 
 
 class CalmScreen(Screen[None]):

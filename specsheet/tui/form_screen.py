@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Sequence
+from collections.abc import Callable
 from pathlib import Path
 
 from specsheet.tagfile.problem import Problem
@@ -11,7 +11,7 @@ from specsheet.tagfile.syntax import parse
 from specsheet.tui.dialogs import Ask, Choice, Prompt, Tell
 from specsheet.tui.evaluator import Evaluator
 from specsheet.tui.form_asking import FormAsking
-from specsheet.tui.journal import Leftover
+from specsheet.tui.journal import Leftover, survey
 from specsheet.tui.saving import Conflict, Outcome
 from specsheet.tui.session import Session
 
@@ -31,28 +31,19 @@ _RELOAD = Choice("reload", "Take what is on disk; undo brings my text back", key
 class FormScreen(FormAsking):
     """One tag."""
 
-    def __init__(
-        self,
-        session: Session,
-        evaluator: Evaluator,
-        *,
-        greeting: str = "",
-        leftovers: Sequence[Leftover] = (),
-    ) -> None:
-        """Make the screen.
+    def __init__(self, session: Session, evaluator: Evaluator) -> None:
+        """Make the screen of a session."""
+        super().__init__(session, evaluator)
+        self._leftovers: list[Leftover] = []  # unsaved edits of earlier sessions, newest first
 
-        Args:
-            session: the tag.
-            evaluator: what derives its values.
-            greeting: what is said first.
-            leftovers: unsaved edits of earlier sessions, to be offered, newest first.
-        """
-        super().__init__(session, evaluator, greeting=greeting)
-        self._leftovers = list(leftovers)
-
-    async def begin(self) -> None:
-        """Show the first page, then offer what earlier sessions left behind."""
-        await super().begin()
+    def begin(self) -> None:
+        """Ask for the values, then offer what earlier sessions left behind."""
+        super().begin()
+        found = survey(self.session.path)
+        if found.busy:
+            name = self.session.path.name
+            self.say(f"{name} has unsaved edits in another window: the later save is asked about")
+        self._leftovers = list(found.leftovers)
         self._offer()
 
     def _offer(self) -> None:

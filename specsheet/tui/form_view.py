@@ -41,26 +41,37 @@ class FormView(CalmScreen):
         (36, "-high"),
     ]
 
-    def __init__(self, session: Session, evaluator: Evaluator, *, greeting: str = "") -> None:
-        super().__init__()
+    def __init__(self, session: Session, evaluator: Evaluator) -> None:
+        super().__init__(classes=self._breakpoints())
         self.session = session
         self.evaluator = evaluator
-        self.frame = Frame(message=greeting)
-        self.pages: dict[str, Page] = {}
+        self.frame = Frame()
         self.section = "fluid" if session.get(Address("tag")) else ""
+        self.pages: dict[str, Page] = {}
         self._last_editor: Editor | None = None
         self.shown_pane = "findings"
         self.found: tuple[Item, ...] = ()
         # Answers arrive while a page is being mounted: pages change one at a time.
         self._syncing = asyncio.Lock()
 
+    def _breakpoints(self) -> str:
+        """Return the classes of the present size: set later, they would style everything twice."""
+        width, height = self.app.size
+        across = self._get_breakpoint_classes(width, self.HORIZONTAL_BREAKPOINTS)
+        return " ".join(across | self._get_breakpoint_classes(height, self.VERTICAL_BREAKPOINTS))
+
+    def _new_page(self, section: str) -> Page:
+        kind = GridPage if section in LISTS else SectionPage
+        self.pages[section] = kind(section, self.session)
+        return self.pages[section]
+
     def compose(self) -> ComposeResult:
-        """Lay out the frame; the pages come when they are first looked at."""
+        """Lay out the frame and the first page; the others come when they are first looked at."""
         yield Bar(id="title")
         yield Bar(id="scale")
         with Container(id="body"):
             with Vertical(id="left"):
-                yield Vertical(id="pages")
+                yield Vertical(self._new_page(self.section), id="pages")
                 yield Column(((), ()), classes="detail")
             with Vertical(id="side"):
                 yield Bar(id="derived-head")
@@ -75,7 +86,7 @@ class FormView(CalmScreen):
         yield Bar(id="too-small")
 
     def on_mount(self) -> None:
-        """Draw the frame at once and the first page right after."""
+        """Draw everything there is; what takes longer begins behind the drawing."""
         self.evaluator.listen(self.take)
         self.query_one("#foot", Bar).set_line(footer(FORM))
         told = "Too small: 60 x 16 is the least. Nothing is lost."
@@ -84,9 +95,8 @@ class FormView(CalmScreen):
         self._draw_frame()
         self.call_after_refresh(self.begin)
 
-    async def begin(self) -> None:
-        """Show the first page and ask for the values."""
-        await self.open_section(self.section)
+    def begin(self) -> None:
+        """Ask for the values."""
         self.request()
 
     # What is shown
@@ -113,9 +123,7 @@ class FormView(CalmScreen):
         """Show a section with the focus on an address, or on its first editor."""
         async with self._syncing:
             if section not in self.pages:
-                page = (GridPage if section in LISTS else SectionPage)(section)
-                await self.query_one("#pages").mount(page)
-                self.pages[section] = page
+                await self.query_one("#pages").mount(self._new_page(section))
             self.section = section
             for key, other in self.pages.items():
                 other.display = key == section

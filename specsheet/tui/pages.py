@@ -31,9 +31,11 @@ _EMPTY = {
 }
 
 
-def _editor(row: Row, text: str, index: int | None) -> Editor:
+def _editor(row: Row, session: Session, index: int | None) -> Editor:
     kind = ChoiceEditor if row.choices and not row.entry.words else TextEditor
-    return kind(row, text, index)
+    editor = kind(row, form.text_in(session, row, index), index)
+    editor.set_class(bool(session.refusal(address_in(editor))), "-refused", update=False)
+    return editor
 
 
 class Page(ScrollableContainer, can_focus=False):
@@ -44,11 +46,11 @@ class Page(ScrollableContainer, can_focus=False):
         everything: whether the entries that the fluid does not call for are shown as well.
     """
 
-    def __init__(self, section: str) -> None:
+    def __init__(self, section: str, rows: tuple[Row, ...]) -> None:
         super().__init__(classes="page")
         self.section = section
         self.everything = False
-        self._rows: tuple[Row, ...] = ()
+        self._rows = rows
         self._here: str | None = None
         self._notes: Mapping[Address, Item] = {}
         self._labels = Column((), classes="labels")
@@ -85,7 +87,7 @@ class Page(ScrollableContainer, can_focus=False):
             editor.mark(bool(session.refusal(address_in(editor))))
 
     def _draw_labels(self) -> None:
-        self.set_class(not self._rows, "-empty")
+        self.set_class(not self._rows, "-empty", update=self.is_attached)
         self._labels.set_lines([self._label(row) for row in self._rows] or [self._nothing()])
 
     def _nothing(self) -> Line:
@@ -118,11 +120,13 @@ def _key(row: Row) -> str:
 class SectionPage(Page):
     """A section whose entries stand one a row: label, editor, words beside it."""
 
-    def __init__(self, section: str) -> None:
-        super().__init__(section)
-        self._fields = Vertical(classes="fields")
-        self._status = Column((), classes="status")
-        self._editors: dict[str, Editor] = {}
+    def __init__(self, section: str, session: Session) -> None:
+        """Make the page with all its editors, so that it is drawn whole at once."""
+        super().__init__(section, form.rows(session, section))
+        self._editors = _new_editors(self._rows, session, None)
+        self._fields = _stack(self._editors, "fields")
+        self._status = Column([self._beside(session, row) for row in self._rows], classes="status")
+        self._draw_labels()
 
     def compose(self) -> ComposeResult:
         """Lay out the three columns."""
@@ -155,11 +159,14 @@ class SectionPage(Page):
 class GridPage(Page):
     """A list section: one row an entry, one column an operating point or revision."""
 
-    def __init__(self, section: str) -> None:
-        super().__init__(section)
-        self._grid = Horizontal(classes="grid")
-        self._columns: list[Vertical] = []
-        self._cells: list[dict[str, Editor]] = []
+    def __init__(self, section: str, session: Session) -> None:
+        """Make the page with all its editors, so that it is drawn whole at once."""
+        indices = range(len(session.items(section)))
+        super().__init__(section, form.rows(session, section) if indices else ())
+        self._cells = [_new_editors(self._rows, session, index) for index in indices]
+        self._columns = [_stack(cells, "column") for cells in self._cells]
+        self._grid = Horizontal(*self._columns, classes="grid")
+        self._draw_labels()
 
     def compose(self) -> ComposeResult:
         """Lay out the labels and the columns."""
@@ -204,6 +211,17 @@ class GridPage(Page):
         self._draw_labels()
 
 
+def _new_editors(rows: Iterable[Row], session: Session, index: int | None) -> dict[str, Editor]:
+    return {_key(row): _editor(row, session, index) for row in rows}
+
+
+def _stack(editors: Mapping[str, Editor], classes: str) -> Vertical:
+    """Return editors one below the other."""
+    stack = Vertical(*editors.values(), classes=classes)
+    stack.styles.height = max(1, len(editors))
+    return stack
+
+
 async def _arrange(
     parent: Vertical,
     editors: dict[str, Editor],
@@ -226,7 +244,7 @@ async def _arrange(
     for key, row in wanted.items():
         present = editors.get(key)
         if present is None or present in gone:
-            present = _editor(row, form.text_in(session, row, index), index)
+            present = _editor(row, session, index)
             fresh.append(present)
         elif fresh:
             await parent.mount_all(fresh, before=present)

@@ -10,9 +10,10 @@ import pytest
 import textual
 from textual.app import App, ComposeResult
 from textual.binding import Binding
+from textual.screen import Screen
 from textual.widgets import Input, Static
 
-from specsheet.tui.compat import CalmScreen, Field, plain, show, wants_no_colour
+from specsheet.tui.compat import CalmScreen, Field, make_switchable, plain, show, wants_no_colour
 from tests.tui.conftest import HOSTILE, run, send
 
 
@@ -148,3 +149,20 @@ def test_no_colour_follows_its_convention(
     if value is not None:
         monkeypatch.setenv("NO_COLOR", value)
     assert wants_no_colour() is wanted
+
+
+def test_the_first_screen_can_be_switched_for_another() -> None:
+    class Switched(App[None]):
+        def get_default_screen(self) -> Screen[None]:
+            screen: Screen[None] = CalmScreen(id="first")
+            make_switchable(self, screen)
+            return screen
+
+    async def main() -> None:
+        app = Switched()
+        async with app.run_test() as pilot:
+            await app.switch_screen(CalmScreen(id="second"))
+            await pilot.pause()
+            assert [screen.id for screen in app.screen_stack] == ["second"]
+
+    run(main)

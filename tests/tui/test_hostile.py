@@ -56,7 +56,7 @@ def test_every_screen_shows_the_text_as_typed(hostile_file: Path, size: tuple[in
         async with app.run_test(size=size, notifications=True) as pilot:
             await until(pilot, lambda: isinstance(app.screen, dialogs.Ask))
             await send(pilot, "r")
-            form = app.screen_stack[1]
+            form = app.screen_stack[0]
             assert isinstance(form, FormScreen)
             await until(pilot, lambda: app.screen is form and bool(form.session.refused))
             for section in SECTIONS:
