@@ -6,7 +6,7 @@ from dataclasses import dataclass
 from enum import Enum, auto
 from pathlib import Path
 
-from specsheet.tagfile.save import SaveError, save
+from specsheet.tagfile.writing import SaveError, save
 from specsheet.tui.journal import digest
 
 

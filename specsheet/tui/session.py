@@ -16,7 +16,7 @@ from pathlib import Path
 from typing import Any
 
 from specsheet.fields import Entry
-from specsheet.tagfile.adopt import adopt
+from specsheet.tagfile.adoption import adopt
 from specsheet.tagfile.document import EditError
 from specsheet.tagfile.known import family_entries
 from specsheet.tagfile.syntax import parse

@@ -175,7 +175,7 @@ def test_a_disk_that_refuses_keeps_the_edits(
 
     session = opened(tag_file)
     session.edit(SIZE, "DN 100")
-    monkeypatch.setattr(sys.modules["specsheet.tagfile.save"], "_replace", full)
+    monkeypatch.setattr(sys.modules["specsheet.tagfile.writing"], "_replace", full)
     outcome = session.save()
     assert outcome.conflict is Conflict.FAILED
     assert "full" in outcome.message

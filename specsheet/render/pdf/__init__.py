@@ -12,8 +12,8 @@ from pathlib import Path
 
 from specsheet.render.pdf.compose import to_bytes
 from specsheet.sheet.model import Sheet
-from specsheet.tagfile.save import SaveError as WriteError
-from specsheet.tagfile.save import save
+from specsheet.tagfile.writing import SaveError as WriteError
+from specsheet.tagfile.writing import save
 
 __all__ = ["WriteError", "file_name", "to_bytes", "write"]
 
