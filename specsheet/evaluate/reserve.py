@@ -94,11 +94,20 @@ def margin(limit: Limit, values: Array) -> Array:
     return margins
 
 
+def looked_at(stream: Stream) -> NDArray[np.intp]:
+    """Return the points whose flow is scaled: all, or one where they differ in the flow only.
+
+    There every limit flips at the same flow, whichever point it is seen from.
+    """
+    order = np.argsort(stream.mass_flow)
+    return order[order.size // 2 :][:1] if stream.alike else np.arange(order.size)
+
+
 def scaled(stream: Stream) -> Stream:
-    """Return every condition at every factor: n conditions give n * len(FACTORS) lanes."""
-    count = stream.mass_flow.size
-    lanes = stream.take(np.repeat(np.arange(count), FACTORS.size))
-    return lanes.with_flow(lanes.mass_flow * np.tile(FACTORS, count))
+    """Return the points of :func:`looked_at` at every factor: m points give m * len(FACTORS)."""
+    points = looked_at(stream)
+    lanes = stream.take(np.repeat(points, FACTORS.size))
+    return lanes.with_flow(lanes.mass_flow * np.tile(FACTORS, points.size))
 
 
 def find_flips(
@@ -110,21 +119,21 @@ def find_flips(
         model: the meter.
         stream: the operating points, n of them.
         limits: limits driven by the flow.
-        grid: response over :func:`scaled`, each of shape (n * len(FACTORS),).
+        grid: response over :func:`scaled`.
     """
     if not limits:
         return NO_FLIPS
+    points = looked_at(stream)
     bounds = Bounds.of(limits)
     values = np.array([grid[limit.key] for limit in limits])
-    shape = (len(limits), stream.mass_flow.size, FACTORS.size)
-    margins = bounds.margins(values).reshape(shape)
+    margins = bounds.margins(values).reshape(len(limits), points.size, FACTORS.size)
     holds = margins >= 0.0
     of_limit, of_point, of_step = np.nonzero(holds[..., 1:] != holds[..., :-1])
     if not of_limit.size:
         return NO_FLIPS
     search = _Search(
         model,
-        stream.take(np.repeat(of_point, _CUTS.size)),
+        stream.take(np.repeat(points[of_point], _CUTS.size)),
         bounds.take(of_limit),
         [limits[index].key for index in of_limit.tolist()],
     )
@@ -133,7 +142,22 @@ def find_flips(
         (logs[of_step], logs[of_step + 1]),
         (margins[of_limit, of_point, of_step], margins[of_limit, of_point, of_step + 1]),
     )
-    return Flips(of_limit, of_point, factor, holds[of_limit, of_point, of_step + 1])
+    rising = holds[of_limit, of_point, of_step + 1]
+    found = Flips(of_limit, points[of_point], factor, rising)
+    return found if points.size == stream.mass_flow.size else _seen_from_all(found, stream)
+
+
+def _seen_from_all(flips: Flips, stream: Stream) -> Flips:
+    """Return the flips of one point as each of n points sees them, its own flow at factor 1."""
+    count = stream.mass_flow.size
+    points = np.tile(np.arange(count), flips.limit.size)
+    flows = np.repeat(flips.factor * stream.mass_flow[flips.point], count)
+    return Flips(
+        np.repeat(flips.limit, count),
+        points,
+        flows / stream.mass_flow[points],
+        np.repeat(flips.rising, count),
+    )
 
 
 @dataclass(frozen=True)

@@ -55,6 +55,15 @@ class Stream:
         """Volume flow at operating conditions [m3/s]."""
         return self.mass_flow / self.density
 
+    @property
+    def alike(self) -> bool:
+        """Whether all conditions are the same but for the flow."""
+        columns = (getattr(self, name) for name in self.__dataclass_fields__ if name != "mass_flow")
+        return all(
+            bool(np.array_equal(column, np.broadcast_to(column[:1], column.shape), equal_nan=True))
+            for column in columns
+        )
+
     def take(self, indices: NDArray[np.intp]) -> Stream:
         """Return the stream at the chosen conditions (repeats allowed)."""
         return Stream(*(getattr(self, name)[indices] for name in self.__dataclass_fields__))

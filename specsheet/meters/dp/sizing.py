@@ -128,7 +128,7 @@ def led(of: Task) -> Led:
     """
     stream = of.request.stream
     sized = solve(of)
-    if _alike(stream):
+    if stream.alike:
         return Led(of, sized)
     for _ in range(_ROUNDS):
         found = respond(of.device, of.element(sized.size, sized.span), stream)
@@ -140,12 +140,6 @@ def led(of: Task) -> Led:
         of = replace(of, lead=lead, flow=float(stream.mass_flow[lead]) * margin)
         sized = solve(of)
     return Led(of, sized)
-
-
-def _alike(stream: Stream) -> bool:
-    """Tell whether only the flow differs between the points."""
-    columns = (stream.density, stream.pressure, stream.viscosity, stream.temperature)
-    return all(bool((column == column[0]).all()) for column in columns)
 
 
 def solve(of: Task) -> Sized:
