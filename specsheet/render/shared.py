@@ -3,14 +3,18 @@
 from __future__ import annotations
 
 import math
+import re
 from collections.abc import Iterable, Sequence
 
 from specsheet.findings import Origin
 from specsheet.sheet.model import Row, Sheet, Table, Working
 from specsheet.sheet.words import MARKS, named
+from specsheet.sheet.words import label as label_of
 
 #: a space at which no line breaks
 FIXED = "\u00a0"
+
+_ENTRY = re.compile(r"(meter|require|line|design|fluid|points|job)(\.[a-z_0-9]+)+")
 
 
 def marks(origins: Iterable[Origin]) -> str:
@@ -27,6 +31,13 @@ def numbers(sheet: Sheet, source: str) -> str:
     """Return the numbers of the sources of a row ("[3]")."""
     found = sheet.numbers(source)
     return f"[{','.join(map(str, found))}]" if found else ""
+
+
+def source(citation: str) -> str:
+    """Return a citation in words: the path of an entry stands for what this sheet says there."""
+    if not _ENTRY.fullmatch(citation):
+        return citation
+    return f"{label_of(citation)}, as on this sheet ({citation})"
 
 
 def values(row: Row, part: slice) -> list[str]:

@@ -48,3 +48,9 @@ def test_inputs_go_by_symbol_and_carry_every_point() -> None:
     reynolds = next(one for one in annex if one.key == "reynolds_number")
     said = shared.put_in(reynolds).replace(shared.FIXED, " ")
     assert said.startswith("● qm = 1.116 | 3.1 | 4.2 t/h; ○ D = 154.39 mm; ○ μ = ")
+
+
+def test_a_source_that_is_an_entry_is_put_into_words() -> None:
+    assert shared.source("require.uncertainty").endswith(", as on this sheet (require.uncertainty)")
+    for citation in ("ISO 5167-2:2003, 5.3.2", "house limit, job.velocity_limits", "definition"):
+        assert shared.source(citation) == citation

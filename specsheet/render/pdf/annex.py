@@ -7,7 +7,7 @@ from collections.abc import Sequence
 from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.page import Columns, Frame
 from specsheet.render.pdf.style import Style
-from specsheet.render.shared import FIXED, figures, groups, numbers, put_in
+from specsheet.render.shared import FIXED, figures, groups, numbers, put_in, source
 from specsheet.sheet.model import Sheet, Working
 from specsheet.sheet.words import named
 
@@ -95,8 +95,8 @@ def _sources(frame: Columns, sheet: Sheet) -> None:
         frame.keep(60.0)
         frame.heading("Sources")
         frame.y -= 2.0
-    for number, source in enumerate(sheet.sources, start=1):
-        lines = _lines(frame, source, frame.width - _NUMBER)
+    for number, cited in enumerate(sheet.sources, start=1):
+        lines = _lines(frame, source(cited), frame.width - _NUMBER)
         frame.keep(style.FINE.leading)
         frame.page.text(frame.x, frame.y - style.FINE.size, f"[{number}]", style.QUIET)
         _set(frame, lines, style.FINE, _NUMBER)

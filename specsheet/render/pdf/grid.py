@@ -61,8 +61,11 @@ class _Row(NamedTuple):
     cells: Sequence[_Cell]
     ornament: Ornament | None
     lines: int
-    leading: float
     size: float  # of the largest letters
+
+    @property
+    def leading(self) -> float:
+        return self.size * style.LEADING
 
     @property
     def height(self) -> float:
@@ -76,17 +79,23 @@ def grid(
     if not rows:
         return
     made = [_made(frame, columns, row) for row in rows]
-    heights = [row.height for row in made]
-    whole = _TITLE + sum(heights)
-    start = _TITLE + min(sum(heights[:_START]), frame.full / 2.0)
+    whole = sum(row.height for row in made)
+    start = min(sum(row.height for row in made[:_START]), frame.full / 2.0)
     frame.skip(gap)
-    frame.keep(whole if whole <= frame.full * _WHOLE else start)
+    frame.keep(_TITLE + (whole if _TITLE + whole <= frame.full * _WHOLE else start))
     if title:
         frame.heading(title)
+    _rows(frame, title, columns, made)
+
+
+def _rows(frame: Frame, title: str, columns: Sequence[Column], made: Sequence[_Row]) -> None:
+    """Set headings and rows, and go on overleaf where the page is full."""
     _headings(frame, columns)
     for place, row in enumerate(made):
-        needed = sum(heights[place:]) if place == len(made) - 2 else heights[place]
-        if frame.room < needed <= frame.full - _TITLE:  # the last row is not left alone
+        needed = row.height
+        if place == len(made) - 2:  # the last row is not left alone
+            needed += made[-1].height
+        if frame.room < needed <= frame.full - _TITLE:
             _overleaf(frame, title, columns)
         _row(frame, title, columns, row)
 
@@ -102,20 +111,21 @@ def halves(frame: Frame, title: str, columns: Sequence[Column], rows: Sequence[L
     """
     if not rows:
         return
-    heights = [_made(frame, columns, row).height for row in rows]
+    made = [_made(frame, columns, row) for row in rows]
+    half = sum(row.height for row in made) / 2.0
     cut, left = 0, 0.0
-    while left < sum(heights) / 2.0:
-        left += heights[cut]
+    while left < half:
+        left += made[cut].height
         cut += 1
     frame.skip(11.0)
-    frame.keep(_TITLE + min(left, frame.full / 4.0))
+    frame.keep(_TITLE + min(left, frame.full * _WHOLE))
     frame.heading(title)
     wide = (frame.width - style.GUTTER) / 2.0
     ends = []
-    for x, part in ((frame.x, rows[:cut]), (frame.x + wide + style.GUTTER, rows[cut:])):
-        half = Frame(frame.book, x, wide, frame.index, frame.y)
-        grid(half, "", columns, part, gap=0.0)
-        ends.append((half.index, -half.y))
+    for x, part in ((frame.x, made[:cut]), (frame.x + wide + style.GUTTER, made[cut:])):
+        column = Frame(frame.book, x, wide, frame.index, frame.y)
+        _rows(column, "", columns, part)
+        ends.append((column.index, -column.y))
     frame.index, frame.y = max(ends)[0], -max(ends)[1]
 
 
@@ -131,20 +141,21 @@ def _headings(frame: Frame, columns: Sequence[Column]) -> None:
 def _made(frame: Frame, columns: Sequence[Column], line: Line) -> _Row:
     """Return a row with its texts broken into lines."""
     cells = []
-    x = leading = size = 0.0
+    x = size = 0.0
     count = 1
     for column, cell in zip(columns, line.cells, strict=True):
         text, look = (cell, column.look) if isinstance(cell, str) else cell
-        size = max(size, look.size)
-        leading = max(leading, look.leading)
+        if look.size > size:
+            size = look.size
         if text:
             room = max(column.width - _BETWEEN, look.size)
             lines = wrap.lines(frame.book.clean(text), room, look.size)
             edge = x + column.width - _BETWEEN if column.right else x
             cells.append(_Cell(lines, look, edge, column.right))
-            count = max(count, len(lines))
+            if len(lines) > count:
+                count = len(lines)
         x += column.width
-    return _Row(cells, line.ornament, count, leading, size)
+    return _Row(cells, line.ornament, count, size)
 
 
 def _row(frame: Frame, title: str, columns: Sequence[Column], row: _Row) -> None:

@@ -23,17 +23,17 @@ _BOLD_STROKE = 0.035  # of the size: the stroke that makes a regular letter look
 
 
 class Pen:
-    """Writes text as page content in the font of one document; every text is encoded once.
+    """Writes text as page content in the font of one document; every letter is encoded once.
 
     Attributes:
-        font: name of the font's first subset on the pages; nearly every text needs no other.
+        font: name of the font's first subset on the pages; nearly every letter is in it.
     """
 
     def __init__(self, document: Any) -> None:
         self._document = document
         fonts.font().splitString(" ", document)  # opens the first subset
         self.font: str = fonts.font().getSubsetInternalName(0, document)
-        self._shown: dict[tuple[str, float], str] = {}
+        self._codes: dict[float, _Codes] = {}
 
     def show(self, text: str, size: float) -> str:
         """Return the operators that show a text at the place where the pen is.
@@ -42,21 +42,30 @@ class Pen:
         """
         if text.isascii():  # the first subset of the font holds ASCII under its own codes
             return f"({text.translate(_ESCAPED)}) Tj" if _SPECIAL(text) else f"({text}) Tj"
-        known = self._shown.get((text, size))
-        if known is None:
-            known = self._shown[text, size] = self._encode(text, size)
-        return known
+        codes = self._codes.get(size)
+        if codes is None:
+            codes = self._codes[size] = _Codes(self, size)
+        return f"({text.translate(codes)}) Tj"
 
-    def _encode(self, text: str, size: float) -> str:
+    def code(self, letter: str, size: float) -> str:
+        """Return a letter as it stands in a shown text; one of another subset sets its font."""
         font = fonts.font()
-        pieces = []
-        for subset, chunk in font.splitString(text, self._document):
-            shown = f"({escapePDF(chunk)}) Tj"
-            if subset:
-                name = font.getSubsetInternalName(subset, self._document)
-                shown = f"{name} {size:g} Tf {shown} {self.font} {size:g} Tf"
-            pieces.append(shown)
-        return " ".join(pieces)
+        ((subset, chunk),) = font.splitString(letter, self._document)
+        if not subset:
+            return str(escapePDF(chunk))
+        name = font.getSubsetInternalName(subset, self._document)
+        return f") Tj {name} {size:g} Tf ({escapePDF(chunk)}) Tj {self.font} {size:g} Tf ("
+
+
+class _Codes(dict[int, str]):
+    """The letters met so far as a table for ``str.translate``, at one size."""
+
+    def __init__(self, pen: Pen, size: float) -> None:
+        self._pen = pen
+        self._size = size
+
+    def __missing__(self, code: int) -> str:
+        return self.setdefault(code, self._pen.code(chr(code), self._size))
 
 
 @cache

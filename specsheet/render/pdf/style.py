@@ -12,6 +12,8 @@ FOOT = 50.0
 #: height of the line that names the tag on every page but the first
 RUNNING_HEAD = 20.0
 GUTTER = 20.0
+#: distance between two lines as a multiple of the size
+LEADING = 1.25
 
 INK = "0.11 0.13 0.15"
 GREY = "0.40 0.43 0.45"
@@ -32,7 +34,7 @@ class Style(NamedTuple):
     @property
     def leading(self) -> float:
         """Distance between two lines [pt]."""
-        return self.size * 1.25
+        return self.size * LEADING
 
 
 TAG = Style(23.0, True, ACCENT)

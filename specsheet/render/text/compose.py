@@ -171,5 +171,6 @@ def _result(working: Working, width: int) -> list[str]:
 def _sources(sheet: Sheet, width: int) -> list[str]:
     if not sheet.sources:
         return []
-    rows = [[f"[{number}]", source] for number, source in enumerate(sheet.sources, start=1)]
+    cited = enumerate(map(shared.source, sheet.sources), start=1)
+    rows = [[f"[{number}]", source] for number, source in cited]
     return [*heading("Sources", width), *table(rows, width, (True, False))]
