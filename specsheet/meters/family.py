@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field, replace
+from functools import cached_property
 
 import numpy as np
 from numpy.typing import NDArray
@@ -55,12 +56,12 @@ class Stream:
         """Volume flow at operating conditions [m3/s]."""
         return self.mass_flow / self.density
 
-    @property
+    @cached_property
     def alike(self) -> bool:
         """Whether all conditions are the same but for the flow."""
         columns = (getattr(self, name) for name in self.__dataclass_fields__ if name != "mass_flow")
         return all(
-            bool(np.array_equal(column, np.broadcast_to(column[:1], column.shape), equal_nan=True))
+            bool(((column == column[:1]) | np.isnan(column) & np.isnan(column[:1])).all())
             for column in columns
         )
 
