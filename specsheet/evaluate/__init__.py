@@ -2,6 +2,8 @@
 
 * :mod:`specsheet.evaluate.prepare`  what every family shares on one tag
 * :mod:`specsheet.evaluate.service`  what the service rules out, whatever the size
+* :mod:`specsheet.evaluate.remarks`  what usual practice says of a family in a service
+* :mod:`specsheet.evaluate.state`    where phase and flange rating flip
 * :mod:`specsheet.evaluate.by_limits` a family of which only the profile is known
 * :mod:`specsheet.evaluate.flows`    the stated flow as mass flow
 * :mod:`specsheet.evaluate.stream`   operating points as arrays

@@ -55,8 +55,9 @@ def derived_at(
 
 
 def _derived(value: float, derivation: Derivation | None) -> Result:
-    source = "" if derivation is None else derivation.source
-    return Result(value, Origin.DERIVED, source)
+    if derivation is None:
+        return Result(value, Origin.DERIVED)
+    return Result(value, derivation.origin, derivation.source)
 
 
 def _conditions(tag: Tag, point: Point, state: State | None) -> dict[str, Result]:

@@ -190,5 +190,6 @@ _DERIVATIONS = (
         "ϖ = K ρ vm² / 2, K usual for the family, and the reducers",
         PRACTICE,
         ("density", "meter_velocity"),
+        Origin.TYPICAL,
     ),
 )

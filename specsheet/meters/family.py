@@ -83,12 +83,14 @@ class Derivation:
         equation: in plain text, with the symbols of the glossary.
         source: citation.
         inputs: glossary keys of the values put in.
+        origin: of the result; typical where a figure usual for the family decides it.
     """
 
     key: str
     equation: str
     source: str
     inputs: tuple[str, ...] = ()
+    origin: Origin = Origin.DERIVED
 
 
 @dataclass(frozen=True, slots=True)

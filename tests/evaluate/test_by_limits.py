@@ -137,3 +137,9 @@ def test_a_reserve_says_how_much_the_solids_may_grow() -> None:
     assert check.reserve is not None
     assert check.reserve.at == 0.01
     assert check.reserve.fraction == pytest.approx(1.0)
+
+
+def test_a_loss_by_a_usual_coefficient_is_typical_and_one_by_equations_derived() -> None:
+    for family, origin in (("turbine_woltman", Origin.TYPICAL), ("vortex", Origin.DERIVED)):
+        found = evaluate(service("water", family)).points[0].values["pressure_loss"]
+        assert found.origin is origin
