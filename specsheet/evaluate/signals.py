@@ -45,12 +45,14 @@ class Signal:
             known: glossary keys that the family puts out.
         """
         kinds = dict(_readable(tag, family, known))
+        reason = ""
         for kind, key in kinds.items():
             held = quantity.parse(text, kind)
             if isinstance(held, Quantity):
                 return _of(held, key, tag, text)
+            reason = reason or held.message
         wanted = ", ".join(f"{in_sentence(key)} ({_unit(kind)})" for kind, key in kinds.items())
-        return f"a signal of this family was wanted: {wanted}; {text!r} came"
+        return f"a signal of this family was wanted: {wanted}; {reason}"
 
 
 def _readable(tag: Tag, family: Family, known: Container[str]) -> Iterator[tuple[str, str]]:

@@ -129,8 +129,8 @@ def test_signal_above_the_range_is_told() -> None:
         ("3.9 mA", "4 mA, 0 % of the output, is no flow"),
         ("0 %", "4 mA, 0 % of the output, is no flow"),
         ("0 mbar", "a signal above zero was wanted"),
-        ("12,4 mA", "'12,4 mA' came"),
-        ("", "'' came"),
+        ("12,4 mA", "the decimal mark is a point"),
+        ("125", "the unit is missing"),
     ],
 )
 def test_what_is_no_signal_is_refused_in_words(text: str, words: str) -> None:
