@@ -65,7 +65,7 @@ def build(evaluation: Evaluation, *, annexed: bool = True) -> Sheet:
     units.flow = flow = axis.of(evaluation, units)
     values = Values(evaluation, units)
     points = tables.points(tag)
-    others = (*tables.by_point(values), *tables.single(evaluation, units))
+    others = (*tables.by_point(values), *tables.single(values))
     budget = tables.budget(evaluation)
     checked = limits.limits(evaluation, units, flow)
     findings = tuple(limits.finding(item, units, flow) for item in evaluation.findings)

@@ -11,7 +11,6 @@ from specsheet.findings import Origin
 from specsheet.quantity.value import Base, Quantity
 from specsheet.sheet import rounding, rows, words
 from specsheet.sheet.model import CITATION_JOINT, NOTHING, Cell, Row, Table
-from specsheet.sheet.units import Units
 from specsheet.sheet.values import Values
 from specsheet.tag import Tag
 
@@ -95,8 +94,9 @@ def pressures_stated(tag: Tag) -> set[str]:
     return set(kinds) if len(set(kinds)) == 1 and len(kinds) == len(tag.points) else set()
 
 
-def single(evaluation: Evaluation, units: Units) -> list[Table]:
+def single(values: Values) -> list[Table]:
     """Return the tables whose rows have one value each."""
+    evaluation = values.evaluation
     tag = evaluation.tag
     profile = evaluation.profile
     labels = {item.path: item for item in (profile.entries if profile else ())} | _ENTRIES
@@ -110,8 +110,8 @@ def single(evaluation: Evaluation, units: Units) -> list[Table]:
         ("summary", "Range and running cost", _cost(evaluation), evaluation.summary),
     )
     made = [
-        Table(key, title, (), (*stated, *_results(tag, values, stated, units)))
-        for key, title, stated, values in sections
+        Table(key, title, (), (*stated, *_results(values, found, stated)))
+        for key, title, stated, found in sections
     ]
     return [table for table in made if table.rows]
 
@@ -178,17 +178,17 @@ def _cost(evaluation: Evaluation) -> tuple[Row, ...]:
 
 
 def _results(
-    tag: Tag, values: Mapping[str, Result], stated: tuple[Row, ...], units: Units
+    values: Values, found: Mapping[str, Result], stated: tuple[Row, ...]
 ) -> tuple[Row, ...]:
     """Return the rows of results, leaving out given values that the rows above echo already."""
-    typed = (held for held in tag.given.values() if isinstance(held, Quantity))
+    typed = (held for held in values.evaluation.tag.given.values() if isinstance(held, Quantity))
     echoed: set[tuple[str, float | str]] = {(held.kind, held.value) for held in typed}
     echoed |= {("text", row.text) for row in stated}
     return tuple(
-        rows.of_results(key, (values[key],), units)
-        for key in rows.ordered(values)
+        values.alone(key, found[key])
+        for key in rows.ordered(found)
         if not (
-            values[key].origin is Origin.GIVEN and (rows.kind_of(key), values[key].value) in echoed
+            found[key].origin is Origin.GIVEN and (rows.kind_of(key), found[key].value) in echoed
         )
     )
 

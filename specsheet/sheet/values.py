@@ -50,6 +50,11 @@ class Values:
             self._made[key] = self._entry(key) if "." in key else self._row(key)
         return self._made[key]
 
+    def alone(self, key: str, result: Result) -> Row:
+        """Return the row of a value that stands alone in its own place."""
+        row = self.row(key) if key not in self.varying and self.single.get(key) is result else None
+        return row or rows.of_results(key, (result,), self.units)
+
     def _row(self, key: str) -> Row | None:
         results = self.results(key)
         if not results:

@@ -45,12 +45,17 @@ def stamp(path: str | Path) -> Stamp | None:
     return Stamp(status.st_mtime_ns, status.st_size, status.st_ino)
 
 
-def save(path: str | Path, content: str | bytes) -> Stamp:
+def save(path: str | Path, content: str | bytes, *, flush: bool = True) -> Stamp:
     """Replace a file by bytes, or by text (UTF-8, line ends as they are); return its stamp.
 
     The content is written beside the file, flushed to the disk and moved into its place, so that a
     reader sees the old file or the new one and a failure leaves the old one. A symbolic link stays
     one (its target is replaced) and the mode of the file is kept.
+
+    Args:
+        path: the file.
+        content: what it is to hold.
+        flush: False does not wait for the disk, for what can be made again after a power cut.
 
     Raises:
         SaveError: the file could not be saved; nothing has changed.
@@ -58,7 +63,7 @@ def save(path: str | Path, content: str | bytes) -> Stamp:
     try:
         target = Path(os.path.realpath(path))
         mode = _mode(target)
-        _replace(target, content if isinstance(content, bytes) else content.encode(), mode)
+        _replace(target, content if isinstance(content, bytes) else content.encode(), mode, flush)
     except SaveError:
         raise
     except OSError as error:
@@ -89,7 +94,7 @@ def _mode(target: Path) -> int:
     return stat.S_IMODE(status.st_mode)
 
 
-def _replace(target: Path, raw: bytes, mode: int) -> None:
+def _replace(target: Path, raw: bytes, mode: int, flush: bool) -> None:
     handle, name = tempfile.mkstemp(
         prefix=f".{target.name[:40]}.", suffix=".tmp", dir=target.parent
     )
@@ -97,7 +102,8 @@ def _replace(target: Path, raw: bytes, mode: int) -> None:
         try:
             _write(handle, raw)
             os.fchmod(handle, mode)
-            os.fsync(handle)
+            if flush:
+                os.fsync(handle)
         finally:
             os.close(handle)
         Path(name).replace(target)
@@ -105,7 +111,8 @@ def _replace(target: Path, raw: bytes, mode: int) -> None:
         with contextlib.suppress(OSError):
             Path(name).unlink()
         raise
-    _flush_folder(target.parent)
+    if flush:
+        _flush_folder(target.parent)
 
 
 def _write(handle: int, raw: bytes) -> None:

@@ -48,4 +48,4 @@ def write(sheet: Sheet, path: str | Path, paper: str | None = None) -> None:
     except OSError as error:
         reason = error.strerror or type(error).__name__
         raise WriteError(f"{path} was not saved: its folder cannot be made ({reason})") from error
-    save(path, data)
+    save(path, data, flush=False)  # it can be printed again
