@@ -7,12 +7,10 @@ from __future__ import annotations
 
 import os
 import sys
-from argparse import Namespace
 from collections.abc import Sequence
 from importlib import import_module
 
 from specsheet.cli import narrate
-from specsheet.cli.parser import build_parser
 from specsheet.cli.status import Status
 
 
@@ -23,9 +21,9 @@ def main(arguments: Sequence[str] | None = None) -> int:
         arguments: the words after the program's name; None for those of the process.
     """
     narrate.set_up()
-    parsed = build_parser().parse_args(arguments)
+    words = sys.argv[1:] if arguments is None else list(arguments)
     try:
-        status = _run(parsed)
+        status = _open_form(words) if _only_form(words) else _run(words)
         sys.stdout.flush()
         return status
     except BrokenPipeError:
@@ -43,7 +41,22 @@ def main(arguments: Sequence[str] | None = None) -> int:
         return Status.UNUSABLE
 
 
-def _run(parsed: Namespace) -> int:
+def _only_form(words: Sequence[str]) -> bool:
+    """Tell whether the words open the form and hold nothing to parse."""
+    return not words or (words[0] == "form" and len(words) <= 2 and words[-1][:1] not in ("-", ""))
+
+
+def _open_form(words: Sequence[str]) -> int:
+    """Open the form without the parser, whose making takes longer than drawing a screen."""
+    from specsheet import tui
+
+    return tui.run(words[1] if len(words) > 1 else None)
+
+
+def _run(words: Sequence[str]) -> int:
+    from specsheet.cli.parser import build_parser
+
+    parsed = build_parser().parse_args(words)
     command = import_module(f"specsheet.cli.commands.{parsed.module}")
     status: int = command.run(parsed)
     return int(status)

@@ -4,8 +4,10 @@ from __future__ import annotations
 
 from collections.abc import Iterable
 from enum import IntEnum
+from typing import TYPE_CHECKING
 
-from specsheet.findings import Level
+if TYPE_CHECKING:  # the form opens without it
+    from specsheet.findings import Level
 
 
 class Status(IntEnum):
@@ -19,5 +21,5 @@ class Status(IntEnum):
 
 def verdict(levels: Iterable[Level], *, strict: bool = False) -> Status:
     """Return the status for a set of finding levels."""
-    bad = {Level.STOP, Level.CAUTION} if strict else {Level.STOP}
+    bad = {"stop", "caution"} if strict else {"stop"}
     return Status.STOPPED if bad.intersection(levels) else Status.FINE

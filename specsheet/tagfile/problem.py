@@ -3,8 +3,10 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from typing import TYPE_CHECKING
 
-from specsheet.tag import Tag
+if TYPE_CHECKING:  # a text is parsed without it
+    from specsheet.tag import Tag
 
 #: field of a problem that concerns the file as a whole
 WHOLE_FILE = "file"

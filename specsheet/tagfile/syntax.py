@@ -7,7 +7,6 @@ import tomllib
 from collections.abc import Mapping
 from typing import Any
 
-from specsheet.tagfile.collect import Collector
 from specsheet.tagfile.migrate import CURRENT
 from specsheet.tagfile.problem import WHOLE_FILE, Problem
 from specsheet.tagfile.source import BOM
@@ -51,6 +50,8 @@ def schema_of(data: Mapping[str, Any]) -> int:
 
 def newer(text: str, path: str, schema: int) -> Problem:
     """Return the problem of a file that a newer version wrote."""
+    from specsheet.tagfile.collect import Collector  # parsing does without all that it needs
+
     collector = Collector(text, path, {})
     message = (
         f"the file is of schema {schema}, this version reads up to {CURRENT}; "

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import difflib
 from collections.abc import Iterable
 from datetime import date
 
@@ -55,6 +54,8 @@ def nearest(word: str, known: Iterable[str]) -> str:
     """Return the known name most like ``word``, or "" when none is near."""
     if len(word) > _LONGEST:
         return ""
+    import difflib  # only for a name that is not known
+
     names = {name.casefold(): name for name in known}
     close = difflib.get_close_matches(word.casefold(), names, 1)
     return names[close[0]] if close else ""

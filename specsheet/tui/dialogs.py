@@ -17,8 +17,7 @@ from textual.containers import Vertical
 from textual.screen import ModalScreen
 
 from specsheet.tui.compat import Field
-from specsheet.tui.lines import Bar, Line, Lines
-from specsheet.tui.readout import wrap
+from specsheet.tui.lines import Bar, Line, Lines, wrap
 
 
 @dataclass(frozen=True, slots=True)

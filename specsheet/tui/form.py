@@ -4,12 +4,18 @@ from __future__ import annotations
 
 from collections.abc import Container
 from dataclasses import dataclass
+from typing import TYPE_CHECKING
 
-from specsheet import packs
 from specsheet.fields import COMMON, REVISION, SECTIONS, Entry, Section
 from specsheet.tui.address import LISTS, Address
+from specsheet.tui.late import late
 from specsheet.tui.relevance import in_front, is_needed
 from specsheet.tui.session import COMPOSITION, Session
+
+if TYPE_CHECKING:
+    from specsheet import packs
+else:
+    packs = late("specsheet.packs")
 
 _SHORT = {"points": "Points", "require": "Require"}
 

@@ -2,12 +2,19 @@
 
 from __future__ import annotations
 
+from typing import TYPE_CHECKING
+
 from specsheet.tui.address import Address
-from specsheet.tui.dialogs import Choice, Pick, matching
 from specsheet.tui.form_editing import FormEditing
+from specsheet.tui.late import late
 from specsheet.tui.pages import address_in
-from specsheet.tui.protocol import Answer, Compared, Failed, Supposed
-from specsheet.tui.what_if import WhatIf
+
+if TYPE_CHECKING:
+    from specsheet.tui import dialogs, protocol, what_if
+else:
+    dialogs = late("specsheet.tui.dialogs")
+    protocol = late("specsheet.tui.protocol")
+    what_if = late("specsheet.tui.what_if")
 
 _CANNOT = "mend the refused entry first: it cannot be left out of the file"
 
@@ -45,7 +52,7 @@ class FormAsking(FormEditing):
             return self.evaluator.suppose(text, path, entry, first, last)
 
         name, present = self.session.name(address), self.session.get(address)
-        self.app.push_screen(WhatIf(name, present, ask))
+        self.app.push_screen(what_if.WhatIf(name, present, ask))
 
     def _path_of(self, address: Address) -> str:
         """Return the path of an address as the tag file's tools have it."""
@@ -54,22 +61,22 @@ class FormAsking(FormEditing):
         name = self.session.point_names()[address.index]
         return f"{address.section}.{name}.{address.key}"
 
-    def take(self, answer: Answer) -> None:
+    def take(self, answer: protocol.Answer) -> None:
         """Show what the evaluator answered."""
-        panel = next((s for s in self.app.screen_stack if isinstance(s, WhatIf)), None)
-        if isinstance(answer, Compared):
+        panel = next((s for s in self.app.screen_stack if isinstance(s, what_if.WhatIf)), None)
+        if isinstance(answer, protocol.Compared):
             self._show_families(answer)
-        elif isinstance(answer, Supposed):
+        elif isinstance(answer, protocol.Supposed):
             if panel is not None:
                 panel.show(answer.number, answer.lines)
-        elif isinstance(answer, Failed) and panel is not None:
+        elif isinstance(answer, protocol.Failed) and panel is not None:
             panel.show(answer.number, (f"cannot be tried: {answer.message}",))
-        elif isinstance(answer, Failed) and answer.number == self._comparing:
+        elif isinstance(answer, protocol.Failed) and answer.number == self._comparing:
             self.say(f"families cannot be compared: {answer.message}")
         else:
             super().take(answer)
 
-    def _show_families(self, answer: Compared) -> None:
+    def _show_families(self, answer: protocol.Compared) -> None:
         if answer.number != self._comparing:
             return
 
@@ -81,8 +88,11 @@ class FormAsking(FormEditing):
             await self._changed()
             self.say(f"{told}; Ctrl+Z brings the old family back")
 
-        choices = [Choice(fit.family, fit.row, fit.detail) for fit in answer.fits]
+        choices = [dialogs.Choice(fit.family, fit.row, fit.detail) for fit in answer.fits]
         now = self.session.get(Address("family"))
         self.app.push_screen(
-            Pick("Families, the best first; Enter adopts one", matching(choices), now=now), chosen
+            dialogs.Pick(
+                "Families, the best first; Enter adopts one", dialogs.matching(choices), now=now
+            ),
+            chosen,
         )

@@ -4,19 +4,28 @@ from __future__ import annotations
 
 from collections.abc import Callable, Sequence
 from datetime import date
+from typing import TYPE_CHECKING
 
-from specsheet import job, tagfile
+from specsheet import tagfile
 from specsheet.fields import SECTIONS
-from specsheet.fluid import names
 from specsheet.tui import form
 from specsheet.tui.address import LISTS, Address
 from specsheet.tui.commands import EDITING, FORM
-from specsheet.tui.dialogs import Choice, Pick, Prompt, Tell, matching
-from specsheet.tui.families import family_choices
 from specsheet.tui.fields import Committed, Editor
 from specsheet.tui.form_focus import FormFocus
+from specsheet.tui.late import late
 from specsheet.tui.pages import GridPage, address_in
 from specsheet.tui.session import COMPOSITION
+
+if TYPE_CHECKING:
+    from specsheet import job
+    from specsheet.fluid import names
+    from specsheet.tui import dialogs, families
+else:
+    job = late("specsheet.job")
+    names = late("specsheet.fluid.names")
+    dialogs = late("specsheet.tui.dialogs")
+    families = late("specsheet.tui.families")
 
 _SUBSTANCES = ("fluid.substance", COMPOSITION)
 
@@ -85,13 +94,13 @@ class FormEditing(FormFocus):
             return
         row = editor.row
         if row.entry.path == "family":
-            self._pick(editor, "Meter family", matching(family_choices()))
+            self._pick(editor, "Meter family", dialogs.matching(families.family_choices()))
         elif row.entry.path in _SUBSTANCES:
             self._pick(editor, row.entry.label, _substances, free=True)
         elif row.choices or row.entry.words:
             values = (*row.entry.words, *row.choices)
-            choices = [Choice(value, value) for value in values]
-            self._pick(editor, row.entry.label, matching(choices))
+            choices = [dialogs.Choice(value, value) for value in values]
+            self._pick(editor, row.entry.label, dialogs.matching(choices))
         else:
             self.say(f"{row.entry.label} is typed: there is no list to choose from")
 
@@ -99,7 +108,7 @@ class FormEditing(FormFocus):
         self,
         editor: Editor,
         title: str,
-        find: Callable[[str], Sequence[Choice]],
+        find: Callable[[str], Sequence[dialogs.Choice]],
         *,
         free: bool = False,
     ) -> None:
@@ -111,7 +120,7 @@ class FormEditing(FormFocus):
             if not editor.row.adds:
                 await self.commit(editor)
 
-        self.app.push_screen(Pick(title, find, now=editor.value, free=free), chosen)
+        self.app.push_screen(dialogs.Pick(title, find, now=editor.value, free=free), chosen)
 
     def action_find(self) -> None:
         """Find an entry of any section by its words, path or help."""
@@ -121,11 +130,11 @@ class FormEditing(FormFocus):
                 await self._go_to_path(value)
 
         choices = [
-            Choice(entry.path, f"{entry.label}   {entry.path}", entry.help)
+            dialogs.Choice(entry.path, f"{entry.label}   {entry.path}", entry.help)
             for section in SECTIONS
             for entry in form.entries_of(self.session, section.key)
         ]
-        self.app.push_screen(Pick("Find an entry", matching(choices)), chosen)
+        self.app.push_screen(dialogs.Pick("Find an entry", dialogs.matching(choices)), chosen)
 
     async def _go_to_path(self, path: str) -> None:
         index = 0 if path.split(".")[0] in LISTS else None
@@ -139,15 +148,17 @@ class FormEditing(FormFocus):
                 await self.run_action(value)
 
         choices = [
-            Choice(command.action, f"{command.title}   {command.key_text}", command.help)
+            dialogs.Choice(command.action, f"{command.title}   {command.key_text}", command.help)
             for command in FORM
             if command.action != "palette"
         ]
         choices += [
-            Choice(f"open_section({section.key!r})", f"Open section {section.title}", section.help)
+            dialogs.Choice(
+                f"open_section({section.key!r})", f"Open section {section.title}", section.help
+            )
             for section in SECTIONS
         ]
-        self.app.push_screen(Pick("Commands", matching(choices)), chosen)
+        self.app.push_screen(dialogs.Pick("Commands", dialogs.matching(choices)), chosen)
 
     async def action_open_section(self, section: str) -> None:
         """Show a section."""
@@ -174,7 +185,7 @@ class FormEditing(FormFocus):
         note = self.notes().get(address_in(editor))
         told += ["", f"{note.letter}: {note.message}"] if note else []
         symbol = f" ({entry.symbol})" if entry.symbol else ""
-        self.app.push_screen(Tell(f"{entry.label}{symbol}", told))
+        self.app.push_screen(dialogs.Tell(f"{entry.label}{symbol}", told))
 
     def action_keys(self) -> None:
         """List every key and say how the form works."""
@@ -193,7 +204,7 @@ class FormEditing(FormFocus):
             "Ctrl+Z undoes an edit here and does not suspend the program. Where Esc comes late "
             "inside a terminal multiplexer, shorten its escape time.",
         ]
-        self.app.push_screen(Tell("Keys", told))
+        self.app.push_screen(dialogs.Tell("Keys", told))
 
     # Rows and columns
 
@@ -217,7 +228,9 @@ class FormEditing(FormFocus):
             if name:
                 await self._added("points", self.session.add_point(name))
 
-        self.app.push_screen(Prompt("Name of the new operating point", self._next_name()), named)
+        self.app.push_screen(
+            dialogs.Prompt("Name of the new operating point", self._next_name()), named
+        )
 
     def _next_name(self) -> str:
         taken = self.session.point_names()
@@ -249,9 +262,11 @@ class FormEditing(FormFocus):
             self.set_focus(next(iter(self.page.editors), None))
 
 
-def _substances(text: str) -> Sequence[Choice]:
+def _substances(text: str) -> Sequence[dialogs.Choice]:
     """Return the substances found for a text."""
     return [
-        Choice(item.key, item.name, " ".join(word for word in (item.formula, item.cas) if word))
+        dialogs.Choice(
+            item.key, item.name, " ".join(word for word in (item.formula, item.cas) if word)
+        )
         for item in names.search(text, 50)
     ]

@@ -4,28 +4,26 @@ from __future__ import annotations
 
 from collections.abc import Callable
 from pathlib import Path
+from typing import TYPE_CHECKING
 
 from specsheet.tagfile.problem import Problem
 from specsheet.tagfile.source import read_text
 from specsheet.tagfile.syntax import parse
-from specsheet.tui.dialogs import Ask, Choice, Prompt, Tell
 from specsheet.tui.evaluator import Evaluator
 from specsheet.tui.form_asking import FormAsking
-from specsheet.tui.journal import Leftover, survey
-from specsheet.tui.saving import Conflict, Outcome
+from specsheet.tui.late import late
 from specsheet.tui.session import Session
+
+if TYPE_CHECKING:
+    from specsheet.tui import answers, dialogs, leftovers, saving
+else:
+    answers = late("specsheet.tui.answers")
+    dialogs = late("specsheet.tui.dialogs")
+    leftovers = late("specsheet.tui.leftovers")
+    saving = late("specsheet.tui.saving")
 
 #: folder that printed sheets go into, below the folder the program was started in
 OUTPUT = "output"
-
-_RECOVERING = (
-    Choice("recover", "Recover them; undo takes them out again", key="r"),
-    Choice("later", "Leave them for the next open", key="l"),
-    Choice("discard", "Discard them for good", key="d"),
-)
-_ELSEWHERE = Choice("elsewhere", "Save under another name", key="n")
-_OVERWRITE = Choice("overwrite", "Write my text over what is on disk", key="o")
-_RELOAD = Choice("reload", "Take what is on disk; undo brings my text back", key="l")
 
 
 class FormScreen(FormAsking):
@@ -34,12 +32,14 @@ class FormScreen(FormAsking):
     def __init__(self, session: Session, evaluator: Evaluator) -> None:
         """Make the screen of a session."""
         super().__init__(session, evaluator)
-        self._leftovers: list[Leftover] = []  # unsaved edits of earlier sessions, newest first
+        self._leftovers: list[
+            leftovers.Leftover
+        ] = []  # unsaved edits of earlier sessions, newest first
 
     def begin(self) -> None:
         """Ask for the values, then offer what earlier sessions left behind."""
         super().begin()
-        found = survey(self.session.path)
+        found = leftovers.survey(self.session.path)
         if found.busy:
             name = self.session.path.name
             self.say(f"{name} has unsaved edits in another window: the later save is asked about")
@@ -60,9 +60,9 @@ class FormScreen(FormAsking):
                 leftover.discard()
             self._offer()
 
-        self.app.push_screen(Ask(self._left_behind(leftover), _RECOVERING), answered)
+        self.app.push_screen(dialogs.Ask(self._left_behind(leftover), answers.RECOVERING), answered)
 
-    def _left_behind(self, leftover: Leftover) -> str:
+    def _left_behind(self, leftover: leftovers.Leftover) -> str:
         same = leftover.saved == self.session.saved
         other = "" if same else " The file on disk has changed since then."
         return (
@@ -86,20 +86,20 @@ class FormScreen(FormAsking):
                 await self.commit_all()
                 await self._after_save(self.session.save_as(_resolved(self.session.path, name)))
 
-        self.app.push_screen(Prompt("Save under the name", str(self.session.path)), named)
+        self.app.push_screen(dialogs.Prompt("Save under the name", str(self.session.path)), named)
 
-    async def _after_save(self, outcome: Outcome) -> None:
-        if outcome.conflict is Conflict.NONE:
+    async def _after_save(self, outcome: saving.Outcome) -> None:
+        if outcome.conflict is saving.Conflict.NONE:
             left = len(self.session.refused)
             kept = f"; {left} refused kept here, not in the file" if left else ""
             await self.refresh_form()
             self.say(f"{outcome.message}{kept}")
-        elif outcome.conflict in (Conflict.CHANGED, Conflict.VANISHED):
+        elif outcome.conflict in (saving.Conflict.CHANGED, saving.Conflict.VANISHED):
             self._ask_conflict(outcome)
         else:
-            self.app.push_screen(Tell("Not saved", [outcome.message]))
+            self.app.push_screen(dialogs.Tell("Not saved", [outcome.message]))
 
-    def _ask_conflict(self, outcome: Outcome) -> None:
+    def _ask_conflict(self, outcome: saving.Outcome) -> None:
         async def answered(value: str | None) -> None:
             if value == "overwrite":
                 await self._after_save(self.session.save(force=True))
@@ -108,15 +108,17 @@ class FormScreen(FormAsking):
             elif value == "elsewhere":
                 self.action_save_as()
 
-        gone = outcome.conflict is Conflict.VANISHED
-        choices = [_OVERWRITE, _ELSEWHERE] if gone else [_OVERWRITE, _RELOAD, _ELSEWHERE]
-        self.app.push_screen(Ask(f"{outcome.message} What shall be done?", choices), answered)
+        gone = outcome.conflict is saving.Conflict.VANISHED
+        choices = answers.saving_over(gone)
+        self.app.push_screen(
+            dialogs.Ask(f"{outcome.message} What shall be done?", choices), answered
+        )
 
     async def _reload(self) -> None:
         text = read_text(self.session.path)
         data = text if isinstance(text, Problem) else parse(text, str(self.session.path))
         if isinstance(text, Problem) or isinstance(data, Problem):
-            self.app.push_screen(Tell("Not loaded", [str(data), "Your edits are kept."]))
+            self.app.push_screen(dialogs.Tell("Not loaded", [str(data), "Your edits are kept."]))
             return
         self.session.reload(text, self.session.path.read_bytes())
         await self.moved("taken from disk", self.session.path.name)
@@ -162,7 +164,7 @@ class FormScreen(FormAsking):
             if value == "save":
                 outcome = self.session.save()
                 await self._after_save(outcome)
-                if outcome.conflict is not Conflict.NONE:
+                if outcome.conflict is not saving.Conflict.NONE:
                     return
             elif value == "discard":
                 self.session.give_up()
@@ -171,22 +173,13 @@ class FormScreen(FormAsking):
             self.session.close()
             go()
 
-        self.app.push_screen(Ask(self._question(), _leaving(bool(self.session.refused))), answered)
+        choices = answers.leaving(bool(self.session.refused))
+        self.app.push_screen(dialogs.Ask(self._question(), choices), answered)
 
     def _question(self) -> str:
         left = self.session.refused
         told = f" {len(left)} refused text(s) cannot go into the file." if left else ""
         return f"{self.session.path.name} has edits that are not saved.{told}"
-
-
-def _leaving(refused: bool) -> list[Choice]:
-    """Return the ways to leave with unsaved edits."""
-    rest = "; the refused texts are offered at the next open" if refused else ""
-    return [
-        Choice("save", f"Save and leave{rest}", key="s"),
-        Choice("keep", "Leave; keep the edits, to be offered at the next open", key="k"),
-        Choice("discard", "Leave and discard the edits", key="d"),
-    ]
 
 
 def _resolved(path: Path, name: str) -> Path:

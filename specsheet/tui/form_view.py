@@ -4,27 +4,35 @@ from __future__ import annotations
 
 import asyncio
 from collections.abc import Mapping
+from typing import TYPE_CHECKING
 
 from textual.app import ComposeResult
 from textual.containers import Container, Vertical
 from textual.widget import Widget
 
 from specsheet.fields import SECTIONS
-from specsheet.findings import Level
-from specsheet.tui import form, readout
+from specsheet.tui import form
 from specsheet.tui.address import LISTS, Address
 from specsheet.tui.commands import FORM
 from specsheet.tui.compat import CalmScreen
 from specsheet.tui.evaluator import Evaluator
 from specsheet.tui.fields import ChoiceEditor, Editor, TextEditor
 from specsheet.tui.frame import Frame, footer, scale
-from specsheet.tui.lines import Bar, Column, Line, Lines
+from specsheet.tui.late import late
+from specsheet.tui.lines import Bar, Column, Line, Lines, wrap
 from specsheet.tui.pages import GridPage, Page, SectionPage, address_in
-from specsheet.tui.protocol import Answer, Derived, Failed, Printed
-from specsheet.tui.readout import Item
 from specsheet.tui.session import Session
 
+if TYPE_CHECKING:
+    from specsheet.tui import protocol, readout
+    from specsheet.tui.readout import Item
+else:
+    protocol = late("specsheet.tui.protocol")
+    readout = late("specsheet.tui.readout")
+
 PANES = ("findings", "derived", "ruler")
+
+_NO_RULER = "The ruler appears as soon as one operating point can be derived."
 
 
 class FormView(CalmScreen):
@@ -97,6 +105,7 @@ class FormView(CalmScreen):
 
     def begin(self) -> None:
         """Ask for the values."""
+        self.frame.begun = True
         self.request()
 
     # What is shown
@@ -169,16 +178,16 @@ class FormView(CalmScreen):
             self.evaluator.derive(text, str(self.session.path))
         self._draw_panes()
 
-    def take(self, answer: Answer) -> None:
+    def take(self, answer: protocol.Answer) -> None:
         """Show what the evaluator answered."""
-        if isinstance(answer, Printed):
+        if isinstance(answer, protocol.Printed):
             self.say(f"printed {answer.target}")
-        elif isinstance(answer, Failed) and answer.number in self.frame.prints:
+        elif isinstance(answer, protocol.Failed) and answer.number in self.frame.prints:
             self.say(f"not printed: {answer.message}")
-        elif isinstance(answer, Failed):
+        elif isinstance(answer, protocol.Failed):
             self.frame.state = f"out of date: {answer.message}"
             self._draw_panes()
-        elif isinstance(answer, Derived):
+        elif isinstance(answer, protocol.Derived):
             self.frame.sheet, self.frame.troubles = answer.sheet, answer.troubles
             self.frame.state = ""
             self.call_later(self.refresh_form)
@@ -198,13 +207,15 @@ class FormView(CalmScreen):
         return found
 
     def _collect(self) -> tuple[Item, ...]:
-        refused = [
-            Item(Level.STOP, str(address), self.session.name(address), f"not stored: {told.reason}")
-            for address, told in self.session.refused.items()
+        frame, refused = self.frame, self.session.refused
+        if frame.sheet is None and not frame.troubles and not refused:
+            self.found = ()  # as at first, when nothing of the readout is loaded
+            return self.found
+        texts = [
+            readout.not_stored(str(address), self.session.name(address), told.reason)
+            for address, told in refused.items()
         ]
-        self.found = readout.items(
-            self.frame.sheet, self.frame.troubles, refused, self._name_of_field
-        )
+        self.found = readout.items(frame.sheet, frame.troubles, texts, self._name_of_field)
         return self.found
 
     def _name_of_field(self, field: str) -> str:
@@ -221,7 +232,7 @@ class FormView(CalmScreen):
         detail = self.query_one(".detail", Column)
         width = max(20, detail.size.width - 2)
         text, tone = self._detail()
-        parts = readout.wrap(text, width)[: 2 if self.has_class("-low") else 3]
+        parts = wrap(text, width)[: 2 if self.has_class("-low") else 3]
         detail.set_lines([((f" {part}", tone),) for part in parts])
 
     def _detail(self) -> tuple[str, str]:
@@ -248,23 +259,26 @@ class FormView(CalmScreen):
     def _draw_pane(self, pane: str) -> None:
         lines = self.query_one(f"#{pane}", Lines)
         width = max(30, lines.size.width - 2)
-        owners: list[int] = []
-        content: list[Line]
-        if pane == "findings":
-            content, owners = readout.finding_lines(self.found, width)
-            content = content or [((self.frame.quiet, "dim"),)]
-        elif pane == "ruler":
-            content = readout.ruler_lines(self.frame.sheet, width)
-        else:
-            sheet = self.frame.sheet
-            content = readout.derived(sheet, width) if sheet else [((self.frame.quiet, "dim"),)]
-        lines.set_content(content, owners)
+        lines.set_content(*self._content(pane, width))
         title = {"findings": "Findings", "derived": "Derived", "ruler": "Range"}[pane]
-        extra = readout.counts(self.found) if pane == "findings" else self.frame.state
-        if pane == "derived" and not extra:
+        extra = self.frame.state
+        if pane == "findings":
+            extra = readout.counts(self.found) if self.found else ""
+        elif pane == "derived" and not extra:
             extra = readout.LEGEND
         head = self.query_one(f"#{pane}-head", Bar)
         head.set_line(self.frame.rule(title, extra, head.size.width, lines.has_focus))
+
+    def _content(self, pane: str, width: int) -> tuple[list[Line], list[int]]:
+        """Return the lines of a pane, and the item of each where there are items."""
+        sheet = self.frame.sheet
+        if pane == "findings" and self.found:
+            return readout.finding_lines(self.found, width)
+        if pane == "derived" and sheet is not None:
+            return readout.derived(sheet, width), []
+        if pane == "ruler" and sheet is not None and sheet.ruler is not None:
+            return readout.ruler_lines(sheet.ruler, width), []
+        return [((_NO_RULER if pane == "ruler" else self.frame.quiet, "dim"),)], []
 
     def show_pane(self, pane: str) -> None:
         """Show a pane where only one has room. (A class on the screen would restyle all of it.)"""

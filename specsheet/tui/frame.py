@@ -3,22 +3,26 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass, field
+from typing import TYPE_CHECKING
 
 from specsheet.fields import SECTIONS
-from specsheet.findings import Level
-from specsheet.sheet.model import Sheet
-from specsheet.tui import form, readout
+from specsheet.tui import form
 from specsheet.tui.address import Address
 from specsheet.tui.commands import Command
 from specsheet.tui.glyphs import LEVEL_LETTERS
+from specsheet.tui.late import late
 from specsheet.tui.lines import Line
-from specsheet.tui.protocol import Trouble
-from specsheet.tui.readout import Item
 from specsheet.tui.session import Session
 
+if TYPE_CHECKING:
+    from specsheet.sheet.model import Sheet
+    from specsheet.tui import readout
+    from specsheet.tui.protocol import Trouble
+    from specsheet.tui.readout import Item
+else:
+    readout = late("specsheet.tui.readout")
 
-@dataclass
+
 class Frame:
     """What the screen knows besides the session.
 
@@ -28,13 +32,17 @@ class Frame:
         sheet: the last sheet derived.
         troubles: entries that the last reading could not use.
         prints: numbers of the requests to print.
+        begun: whether the first screen is drawn; the title of the family, for which its profile
+            must be read, comes after it.
     """
 
-    message: str = ""
-    state: str = "deriving"
-    sheet: Sheet | None = None
-    troubles: tuple[Trouble, ...] = ()
-    prints: set[int] = field(default_factory=set)
+    def __init__(self) -> None:
+        self.message = ""
+        self.state = "deriving"
+        self.sheet: Sheet | None = None
+        self.troubles: tuple[Trouble, ...] = ()
+        self.prints: set[int] = set()
+        self.begun = False
 
     @property
     def quiet(self) -> str:
@@ -46,7 +54,7 @@ class Frame:
     def title(self, session: Session) -> tuple[Line, Line]:
         """Return the first line: which tag, and whether it is saved."""
         left = [(f" {session.get(Address('tag')) or session.path.name}", "head")]
-        family = form.family_title(session.get(Address("family")))
+        family = form.family_title(session.get(Address("family"))) if self.begun else ""
         told = (session.get(Address("service")), family, session.get(Address("status")))
         left += [(f"  {text}", "label") for text in told if text]
         words = []
@@ -62,7 +70,7 @@ class Frame:
         """Return the line above the keys: what was said last, else the state of the tag."""
         if self.message:
             return ((f" {self.message}", "accent"),)
-        worst = readout.worst(items)
+        worst = readout.worst(items) if items else None
         letter = " " if worst is None else LEVEL_LETTERS[worst]
         tone = "good" if worst is None else worst.value
         text = readout.summary(self.sheet, items) if not self.state else f"{self.state} ..."
@@ -88,14 +96,14 @@ def scale(section: str, items: Sequence[Item]) -> Line:
         words = f"▸{form.short_title(item)}" if here else f" {form.short_title(item)}"
         pieces.append((words, "here" if here else "label"))
         if worst is not None:
-            pieces.append((sign, worst.value))
+            pieces.append((sign, worst))
         pieces.append((" ", "dim"))
     return tuple(pieces)
 
 
-def _worst_in(section: str, items: Sequence[Item]) -> Level | None:
+def _worst_in(section: str, items: Sequence[Item]) -> str | None:
     levels = {i.level for i in items if i.field and form.section_of(i.field) == section}
-    return next((level for level in (Level.STOP, Level.CAUTION) if level in levels), None)
+    return next((level for level in ("stop", "caution") if level in levels), None)
 
 
 def footer(commands: Sequence[Command]) -> Line:

@@ -5,18 +5,11 @@ from __future__ import annotations
 import locale
 import os
 
-from specsheet.findings import Level, Origin
-
-#: letter of a finding's level: never told by colour alone
-LEVEL_LETTERS = {Level.STOP: "S", Level.CAUTION: "C", Level.NOTE: "n"}
+#: letter of a finding's level, the worst first: never told by colour alone
+LEVEL_LETTERS = {"stop": "S", "caution": "C", "note": "n"}
 
 #: letter of a value's origin, beside the value
-ORIGIN_LETTERS = {
-    Origin.GIVEN: "g",
-    Origin.DERIVED: " ",
-    Origin.ASSUMED: "a",
-    Origin.TYPICAL: "t",
-}
+ORIGIN_LETTERS = {"given": "g", "derived": " ", "assumed": "a", "typical": "t"}
 
 _PLAIN = str.maketrans(
     {

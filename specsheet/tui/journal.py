@@ -9,17 +9,14 @@ from __future__ import annotations
 
 import contextlib
 import hashlib
-import json
 import os
 import sys
-from dataclasses import dataclass
 from io import BufferedRandom, FileIO
 from pathlib import Path
 
-from specsheet.tui.address import Address
-from specsheet.tui.history import Refused, State
+from specsheet.tui.history import State
 
-_SUFFIX = ".unsaved"
+SUFFIX = ".unsaved"
 
 
 def digest(content: bytes) -> str:
@@ -34,16 +31,17 @@ def state_folder() -> Path:
     return base / "specsheet" / "unsaved"
 
 
-def _places(path: Path) -> tuple[Path, ...]:
+def places(path: Path) -> tuple[Path, ...]:
     """Folders where a journal of ``path`` may stand, the preferred one first."""
     return (state_folder(), path.parent)
 
 
-def _stem(path: Path) -> str:
+def stem(path: Path) -> str:
+    """Return how the name of each journal of ``path`` begins."""
     return "." + digest(os.fsencode(path.absolute()))[:16]
 
 
-def _lock(file: FileIO | BufferedRandom) -> bool:
+def take_lock(file: FileIO | BufferedRandom) -> bool:
     """Take the lock of an open journal; False when another session holds it.
 
     Windows keeps no lock here: every journal found there counts as left behind.
@@ -83,6 +81,8 @@ class Journal:
         """
         if self._closed:
             return
+        import json  # the first screen does without
+
         line = json.dumps(
             {
                 "path": str(self.path),
@@ -122,8 +122,8 @@ class Journal:
         if self._file is not None:
             return self._file
         trouble: OSError | None = None
-        for folder in _places(self.path):
-            name = folder / f"{_stem(self.path)}-{os.getpid()}-{id(self):x}{_SUFFIX}"
+        for folder in places(self.path):
+            name = folder / f"{stem(self.path)}-{os.getpid()}-{id(self):x}{SUFFIX}"
             try:
                 if folder == state_folder():
                     folder.mkdir(parents=True, exist_ok=True, mode=0o700)
@@ -131,78 +131,7 @@ class Journal:
             except OSError as error:
                 trouble = error
                 continue
-            _lock(file)
+            take_lock(file)
             self._file, self._name = file, name
             return file
         raise trouble or OSError("no folder for the journal")
-
-
-@dataclass(frozen=True)
-class Leftover:
-    """Unsaved edits that an earlier session left behind.
-
-    Attributes:
-        file: the journal.
-        state: the last complete state in it.
-        edits: how many edits it holds.
-        name: words for the last one.
-        saved: fingerprint of the tag file that the edits were made on, "" for a new file.
-    """
-
-    file: Path
-    state: State
-    edits: int
-    name: str
-    saved: str
-
-    def discard(self) -> None:
-        """Delete the journal: the edits are taken over, or not wanted."""
-        with contextlib.suppress(OSError):
-            self.file.unlink()
-
-
-@dataclass(frozen=True)
-class Survey:
-    """What stands on disk about unsaved edits of one file.
-
-    Attributes:
-        leftovers: of sessions that ended out of order, newest first.
-        busy: whether another session that still runs has unsaved edits of the file.
-    """
-
-    leftovers: tuple[Leftover, ...]
-    busy: bool
-
-
-def survey(path: Path) -> Survey:
-    """Look for unsaved edits of ``path`` that other sessions hold or left."""
-    found: list[tuple[float, Leftover]] = []
-    busy = False
-    for folder in _places(path):
-        for name in folder.glob(f"{_stem(path)}-*{_SUFFIX}"):
-            try:
-                with name.open("r+b") as file:
-                    if not _lock(file):
-                        busy = True
-                        continue
-                    leftover = _read(name, file.read())
-                    when = name.stat().st_mtime
-            except OSError:
-                continue
-            if leftover is not None:
-                found.append((when, leftover))
-    found.sort(key=lambda pair: pair[0], reverse=True)
-    return Survey(tuple(leftover for _, leftover in found), busy)
-
-
-def _read(name: Path, content: bytes) -> Leftover | None:
-    """Return the last complete line of a journal; a line cut short by a crash is passed over."""
-    last = None
-    edits = 0
-    for line in content.splitlines():
-        with contextlib.suppress(ValueError, KeyError, TypeError):
-            raw = json.loads(line)
-            refused = {Address(p, i): Refused(*told) for p, i, *told in raw["refused"]}
-            last = Leftover(name, State(raw["text"], refused), 0, raw["name"], raw["saved"])
-            edits += 1
-    return None if last is None else Leftover(name, last.state, edits, last.name, last.saved)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import textwrap
 from collections.abc import Sequence
 from typing import ClassVar
 
@@ -30,6 +31,11 @@ def safe(text: str) -> str:
     """Return a text that is harmless on one line, in ASCII where the terminal needs it."""
     text = printable(text)
     return plain_ascii(text) if _ASCII else text
+
+
+def wrap(text: str, width: int) -> list[str]:
+    """Return a text in lines of at most ``width`` cells; never no line."""
+    return textwrap.wrap(text, max(10, width)) or [""]
 
 
 def strip_of(

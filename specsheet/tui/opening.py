@@ -4,8 +4,8 @@ from __future__ import annotations
 
 from pathlib import Path
 
+from specsheet import tagfile
 from specsheet.tagfile.literal import value_text
-from specsheet.tagfile.new import new_text
 from specsheet.tagfile.problem import Problem
 from specsheet.tagfile.source import read_text
 from specsheet.tagfile.syntax import parse
@@ -34,7 +34,7 @@ def open_session(path: Path) -> Session | str:
 
 def new_session(path: Path, tag: str, family: str) -> Session:
     """Return a session on a new tag of a family; its file is made at the first save."""
-    return Session(path, new_text(tag, family), None)
+    return Session(path, tagfile.new_text(tag, family), None)
 
 
 def _bare_text(tag: str) -> str:

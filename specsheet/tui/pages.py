@@ -7,19 +7,21 @@ they were meant for.
 from __future__ import annotations
 
 from collections.abc import Iterable, Mapping
+from typing import TYPE_CHECKING
 
 from textual.app import ComposeResult
 from textual.containers import Horizontal, ScrollableContainer, Vertical
 
-from specsheet.findings import Level
 from specsheet.tui import form
 from specsheet.tui.address import Address
 from specsheet.tui.fields import ChoiceEditor, Editor, TextEditor
 from specsheet.tui.form import Row
 from specsheet.tui.glyphs import LEVEL_LETTERS
 from specsheet.tui.lines import Column, Line
-from specsheet.tui.readout import Item
 from specsheet.tui.session import Session
+
+if TYPE_CHECKING:
+    from specsheet.tui.readout import Item
 
 _BAD = "✗"
 _HERE = "▸"
@@ -104,8 +106,8 @@ class Page(ScrollableContainer, can_focus=False):
         levels = [
             note.level for address, note in self._notes.items() if address.path == row.address.path
         ]
-        worst = next((level for level in Level if level in levels), None)
-        return ("  ", "label") if worst is None else (f"{LEVEL_LETTERS[worst]} ", worst.value)
+        worst = next((level for level in LEVEL_LETTERS if level in levels), None)
+        return ("  ", "label") if worst is None else (f"{LEVEL_LETTERS[worst]} ", worst)
 
 
 def address_in(editor: Editor) -> Address:

@@ -2,18 +2,16 @@
 
 from __future__ import annotations
 
-import textwrap
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
 from specsheet.findings import Level, Origin
 from specsheet.render.text.layout import heading
 from specsheet.render.text.ruler import draw
-from specsheet.sheet.model import Row, Sheet, Table
+from specsheet.sheet.model import Row, Ruler, Sheet, Table
 from specsheet.tui.glyphs import LEVEL_LETTERS, ORIGIN_LETTERS
+from specsheet.tui.lines import Line, wrap
 from specsheet.tui.protocol import Trouble
-
-Line = tuple[tuple[str, str], ...]
 
 #: worst first; standing cautions go before mere notes
 _ORDER = (Level.STOP, Level.CAUTION, None, Level.NOTE)
@@ -160,9 +158,9 @@ def _cut(text: str, width: int) -> str:
     return text if len(text) <= width else text[: max(0, width - 1)] + "…"
 
 
-def wrap(text: str, width: int) -> list[str]:
-    """Return a text in lines of at most ``width`` cells; never no line."""
-    return textwrap.wrap(text, max(10, width)) or [""]
+def not_stored(field: str, name: str, reason: str) -> Item:
+    """Return what is to say about a text that is not in the file."""
+    return Item(Level.STOP, field, name, f"not stored: {reason}")
 
 
 def items(
@@ -204,12 +202,10 @@ def finding_lines(found: Sequence[Item], width: int) -> tuple[list[Line], list[i
     return lines, owners
 
 
-def ruler_lines(sheet: Sheet | None, width: int) -> list[Line]:
-    """Return the range ruler, or the words for why there is none."""
-    if sheet is None or sheet.ruler is None:
-        return [(("The ruler appears as soon as one operating point can be derived.", "dim"),)]
-    texts = draw(sheet.ruler, width)[len(heading("", width)) :]
-    windows = len(sheet.ruler.windows)
+def ruler_lines(ruler: Ruler, width: int) -> list[Line]:
+    """Return the range ruler."""
+    texts = draw(ruler, width)[len(heading("", width)) :]
+    windows = len(ruler.windows)
     lanes = len(texts) - windows - 2
     # The scale goes right below the points: a low pane still shows both.
     texts = [*texts[:lanes], *texts[-2:], *texts[lanes:-2]]

@@ -13,19 +13,24 @@ from __future__ import annotations
 from collections.abc import Callable, Mapping
 from datetime import date
 from pathlib import Path
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
+from specsheet import tagfile
 from specsheet.fields import Entry
-from specsheet.tagfile.adoption import adopt
-from specsheet.tagfile.document import EditError
-from specsheet.tagfile.known import family_entries
 from specsheet.tagfile.syntax import parse
-from specsheet.tui import edits
 from specsheet.tui.address import LISTS, Address
 from specsheet.tui.history import History, Refused, State
-from specsheet.tui.journal import Journal, Leftover, digest
-from specsheet.tui.saving import Conflict, Outcome, write
+from specsheet.tui.journal import Journal, digest
+from specsheet.tui.late import late
 from specsheet.tui.values import component, entry_at, refusal, shown
+
+if TYPE_CHECKING:
+    from specsheet.tagfile import known
+    from specsheet.tui import edits, leftovers, saving
+else:
+    known = late("specsheet.tagfile.known")
+    edits = late("specsheet.tui.edits")
+    saving = late("specsheet.tui.saving")
 
 COMPOSITION = "fluid.mixture"
 
@@ -106,7 +111,7 @@ class Session:
     @property
     def family_entries(self) -> tuple[Entry, ...]:
         """The entries of the tag's meter family; none while the family is unknown."""
-        return family_entries(self.get(Address("family")))
+        return known.family_entries(self.get(Address("family")))
 
     def entry(self, address: Address) -> Entry | None:
         """Return the entry that an address belongs to; None for a key the glossary lacks."""
@@ -152,7 +157,7 @@ class Session:
                 adds = address.path == COMPOSITION  # a component not added replaces nothing
                 if not adds and self._raw(address) is not None:
                     text = edits.unset(text, address)
-        except EditError:
+        except tagfile.EditError:
             return None
         return text
 
@@ -209,7 +214,7 @@ class Session:
         if not reason:
             try:
                 after = self._stored(address, text)
-            except EditError as error:
+            except tagfile.EditError as error:
                 reason = str(error)
         refused = {a: told for a, told in others.items() if a != address}
         if reason:
@@ -246,8 +251,8 @@ class Session:
         :func:`specsheet.tagfile.adopt` has it; undo brings the old family back.
         """
         try:
-            made = adopt(self.text, family)
-        except EditError as error:
+            made = tagfile.adopt(self.text, family)
+        except tagfile.EditError as error:
             return f"not adopted: {error}"
         meter = [address for address in self.refused if address.section == "meter"]
         refused = {a: told for a, told in self.refused.items() if a not in meter}
@@ -264,20 +269,22 @@ class Session:
         """Make the last undone change again; return words for it, or ""."""
         return self._moved("redo", self._history.redo())
 
-    def recover(self, leftover: Leftover) -> None:
+    def recover(self, leftover: leftovers.Leftover) -> None:
         """Take over the edits of an earlier session, as one change that undo can take back."""
         self._change("recovered edits", leftover.state)
         if not self._journal.trouble:
             leftover.discard()
 
-    def save(self, *, force: bool = False) -> Outcome:
+    def save(self, *, force: bool = False) -> saving.Outcome:
         """Write the file, unless it changed on disk since it was read (``force`` overrides)."""
-        return self._written(write(self.path, self.text, None if force else self._saved_digest))
+        return self._written(
+            saving.write(self.path, self.text, None if force else self._saved_digest)
+        )
 
-    def save_as(self, path: Path) -> Outcome:
+    def save_as(self, path: Path) -> saving.Outcome:
         """Write a new file of another name and go on with it; an existing file is not replaced."""
-        outcome = write(path, self.text, "")
-        if outcome.conflict is Conflict.NONE:
+        outcome = saving.write(path, self.text, "")
+        if outcome.conflict is saving.Conflict.NONE:
             self._journal.clear()
             self.path = path
             self._journal = Journal(path)
@@ -320,7 +327,7 @@ class Session:
     ) -> str:
         try:
             after = edit()
-        except EditError as error:
+        except tagfile.EditError as error:
             return str(error)
         self._change(change, State(after, self.refused if refused is None else refused))
         return ""
@@ -352,8 +359,8 @@ class Session:
         else:
             self._journal.clear()
 
-    def _written(self, outcome: Outcome) -> Outcome:
-        if outcome.conflict is Conflict.NONE:
+    def _written(self, outcome: saving.Outcome) -> saving.Outcome:
+        if outcome.conflict is saving.Conflict.NONE:
             self._saved_text, self._saved_digest = self.text, outcome.digest
             self._journal.clear()
             if self.refused:

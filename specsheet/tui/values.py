@@ -2,16 +2,22 @@
 
 from __future__ import annotations
 
-import json
 from collections.abc import Mapping
 from datetime import date
+from typing import TYPE_CHECKING
 
-from specsheet import quantity
 from specsheet.fields import Entry
-from specsheet.quantity.value import Refusal
-from specsheet.tagfile.known import tag_sections
-from specsheet.tagfile.values import from_text
 from specsheet.tagfile.words import number_text
+from specsheet.tui.late import late
+
+if TYPE_CHECKING:
+    from specsheet import quantity
+    from specsheet.tagfile import known
+    from specsheet.tagfile import values as readers
+else:
+    quantity = late("specsheet.quantity")
+    known = late("specsheet.tagfile.known")
+    readers = late("specsheet.tagfile.values")
 
 _FRACTIONS = "fractions"
 
@@ -21,7 +27,7 @@ def entry_at(family: str, path: str) -> Entry | None:
 
     A leaf of a table entry ("fluid.mixture.methane") belongs to the table's entry.
     """
-    sections = tag_sections(family)
+    sections = known.tag_sections(family)
     section, _, key = path.rpartition(".")
     found = sections.get(section, {}).get(key)
     if found is None and section.count("."):
@@ -41,6 +47,8 @@ def shown(raw: object) -> str:
     if isinstance(raw, list):
         texts = [item if isinstance(item, str) else str(item) for item in raw]
         if any("," in text or text.startswith("[") for text in texts):
+            import json  # few lists need it, and the first screen does without
+
             return json.dumps(texts, ensure_ascii=False)
         return ", ".join(texts)
     if isinstance(raw, Mapping):
@@ -54,8 +62,8 @@ def refusal(entry: Entry | None, path: str, text: str) -> str:
         return ""
     if entry.path != path:
         return _fraction_refusal(text)
-    found = from_text(entry, text)
-    return found.message if isinstance(found, Refusal) else ""
+    found = readers.from_text(entry, text)
+    return found.message if isinstance(found, quantity.Refusal) else ""
 
 
 def _fraction_refusal(text: str) -> str:
@@ -63,7 +71,7 @@ def _fraction_refusal(text: str) -> str:
         float(text)
     except ValueError:
         found = quantity.parse(text, "ratio")
-        return found.message if isinstance(found, Refusal) else ""
+        return found.message if isinstance(found, quantity.Refusal) else ""
     return ""
 
 

@@ -8,7 +8,7 @@ from specsheet import tagfile
 from specsheet.tui import dialogs
 from specsheet.tui.address import Address
 from specsheet.tui.app import FormApp
-from specsheet.tui.journal import survey
+from specsheet.tui.leftovers import survey
 from specsheet.tui.protocol import Compare, Compared, Failed, Suppose, Supposed
 from specsheet.tui.what_if import WhatIf, ends
 from specsheet.tui.worker import answer

@@ -15,7 +15,7 @@ from pathlib import Path
 
 import pytest
 
-from specsheet.tui.journal import survey
+from specsheet.tui.leftovers import survey
 
 ROOT = Path(__file__).parents[2]
 CODE = "import sys; from specsheet.tui import run; sys.exit(run(sys.argv[1]))"

@@ -12,7 +12,8 @@ import pytest
 
 from specsheet.tui import journal
 from specsheet.tui.address import Address
-from specsheet.tui.journal import state_folder, survey
+from specsheet.tui.journal import state_folder
+from specsheet.tui.leftovers import survey
 from specsheet.tui.opening import open_session
 from specsheet.tui.saving import Conflict
 from specsheet.tui.session import Session
@@ -121,7 +122,7 @@ def test_where_no_journal_can_be_written_the_user_is_told(
 ) -> None:
     blocked = tag_file.parent / "blocked"
     blocked.write_text("")
-    monkeypatch.setattr(journal, "_places", lambda _: (blocked / "x", blocked / "y"))
+    monkeypatch.setattr(journal, "places", lambda _: (blocked / "x", blocked / "y"))
     session = opened(tag_file)
     assert session.edit(SIZE, "DN 100") == ""
     assert "memory only" in session.trouble

@@ -56,7 +56,9 @@ def test_derived_values_stand_in_columns_with_their_origin() -> None:
 
 
 def test_the_ruler_shows_points_scale_and_windows() -> None:
-    lines = text_of(readout.ruler_lines(sheet(), 78))
+    ruler = sheet().ruler
+    assert ruler is not None
+    lines = text_of(readout.ruler_lines(ruler, 78))
     joined = "\n".join(lines)
     for words in ("normal", "minimum", "Mass flow, t/h", "velocity", "10"):
         assert words in joined

@@ -16,7 +16,7 @@ from specsheet.tui.browse_screen import BrowseScreen
 from specsheet.tui.commands import FORM
 from specsheet.tui.fields import ChoiceEditor
 from specsheet.tui.form_screen import FormScreen
-from specsheet.tui.journal import survey
+from specsheet.tui.leftovers import survey
 from specsheet.tui.protocol import Derived, Failed
 from tests.tui.conftest import AtOnce, run, screen_text, send, until
 
