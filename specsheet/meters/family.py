@@ -82,7 +82,7 @@ class Derivation:
         key: glossary key of the result.
         equation: in plain text, with the symbols of the glossary.
         source: citation.
-        inputs: glossary keys of the values put in.
+        inputs: glossary keys of the values put in, or paths of entries ("design.pressure").
         origin: of the result; typical where a figure usual for the family decides it.
     """
 

@@ -5,7 +5,6 @@ from __future__ import annotations
 from collections.abc import Mapping
 from typing import TYPE_CHECKING
 
-from specsheet.fields import entry
 from specsheet.sheet import rows, words
 from specsheet.sheet.model import Row
 from specsheet.sheet.units import Units
@@ -66,4 +65,4 @@ class Values:
         tag = self.evaluation.tag
         if tag.get(path) is None:
             return None
-        return rows.of_entry(tag, path, words.label(path), entry(path).symbol)
+        return rows.of_entry(tag, path, words.label(path), words.symbol(path))

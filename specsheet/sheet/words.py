@@ -108,8 +108,13 @@ def label(key: str) -> str:
 
 
 def symbol(key: str) -> str:
-    """Return the glossary's symbol of a term, "" where it has none."""
-    return TERMS[key].symbol if key in TERMS else ""
+    """Return the glossary's symbol of a term or a path, "" where it has none."""
+    if key in TERMS:
+        return TERMS[key].symbol
+    try:
+        return entry(key).symbol
+    except KeyError:
+        return ""
 
 
 def named(text: str, sign: str) -> str:
