@@ -14,6 +14,7 @@ import numpy as np
 
 from specsheet.findings import Finding, Origin
 from specsheet.meters.family import Array, Contribution, Stream
+from specsheet.methods.gum import RECTANGULAR
 from specsheet.sources import PRACTICE, cite
 from specsheet.tag import Tag
 
@@ -96,7 +97,7 @@ def _of_density(exponent: Array, stream: Stream, density: DensityInUse) -> list[
 
     if density.fixed is not None:
         # the true density may lie anywhere between that in use and that of the point
-        spread = np.abs(stream.density / density.fixed - 1.0) / 3.0**0.5
+        spread = np.abs(stream.density / density.fixed - 1.0) / RECTANGULAR
         add("compensation", "compensation", "density not compensated", exponent * spread, PRACTICE)
     elif density.gas:
         # sensitivity of an ideal gas: density rises as p / T

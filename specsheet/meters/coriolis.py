@@ -22,8 +22,8 @@ from specsheet.meters.family import (
     Request,
     Stream,
 )
-from specsheet.meters.shared import output, response, sizes
-from specsheet.meters.shared.choice import Rules, choose
+from specsheet.meters.shared import errors, fluid, output, response, sizes
+from specsheet.meters.shared.choice import Rules, choose_largest
 from specsheet.meters.wetted.electrode import NICKEL, STEEL
 from specsheet.meters.wetted.service import service
 from specsheet.methods import back_pressure, coriolis, duct
@@ -31,17 +31,13 @@ from specsheet.packs import Typical
 from specsheet.sources import PRACTICE, cite
 
 _METHOD = cite("iso10790")
-_ROOT_THREE = 3.0**0.5
 _PROPOSE = "propose"
 _SUM = "sum"
 
 
 def size(request: Request) -> Element:
     """Choose the largest size that holds base error, velocity and loss, or rate the one stated."""
-    found = sizes.candidates(request)
-    order = tuple(reversed(found.sizes))
-    rules = Rules(at, limits, budget)
-    return choose(request, found, order, _build, rules, "the largest size")
+    return choose_largest(request, _build, Rules(at, limits, budget))
 
 
 def _figures(request: Request, item: sizes.Size) -> dict[str, Given]:
@@ -113,20 +109,16 @@ def _tube_material(request: Request) -> Given:
 def _notes(
     request: Request, item: sizes.Size, signals: output.Output
 ) -> dict[str, tuple[str, ...]]:
-    element = [
-        "Tubes, zero stability and errors are figures usual for the size; the bidder states his."
-    ]
-    if response.is_reduced(request, item):
-        element.append(
-            f"Smaller than the line: concentric reducer and expander to {item.text}; their loss is "
-            "in the pressure loss."
-        )
+    element = (
+        "Tubes, zero stability and errors are figures usual for the size; the bidder states his.",
+        *response.reducer_note(request, item, "their loss is in the pressure loss"),
+    )
     if request.tag.phase == "gas":
         where = "Horizontal line with the tubes above it, so that condensate drains."
     else:
         where = "Horizontal line with the tubes below it, so that gas leaves; solids: upright line."
     return {
-        "element": tuple(element),
+        "element": element,
         "installation": (
             where,
             "No straight lengths wanted; support the line, not the meter, and keep it from strain.",
@@ -141,31 +133,24 @@ def _notes(
 
 def _fluid_findings(request: Request) -> tuple[Finding, ...]:
     """Return what free gas and toxic fluids do."""
-    tag = request.tag
-    findings: list[Finding] = []
-    if tag.phase == "liquid" and (tag.si("fluid.bubbles") or 0.0) > 0.0:
-        findings.append(
-            Finding(
-                Level.CAUTION,
-                "bubbles",
-                "fluid.bubbles",
-                "Free gas damps the tubes and shifts mass and density readings; remove it before "
-                "the meter, or have the bidder state the error with this share of gas.",
-                source=PRACTICE,
-            )
-        )
-    if "toxic" in tag.words("fluid.hazards"):
-        findings.append(
-            Finding(
-                Level.NOTE,
-                "containment",
-                "fluid.hazards",
-                "The tubes are thin: ask for a housing rated as secondary containment, with its "
-                "pressure stated.",
-                source=PRACTICE,
-            )
-        )
-    return tuple(findings)
+    bubbles = fluid.bubbles(
+        request,
+        "Free gas damps the tubes and shifts mass and density readings; remove it before the "
+        "meter, or have the bidder state the error with this share of gas.",
+    )
+    if "toxic" not in request.tag.words("fluid.hazards"):
+        return bubbles
+    return (
+        *bubbles,
+        Finding(
+            Level.NOTE,
+            "containment",
+            "fluid.hazards",
+            "The tubes are thin: ask for a housing rated as secondary containment, with its "
+            "pressure stated.",
+            source=PRACTICE,
+        ),
+    )
 
 
 def at(element: Element, stream: Stream) -> Mapping[str, Array]:
@@ -187,7 +172,13 @@ def at(element: Element, stream: Stream) -> Mapping[str, Array]:
         if gas:
             values["pressure_ratio"] = 1.0 - values["pressure_loss"] / stream.pressure
         else:
-            values.update(_back_pressure(of, stream, values, own))
+            needed = back_pressure.minimum_back_pressure(
+                pressure_loss=own,
+                vapour_pressure=stream.vapour_pressure,
+                loss_factor=0.0,
+                vapour_factor=of["back_pressure_vapour_factor"],
+            )
+            values.update(response.back_pressure_values(values, stream, own, needed))
         values.update(output.output_values(element, stream))
     return values
 
@@ -207,19 +198,6 @@ def _tube_loss(of: Mapping[str, float], stream: Stream, values: Mapping[str, Arr
     )
     total: Array = friction + of["split_coefficient"] * values["dynamic_pressure"] / 2.0
     return total
-
-
-def _back_pressure(
-    of: Mapping[str, float], stream: Stream, values: Mapping[str, Array], loss: Array
-) -> dict[str, Array]:
-    needed = back_pressure.minimum_back_pressure(
-        pressure_loss=loss,
-        vapour_pressure=stream.vapour_pressure,
-        loss_factor=0.0,
-        vapour_factor=of["back_pressure_vapour_factor"],
-    )
-    behind = response.pressure_behind(values, stream, loss)
-    return {"minimum_back_pressure": needed, "back_pressure_margin": behind - needed}
 
 
 def limits(element: Element, request: Request) -> tuple[Limit, ...]:
@@ -245,28 +223,19 @@ def budget(
     of = element.numbers
     with np.errstate(all="ignore"):
         pressure = of["pressure_effect"] * np.abs(stream.pressure - of["calibration_pressure"])
-        own_density = of["density_error"] / stream.density / _ROOT_THREE
-    parts = [
-        Contribution(
-            "meter_error",
-            "base error and zero stability",
-            values["error_limit"] / _ROOT_THREE,
-            Origin.TYPICAL,
-            _METHOD,
+        own_density = of["density_error"] / stream.density
+    density: tuple[Contribution, ...] = ()
+    if output.is_volume(element):
+        density = (errors.of_limit("density", "density measured by the meter", own_density),)
+    stiffening = "pressure that stiffens the tubes, not corrected"
+    return (
+        errors.of_limit(
+            "meter_error", "base error and zero stability", values["error_limit"], source=_METHOD
         ),
-        Contribution(
-            "pressure_effect",
-            "pressure that stiffens the tubes, not corrected",
-            pressure / _ROOT_THREE,
-            Origin.TYPICAL,
-            PRACTICE,
-        ),
+        errors.of_limit("pressure_effect", stiffening, pressure),
         output.current_contribution(values, of["current_output_error"]),
-    ]
-    if element.choices["flow_kind"] == "volume_flow":
-        label = "density measured by the meter"
-        parts.append(Contribution("density", label, own_density, Origin.TYPICAL, PRACTICE))
-    return tuple(parts)
+        *density,
+    )
 
 
 DERIVATIONS = (

@@ -21,7 +21,7 @@ from specsheet.meters.family import (
     Request,
     Stream,
 )
-from specsheet.meters.shared import output, response, sizes
+from specsheet.meters.shared import errors, full_bore, output, response, sizes
 from specsheet.meters.shared.choice import Rules, choose
 from specsheet.meters.wetted.conductivity import conductivity_findings, conductivity_limits
 from specsheet.meters.wetted.electrode import earthing, electrode
@@ -31,7 +31,6 @@ from specsheet.methods import duct, electromagnetic
 from specsheet.sources import PRACTICE, cite
 
 _METHOD = cite("iso20456")
-_ROOT_THREE = 3.0**0.5
 
 
 def size(request: Request) -> Element:
@@ -102,12 +101,8 @@ def _notes(
         f"Induced voltage for a mean flux density of {typical['flux_density'].value * 1e3:g} mT, "
         "usual; the bidder states his excitation.",
         "Full bore: no loss of its own at line size.",
+        *response.reducer_note(request, item, "their loss is the pressure loss of the meter"),
     ]
-    if response.is_reduced(request, item):
-        element.append(
-            f"Smaller than the line: concentric reducer and expander to {item.text}; their loss is "
-            "the pressure loss of the meter."
-        )
     if is_slurry(request):
         element.append(
             "Slurry: solids that hit the electrodes make noise; ask for a high excitation "
@@ -149,16 +144,12 @@ def at(element: Element, stream: Stream) -> Mapping[str, Array]:
     of = element.numbers
     with np.errstate(all="ignore"):
         values = response.flow_values(of, stream, gas=False)
-        speed = values["meter_velocity"]
         values["induced_voltage"] = electromagnetic.induced_voltage(
-            flux_density=of["flux_density"], diameter=of["bore"], velocity=speed
+            flux_density=of["flux_density"],
+            diameter=of["bore"],
+            velocity=values["meter_velocity"],
         )
-        values["pressure_loss"] = values["reducer_loss"]
-        values["error_limit"] = electromagnetic.error_limit(
-            reading_error=of["reading_error"], zero_velocity=of["zero_velocity"], velocity=speed
-        )
-        behind = response.pressure_behind(values, stream, np.zeros_like(speed))
-        values["back_pressure_margin"] = behind - stream.vapour_pressure
+        values.update(full_bore.loss_and_error(of, stream, values, gas=False))
         values.update(output.output_values(element, stream))
     return values
 
@@ -203,23 +194,15 @@ def budget(
 ) -> tuple[Contribution, ...]:
     """Return reading, zero, current output, slurry noise, free gas and density, shape (n,)."""
     of = element.numbers
-    speed = values["meter_velocity"]
-    same = np.ones_like(speed)
-    with np.errstate(all="ignore"):
-        zero = of["zero_velocity"] / np.abs(speed) / _ROOT_THREE
-    reading = of["reading_error"] / _ROOT_THREE * same
-    parts = [
-        Contribution("reading", "error of the reading", reading, Origin.TYPICAL, PRACTICE),
-        Contribution("zero", "error of the zero velocity", zero, Origin.TYPICAL, PRACTICE),
-        output.current_contribution(values, of["current_output_error"]),
-        *output.density_contribution(element, stream),
-    ]
-    for key, label in (("slurry_noise", "noise of the solids"), ("free_gas", "free gas")):
-        if of[key] > 0.0:
-            origin = Origin.TYPICAL if key == "slurry_noise" else Origin.GIVEN
-            relative = of[key] / _ROOT_THREE * same
-            parts.append(Contribution(key, label, relative, origin, PRACTICE))
-    return tuple(parts)
+    same = np.ones_like(values["meter_velocity"])
+    noise: tuple[Contribution, ...] = ()
+    if of["slurry_noise"] > 0.0:
+        noise = (errors.of_limit("slurry_noise", "noise of the solids", of["slurry_noise"] * same),)
+    return (
+        *full_bore.contributions(element, stream, values),
+        *noise,
+        *errors.free_gas(of, same),
+    )
 
 
 DERIVATIONS = (
@@ -230,18 +213,7 @@ DERIVATIONS = (
         _METHOD,
         ("meter_bore", "meter_velocity"),
     ),
-    Derivation(
-        "pressure_loss", "loss of the reducers; none at line size", PRACTICE, ("reducer_loss",)
-    ),
-    Derivation(
-        "back_pressure_margin",
-        "p - ρ (vm² - v²) / 2 - loss of the reducers - pv",
-        "Bernoulli",
-        ("pressure", "density", "meter_velocity", "velocity", "reducer_loss", "vapour_pressure"),
-    ),
-    Derivation(
-        "error_limit", "error of the reading + zero velocity / vm", PRACTICE, ("meter_velocity",)
-    ),
+    *full_bore.DERIVATIONS,
     *output.DERIVATIONS,
 )
 

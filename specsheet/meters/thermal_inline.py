@@ -22,13 +22,12 @@ from specsheet.meters.family import (
     Request,
     Stream,
 )
-from specsheet.meters.shared import output, response, sizes
-from specsheet.meters.shared.choice import Rules, choose
+from specsheet.meters.shared import errors, output, response, sizes
+from specsheet.meters.shared.choice import Rules, choose_largest
 from specsheet.methods import thermal
 from specsheet.sources import MEMORY, PRACTICE, cite
 
 _METHOD = f"Kramers (1946), King's law ({MEMORY})"
-_ROOT_THREE = 3.0**0.5
 #: air at 20 °C: conductivity [W/m/K], viscosity [Pa s], Prandtl number [-]; from memory
 _AIR = {"conductivity": 0.0257, "viscosity": 1.82e-5, "prandtl": 0.71}
 #: 0 °C, 101.325 kPa (DIN 1343)
@@ -37,9 +36,7 @@ _NORMAL_TEMPERATURE, _NORMAL_PRESSURE = 273.15, 101325.0
 
 def size(request: Request) -> Element:
     """Choose the largest size that the limits allow, or rate the one stated."""
-    found = sizes.candidates(request)
-    order = tuple(reversed(found.sizes))
-    return choose(request, found, order, _build, Rules(at, limits, budget), "the largest size")
+    return choose_largest(request, _build, Rules(at, limits, budget))
 
 
 def _build(request: Request, item: sizes.Size) -> Element:
@@ -179,35 +176,13 @@ def budget(
 ) -> tuple[Contribution, ...]:
     """Return error of the meter, of the gas conversion, and current output, shape (n,)."""
     of = element.numbers
-    conversion = np.full_like(stream.density, of["conversion_error"] / _ROOT_THREE)
-    parts = [
-        Contribution(
-            "meter_error",
-            "error of reading and span",
-            values["error_limit"] / _ROOT_THREE,
-            Origin.TYPICAL,
-            PRACTICE,
-        ),
-        Contribution(
-            "gas_conversion",
-            "conversion from the gas of calibration",
-            conversion,
-            Origin.TYPICAL,
-            PRACTICE,
-        ),
+    conversion = np.full_like(stream.density, of["conversion_error"])
+    return (
+        errors.of_limit("meter_error", "error of reading and span", values["error_limit"]),
+        errors.of_limit("gas_conversion", "conversion from the gas of calibration", conversion),
         output.current_contribution(values, of["current_output_error"]),
-    ]
-    if element.choices["flow_kind"] == "volume_flow":
-        parts.append(
-            Contribution(
-                "density",
-                "density of the fluid",
-                stream.density_uncertainty / 2.0,
-                Origin.DERIVED,
-                "method of the density",
-            )
-        )
-    return tuple(parts)
+        *output.density_of_volume(element, stream),
+    )
 
 
 _GAS = ("viscosity", "isentropic_exponent", "pressure", "density", "temperature")
@@ -232,12 +207,7 @@ DERIVATIONS = (
         cite("din1343"),
         ("meter_velocity", "pressure", "temperature"),
     ),
-    Derivation(
-        "pressure_loss",
-        "K ρ vm² / 2 + loss of the reducers",
-        PRACTICE,
-        ("pressure_loss_coefficient", "dynamic_pressure", "reducer_loss"),
-    ),
+    response.LOSS_BY_COEFFICIENT,
     Derivation(
         "error_limit",
         "error of the reading + error of the span / share of span",

@@ -21,12 +21,11 @@ from specsheet.meters.family import (
     Request,
     Stream,
 )
-from specsheet.meters.shared import output, response, sizes
-from specsheet.meters.shared.choice import Rules, choose
+from specsheet.meters.shared import errors, full_bore, output, response, sizes
+from specsheet.meters.shared.choice import Rules, choose_largest
 from specsheet.methods import ultrasonic
 from specsheet.sources import PRACTICE, cite
 
-_ROOT_THREE = 3.0**0.5
 _CLAMPED = "clamp-on"
 _METHOD = f"{cite('iso12242')}; {cite('iso17089')}"
 _ONE_PATH, _USUAL_PATHS = "1", "2"
@@ -36,9 +35,7 @@ def size(request: Request) -> Element:
     """Choose the largest size that the limits allow; clamped on, the pipe is the meter."""
     if request.tag.text("meter.mounting") == _CLAMPED:
         return _build(request, _pipe_as_meter(request))
-    found = sizes.candidates(request)
-    order = tuple(reversed(found.sizes))
-    return choose(request, found, order, _build, Rules(at, limits, budget), "the largest size")
+    return choose_largest(request, _build, Rules(at, limits, budget))
 
 
 def _pipe_as_meter(request: Request) -> sizes.Size:
@@ -101,12 +98,10 @@ def _notes(
             "its bore, wall and lining enter the reading and are measured on site."
         ]
     else:
-        element = ["Sensors wetted; path angle and errors are usual figures, bidder to confirm."]
-    if not clamped and response.is_reduced(request, item):
-        element.append(
-            f"Smaller than the line: concentric reducer and expander to {item.text}; their loss is "
-            "the pressure loss of the meter."
-        )
+        element = [
+            "Sensors wetted; path angle and errors are usual figures, bidder to confirm.",
+            *response.reducer_note(request, item, "their loss is the pressure loss of the meter"),
+        ]
     return {
         "element": tuple(element),
         "installation": ("Paths horizontal, so that neither gas nor sediment lies in them.",),
@@ -200,13 +195,7 @@ def at(element: Element, stream: Stream) -> Mapping[str, Array]:
         values["profile_factor"] = factor
         values["transit_time"] = ultrasonic.transit_time(**path)
         values["transit_time_difference"] = ultrasonic.time_difference(**path)
-        values["pressure_loss"] = values["reducer_loss"]
-        values["error_limit"] = of["reading_error"] + of["zero_velocity"] / np.abs(
-            values["meter_velocity"]
-        )
-        if not gas:
-            behind = response.pressure_behind(values, stream, np.zeros_like(bore))
-            values["back_pressure_margin"] = behind - stream.vapour_pressure
+        values.update(full_bore.loss_and_error(of, stream, values, gas=gas))
         values.update(output.output_values(element, stream))
     return values
 
@@ -237,22 +226,15 @@ def budget(
     of = element.numbers
     same = np.ones_like(values["meter_velocity"])
     with np.errstate(all="ignore"):
-        zero = of["zero_velocity"] / np.abs(values["meter_velocity"]) / _ROOT_THREE
-        timing = of["time_resolution"] / np.abs(values["transit_time_difference"]) / _ROOT_THREE
-    reading = of["reading_error"] / _ROOT_THREE * same
-    parts = [
-        Contribution("reading", "error of the reading", reading, Origin.TYPICAL, PRACTICE),
-        Contribution("zero", "error of the zero velocity", zero, Origin.TYPICAL, PRACTICE),
-        output.current_contribution(values, of["current_output_error"]),
-        *output.density_contribution(element, stream),
-    ]
-    if not np.isnan(timing).all():
-        label = "resolution of the time difference"
-        parts.append(Contribution("timing", label, timing, Origin.TYPICAL, PRACTICE))
-    if of["free_gas"] > 0.0:
-        gas = of["free_gas"] / _ROOT_THREE * same
-        parts.append(Contribution("free_gas", "free gas", gas, Origin.GIVEN, PRACTICE))
-    return tuple(parts)
+        resolved = of["time_resolution"] / np.abs(values["transit_time_difference"])
+    timing: tuple[Contribution, ...] = ()
+    if not np.isnan(resolved).all():
+        timing = (errors.of_limit("timing", "resolution of the time difference", resolved),)
+    return (
+        *full_bore.contributions(element, stream, values),
+        *timing,
+        *errors.free_gas(of, same),
+    )
 
 
 _PATH = ("meter_velocity", "profile_factor", "sound_speed", "meter_bore", "path_angle")
@@ -268,18 +250,7 @@ DERIVATIONS = (
         "transit_time", "td = L / (c + vp cos φ), vp = vm / k, L = Dm / sin φ", _METHOD, _PATH
     ),
     Derivation("transit_time_difference", "Δt = 2 L vp cos φ / (c² - vp² cos² φ)", _METHOD, _PATH),
-    Derivation(
-        "pressure_loss", "loss of the reducers; none at line size", PRACTICE, ("reducer_loss",)
-    ),
-    Derivation(
-        "back_pressure_margin",
-        "p - ρ (vm² - v²) / 2 - loss of the reducers - pv",
-        "Bernoulli",
-        ("pressure", "density", "meter_velocity", "velocity", "reducer_loss", "vapour_pressure"),
-    ),
-    Derivation(
-        "error_limit", "error of the reading + zero velocity / vm", PRACTICE, ("meter_velocity",)
-    ),
+    *full_bore.DERIVATIONS,
     *output.DERIVATIONS,
 )
 

@@ -23,6 +23,7 @@ from specsheet.meters.family import (
     Stream,
 )
 from specsheet.methods import signal, variable_area
+from specsheet.methods.gum import RECTANGULAR
 from specsheet.sources import MEMORY, PRACTICE, cite
 
 _SOURCE = cite("vdi3513")
@@ -213,7 +214,7 @@ def budget(
             Contribution(
                 "scale",
                 "scale, share of full scale",
-                values["error_limit"] / np.sqrt(3.0),
+                values["error_limit"] / RECTANGULAR,
                 Origin.TYPICAL,
                 PRACTICE,
             ),

@@ -24,6 +24,7 @@ from specsheet.meters.family import (
     Stream,
 )
 from specsheet.methods import signal, variable_area
+from specsheet.methods.gum import RECTANGULAR
 from specsheet.sources import PRACTICE
 
 _SOURCE = "balance of forces on the plunger"
@@ -139,7 +140,7 @@ def budget(
         stretch = numbers["spring_rate"] * values["displacement"]
         load = numbers["preload"] + stretch
         gain = 1.0 + 0.5 * stretch / load  # d ln q / d ln x
-        relative = gain * values["error_limit"] / np.sqrt(3.0)
+        relative = gain * values["error_limit"] / RECTANGULAR
     return (
         Contribution("scale", "scale, share of full travel", relative, Origin.TYPICAL, PRACTICE),
         density_contribution(stream),

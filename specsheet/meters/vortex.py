@@ -10,7 +10,7 @@ from collections.abc import Mapping
 
 import numpy as np
 
-from specsheet.findings import Finding, Level, Origin
+from specsheet.findings import Finding, Origin
 from specsheet.meters.family import (
     Array,
     Contribution,
@@ -22,9 +22,9 @@ from specsheet.meters.family import (
     Request,
     Stream,
 )
-from specsheet.meters.shared import output, response, sizes
-from specsheet.meters.shared.choice import Rules, choose
-from specsheet.methods import back_pressure, signal, vortex
+from specsheet.meters.shared import errors, fluid, output, response, sizes
+from specsheet.meters.shared.choice import Rules, choose_largest
+from specsheet.methods import back_pressure, vortex
 from specsheet.sources import PRACTICE, cite
 
 _METHOD = cite("iso12764")
@@ -32,10 +32,7 @@ _METHOD = cite("iso12764")
 
 def size(request: Request) -> Element:
     """Choose the largest size up to the line's that the limits allow, or rate the one stated."""
-    found = sizes.candidates(request)
-    largest_first = tuple(reversed(found.sizes))
-    rules = Rules(at, limits, budget)
-    return choose(request, found, largest_first, _build, rules, "the largest size")
+    return choose_largest(request, _build, Rules(at, limits, budget))
 
 
 def _build(request: Request, item: sizes.Size) -> Element:
@@ -53,17 +50,17 @@ def _build(request: Request, item: sizes.Size) -> Element:
     typical_source = typical["strouhal_number"].source
     values = {
         **sizes.size_values(request, item),
-        "bluff_width": _given(width is not None, bluff, typical["bluff_ratio"].source),
-        "k_factor": _given(calibrated, factor, typical_source),
+        "bluff_width": sizes.given_or_typical(
+            bluff, stated=width is not None, source=typical["bluff_ratio"].source
+        ),
+        "k_factor": sizes.given_or_typical(factor, stated=calibrated, source=typical_source),
         "strouhal_number": Given(
             strouhal,
             Origin.DERIVED if calibrated else Origin.TYPICAL,
             _METHOD if calibrated else typical_source,
         ),
-        "pressure_loss_coefficient": Given(
-            typical["pressure_loss_coefficient"].value,
-            Origin.TYPICAL,
-            typical["pressure_loss_coefficient"].source,
+        "pressure_loss_coefficient": sizes.stated_or_typical(
+            None, typical["pressure_loss_coefficient"]
         ),
         **signals.values,
     }
@@ -90,10 +87,6 @@ def _build(request: Request, item: sizes.Size) -> Element:
     )
 
 
-def _given(stated: bool, value: float, source: str) -> Given:
-    return Given(value, Origin.GIVEN) if stated else Given(value, Origin.TYPICAL, source)
-
-
 def _notes(
     request: Request, item: sizes.Size, signals: output.Output
 ) -> dict[str, tuple[str, ...]]:
@@ -105,16 +98,16 @@ def _notes(
         installation.append("The line stays full: horizontal, or vertical with the flow upward.")
     else:
         installation.append("Horizontal line: bluff body horizontal where condensate may run.")
-    element = [
-        "K-factor, bluff width and bore are figures usual for the size; the bidder states his own."
-    ]
-    if response.is_reduced(request, item):
-        element.append(
-            f"Smaller than the line: concentric reducer and expander to {item.text}; the straight "
-            "lengths count in the meter's bore, and the loss of both is in the pressure loss."
-        )
+    effect = (
+        "the straight lengths count in the meter's bore, and the loss of both is in the pressure "
+        "loss"
+    )
+    element = (
+        "K-factor, bluff width and bore are figures usual for the size; the bidder states his own.",
+        *response.reducer_note(request, item, effect),
+    )
     return {
-        "element": tuple(element),
+        "element": element,
         "installation": tuple(installation),
         "output": signals.notes,
     }
@@ -122,31 +115,18 @@ def _notes(
 
 def _fluid_findings(request: Request) -> tuple[Finding, ...]:
     """Return what the fluid itself does to a vortex meter."""
-    tag = request.tag
-    findings: list[Finding] = []
-    if tag.phase == "liquid" and (tag.si("fluid.bubbles") or 0.0) > 0.0:
-        findings.append(
-            Finding(
-                Level.CAUTION,
-                "bubbles",
-                "fluid.bubbles",
-                "Free gas in the liquid counts as flow and weakens the vortices; remove it before "
-                "the meter.",
-                source=PRACTICE,
-            )
-        )
-    if tag.flag("fluid.abrasive") or (tag.si("fluid.solids") or 0.0) > 0.0:
-        findings.append(
-            Finding(
-                Level.CAUTION,
-                "solids",
-                "fluid.abrasive" if tag.flag("fluid.abrasive") else "fluid.solids",
-                "Solids wear the edges of the bluff body and shift the K-factor; keep the velocity "
-                "low or choose a meter without edges.",
-                source=PRACTICE,
-            )
-        )
-    return tuple(findings)
+    return (
+        *fluid.bubbles(
+            request,
+            "Free gas in the liquid counts as flow and weakens the vortices; remove it before the "
+            "meter.",
+        ),
+        *fluid.solids(
+            request,
+            "Solids wear the edges of the bluff body and shift the K-factor; keep the velocity "
+            "low or choose a meter without edges.",
+        ),
+    )
 
 
 def at(element: Element, stream: Stream) -> Mapping[str, Array]:
@@ -175,16 +155,15 @@ def at(element: Element, stream: Stream) -> Mapping[str, Array]:
 def _back_pressure(
     of: Mapping[str, float], stream: Stream, values: Mapping[str, Array], loss: Array
 ) -> dict[str, Array]:
-    behind = response.pressure_behind(values, stream, loss)
     needed = back_pressure.minimum_back_pressure(
         pressure_loss=loss,
         vapour_pressure=stream.vapour_pressure,
         loss_factor=of["back_pressure_loss_factor"],
         vapour_factor=of["back_pressure_vapour_factor"],
     )
+    behind = response.pressure_behind(values, stream, loss)
     return {
-        "minimum_back_pressure": needed,
-        "back_pressure_margin": behind - needed,
+        **response.back_pressure_values(values, stream, loss, needed),
         "cavitation_index": back_pressure.cavitation_index(
             pressure=behind + loss,
             downstream_pressure=behind,
@@ -205,20 +184,8 @@ def budget(
     """Return error of the meter, counting, current output and density, relative, shape (n,)."""
     of = element.numbers
     return (
-        Contribution(
-            "meter_error",
-            "error of the meter",
-            values["error_limit"] / np.sqrt(3.0),
-            Origin.TYPICAL,
-            PRACTICE,
-        ),
-        Contribution(
-            "counting",
-            f"counting vortices for {of['averaging_time']:g} s",
-            signal.counting_uncertainty(rate=values["frequency"], time=of["averaging_time"]),
-            Origin.DERIVED,
-            cite("gum", "4.3.7"),
-        ),
+        errors.of_limit("meter_error", "error of the meter", values["error_limit"]),
+        errors.counting(values, of, "vortices"),
         output.current_contribution(values, of["current_output_error"]),
         *output.density_contribution(element, stream),
     )
@@ -240,24 +207,14 @@ DERIVATIONS = (
         _METHOD,
         ("k_factor", "meter_bore", "bluff_width"),
     ),
-    Derivation(
-        "pressure_loss",
-        "K ρ vm² / 2 + loss of the reducers",
-        PRACTICE,
-        ("pressure_loss_coefficient", "dynamic_pressure", "reducer_loss"),
-    ),
+    response.LOSS_BY_COEFFICIENT,
     Derivation(
         "minimum_back_pressure",
         "pmin = a ϖ + b pv (a, b usual figures of the family), ϖ without the reducers",
         PRACTICE,
         ("pressure_loss", "reducer_loss", "vapour_pressure"),
     ),
-    Derivation(
-        "back_pressure_margin",
-        "p - ρ (vm² - v²) / 2 - loss of the reducers - loss of the meter - pmin",
-        "Bernoulli",
-        ("pressure", "density", "meter_velocity", "velocity", "pressure_loss"),
-    ),
+    response.BACK_PRESSURE_MARGIN,
     Derivation(
         "cavitation_index",
         "(p2 - pv) / (p1 - p2), before and behind the meter in its bore",

@@ -25,16 +25,3 @@ def induced_voltage(
 def velocity(*, voltage: Any, flux_density: Any, diameter: Any, weight_factor: float = 1.0) -> Any:
     """Return the mean velocity [m/s] of a ``voltage`` [V]; the inverse of induced_voltage."""
     return voltage / (weight_factor * flux_density * diameter)
-
-
-def error_limit(*, reading_error: Any, zero_velocity: Any, velocity: Any) -> Any:
-    """Return the largest error, relative [-]: of the reading, plus a fixed velocity.
-
-    Args:
-        reading_error: of the reading [-]
-        zero_velocity: velocity that the zero may be off by [m/s]
-        velocity: [m/s]
-
-    Form common in the trade; no source.
-    """
-    return reading_error + zero_velocity / velocity

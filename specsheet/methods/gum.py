@@ -18,6 +18,10 @@ Array = NDArray[np.float64]
 
 #: level of confidence that belongs to k = 2 of a normal distribution
 TWO_SIGMA = 0.9545
+
+#: half-width of a rectangular distribution by its standard uncertainty (JCGM 100:2008, 4.3.7)
+RECTANGULAR = 3.0**0.5
+
 _EXACT_TO = 40  # beyond, the expansion of Student's t is good to better than 1e-7
 _BISECTIONS = 60
 

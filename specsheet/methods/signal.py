@@ -6,6 +6,8 @@ from typing import Any
 
 import numpy as np
 
+from specsheet.methods.gum import RECTANGULAR
+
 #: mantissas of a range value that reads well on a display
 RANGE_SERIES = (1.0, 1.2, 1.5, 2.0, 2.5, 3.0, 4.0, 5.0, 6.0, 8.0, 10.0)
 DECADES = (1.0, 10.0)
@@ -40,4 +42,17 @@ def counting_uncertainty(*, rate: Any, time: float) -> Any:
     distribution of half-width 1/(f t) (JCGM 100:2008, 4.3.7).
     """
     with np.errstate(all="ignore"):
-        return 1.0 / (rate * time) / np.sqrt(3.0)
+        return 1.0 / (rate * time) / RECTANGULAR
+
+
+def velocity_error(*, reading_error: Any, zero_velocity: Any, velocity: Any) -> Any:
+    """Return the largest error of a velocity, relative [-]: of the reading, and of the zero.
+
+    Args:
+        reading_error: of the reading [-]
+        zero_velocity: velocity that the zero may be off by [m/s]
+        velocity: of either sign [m/s]
+
+    Form common in the trade; no source.
+    """
+    return reading_error + zero_velocity / np.abs(velocity)

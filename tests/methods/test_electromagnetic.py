@@ -1,4 +1,4 @@
-"""Induced voltage and error of an electromagnetic meter."""
+"""Induced voltage of an electromagnetic meter."""
 
 import pytest
 from hypothesis import given
@@ -22,9 +22,3 @@ def test_voltage_and_velocity_round_trip(flux, bore, speed, weight):
         voltage=voltage, flux_density=flux, diameter=bore, weight_factor=weight
     )
     assert back == pytest.approx(speed, rel=1e-12)
-
-
-def test_error_of_reading_and_zero():
-    """0.5 % of reading and 1 mm/s at 0.5 m/s: 0.7 %; common practice, no source."""
-    found = electromagnetic.error_limit(reading_error=0.005, zero_velocity=0.001, velocity=0.5)
-    assert found == pytest.approx(0.007)

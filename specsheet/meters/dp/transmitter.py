@@ -10,6 +10,7 @@ import numpy as np
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.family import Array, Contribution, Given, Limit, Request
 from specsheet.methods import signal
+from specsheet.methods.gum import RECTANGULAR
 from specsheet.sources import PRACTICE
 
 #: mantissas of preferred upper range values (R5 numbers, rounded; common practice, no source)
@@ -77,7 +78,7 @@ def contributions(
                 Contribution(
                     key=key,
                     label=label,
-                    relative=exponent * limit / np.sqrt(3.0) * scale,
+                    relative=exponent * limit / RECTANGULAR * scale,
                     origin=Origin(choices.get(f"origin.{key}", Origin.ASSUMED)),
                     source=f"meter.{key}",
                 )

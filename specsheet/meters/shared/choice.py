@@ -11,6 +11,7 @@ from specsheet.fields.terms import in_sentence
 from specsheet.findings import Level
 from specsheet.meters.family import Array, Contribution, Element, Limit, Request, Stream
 from specsheet.meters.shared import limits as shared_limits
+from specsheet.meters.shared import sizes
 from specsheet.meters.shared.sizes import Candidates, Size
 
 
@@ -138,6 +139,15 @@ def choose(
         reason = _reason(order, trials, index, liking)
         notes["element"] = (*notes.get("element", ()), reason)
     return replace(element, notes=notes, findings=(*found.findings, *element.findings))
+
+
+def choose_largest(
+    request: Request, build: Callable[[Request, Size], Element], rules: Rules
+) -> Element:
+    """Return the largest candidate that the limits allow, or the size stated, rated."""
+    found = sizes.candidates(request)
+    order = tuple(reversed(found.sizes))
+    return choose(request, found, order, build, rules, "the largest size")
 
 
 def _reason(order: Sequence[Size], trials: Sequence[Trial], index: int, liking: str) -> str:

@@ -11,6 +11,7 @@ from specsheet import quantity
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.family import Array, Contribution, Derivation, Element, Given, Request, Stream
 from specsheet.methods import signal
+from specsheet.methods.gum import RECTANGULAR
 from specsheet.quantity.value import Quantity
 from specsheet.sources import PRACTICE
 
@@ -166,22 +167,32 @@ def output_values(element: Element, stream: Stream) -> dict[str, Array]:
 def current_contribution(values: Mapping[str, Array], error: float) -> Contribution:
     """Return what the current output adds: its error is a share of the span [-], typical."""
     with np.errstate(all="ignore"):
-        relative = error / 3.0**0.5 / values["signal_fraction"]
+        relative = error / RECTANGULAR / values["signal_fraction"]
     return Contribution("current_output", "current output", relative, Origin.TYPICAL, PRACTICE)
 
 
 def density_contribution(element: Element, stream: Stream) -> tuple[Contribution, ...]:
     """Return what the density adds where a volume is measured and a mass is wanted."""
-    if element.choices["flow_kind"] == "volume_flow":
-        return ()
-    return (
-        Contribution(
-            "density",
-            "density of the fluid",
-            stream.density_uncertainty / 2.0,
-            Origin.DERIVED,
-            "method of the density",
-        ),
+    return () if is_volume(element) else (_density(stream),)
+
+
+def density_of_volume(element: Element, stream: Stream) -> tuple[Contribution, ...]:
+    """Return what the density adds where a mass is measured and a volume is wanted."""
+    return (_density(stream),) if is_volume(element) else ()
+
+
+def is_volume(element: Element) -> bool:
+    """Tell whether the flow wanted is a volume at operating conditions."""
+    return element.choices["flow_kind"] == "volume_flow"
+
+
+def _density(stream: Stream) -> Contribution:
+    return Contribution(
+        "density",
+        "density of the fluid",
+        stream.density_uncertainty / 2.0,
+        Origin.DERIVED,
+        "method of the density",
     )
 
 

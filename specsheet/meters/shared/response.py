@@ -10,7 +10,7 @@ from specsheet.findings import Finding, Level
 from specsheet.meters.family import Array, Derivation, Request, Stream
 from specsheet.meters.shared.sizes import Size, line_nominal, series
 from specsheet.methods import duct, reducer
-from specsheet.sources import MEMORY
+from specsheet.sources import MEMORY, PRACTICE
 
 #: temperature of the stated dimensions [K]
 REFERENCE_TEMPERATURE = 293.15
@@ -41,6 +41,19 @@ def numbers(request: Request, size: Size) -> dict[str, float]:
 def is_reduced(request: Request, size: Size) -> bool:
     """Tell whether the meter is smaller than the line, so that it sits between reducers."""
     return size.nominal < line_nominal(request, series(request.profile))
+
+
+def reducer_note(request: Request, size: Size, effect: str) -> tuple[str, ...]:
+    """Return a sentence on the reducers of a meter smaller than the line; none at line size.
+
+    Args:
+        request: the tag's request.
+        size: of the meter.
+        effect: what the reducers do, to end the sentence.
+    """
+    if not is_reduced(request, size):
+        return ()
+    return (f"Smaller than the line: concentric reducer and expander to {size.text}; {effect}.",)
 
 
 def flow_values(of: Mapping[str, float], stream: Stream, *, gas: bool) -> dict[str, Array]:
@@ -86,6 +99,21 @@ def pressure_behind(values: Mapping[str, Array], stream: Stream, loss: Array) ->
     return stream.pressure - speed_up - values["reducer_loss"] - loss
 
 
+def back_pressure_values(
+    values: Mapping[str, Array], stream: Stream, loss: Array, needed: Array
+) -> dict[str, Array]:
+    """Return the pressure a liquid needs behind the meter and by how much it is exceeded.
+
+    Args:
+        values: of ``flow_values``.
+        stream: the conditions, shape (n,).
+        loss: of the meter without reducers [Pa].
+        needed: pressure needed behind the meter, absolute [Pa].
+    """
+    behind = pressure_behind(values, stream, loss)
+    return {"minimum_back_pressure": needed, "back_pressure_margin": behind - needed}
+
+
 def phase_findings(request: Request) -> tuple[Finding, ...]:
     """Return a stop where the family does not meter the phase of the tag."""
     if request.tag.phase in ("", *request.profile.phases):
@@ -119,6 +147,22 @@ def vapour_pressure_findings(request: Request) -> tuple[Finding, ...]:
 
 
 _REDUCER_SOURCE = f"Crane TP-410, gradual contraction and enlargement ({MEMORY})"
+
+#: of a meter whose loss is a coefficient on the dynamic pressure in its bore
+LOSS_BY_COEFFICIENT = Derivation(
+    "pressure_loss",
+    "K ρ vm² / 2 + loss of the reducers",
+    PRACTICE,
+    ("pressure_loss_coefficient", "dynamic_pressure", "reducer_loss"),
+)
+
+#: of a meter with a loss of its own
+BACK_PRESSURE_MARGIN = Derivation(
+    "back_pressure_margin",
+    "p - ρ (vm² - v²) / 2 - loss of the reducers - loss of the meter - pmin",
+    "Bernoulli",
+    ("pressure", "density", "meter_velocity", "velocity", "pressure_loss"),
+)
 
 DERIVATIONS = (
     Derivation("velocity", "v = 4 qv / (π D²)", "continuity", ("volume_flow", "inside_diameter")),

@@ -192,6 +192,10 @@ def size_findings(request: Request, size: Size) -> tuple[Finding, ...]:
 
 def stated_or_typical(value: float | None, typical: Typical) -> Given:
     """Return what the user stated of the meter, else the figure usual for the family."""
-    if value is not None:
-        return Given(value, Origin.GIVEN)
-    return Given(typical.value, Origin.TYPICAL, typical.source)
+    found = typical.value if value is None else value
+    return given_or_typical(found, stated=value is not None, source=typical.source)
+
+
+def given_or_typical(value: float, *, stated: bool, source: str) -> Given:
+    """Return a figure that the user stated, or that rests on one usual for the family."""
+    return Given(value, Origin.GIVEN) if stated else Given(value, Origin.TYPICAL, source)

@@ -9,16 +9,15 @@ import numpy as np
 
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.family import Array, Contribution, Element, Family, Given, Request, Stream
-from specsheet.meters.shared import output, response, sizes
-from specsheet.meters.shared.choice import Rules, choose
+from specsheet.meters.shared import errors, fluid, output, response, sizes
+from specsheet.meters.shared.choice import Rules, choose_largest
 from specsheet.meters.turning.limits import limits
 from specsheet.meters.turning.method import DERIVATIONS
-from specsheet.methods import back_pressure, duct, signal, turning
-from specsheet.sources import PRACTICE, cite
+from specsheet.methods import back_pressure, duct, turning
+from specsheet.packs import Typical
 
 #: digits of the register
 _DIGITS = 8
-_ROOT_THREE = 3.0**0.5
 
 
 @dataclass(frozen=True, slots=True)
@@ -46,10 +45,7 @@ def family(rotor: Rotor) -> Family:
         return _build(rotor, request, item)
 
     def size(request: Request) -> Element:
-        found = sizes.candidates(request)
-        order = tuple(reversed(found.sizes))
-        rules = Rules(at, limits, budget)
-        return choose(request, found, order, build, rules, "the largest size")
+        return choose_largest(request, build, Rules(at, limits, budget))
 
     return Family(
         key=rotor.key,
@@ -68,35 +64,30 @@ def _range(rotor: Rotor, request: Request, bore: float) -> dict[str, Given]:
     phase = _phase(request)
     speed, turndown = typical[f"{phase}_velocity_high"], typical[f"{phase}_turndown"]
     area = float(duct.area(diameter=bore))
-    stated = sizes.stated(request, "largest_flow")
-    largest = stated if stated is not None else speed.value * area
+
+    def rated(key: str, usual: float, source: str) -> Given:
+        return sizes.stated_or_typical(sizes.stated(request, key), Typical(usual, source))
+
+    top = rated("largest_flow", speed.value * area, speed.source)
+    largest = float(top.value)
     values = {
-        "largest_volume_flow": _given(stated is not None, largest, speed.source),
+        "largest_volume_flow": top,
         "smallest_volume_flow": Given(largest / turndown.value, Origin.TYPICAL, turndown.source),
     }
-    factor = sizes.stated(request, "k_factor")
     if rotor.sweeps:
-        swept = sizes.stated(request, "swept_volume")
-        usual = typical["highest_rotation"]
-        volume = swept if swept is not None else largest / usual.value
-        values["swept_volume"] = _given(swept is not None, volume, usual.source)
-        pulses = typical["pulses_per_revolution"]
-        found = factor if factor is not None else pulses.value / volume
-        values["k_factor"] = _given(factor is not None, found, pulses.source)
-        return values
-    pulses = typical["pulses_by_bore_cubed"]
-    found = factor if factor is not None else pulses.value / bore**3
-    values["k_factor"] = _given(factor is not None, found, pulses.source)
+        fastest = typical["highest_rotation"]
+        swept = rated("swept_volume", largest / fastest.value, fastest.source)
+        values["swept_volume"] = swept
+        pulses, volume = typical["pulses_per_revolution"], float(swept.value)
+    else:
+        pulses, volume = typical["pulses_by_bore_cubed"], bore**3
+    values["k_factor"] = rated("k_factor", pulses.value / volume, pulses.source)
     return values
 
 
 def _phase(request: Request) -> str:
     """Return the phase whose figures apply: a family for liquids rates a gas as a liquid."""
     return request.tag.phase if request.tag.phase in request.profile.phases else "liquid"
-
-
-def _given(stated: bool, value: float, source: str) -> Given:
-    return Given(value, Origin.GIVEN) if stated else Given(value, Origin.TYPICAL, source)
 
 
 def _build(rotor: Rotor, request: Request, item: sizes.Size) -> Element:
@@ -149,21 +140,18 @@ def _build(rotor: Rotor, request: Request, item: sizes.Size) -> Element:
 
 def _fluid_findings(request: Request) -> tuple[Finding, ...]:
     """Return what free gas and solids do to a meter that turns."""
-    tag = request.tag
-    findings: list[Finding] = []
-    if tag.phase == "liquid" and (tag.si("fluid.bubbles") or 0.0) > 0.0:
-        message = (
+    return (
+        *fluid.bubbles(
+            request,
             "Free gas is counted as liquid, and a slug of it overspeeds the meter; fit a gas "
-            "separator before the strainer."
-        )
-        findings.append(
-            Finding(Level.CAUTION, "bubbles", "fluid.bubbles", message, source=PRACTICE)
-        )
-    if tag.flag("fluid.abrasive") or (tag.si("fluid.solids") or 0.0) > 0.0:
-        message = "Solids wear bearings and clearances; choose a family without moving parts."
-        field = "fluid.abrasive" if tag.flag("fluid.abrasive") else "fluid.solids"
-        findings.append(Finding(Level.STOP, "solids", field, message, source=PRACTICE))
-    return tuple(findings)
+            "separator before the strainer.",
+        ),
+        *fluid.solids(
+            request,
+            "Solids wear bearings and clearances; choose a family without moving parts.",
+            Level.STOP,
+        ),
+    )
 
 
 def at(element: Element, stream: Stream) -> Mapping[str, Array]:
@@ -200,7 +188,10 @@ def at(element: Element, stream: Stream) -> Mapping[str, Array]:
             values["rotation"] = flow / of["swept_volume"]
         values["error_limit"] = of["reading_error"] * np.maximum(1.0, lowest / flow) + leak
         if not gas:
-            values.update(_back_pressure(stream, values, own))
+            needed = back_pressure.minimum_back_pressure(
+                pressure_loss=own, vapour_pressure=stream.vapour_pressure
+            )
+            values.update(response.back_pressure_values(values, stream, own, needed))
         values.update(output.output_values(element, stream))
     return values
 
@@ -226,34 +217,14 @@ def _lowest(element: Element, stream: Stream) -> Array:
     return thick
 
 
-def _back_pressure(stream: Stream, values: Mapping[str, Array], loss: Array) -> dict[str, Array]:
-    needed = back_pressure.minimum_back_pressure(
-        pressure_loss=loss, vapour_pressure=stream.vapour_pressure
-    )
-    behind = response.pressure_behind(values, stream, loss)
-    return {"minimum_back_pressure": needed, "back_pressure_margin": behind - needed}
-
-
 def budget(
     element: Element, stream: Stream, values: Mapping[str, Array]
 ) -> tuple[Contribution, ...]:
     """Return error of the meter, counting, current output and density, relative, shape (n,)."""
     of = element.numbers
     return (
-        Contribution(
-            "meter_error",
-            "error of the meter",
-            values["error_limit"] / _ROOT_THREE,
-            Origin.TYPICAL,
-            PRACTICE,
-        ),
-        Contribution(
-            "counting",
-            f"counting pulses for {of['averaging_time']:g} s",
-            signal.counting_uncertainty(rate=values["frequency"], time=of["averaging_time"]),
-            Origin.DERIVED,
-            cite("gum", "4.3.7"),
-        ),
+        errors.of_limit("meter_error", "error of the meter", values["error_limit"]),
+        errors.counting(values, of, "pulses"),
         output.current_contribution(values, of["current_output_error"]),
         *output.density_contribution(element, stream),
     )

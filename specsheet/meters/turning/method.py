@@ -42,11 +42,6 @@ DERIVATIONS = (
         cite("mpms5.3"),
         ("pressure_loss", "reducer_loss", "vapour_pressure"),
     ),
-    Derivation(
-        "back_pressure_margin",
-        "p - ρ (vm² - v²) / 2 - loss of the reducers - loss of the meter - pmin",
-        "Bernoulli",
-        ("pressure", "density", "meter_velocity", "velocity", "pressure_loss"),
-    ),
+    response.BACK_PRESSURE_MARGIN,
     *output.DERIVATIONS,
 )
