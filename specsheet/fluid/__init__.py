@@ -3,7 +3,6 @@
 * :func:`derive`  tag -> :class:`~specsheet.fluid.state.FluidResult`
 * :func:`fluid_of`  tag -> the fluid alone, for :func:`states`
 * :func:`settle`  what was left unverified about a phase, found in a process of its own
-* :func:`warm`  loads what a tag needs, before a screen starts or in an idle moment
 * :func:`states`  fluid and conditions -> states (what-if)
 * :mod:`specsheet.fluid.names`, :mod:`specsheet.fluid.solutes`  by name, for form and messages
 
@@ -23,7 +22,7 @@ if TYPE_CHECKING:
     from specsheet.fluid.state import FluidResult
     from specsheet.tag import Tag
 
-__all__ = ["derive", "fluid_of", "settle", "states", "warm"]
+__all__ = ["derive", "fluid_of", "settle", "states"]
 
 
 def derive(tag: Tag) -> FluidResult:
@@ -52,16 +51,3 @@ def settle(tag: Tag, seconds: float = 10.0) -> bool:
     from specsheet.fluid.result import settle as run
 
     return run(tag, seconds)
-
-
-def warm(tag: Tag | None = None) -> None:
-    """Load what the fluid of a tag needs, or everything: 10 ms for water, else a third of a second.
-
-    Loading keeps standard output to itself for that time, so do it before a screen starts.
-    """
-    from specsheet.fluid import library
-
-    if tag is None:
-        library.fluids()
-    else:
-        derive(tag)

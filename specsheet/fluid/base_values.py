@@ -130,9 +130,7 @@ def _softened(tag: Tag, finding: Finding, base: Base) -> Finding:
     level = finding.level
     if level is Level.STOP:
         level = Level.CAUTION if _used(tag, base) else Level.NOTE
-    return replace(
-        finding, level=level, field=field, message=f"At base ({base.name}): {finding.message}"
-    )
+    return replace(finding, level=level, field=field)
 
 
 def _used(tag: Tag, base: Base) -> bool:

@@ -70,6 +70,13 @@ def liquid_viscosity(temperature: float) -> float:
     return float(state.viscosity())
 
 
+def liquid_heat_capacity(temperature: float) -> float:
+    """Return the isobaric heat capacity [J/kg/K] of liquid water near saturation, at [K]."""
+    liquid_density(temperature, 101325.0)
+    _, state = objects()
+    return float(state.cpmass())
+
+
 def liquid_derivatives(temperature: float, pressure: float, step: float) -> Derivatives:
     """Return the derivatives of the Gibbs energy of liquid water, SI.
 

@@ -19,7 +19,7 @@ from functools import lru_cache
 from typing import Any
 
 from specsheet.findings import Finding, Origin
-from specsheet.fluid import envelope, if97, library, mixture_state, names, water_in_gas
+from specsheet.fluid import dew_curve, envelope, if97, library, mixture_state, names, water_in_gas
 from specsheet.fluid.backends import pure
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.model import Method, caution, celsius
@@ -134,16 +134,23 @@ def _dry_verdict(composition: Composition, temperature: float, pressure: float) 
     found = envelope.known(without_water(composition))
     if found is not None:
         return _by_envelope(found, temperature, pressure)
+    dew = dew_curve.known(without_water(composition), pressure)
+    if dew is not None and temperature > dew:
+        return _above(dew, temperature)
     plain = _by_cubic(GAS, fractions, components, temperature, pressure)
     if plain == GAS:
         return Verdict(GAS)
-    dew = dew_temperature(without_water(composition), pressure)
+    dew = dew_curve.dew_temperature(without_water(composition), pressure)
     if dew is None:
         return Verdict(plain)
-    values = {"dew_temperature": _DEW(dew)}
-    if temperature < dew:
-        return Verdict(TWO_PHASE, values)
-    return Verdict(GAS, values, _near(dew, temperature, "the gas"))
+    if temperature > dew:
+        return _above(dew, temperature)
+    return Verdict(LIQUID if plain == LIQUID else TWO_PHASE, {"dew_temperature": _DEW(dew)})
+
+
+def _above(dew: float, temperature: float) -> Verdict:
+    """Return the verdict on a gas above its dew point [K]."""
+    return Verdict(GAS, {"dew_temperature": _DEW(dew)}, _near(dew, temperature, "the gas"))
 
 
 def _by_envelope(found: envelope.Envelope, temperature: float, pressure: float) -> Verdict:
@@ -209,31 +216,6 @@ def _wilson(composition: Composition, pressure: float) -> Mapping[str, Property]
         pressure=pressure, fractions=fractions, components=components
     )
     return {"dew_temperature": _ESTIMATE(found)}
-
-
-@lru_cache(maxsize=1024)
-def dew_temperature(composition: Composition, pressure: float) -> float | None:
-    """Return the dew temperature [K] of a dry gas at a pressure [Pa]; None where it is not sure."""
-    table = names.substances()
-    if len(composition) == 1:
-        return None
-    module = library.fluids()
-    fractions, components = _dry(composition)
-    estimate = equilibrium.wilson_dew_temperature(
-        pressure=pressure, fractions=fractions, components=components
-    )
-    try:
-        state = module.AbstractState(
-            "HEOS", "&".join(table[key].equation for key, _ in composition)
-        )
-        state.set_mole_fractions(list(fractions))
-        state.update(module.PQ_INPUTS, pressure, 1.0)
-        found = float(state.T())
-        liquid = state.mole_fractions_liquid()
-    except library.ERRORS:
-        return None
-    trivial = all(abs(x - z) < 1e-4 for x, z in zip(liquid, fractions, strict=True))
-    return found if estimate - 60.0 < found < estimate + 25.0 and not trivial else None
 
 
 def _near(dew: float, temperature: float, what: str) -> tuple[Finding, ...]:

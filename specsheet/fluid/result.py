@@ -7,7 +7,15 @@ from dataclasses import replace
 
 from specsheet import packs
 from specsheet.findings import Finding, Level
-from specsheet.fluid import base_values, envelope, evaluate, given_values, mixture_phase
+from specsheet.fluid import (
+    base_values,
+    envelope,
+    evaluate,
+    gaps,
+    given_values,
+    mixture_phase,
+    repeats,
+)
 from specsheet.fluid.backends.mixture import Mixture
 from specsheet.fluid.backends.water import Water
 from specsheet.fluid.backends.wet_gas import WetGas
@@ -36,12 +44,13 @@ def derive(tag: Tag) -> FluidResult:
         constants = base_values.constants(tag, fluid)
         points, findings = _points(tag, fluid, constants)
         bases, base_findings = _bases(tag, fluid)
+    missing = gaps.unknown(name or fluid.name, points, findings)
     return FluidResult(
         name or fluid.name,
         points,
         bases,
         {**constants, **base_values.at_own_base(tag, bases)},
-        _sorted((*built.findings, *findings, *base_findings)),
+        _sorted((*built.findings, *findings, *base_findings, *missing)),
     )
 
 
@@ -109,7 +118,8 @@ def _points(
             findings += found.findings
         findings += [_at(point, item) for item in (*outcome.findings, *_unused(fluid, point))]
         states.append(found)
-    return tuple(states), tuple(findings)
+    by_name = dict(zip((point.name for point in tag.points), states, strict=True))
+    return tuple(states), repeats.over_points(findings, by_name)
 
 
 def _unused(fluid: Fluid, point: Point) -> tuple[Finding, ...]:
@@ -132,13 +142,13 @@ def _at(point: Point, finding: Finding) -> Finding:
 
 def _bases(tag: Tag, fluid: Fluid) -> tuple[Mapping[Base, State], tuple[Finding, ...]]:
     bases: dict[Base, State] = {}
-    findings: list[Finding] = []
+    findings: list[tuple[Base, Finding]] = []
     for base in base_values.bases_of(tag):
         outcome = evaluate.base(fluid, base)
         found, said = base_values.apply(tag, fluid, base, outcome)
         bases[base] = replace(found, findings=said)
-        findings += said
-    return bases, tuple(findings)
+        findings += [(base, item) for item in said]
+    return bases, repeats.over_bases(findings)
 
 
 def _sorted(findings: tuple[Finding, ...]) -> tuple[Finding, ...]:

@@ -88,6 +88,7 @@ class Solute:
     incompressible: Incompressible | None
     density: Correlation | None
     viscosity: Correlation | None
+    heat: Correlation | None
     strong: Strong | None
 
     @property
@@ -125,6 +126,7 @@ def _solute(key: str, raw: Mapping[str, Any]) -> Solute:
         ),
         density=_correlation(raw.get("density")),
         viscosity=_correlation(raw.get("viscosity")),
+        heat=_correlation(raw.get("heat")),
         strong=_strong(raw.get("strong")),
     )
 

@@ -1,8 +1,8 @@
-"""Aqueous solutions: density, viscosity and vapour pressure.
+"""Aqueous solutions: density, viscosity, heat capacity and vapour pressure.
 
 Sources: M. Laliberté and W. E. Cooper, J. Chem. Eng. Data 49 (2004) 1141 (density); M. Laliberté,
-J. Chem. Eng. Data 52 (2007) 321 (viscosity); forms as published in the documentation of a public
-library. Coefficients stand in ``profiles/fluids/solutions.toml``.
+J. Chem. Eng. Data 52 (2007) 321 (viscosity) and 54 (2009) 1725 (heat capacity); forms as published
+in the documentation of a public library. Coefficients stand in ``profiles/fluids/solutions.toml``.
 """
 
 from __future__ import annotations
@@ -53,6 +53,29 @@ def laliberte_viscosity(
     return float(water_viscosity ** (1.0 - solute_fraction) * solute**solute_fraction)
 
 
+def laliberte_heat_capacity(
+    *,
+    celsius: float,
+    solute_fraction: float,
+    water_heat_capacity: float,
+    coefficients: Sequence[float],
+) -> float:
+    """Return the isobaric heat capacity of a solution [J/kg/K].
+
+    Args:
+        celsius: temperature [degC]
+        solute_fraction: by mass [-].
+        water_heat_capacity: of pure water at that temperature [J/kg/K].
+        coefficients: a1 ... a6 of the solute.
+
+    Source: Laliberté (2009), as documented in a public library of chemical data.
+    """
+    a1, a2, a3, a4, a5, a6 = coefficients
+    power = a2 * celsius + a3 * math.exp(0.01 * celsius) + a4 * solute_fraction
+    solute = 1e3 * (a1 * math.exp(power) + a5 * solute_fraction**a6)
+    return float((1.0 - solute_fraction) * water_heat_capacity + solute_fraction * solute)
+
+
 def water_mole_fraction(*, solute_fraction: float, molar_mass: float, ions: int) -> float:
     """Return moles of water by moles of all particles in a solution [-].
 
@@ -63,6 +86,18 @@ def water_mole_fraction(*, solute_fraction: float, molar_mass: float, ions: int)
     """
     water = (1.0 - solute_fraction) / 0.01801528
     return water / (water + ions * solute_fraction / molar_mass)
+
+
+def supercooled_vapour_pressure(temperature: float) -> float:
+    """Return the vapour pressure [Pa] of water below 273.15 K that has not frozen.
+
+    Clausius and Clapeyron from 611.2 Pa at 273.15 K with the heat of evaporation there, 2.501 MJ/kg
+    (from memory): within 2 % down to -20 degC.
+
+    Args:
+        temperature: [K]
+    """
+    return 611.2 * math.exp(-2.501e6 / 461.5 * (1.0 / temperature - 1.0 / 273.15))
 
 
 def van_laar(*, fraction: float, first: float, second: float) -> tuple[float, float]:

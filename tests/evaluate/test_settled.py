@@ -3,7 +3,7 @@
 import pytest
 
 from specsheet.evaluate import evaluate, evaluate_settled, unsettled
-from specsheet.fluid import envelope
+from specsheet.fluid import dew_curve, envelope
 from specsheet.fluid import evaluate as states
 from tests.support.tags import WATER, point, tag_of
 
@@ -15,7 +15,10 @@ GAS = (
 
 
 @pytest.fixture(autouse=True)
-def _forgotten():
+def _forgotten(monkeypatch):
+    """Leave the phase open, as that of a gas of more components than are followed at once."""
+    monkeypatch.setattr(dew_curve, "MOST_COMPONENTS", 4)
+    dew_curve._curve.cache_clear()
     envelope._known.clear()
     states.forget()
 

@@ -131,14 +131,6 @@ def test_what_if_at_any_conditions() -> None:
     assert outcomes[1].findings[0].code == "fluid-limit"
 
 
-def test_warm_loads_without_a_word(capfd: pytest.CaptureFixture[str]) -> None:
-    text = 'kind = "substance"\nsubstance = "methane"\nphase = "gas"'
-    fluid.warm(tag(text, point("7 bar(g)", "20 degC")))
-    fluid.warm()
-    captured = capfd.readouterr()
-    assert (captured.out, captured.err) == ("", "")
-
-
 def test_a_channel_has_the_pressure_of_the_air() -> None:
     text = f'{HEAD.replace("vortex", "weir_vnotch")}[fluid]\nkind = "substance"\n'
     text += 'substance = "water"\nphase = "liquid"\n' + point("", "15 degC", flow="20 m3/h")

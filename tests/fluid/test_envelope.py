@@ -6,7 +6,7 @@ import pytest
 from fluid_tags import codes, finding, point, tag
 
 from specsheet import fluid
-from specsheet.fluid import envelope, evaluate
+from specsheet.fluid import dew_curve, envelope, evaluate
 
 TEXT = (
     'kind = "mixture"\nphase = "gas"\nmixture = { methane = 0.9, ethane = 0.05, '
@@ -15,7 +15,10 @@ TEXT = (
 
 
 @pytest.fixture(autouse=True)
-def _unsettled() -> None:
+def _unsettled(monkeypatch: pytest.MonkeyPatch) -> None:
+    """Leave the phase open, as that of a gas of more components than are followed at once."""
+    monkeypatch.setattr(dew_curve, "MOST_COMPONENTS", 4)
+    dew_curve._curve.cache_clear()
     envelope._known.clear()
     evaluate.forget()
 
@@ -40,6 +43,24 @@ def test_an_unverified_phase_is_settled() -> None:
     assert after.points[0] is not None
     assert after.points[0].value("dew_temperature") == pytest.approx(247.35, abs=0.3)
     assert not fluid.settle(stated)
+
+
+@pytest.mark.parametrize("pressure", [25e5, 41e5, 55e5, 63e5, 74e5])
+def test_dew_curve_lies_on_the_envelope(pressure: float, monkeypatch: pytest.MonkeyPatch) -> None:
+    """Two ways of the library to the same line: the envelope's chords lie up to 1 K inside it."""
+    monkeypatch.setattr(dew_curve, "MOST_COMPONENTS", 12)
+    gas = (
+        ("methane", 0.9),
+        ("ethane", 0.05),
+        ("propane", 0.03),
+        ("n_butane", 0.01),
+        ("nitrogen", 0.01),
+    )
+    assert envelope.settle(gas, 60.0)
+    line = envelope.known(gas)
+    assert line is not None
+    found = dew_curve.dew_temperature(gas, pressure)
+    assert found == pytest.approx(line.crossings(pressure)[-1] + 0.4, abs=0.6)
 
 
 def test_nothing_to_settle() -> None:

@@ -13,7 +13,7 @@ from specsheet.fluid.backends.seawater import Seawater
 from specsheet.fluid.backends.solution import Solution
 from specsheet.fluid.model import Condition
 from specsheet.fluid.state import State
-from specsheet.methods import petroleum, suspensions
+from specsheet.methods import petroleum, solutions, suspensions
 
 
 def solved(key: str, fraction: float, celsius: float) -> State:
@@ -82,6 +82,48 @@ def test_densities_of_solutions(key: str, fraction: float, density: float) -> No
 def test_viscosities_of_solutions(key: str, fraction: float, viscosity: float) -> None:
     found = solved(key, fraction, 20.0).properties["viscosity"]
     assert found.value == pytest.approx(viscosity * 1e-3, rel=found.uncertainty)
+
+
+# handbook heat capacities near room temperature [J/kg/K]: caustic, brine and acids, from memory
+@pytest.mark.parametrize(
+    ("key", "fraction", "celsius", "heat"),
+    [
+        ("sodium_hydroxide", 0.10, 20, 3755),
+        ("sodium_hydroxide", 0.30, 20, 3510),
+        ("potassium_hydroxide", 0.30, 20, 3000),
+        ("sulfuric_acid", 0.20, 20, 3520),
+        ("sulfuric_acid", 0.50, 20, 2510),
+        ("sulfuric_acid", 0.70, 20, 1970),
+    ],
+)
+def test_heat_capacities_of_solutions(
+    key: str, fraction: float, celsius: float, heat: float
+) -> None:
+    found = solved(key, fraction, celsius).properties["heat_capacity"]
+    assert found.value == pytest.approx(heat, rel=found.uncertainty)
+
+
+@pytest.mark.parametrize(
+    ("key", "fraction"),
+    [("sodium_chloride", 0.2), ("calcium_chloride", 0.25), ("magnesium_chloride", 0.2)],
+)
+def test_heat_capacity_of_brine_by_two_sources(key: str, fraction: float) -> None:
+    """Melinder below 40 degC, Laliberté above: independent measurements, one brine."""
+    cold, warm = solved(key, fraction, 39.9), solved(key, fraction, 40.1)
+    assert warm.properties["heat_capacity"].source != cold.properties["heat_capacity"].source
+    assert warm.value("heat_capacity") == pytest.approx(cold.value("heat_capacity"), rel=0.03)
+
+
+def test_no_heat_capacity_beyond_the_measurements() -> None:
+    assert "heat_capacity" not in solved("sodium_hydroxide", 0.45, 20.0).properties
+    assert "heat_capacity" not in solved("hydrogen_chloride", 0.30, 20.0).properties
+
+
+# water that has not frozen: 286.5 Pa at -10 degC, 125.4 Pa at -20 degC (handbook, from memory)
+@pytest.mark.parametrize(("celsius", "vapour"), [(0, 611.2), (-10, 286.5), (-20, 125.4)])
+def test_vapour_pressure_of_cold_water(celsius: float, vapour: float) -> None:
+    found = solutions.supercooled_vapour_pressure(celsius + 273.15)
+    assert found == pytest.approx(vapour, rel=0.02)
 
 
 def test_two_sources_meet_where_they_hand_over() -> None:

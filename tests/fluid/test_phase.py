@@ -10,7 +10,7 @@ from fluid_tags import point, stops, tag
 from gas_cases import ISO_GASES
 
 from specsheet import fluid
-from specsheet.fluid import evaluate, library, mixture_phase, mixture_state, names
+from specsheet.fluid import dew_curve, evaluate, library, mixture_phase, mixture_state, names
 from specsheet.fluid.backends.mixture import Mixture
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.model import Condition
@@ -121,7 +121,7 @@ def test_screen_and_cubic_never_call_gas_what_the_equation_of_state_condenses() 
     """Dew points of the multi-fluid equation are the truth; both cheap steps must stay clear."""
     checked = 0
     for gas, pressure in _random_gases(60, 11):
-        dew = mixture_phase.dew_temperature(gas, pressure)
+        dew = dew_curve.dew_temperature(gas, pressure)
         if dew is None:
             continue
         fractions, components = mixture_state.critical(gas)

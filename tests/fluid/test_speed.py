@@ -12,6 +12,7 @@ from fluid_tags import point, tag
 
 from specsheet import fluid
 from specsheet.fluid import (
+    dew_curve,
     evaluate,
     library,
     mixture_phase,
@@ -49,7 +50,8 @@ def forget() -> None:
     for cached in (
         mixture_transport.dilute_viscosity,
         mixture_transport.dilute_conductivity,
-        mixture_phase.dew_temperature,
+        dew_curve._low,
+        dew_curve._curve,
         mixture_phase._wilson,
     ):
         cached.cache_clear()

@@ -30,6 +30,17 @@ _HEAT = Method(_EQUATION, _SOURCE, 0.02)
 _KAPPA = Method("ρc²/p of the real gas, " + _EQUATION, _SOURCE, 0.02)
 _SATURATION = Method(_EQUATION + ", saturation line", _SOURCE, 0.005)
 _MOLAR = Method("molar mass", _SOURCE, 0.0)
+#: uncertainties near the critical point, where a kelvin moves the density much (our judgement)
+_LOOSE: Mapping[str, float] = {
+    "density": 0.02,
+    "compressibility": 0.02,
+    "sound_speed": 0.05,
+    "isentropic_exponent": 0.05,
+    "heat_capacity": 0.2,
+    "viscosity": 0.05,
+    "kinematic_viscosity": 0.05,
+    "thermal_conductivity": 0.2,
+}
 
 
 @cache
@@ -68,13 +79,12 @@ class Pure:
         module, state = library.fluids(), state_of(self.substance.equation)
         self._update(state, module.PT_INPUTS, pressure, temperature, temperature, pressure)
         phase = self._phase(module, state)
-        return State(
-            temperature,
-            pressure,
-            phase,
-            self._properties(state, phase, temperature, pressure, boiling),
-            (*findings, *self._near_critical(temperature, pressure)),
-        )
+        values = self._properties(state, phase, temperature, pressure, boiling)
+        near = self._near_critical(temperature, pressure)
+        for key in values.keys() & _LOOSE.keys() if near else ():
+            wide = max(values[key].uncertainty, _LOOSE[key])
+            values[key] = values[key]._replace(uncertainty=wide)
+        return State(temperature, pressure, phase, values, (*findings, *near))
 
     def base(self, base: Base) -> State:
         """Return the state at base; none of a density for a vapour that is liquid there."""

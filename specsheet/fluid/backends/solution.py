@@ -119,8 +119,8 @@ class Solution:
             coefficients=density.coefficients,
         ) * _squeeze(pressure)
         found = Method("equation of Laliberté and Cooper", _LALIBERTE, density.uncertainty)
-        values = {"density": found(value)}
-        if viscosity is None or not self._viscosity_holds(viscosity, temperature):
+        values = {"density": found(value), **self._heat(temperature)}
+        if viscosity is None or not _holds(viscosity, self.fraction, temperature, 15.0):
             return values, (*findings, self._viscosity_unknown(viscosity))
         mixed = method.laliberte_viscosity(
             celsius=temperature - 273.15,
@@ -144,19 +144,28 @@ class Solution:
             raise Refused(self._fraction(item.rows[-1][0]))
         value = (cold + item.slope * (temperature - 293.15)) * _squeeze(pressure)
         found = Method("handbook densities of the strong acid", "from memory", item.uncertainty)
-        return {"density": found(value)}, (self._viscosity_unknown(None),)
+        values = {"density": found(value), **self._heat(temperature)}
+        return values, (self._viscosity_unknown(None),)
 
-    def _viscosity_holds(self, item: solutes.Correlation, temperature: float) -> bool:
-        return (
-            self.fraction <= item.fraction * 1.02
-            and item.lowest - 15.0 <= temperature <= item.highest + 15.0
+    def _heat(self, temperature: float) -> dict[str, Property]:
+        """Return the heat capacity where it was measured, with some degrees to either side."""
+        item = self.solute.heat
+        if item is None or not _holds(item, self.fraction, temperature, 10.0):
+            return {}
+        value = method.laliberte_heat_capacity(
+            celsius=temperature - 273.15,
+            solute_fraction=self.fraction,
+            water_heat_capacity=if97.liquid_heat_capacity(temperature),
+            coefficients=item.coefficients,
         )
+        found = Method("equation of Laliberté, heat capacity", _LALIBERTE, item.uncertainty)
+        return {"heat_capacity": found(value)}
 
     def _vapour_pressure(self, temperature: float) -> Property | None:
         """Return the vapour pressure; None where the solute evaporates in a way not described."""
         pure = if97.saturation_pressure(temperature)
-        if pure is None:
-            pure = 611.2 if temperature < if97.LOWEST_TEMPERATURE else None
+        if pure is None and temperature < if97.LOWEST_TEMPERATURE:
+            pure = method.supercooled_vapour_pressure(temperature)
         if pure is None or self.solute.volatile == "yes":
             return None
         share = method.water_mole_fraction(
@@ -165,7 +174,10 @@ class Solution:
             ions=self.solute.ions,
         )
         if self.solute.volatile == "":
-            return _RAOULT(share * pure)
+            # salts and acids hold their water back: the more so, the stronger the solution
+            return _RAOULT(share * pure)._replace(
+                uncertainty=min(max(0.1, 1.5 * (1.0 - share)), 1.0)
+            )
         (first, second), (a, b, c) = _ALCOHOLS[self.key]
         alcohol, other = method.van_laar(fraction=1.0 - share, first=first, second=second)
         spirit = method.antoine(celsius=temperature - 273.15, a=a, b=b, c=c)
@@ -206,6 +218,14 @@ class Solution:
             "state it at each point, so that flashing and cavitation can be checked."
         )
         return note("vapour-pressure-missing", "vapour_pressure", text)
+
+
+def _holds(item: solutes.Correlation, fraction: float, temperature: float, beyond: float) -> bool:
+    """Tell whether a correlation holds, some degrees beyond its measurements included."""
+    return (
+        fraction <= item.fraction * 1.02
+        and item.lowest - beyond <= temperature <= item.highest + beyond
+    )
 
 
 def _soften(finding: Finding) -> Finding:
