@@ -9,7 +9,15 @@ from math import log
 import numpy as np
 
 from specsheet.evaluate.model import Model
-from specsheet.evaluate.reserve import FACTORS, NO_FLIPS, Bounds, Flips, find_flips, margin
+from specsheet.evaluate.reserve import (
+    FACTORS,
+    NO_FLIPS,
+    STRAIGHT,
+    Bounds,
+    Flips,
+    find_flips,
+    margin,
+)
 from specsheet.evaluate.result import Band, Check
 from specsheet.evaluate.words import facts
 from specsheet.fields.terms import in_sentence
@@ -43,6 +51,7 @@ def check_limits(
     limits: Sequence[Limit],
     values: Mapping[str, Array],
     grid: Mapping[str, Array] | None,
+    straightness: float = STRAIGHT,
 ) -> Checked:
     """Check every limit at every operating point.
 
@@ -52,9 +61,12 @@ def check_limits(
         limits: the limits that apply.
         values: response at the operating points, shape (n,).
         grid: response over :func:`specsheet.evaluate.reserve.scaled`; None for no reserves.
+        straightness: as in :func:`specsheet.evaluate.reserve.find_flips`.
     """
     driven = [limit for limit in limits if _driven_by_flow(limit, values)]
-    flips = NO_FLIPS if grid is None else find_flips(model, request.stream, driven, grid)
+    flips = (
+        NO_FLIPS if grid is None else find_flips(model, request.stream, driven, grid, straightness)
+    )
     crossings = _by_limit(flips, len(driven))
     checks: list[Check] = []
     findings: list[Finding] = []

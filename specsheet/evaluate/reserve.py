@@ -17,6 +17,9 @@ from specsheet.meters.family import Array, Limit, Stream
 
 #: flow factors that the search looks at; 1 is among them
 FACTORS = np.geomspace(0.01, 100.0, 81)
+_LOGS = np.log(FACTORS)
+#: slopes that differ so little beside a crossing put it within 0.015 % when read off the grid
+STRAIGHT = 0.01
 #: twenty cuts narrow a step of the grid to 0.55 %, within which a value that follows a power of the
 #: flow is interpolated exactly, and a sum of powers to 1e-6
 _CUTS = np.linspace(0.0, 1.0, 22)[1:-1]
@@ -87,6 +90,19 @@ class Bounds:
         clipped = np.minimum(np.maximum(inside, -1e9), 1e9)
         return np.asarray(np.where(np.isnan(values), -1.0, clipped))
 
+    def straightened(self, margins: Array) -> Array:
+        """Return margins, shape (k, m), as logarithms of value by bound where that is sensible.
+
+        So it is where one bound decides and is no zero: a power of the flow is a straight line
+        over the logarithm of the flow there.
+        """
+        sign = np.where(np.isinf(self.high) & (self.low > 0.0), 1.0, 0.0)
+        sign = np.where(np.isinf(self.low) & (self.high > 0.0), -1.0, sign)
+        with np.errstate(all="ignore"):
+            straight = sign * np.log1p(sign * margins)
+        usable = (sign != 0.0) & np.isfinite(straight).all(axis=1, keepdims=True)
+        return np.asarray(np.where(usable, straight, margins))
+
 
 def margin(limit: Limit, values: Array) -> Array:
     """Return the margins of one limit, shape (n,) as ``values``; see :meth:`Bounds.margins`."""
@@ -111,15 +127,24 @@ def scaled(stream: Stream) -> Stream:
 
 
 def find_flips(
-    model: Model, stream: Stream, limits: Sequence[Limit], grid: Mapping[str, Array]
+    model: Model,
+    stream: Stream,
+    limits: Sequence[Limit],
+    grid: Mapping[str, Array],
+    straightness: float = STRAIGHT,
 ) -> Flips:
     """Return all crossings of all limits at all points.
+
+    A crossing is read off the grid where the margin runs straight through it, and closed in on
+    with the model elsewhere.
 
     Args:
         model: the meter.
         stream: the operating points, n of them.
         limits: limits driven by the flow.
         grid: response over :func:`scaled`.
+        straightness: by which share the slopes beside a crossing may differ from its own; the
+            factor read off is wrong by an eighth of that share of a step at the most.
     """
     if not limits:
         return NO_FLIPS
@@ -131,20 +156,44 @@ def find_flips(
     of_limit, of_point, of_step = np.nonzero(holds[..., 1:] != holds[..., :-1])
     if not of_limit.size:
         return NO_FLIPS
-    search = _Search(
-        model,
-        stream.take(np.repeat(points[of_point], _CUTS.size)),
-        bounds.take(of_limit),
-        [limits[index].key for index in of_limit.tolist()],
-    )
-    logs = np.log(FACTORS)
-    factor = search.close_in(
-        (logs[of_step], logs[of_step + 1]),
-        (margins[of_limit, of_point, of_step], margins[of_limit, of_point, of_step + 1]),
-    )
+    own = bounds.take(of_limit)
+    factor, smooth = _interpolated(own, margins[of_limit, of_point], of_step, straightness)
+    rest = np.flatnonzero(~smooth)
+    if rest.size:
+        search = _Search(
+            model,
+            stream.take(np.repeat(points[of_point[rest]], _CUTS.size)),
+            own.take(rest),
+            [limits[index].key for index in of_limit[rest].tolist()],
+        )
+        steps, rows = of_step[rest], margins[of_limit[rest], of_point[rest]]
+        lanes = np.arange(rest.size)
+        factor[rest] = search.close_in(
+            (_LOGS[steps], _LOGS[steps + 1]), (rows[lanes, steps], rows[lanes, steps + 1])
+        )
     rising = holds[of_limit, of_point, of_step + 1]
     found = Flips(of_limit, points[of_point], factor, rising)
     return found if points.size == stream.mass_flow.size else _seen_from_all(found, stream)
+
+
+def _interpolated(
+    bounds: Bounds, margins: Array, steps: NDArray[np.intp], straightness: float
+) -> tuple[Array, NDArray[np.bool_]]:
+    """Return the factors read off the grid for k crossings, and which of them can be trusted.
+
+    Args:
+        bounds: bounds of the limit of each crossing.
+        margins: margins over all factors for each crossing, shape (k, len(FACTORS)).
+        steps: step of the grid in which each crossing lies.
+        straightness: as in :func:`find_flips`.
+    """
+    places = np.clip(steps[:, None] + np.arange(-1, 3), 0, FACTORS.size - 1)
+    near = bounds.straightened(margins[np.arange(steps.size)[:, None], places])
+    slopes = np.diff(near, axis=1)
+    with np.errstate(all="ignore"):
+        factor = np.exp(_LOGS[steps] - near[:, 1] / slopes[:, 1] * (_LOGS[1] - _LOGS[0]))
+        bend = np.abs(slopes[:, [0, 2]] / slopes[:, [1]] - 1.0).max(axis=1)
+    return factor, bend <= straightness
 
 
 def _seen_from_all(flips: Flips, stream: Stream) -> Flips:
@@ -196,22 +245,8 @@ class _Search:
             kinks = (np.abs(at_low) < _FLAT) | (np.abs(at_high) < _FLAT)
             if not (jumps | kinks).any():
                 break
-        at_low, at_high = self._straightened(at_low, at_high)
+        at_low, at_high = self.bounds.straightened(np.column_stack([at_low, at_high])).T
         return np.asarray(np.exp(low - at_low * (high - low) / (at_high - at_low)))
-
-    def _straightened(self, at_low: Array, at_high: Array) -> tuple[Array, Array]:
-        """Return margins as logarithms of value by bound where one bound decides and it is no zero.
-
-        A power of the flow is a straight line there.
-        """
-        low, high = self.bounds.low[:, 0], self.bounds.high[:, 0]
-        sign = np.where(np.isinf(high) & (low > 0.0), 1.0, 0.0)
-        sign = np.where(np.isinf(low) & (high > 0.0), -1.0, sign)
-        with np.errstate(all="ignore"):
-            straight = sign * np.log1p(sign * np.array([at_low, at_high]))
-        usable = (sign != 0.0) & np.isfinite(straight).all(axis=0)
-        found = np.where(usable, straight, np.array([at_low, at_high]))
-        return found[0], found[1]
 
     def _margins(self, cuts: Array) -> Array:
         """Return the margins at the cuts, shape (k, len(_CUTS))."""
