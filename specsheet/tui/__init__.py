@@ -18,6 +18,8 @@ def run(path: str | Path | None = None) -> int:
         The exit status: 0 after an orderly end, 2 where there is no terminal for the form or
         nothing at ``path``, 128 + number after a signal, 1 after a mistake of the program.
     """
+    import gc
+
     from specsheet.tui.terminal import objection, tell
 
     place = Path.cwd() if path is None else Path(path)
@@ -25,6 +27,7 @@ def run(path: str | Path | None = None) -> int:
     if trouble:
         tell(trouble)
         return 2
+    gc.disable()  # nothing that a start makes is garbage; on again behind the first screen
     from specsheet.tui.app import FormApp
 
     app = FormApp(place)

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import asyncio
+import gc
 import signal
 import sys
 from collections.abc import Callable
@@ -27,7 +28,7 @@ _SIGNALS = ("SIGTERM", "SIGHUP")
 _NO_COLOUR = "ansi-dark"
 
 
-class FormApp(App[int], inherit_bindings=False):
+class FormApp(App[int], inherit_bindings=False, inherit_css=False):
     """The form in a terminal."""
 
     CSS_PATH = "look.tcss"
@@ -63,7 +64,8 @@ class FormApp(App[int], inherit_bindings=False):
         return screen
 
     def on_mount(self) -> None:
-        """Take the signals."""
+        """Take the signals; look for garbage again once the first screen is drawn."""
+        self.call_after_refresh(_collect_garbage)
         if sys.platform != "win32":
             loop = asyncio.get_running_loop()
             for name in _SIGNALS:
@@ -91,3 +93,9 @@ class FormApp(App[int], inherit_bindings=False):
         say: Callable[[str], None] | None = getattr(self.screen, "say", None)
         if say is not None:
             say("Ctrl+Q quits")
+
+
+def _collect_garbage() -> None:
+    """Collect garbage from now on, without what the start has made: that stays to the end."""
+    gc.freeze()
+    gc.enable()

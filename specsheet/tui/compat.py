@@ -69,9 +69,10 @@ async def run_own_binding(widget: Widget, event: events.Key) -> None:
         return
 
 
-class Field(Input, inherit_bindings=False):
+class Field(Input, inherit_bindings=False, inherit_css=False):
     """A one-line editor in one row, with its keys in the order in which they were typed."""
 
+    COMPONENT_CLASSES: ClassVar[set[str]] = Input.COMPONENT_CLASSES  # gone with its style sheet
     BINDINGS: ClassVar[list[BindingType]] = _kept()
 
     # Input sets its virtual size at every key; with layout=True that lays out the whole screen.
@@ -95,7 +96,9 @@ def make_switchable(app: App[Any], screen: Screen[Any]) -> None:
     screen._push_result_callback(app, None)
 
 
-class CalmScreen(Screen[None]):
+class CalmScreen(Screen[None], inherit_css=False):
     """A screen that does not repaint itself when the focus moves."""
+
+    COMPONENT_CLASSES: ClassVar[set[str]] = Screen.COMPONENT_CLASSES  # gone with its style sheet
 
     focused: Reactive[Widget | None] = Reactive(None, repaint=False)

@@ -40,6 +40,7 @@ class Choice:
 class Tell(ModalScreen[None]):
     """A text to read."""
 
+    CSS_PATH = "dialogs.tcss"
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("escape,f1,f10,q,space", "close", show=False),
     ]
@@ -80,6 +81,7 @@ class Tell(ModalScreen[None]):
 class Ask(ModalScreen[str]):
     """A question with a few answers; Esc answers "" and changes nothing."""
 
+    CSS_PATH = "dialogs.tcss"
     BINDINGS: ClassVar[list[BindingType]] = [Binding("escape", "answer('')", show=False)]
 
     def __init__(self, question: str, choices: Sequence[Choice]) -> None:
@@ -149,6 +151,8 @@ class DialogField(Field):
 class Prompt(ModalScreen[str]):
     """A question answered by a text; Esc answers ""."""
 
+    CSS_PATH = "dialogs.tcss"
+
     def __init__(self, question: str, text: str = "") -> None:
         super().__init__()
         self._question = question
@@ -181,6 +185,8 @@ class Prompt(ModalScreen[str]):
 
 class Pick(ModalScreen[str]):
     """A list to choose from, narrowed down by typing; Esc chooses ""."""
+
+    CSS_PATH = "dialogs.tcss"
 
     def __init__(
         self,

@@ -7,7 +7,6 @@ from collections.abc import Mapping
 from typing import TYPE_CHECKING
 
 from textual.app import ComposeResult
-from textual.containers import Container, Vertical
 from textual.widget import Widget
 
 from specsheet.fields import SECTIONS
@@ -19,7 +18,7 @@ from specsheet.tui.evaluator import Evaluator
 from specsheet.tui.fields import ChoiceEditor, Editor, TextEditor
 from specsheet.tui.frame import Frame, footer, scale
 from specsheet.tui.late import late
-from specsheet.tui.lines import Bar, Column, Line, Lines, wrap
+from specsheet.tui.lines import Bar, Box, Column, Line, Lines, wrap
 from specsheet.tui.pages import GridPage, Page, SectionPage, address_in
 from specsheet.tui.session import Session
 
@@ -77,16 +76,16 @@ class FormView(CalmScreen):
         """Lay out the frame and the first page; the others come when they are first looked at."""
         yield Bar(id="title")
         yield Bar(id="scale")
-        with Container(id="body"):
-            with Vertical(id="left"):
-                yield Vertical(self._new_page(self.section), id="pages")
+        with Box(id="body"):
+            with Box(id="left"):
+                yield Box(self._new_page(self.section), id="pages")
                 yield Column(((), ()), classes="detail")
-            with Vertical(id="side"):
+            with Box(id="side"):
                 yield Bar(id="derived-head")
                 yield Lines(id="derived")
                 yield Bar(id="findings-head")
                 yield Lines(id="findings")
-        with Vertical(id="below"):
+        with Box(id="below"):
             yield Bar(id="ruler-head")
             yield Lines(id="ruler")
         yield Bar(id="summary")

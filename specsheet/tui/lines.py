@@ -61,7 +61,15 @@ def strip_of(
     return Strip(segments)
 
 
-class Toned(Widget):
+class Box(Widget, inherit_css=False):
+    """A container that our style sheet alone lays out.
+
+    The rules that the library gives to each of its containers would be read and applied for
+    nothing; the other widgets here do without them for the same reason.
+    """
+
+
+class Toned(Widget, inherit_css=False):
     """A widget whose lines are pieces in named tones."""
 
     def toned(self, line: Line, width: int, *, ground: str = "") -> Strip:
@@ -129,7 +137,7 @@ class Bar(Toned):
         return Strip.join([left, self.toned(self._right, right)]) if right else left
 
 
-class Lines(ScrollView, Toned, can_focus=True):
+class Lines(ScrollView, Toned, can_focus=True, inherit_css=False):
     """Lines to read and scroll; with items, a cursor goes over them and Enter chooses one."""
 
     BINDINGS: ClassVar[list[BindingType]] = [

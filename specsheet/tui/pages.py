@@ -10,14 +10,14 @@ from collections.abc import Iterable, Mapping
 from typing import TYPE_CHECKING
 
 from textual.app import ComposeResult
-from textual.containers import Horizontal, ScrollableContainer, Vertical
+from textual.containers import ScrollableContainer
 
 from specsheet.tui import form
 from specsheet.tui.address import Address
 from specsheet.tui.fields import ChoiceEditor, Editor, TextEditor
 from specsheet.tui.form import Row
 from specsheet.tui.glyphs import LEVEL_LETTERS
-from specsheet.tui.lines import Column, Line
+from specsheet.tui.lines import Box, Column, Line
 from specsheet.tui.session import Session
 
 if TYPE_CHECKING:
@@ -40,7 +40,7 @@ def _editor(row: Row, session: Session, index: int | None) -> Editor:
     return editor
 
 
-class Page(ScrollableContainer, can_focus=False):
+class Page(ScrollableContainer, can_focus=False, inherit_css=False):
     """One section.
 
     Attributes:
@@ -132,7 +132,7 @@ class SectionPage(Page):
 
     def compose(self) -> ComposeResult:
         """Lay out the three columns."""
-        yield Horizontal(self._labels, self._fields, self._status, classes="rows")
+        yield Box(self._labels, self._fields, self._status, classes="rows")
 
     @property
     def editors(self) -> Iterable[Editor]:
@@ -167,12 +167,12 @@ class GridPage(Page):
         super().__init__(section, form.rows(session, section) if indices else ())
         self._cells = [_new_editors(self._rows, session, index) for index in indices]
         self._columns = [_stack(cells, "column") for cells in self._cells]
-        self._grid = Horizontal(*self._columns, classes="grid")
+        self._grid = Box(*self._columns, classes="grid")
         self._draw_labels()
 
     def compose(self) -> ComposeResult:
         """Lay out the labels and the columns."""
-        yield Horizontal(self._labels, self._grid, classes="rows")
+        yield Box(self._labels, self._grid, classes="rows")
 
     @property
     def editors(self) -> Iterable[Editor]:
@@ -204,7 +204,7 @@ class GridPage(Page):
             self._cells.pop()
             await self._columns.pop().remove()
         for index in range(len(self._columns), count):
-            self._columns.append(Vertical(classes="column"))
+            self._columns.append(Box(classes="column"))
             self._cells.append({})
             await self._grid.mount(self._columns[index])
         for index, (column, cells) in enumerate(zip(self._columns, self._cells, strict=True)):
@@ -217,15 +217,15 @@ def _new_editors(rows: Iterable[Row], session: Session, index: int | None) -> di
     return {_key(row): _editor(row, session, index) for row in rows}
 
 
-def _stack(editors: Mapping[str, Editor], classes: str) -> Vertical:
+def _stack(editors: Mapping[str, Editor], classes: str) -> Box:
     """Return editors one below the other."""
-    stack = Vertical(*editors.values(), classes=classes)
+    stack = Box(*editors.values(), classes=classes)
     stack.styles.height = max(1, len(editors))
     return stack
 
 
 async def _arrange(
-    parent: Vertical,
+    parent: Box,
     editors: dict[str, Editor],
     rows: Iterable[Row],
     session: Session,

@@ -30,6 +30,8 @@ def ends(text: str) -> tuple[str, str]:
 class WhatIf(ModalScreen[None]):
     """A value tried for one entry."""
 
+    CSS_PATH = "dialogs.tcss"
+
     def __init__(self, name: str, present: str, ask: Callable[[str, str], int]) -> None:
         """Make the panel.
 

@@ -1,7 +1,8 @@
 """How soon the first screen stands, as a ratio to the barest application of the same library.
 
 Both run in turn on a pseudo-terminal of 80 by 24, with compiled bytecode, from the start of the
-process to the first bytes that hold words of the screen. The ratio of the medians counts.
+process until the words are drawn: of the form the labels and the texts of the tag's first page,
+editors and all; nothing is drawn before it. The ratio of the medians counts.
 """
 
 from __future__ import annotations
@@ -33,10 +34,10 @@ class Bare(App):
         yield Label("READY")
 Bare().run()
 """
-FORM = "import sys; from specsheet.tui import run; run(sys.argv[1])"
+FORM = "import sys; from specsheet.cli import main; main(['form', sys.argv[1]])"
 
 
-def first_screen(code: str, path: Path, words: bytes) -> float:
+def first_screen(code: str, path: Path, words: tuple[bytes, ...]) -> float:
     """Return the seconds from the start of a process to the words on its screen."""
     import fcntl
     import pty
@@ -51,7 +52,7 @@ def first_screen(code: str, path: Path, words: bytes) -> float:
         os.execv(sys.executable, [sys.executable, "-c", code, str(path)])
     fcntl.ioctl(line, termios.TIOCSWINSZ, struct.pack("HHHH", 24, 80, 0, 0))
     seen = b""
-    while words not in seen:
+    while not all(word in seen for word in words):
         assert select.select([line], [], [], 20.0)[0], seen
         seen += os.read(line, 65536)
     took = time.perf_counter() - start
@@ -62,7 +63,10 @@ def first_screen(code: str, path: Path, words: bytes) -> float:
 
 
 def test_the_first_screen_stands_nearly_as_soon_as_a_bare_one(tag_file: Path) -> None:
-    cases = {"bare": (BARE, b"READY"), "form": (FORM, b"Kind of fluid")}
+    cases = {
+        "bare": (BARE, (b"READY",)),
+        "form": (FORM, (b"Kind of fluid", b"substance", b"Phase", b"liquid")),
+    }
     times: dict[str, list[float]] = {name: [] for name in cases}
     for number in range(RUNS + 1):
         for name, (code, words) in cases.items():
