@@ -13,7 +13,7 @@ from specsheet.tui.protocol import Compare, Compared, Failed, Suppose, Supposed
 from specsheet.tui.what_if import WhatIf, ends
 from specsheet.tui.worker import answer
 from tests.tui.conftest import TAG, AtOnce, screen_text, send, until
-from tests.tui.test_screens import at, drive, form_of
+from tests.tui.driving import at, drive, form_of
 
 FLOW = Address("points.flow", 1)
 FAMILY = Address("family")

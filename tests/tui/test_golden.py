@@ -13,7 +13,7 @@ from specsheet.tui import dialogs
 from specsheet.tui.app import FormApp
 from specsheet.tui.form_screen import FormScreen
 from tests.tui.conftest import AtOnce, run, screen_text, send, until
-from tests.tui.test_screens import ready
+from tests.tui.driving import ready
 
 FOLDER = Path(__file__).parent / "golden"
 

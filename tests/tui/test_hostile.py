@@ -16,7 +16,7 @@ from specsheet.tui.form_screen import FormScreen
 from specsheet.tui.opening import open_session
 from specsheet.tui.session import Session
 from tests.tui.conftest import HOSTILE, AtOnce, run, screen_text, send, until
-from tests.tui.test_screens import ready
+from tests.tui.driving import ready
 
 _CLEAN = {"family", "fluid.kind", "fluid.mixture"}  # they decide which entries there are
 

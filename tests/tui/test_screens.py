@@ -2,8 +2,6 @@
 
 from __future__ import annotations
 
-import asyncio
-from collections.abc import Awaitable, Callable
 from pathlib import Path
 
 import pytest
@@ -12,46 +10,12 @@ from specsheet.fields import SECTIONS
 from specsheet.tui import dialogs
 from specsheet.tui.address import Address
 from specsheet.tui.app import FormApp
-from specsheet.tui.browse_screen import BrowseScreen
 from specsheet.tui.commands import FORM
 from specsheet.tui.fields import ChoiceEditor
 from specsheet.tui.form_screen import FormScreen
-from specsheet.tui.leftovers import survey
 from specsheet.tui.protocol import Derived, Failed
-from tests.tui.conftest import AtOnce, run, screen_text, send, until
-
-Drive = Callable[[FormApp, object], Awaitable[None]]
-FLOW = Address("points.flow", 1)
-
-
-def drive(path: Path, evaluator: AtOnce, play: Drive, size: tuple[int, int] = (80, 24)) -> FormApp:
-    """Run the application on ``path`` and play with it once its first screen stands."""
-    app = FormApp(path, evaluator)
-
-    async def main() -> None:
-        async with app.run_test(size=size) as pilot:
-            await until(pilot, lambda: ready(app))
-            await play(app, pilot)
-
-    run(main)
-    return app
-
-
-def ready(app: FormApp) -> bool:
-    screen = app.screen
-    if isinstance(screen, FormScreen):
-        return screen.section in screen.pages and screen.focused is not None
-    return isinstance(screen, BrowseScreen | dialogs.Ask)
-
-
-def form_of(app: FormApp) -> FormScreen:
-    return next(s for s in app.screen_stack if isinstance(s, FormScreen))
-
-
-async def at(app: FormApp, address: Address) -> None:
-    """Put the focus on an address."""
-    await form_of(app).go_to(address)
-    await asyncio.sleep(0)
+from tests.tui.conftest import AtOnce, screen_text, send, until
+from tests.tui.driving import FLOW, at, drive, form_of
 
 
 def test_typing_and_enter_commit_derive_and_go_on(tag_file: Path, evaluator: AtOnce) -> None:
@@ -318,152 +282,6 @@ def test_nothing_derived_is_said_in_words(tag_file: Path, evaluator: AtOnce) -> 
     drive(tag_file, evaluator, play)
 
 
-def test_printing_prints_what_is_on_the_screen(tag_file: Path, evaluator: AtOnce) -> None:
-    async def play(app: FormApp, pilot: object) -> None:
-        await at(app, Address("fluid.name"))
-        await send(pilot, *"Brine", "f5")
-        await until(pilot, lambda: bool(evaluator.printed))
-        assert "Brine" in evaluator.printed[0]
-        await until(pilot, lambda: "printed" in screen_text(app))
-
-    drive(tag_file, evaluator, play)
-
-
-@pytest.mark.parametrize(
-    ("answer", "in_file", "left"), [("s", True, 0), ("k", False, 1), ("d", False, 0)]
-)
-def test_quitting_asks_when_something_is_not_saved(
-    tag_file: Path, evaluator: AtOnce, answer: str, in_file: bool, left: int
-) -> None:
-    async def play(app: FormApp, pilot: object) -> None:
-        await at(app, Address("fluid.name"))
-        await send(pilot, *"Brine", "ctrl+q")
-        await until(pilot, lambda: isinstance(app.screen, dialogs.Ask))
-        await send(pilot, "escape")
-        await until(pilot, lambda: isinstance(app.screen, FormScreen))
-        await send(pilot, "ctrl+q")
-        await until(pilot, lambda: isinstance(app.screen, dialogs.Ask))
-        await send(pilot, answer)
-        await until(pilot, lambda: app._exit)
-
-    app = drive(tag_file, evaluator, play)
-    assert app.return_value == 0
-    assert ("Brine" in tag_file.read_text()) is in_file
-    assert len(survey(tag_file).leftovers) == left
-    assert evaluator.closed
-
-
-def test_quitting_with_nothing_unsaved_just_quits(tag_file: Path, evaluator: AtOnce) -> None:
-    async def play(app: FormApp, pilot: object) -> None:
-        await send(pilot, "ctrl+q")
-        await until(pilot, lambda: app._exit)
-
-    assert drive(tag_file, evaluator, play).return_value == 0
-
-
-@pytest.mark.parametrize(("answer", "name"), [("r", "Brine"), ("l", ""), ("d", "")])
-def test_what_an_earlier_session_left_is_offered(
-    tag_file: Path, evaluator: AtOnce, answer: str, name: str
-) -> None:
-    from specsheet.tui.opening import open_session
-    from specsheet.tui.session import Session
-
-    earlier = open_session(tag_file)
-    assert isinstance(earlier, Session)
-    earlier.edit(Address("fluid.name"), "Brine")
-    earlier.close()
-
-    async def play(app: FormApp, pilot: object) -> None:
-        await until(pilot, lambda: isinstance(app.screen, dialogs.Ask))
-        await send(pilot, answer)
-        form = form_of(app)
-        await until(pilot, lambda: app.screen is form)
-        await until(pilot, lambda: form.session.get(Address("fluid.name")) == name)
-        form.session.close()
-        assert len(survey(tag_file).leftovers) == (0 if answer == "d" else 1)
-
-    drive(tag_file, evaluator, play)
-
-
-@pytest.mark.parametrize(("answer", "kept"), [("o", "mine"), ("l", "theirs")])
-def test_a_file_changed_on_disk_is_asked_about(
-    tag_file: Path, evaluator: AtOnce, answer: str, kept: str
-) -> None:
-    name = Address("fluid.name")
-
-    async def play(app: FormApp, pilot: object) -> None:
-        form = form_of(app)
-        await at(app, name)
-        await send(pilot, *"mine", "enter")
-        await until(pilot, lambda: form.session.get(name) == "mine")
-        theirs = tag_file.read_text().replace("[fluid]", '[fluid]\nname = "theirs"')
-        tag_file.write_text(theirs)
-        await send(pilot, "ctrl+s")
-        await until(pilot, lambda: isinstance(app.screen, dialogs.Ask))
-        await send(pilot, answer)
-        await until(pilot, lambda: app.screen is form and not form.session.dirty)
-        assert form.session.get(name) == kept
-        assert f'name = "{kept}"' in tag_file.read_text()
-
-    drive(tag_file, evaluator, play)
-
-
-def test_a_folder_lists_its_tags_opens_one_and_comes_back(
-    tag_file: Path, evaluator: AtOnce
-) -> None:
-    tag_file.with_name("broken.toml").write_text("tag = \n")
-
-    async def play(app: FormApp, pilot: object) -> None:
-        await until(pilot, lambda: "Cooling water return" in screen_text(app))
-        assert "2 tags" in screen_text(app)
-        assert "broken.toml" in screen_text(app)
-        await send(pilot, "enter")
-        await until(pilot, lambda: "is not valid" in screen_text(app))
-        await send(pilot, "escape")
-        await until(pilot, lambda: isinstance(app.screen, BrowseScreen))
-        await send(pilot, "end", "enter")
-        await until(pilot, lambda: isinstance(app.screen, FormScreen) and ready(app))
-        await send(pilot, "ctrl+o")
-        await until(pilot, lambda: isinstance(app.screen, BrowseScreen))
-
-    drive(tag_file.parent, evaluator, play)
-
-
-def test_a_new_tag_is_begun_from_the_list(tag_file: Path, evaluator: AtOnce) -> None:
-    async def play(app: FormApp, pilot: object) -> None:
-        await send(pilot, "n")
-        await until(pilot, lambda: isinstance(app.screen, dialogs.Prompt))
-        await send(pilot, *"FT-77", "enter")
-        await until(pilot, lambda: isinstance(app.screen, dialogs.Pick))
-        await send(pilot, *"vortex", "enter")
-        await until(pilot, lambda: isinstance(app.screen, FormScreen) and ready(app))
-        assert "new file" in screen_text(app)
-        await send(pilot, "ctrl+s")
-        path = tag_file.with_name("FT-77.toml")
-        await until(pilot, path.exists)
-        assert 'family = "vortex"' in path.read_text()
-
-    drive(tag_file.parent, evaluator, play)
-
-
-def test_an_empty_folder_says_how_to_begin(tmp_path: Path, evaluator: AtOnce) -> None:
-    async def play(app: FormApp, pilot: object) -> None:
-        await until(pilot, lambda: "N begins one" in screen_text(app))
-
-    folder = tmp_path / "empty"
-    folder.mkdir()
-    drive(folder, evaluator, play)
-
-
-def test_a_file_that_cannot_be_read_leads_to_the_list(tag_file: Path, evaluator: AtOnce) -> None:
-    tag_file.write_text("tag = \n")
-
-    async def play(app: FormApp, pilot: object) -> None:
-        await until(pilot, lambda: "is not valid" in screen_text(app))
-
-    drive(tag_file, evaluator, play)
-
-
 def test_help_and_palette_hold_every_command(tag_file: Path, evaluator: AtOnce) -> None:
     async def play(app: FormApp, pilot: object) -> None:
         form = form_of(app)
@@ -503,15 +321,3 @@ def test_find_goes_to_an_entry_of_another_section(tag_file: Path, evaluator: AtO
         await until(pilot, lambda: form.focused is form.page.editor(target))
 
     drive(tag_file, evaluator, play)
-
-
-def test_a_signal_keeps_what_is_being_typed(tag_file: Path, evaluator: AtOnce) -> None:
-    async def play(app: FormApp, pilot: object) -> None:
-        await at(app, Address("fluid.name"))
-        await send(pilot, *"Brine")
-        await app._end(143)
-
-    app = drive(tag_file, evaluator, play)
-    assert app.return_code == 143
-    (leftover,) = survey(tag_file).leftovers
-    assert "Brine" in leftover.state.text
