@@ -39,8 +39,8 @@ _OF_LINE = ("line-velocity-high", "line-velocity-low")
 _OF_FLANGES = ("rating-exceeded", "rating-temperature")
 #: uncertainties that part good from fair and poor [-]; common practice
 _CLASSES = (0.01, 0.02, 0.05)
-#: how straight a margin must run for its crossing to be read off the grid: within 0.3 %, which
-#: ranks families as well as an exact one
+#: how straight a margin must run for its crossing to be read off the grid: within 0.3 % or so,
+#: which ranks families as well as an exact one
 _STRAIGHT_ENOUGH = 0.2
 _RANK = {Level.STOP: 0, Level.CAUTION: 1, Level.NOTE: 2}
 
