@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from specsheet.meters.dp import adapters, body
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
+from specsheet.meters.dp.device import Bounds, Described, Device, Prepared, Shape
 from specsheet.meters.family import Array, Derivation, Element, Limit, Request
 from specsheet.methods import iso5167_5
 from specsheet.sources import MEMORY, cite
@@ -17,11 +17,6 @@ def _expansibility(ratio: Array, drop: Array, exponent: Array) -> Array:
     found: Array = iso5167_5.expansibility(
         diameter_ratio=ratio, pressure_drop_ratio=drop, isentropic_exponent=exponent
     )
-    return found
-
-
-def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not depend on it
-    found: Array = iso5167_5.loss_ratio(diameter_ratio=lanes.diameter_ratio)
     return found
 
 
@@ -73,7 +68,7 @@ FAMILY = family(
         coefficient_uncertainty=adapters.constant(iso5167_5.UNCERTAINTY),
         expansibility=_expansibility,
         expansibility_uncertainty=adapters.plate_expansibility_uncertainty,
-        loss=_loss,
+        loss=adapters.loss_of_ratio(iso5167_5.loss_ratio),
         bounds=_bounds,
         limits=_limits,
         describe=_describe,

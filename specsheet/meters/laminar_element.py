@@ -10,14 +10,11 @@ import numpy as np
 from specsheet.findings import Level, Origin
 from specsheet.meters.dp import body, plain, transmitter
 from specsheet.meters.dp import budget as shared_budget
-from specsheet.meters.dp.derivations import COMMON
-from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
     Contribution,
     Derivation,
     Element,
-    Family,
     Given,
     Limit,
     Request,
@@ -164,11 +161,6 @@ def _respond(
         return linear
 
 
-def at(element: Element, stream: Stream) -> Mapping[str, Array]:
-    """Return the response to a stream, arrays of shape (n,)."""
-    return _respond(element.numbers, element.choices, stream)
-
-
 def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
     """Return the limits of use: laminar flow, developed profile, small inertial share."""
     found = [*plain.limits(element)]
@@ -242,14 +234,14 @@ def budget(
     )
 
 
-FAMILY = Family(
+FAMILY = plain.family(
     key="laminar_element",
-    size=guarded(size),
-    at=at,
+    size=size,
+    respond=_respond,
     limits=limits,
     budget=budget,
     derivations=(
-        *(item for item in plain.shared_derivations(COMMON) if item.key != "signal_current_root"),
+        *plain.derivations(*(key for key in plain.SHARED if key != "signal_current_root")),
         Derivation(
             "differential_pressure",
             "S = 128 μ L q/(n π d⁴) + 1.16 ρ (4 q/(n π d²))² for capillaries, μ L q/(k A) for a "
@@ -301,5 +293,4 @@ FAMILY = Family(
             ("permeability", "plug_length", "viscosity", "volume_flow"),
         ),
     ),
-    signal="differential_pressure",
 )

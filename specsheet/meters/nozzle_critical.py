@@ -7,10 +7,8 @@ from collections.abc import Mapping
 import numpy as np
 
 from specsheet.findings import Finding, Level, Origin
-from specsheet.line.material import find_material
 from specsheet.meters.dp import body, plain
 from specsheet.meters.dp.budget import density as density_contribution
-from specsheet.meters.dp.derivations import COMMON
 from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
@@ -37,15 +35,12 @@ _BESIDE_DENSITY = 0.75**0.5
 def size(request: Request) -> Element:
     """Choose the throat that passes the flow of the leading point at its stated pressure."""
     tag = request.tag
-    material = find_material(tag.text("meter.element_material"))
     normal = float(request.stream.temperature[request.normal])
     exit_ratio = tag.si("meter.exit_ratio") or body.figure(request, "exit_ratio")
     numbers = {
-        "inside_diameter": request.pipe.inside_diameter,
-        "pipe_expansion": request.pipe.expansion,
-        "element_expansion": request.pipe.expansion
-        if material is None
-        else material.expansion(normal),
+        **plain.pipe_numbers(request),
+        "element_expansion": request.pipe.expansion,
+        **body.expansion(request),
         "area_ratio": exit_ratio**2,
         "throat_uncertainty": tag.si("meter.throat_uncertainty") or 0.0,
         "pressure_uncertainty": tag.si("require.pressure_uncertainty") or 0.0,
@@ -69,12 +64,12 @@ def size(request: Request) -> Element:
     hot = float(
         iso5167_1.grown(length=bore, expansion=numbers["element_expansion"], temperature=normal)
     )
-    inside = float(plain.hot_diameter(numbers, request.stream)[request.normal])
+    inside = plain.hot_inside(numbers, request)
     values = {
         "throat_diameter": Given(bore, Origin.GIVEN if stated else Origin.DERIVED, _SOURCE),
         "throat_diameter_hot": Given(hot, Origin.DERIVED, "thermal growth"),
-        "inside_diameter_hot": Given(inside, Origin.DERIVED, "thermal growth"),
-        "diameter_ratio": Given(hot / inside, Origin.DERIVED, _SOURCE),
+        "inside_diameter_hot": inside,
+        "diameter_ratio": Given(hot / float(inside.value), Origin.DERIVED, _SOURCE),
     }
     notes = {
         "element": (
@@ -253,12 +248,7 @@ FAMILY = Family(
     limits=limits,
     budget=budget,
     derivations=(
-        *(
-            item
-            for item in COMMON
-            if item.key
-            in ("inside_diameter_hot", "velocity", "reynolds_number", "dynamic_pressure")
-        ),
+        *plain.derivations(*plain.PIPE),
         Derivation(
             "throat_reynolds_number",
             "Red = 4 qm / (π μ d)",

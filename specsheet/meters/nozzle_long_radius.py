@@ -4,19 +4,12 @@ from __future__ import annotations
 
 from specsheet.meters.dp import adapters, nozzle
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Device, Lanes
-from specsheet.meters.family import Array, Derivation, Element, Limit, Request
+from specsheet.meters.dp.device import Device
+from specsheet.meters.family import Derivation, Element, Limit, Request
 from specsheet.methods import iso5167_3
 from specsheet.sources import MEMORY, cite
 
 _SOURCE = cite("iso5167-3", "5.2.6.2")
-
-
-def _coefficient(lanes: Lanes) -> Array:
-    found: Array = iso5167_3.long_radius_coefficient(
-        diameter_ratio=lanes.diameter_ratio, reynolds_number=lanes.reynolds_number
-    )
-    return found
 
 
 def _limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
@@ -32,7 +25,7 @@ FAMILY = family(
     Device(
         key="nozzle_long_radius",
         source=_SOURCE,
-        coefficient=_coefficient,
+        coefficient=adapters.of_ratio_and_reynolds(iso5167_3.long_radius_coefficient),
         coefficient_uncertainty=adapters.constant(0.02),
         expansibility=adapters.nozzle_expansibility,
         expansibility_uncertainty=adapters.nozzle_expansibility_uncertainty,

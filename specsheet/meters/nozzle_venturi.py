@@ -6,29 +6,12 @@ import math
 
 from specsheet.meters.dp import adapters, body, nozzle
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Device, Lanes, Prepared
-from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
-from specsheet.methods import iso5167_3, iso5167_4
+from specsheet.meters.dp.device import Device, Prepared
+from specsheet.meters.family import Derivation, Element, Given, Limit, Request
+from specsheet.methods import iso5167_3
 from specsheet.sources import MEMORY, cite
 
 _SOURCE = cite("iso5167-3", "5.3.4.2")
-
-
-def _coefficient(lanes: Lanes) -> Array:
-    found: Array = iso5167_3.venturi_nozzle_coefficient(diameter_ratio=lanes.diameter_ratio)
-    return found
-
-
-def _uncertainty(lanes: Lanes) -> Array:
-    found: Array = iso5167_3.venturi_nozzle_uncertainty(diameter_ratio=lanes.diameter_ratio)
-    return found
-
-
-def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not depend on it
-    found: Array = iso5167_4.loss_ratio(
-        diameter_ratio=lanes.diameter_ratio, divergent_angle=lanes.numbers["divergent_angle"]
-    )
-    return found
 
 
 def _prepare(request: Request) -> Prepared:
@@ -55,11 +38,11 @@ FAMILY = family(
     Device(
         key="nozzle_venturi",
         source=_SOURCE,
-        coefficient=_coefficient,
-        coefficient_uncertainty=_uncertainty,
+        coefficient=adapters.of_ratio(iso5167_3.venturi_nozzle_coefficient),
+        coefficient_uncertainty=adapters.of_ratio(iso5167_3.venturi_nozzle_uncertainty),
         expansibility=adapters.nozzle_expansibility,
         expansibility_uncertainty=adapters.venturi_expansibility_uncertainty,
-        loss=_loss,
+        loss=adapters.venturi_loss,
         bounds=nozzle.bounds(0.316, 0.775),
         limits=_limits,
         describe=nozzle.describe(

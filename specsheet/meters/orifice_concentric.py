@@ -3,13 +3,14 @@
 from __future__ import annotations
 
 import math
+from dataclasses import replace
 
 import numpy as np
 
 from specsheet.findings import Level, Origin
-from specsheet.meters.dp import adapters, plate, wet, wet_plate
+from specsheet.meters.dp import plate, wet, wet_plate
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared
+from specsheet.meters.dp.device import Bounds, Described, Lanes, Prepared
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
 from specsheet.methods import iso5167_2, orifice_plate
 from specsheet.methods.iso5167_1 import reynolds_number
@@ -98,7 +99,7 @@ def _describe(request: Request, element: Element) -> Described:
         # The uniform equivalent roughness is about π times the arithmetical mean deviation Ra.
         mean = roughness / math.pi / inside
         values["relative_roughness"] = Given(mean, Origin.DERIVED, cite("iso5167-1", "7.1.5"))
-    carried = (wet_plate.NOTE,) if wet.is_wet(element.numbers) else ()
+    carried = wet.notes(element.numbers)
     notes = {"element": (*carried, *_make(element, bevelled), *common.notes["element"])}
     return Described(values, notes, common.findings)
 
@@ -141,7 +142,7 @@ def _limits(element: Element, request: Request) -> tuple[Limit, ...]:
             clause,
         ),
         *plate.bending_limits(),
-        *wet_plate.limits(element),
+        *wet.limits(element, wet_plate.PLATE),
     ]
     if np.isfinite(request.pipe.roughness):
         found.append(_roughness(ratio, inside, request))
@@ -174,9 +175,7 @@ _DERIVATIONS = (
         _SOURCE,
         ("diameter_ratio", "reynolds_number", "inside_diameter_hot"),
     ),
-    adapters.PLATE_EXPANSIBILITY,
-    adapters.PLATE_LOSS,
-    adapters.BORE,
+    *plate.SHARP,
     Derivation("bevel_angle", "45°, allowed 30° to 60°", cite("iso5167-2", "5.1.6")),
     Derivation(
         "edge_thickness", "0.005 D to 0.02 D", cite("iso5167-2", "5.1.5"), ("inside_diameter_hot",)
@@ -192,21 +191,19 @@ _DERIVATIONS = (
 )
 
 FAMILY = family(
-    Device(
-        key="orifice_concentric",
-        source=_SOURCE,
-        coefficient=_coefficient,
-        coefficient_uncertainty=_coefficient_uncertainty,
-        expansibility=adapters.plate_expansibility,
-        expansibility_uncertainty=adapters.plate_expansibility_uncertainty,
-        loss=adapters.plate_loss,
-        bounds=_bounds,
-        limits=_limits,
-        describe=_describe,
-        derivations=_DERIVATIONS,
-        prepare=_prepare,
+    replace(
+        plate.sharp(
+            key="orifice_concentric",
+            source=_SOURCE,
+            coefficient=_coefficient,
+            coefficient_uncertainty=_coefficient_uncertainty,
+            bounds=_bounds,
+            limits=_limits,
+            describe=_describe,
+            derivations=_DERIVATIONS,
+            prepare=_prepare,
+        ),
         over_reading=wet_plate.over_reading,
         more=wet_plate.more,
-        shape=plate.HOLED,
     )
 )

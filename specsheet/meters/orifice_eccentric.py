@@ -5,22 +5,12 @@ from __future__ import annotations
 from specsheet.findings import Level
 from specsheet.meters.dp import adapters, plate
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared
-from specsheet.meters.family import Array, Derivation, Element, Limit, Request
+from specsheet.meters.dp.device import Bounds, Described, Prepared
+from specsheet.meters.family import Derivation, Element, Limit, Request
 from specsheet.methods import iso15377
 from specsheet.sources import cite
 
 _SOURCE = cite("isotr15377")
-
-
-def _coefficient(lanes: Lanes) -> Array:
-    found: Array = iso15377.eccentric_coefficient(diameter_ratio=lanes.diameter_ratio)
-    return found
-
-
-def _uncertainty(lanes: Lanes) -> Array:
-    found: Array = iso15377.eccentric_uncertainty(diameter_ratio=lanes.diameter_ratio)
-    return found
 
 
 def _prepare(request: Request) -> Prepared:
@@ -70,14 +60,11 @@ def _limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: A
 
 
 FAMILY = family(
-    Device(
+    plate.sharp(
         key="orifice_eccentric",
         source=_SOURCE,
-        coefficient=_coefficient,
-        coefficient_uncertainty=_uncertainty,
-        expansibility=adapters.plate_expansibility,
-        expansibility_uncertainty=adapters.plate_expansibility_uncertainty,
-        loss=adapters.plate_loss,
+        coefficient=adapters.of_ratio(iso15377.eccentric_coefficient),
+        coefficient_uncertainty=adapters.of_ratio(iso15377.eccentric_uncertainty),
         bounds=_bounds,
         limits=_limits,
         describe=_describe,
@@ -88,12 +75,9 @@ FAMILY = family(
                 _SOURCE,
                 ("diameter_ratio",),
             ),
-            adapters.PLATE_EXPANSIBILITY,
-            adapters.PLATE_LOSS,
-            adapters.BORE,
+            *plate.SHARP,
             *plate.DERIVATIONS,
         ),
         prepare=_prepare,
-        shape=plate.HOLED,
     )
 )

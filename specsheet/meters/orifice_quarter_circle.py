@@ -5,8 +5,8 @@ from __future__ import annotations
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.dp import adapters, plate
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared
-from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
+from specsheet.meters.dp.device import Bounds, Described, Prepared
+from specsheet.meters.family import Derivation, Element, Given, Limit, Request
 from specsheet.methods import iso15377
 from specsheet.sources import MEMORY, cite
 
@@ -15,16 +15,6 @@ _MEMORY = f"{_SOURCE} ({MEMORY})"
 
 #: largest pipe in which only corner tappings are foreseen [m] (from memory)
 _CORNER_ONLY = 0.04
-
-
-def _coefficient(lanes: Lanes) -> Array:
-    found: Array = iso15377.quarter_circle_coefficient(diameter_ratio=lanes.diameter_ratio)
-    return found
-
-
-def _uncertainty(lanes: Lanes) -> Array:
-    found: Array = iso15377.quarter_circle_uncertainty(diameter_ratio=lanes.diameter_ratio)
-    return found
 
 
 def _prepare(request: Request) -> Prepared:
@@ -80,14 +70,11 @@ def _limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: A
 
 
 FAMILY = family(
-    Device(
+    plate.sharp(
         key="orifice_quarter_circle",
         source=_SOURCE,
-        coefficient=_coefficient,
-        coefficient_uncertainty=_uncertainty,
-        expansibility=adapters.plate_expansibility,
-        expansibility_uncertainty=adapters.plate_expansibility_uncertainty,
-        loss=adapters.plate_loss,
+        coefficient=adapters.of_ratio(iso15377.quarter_circle_coefficient),
+        coefficient_uncertainty=adapters.of_ratio(iso15377.quarter_circle_uncertainty),
         bounds=_bounds,
         limits=_limits,
         describe=_describe,
@@ -98,12 +85,9 @@ FAMILY = family(
                 _SOURCE,
                 ("diameter_ratio",),
             ),
-            adapters.PLATE_EXPANSIBILITY,
-            adapters.PLATE_LOSS,
-            adapters.BORE,
+            *plate.SHARP,
             *plate.DERIVATIONS,
         ),
         prepare=_prepare,
-        shape=plate.HOLED,
     )
 )

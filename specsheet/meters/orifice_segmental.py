@@ -3,11 +3,11 @@
 from __future__ import annotations
 
 from specsheet.findings import Level
-from specsheet.meters.dp import adapters, plate
+from specsheet.meters.dp import adapters, chord, plate
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
+from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared
 from specsheet.meters.family import Array, Derivation, Element, Limit, Request
-from specsheet.methods import segment, segmental_plate
+from specsheet.methods import segmental_plate
 from specsheet.sources import MEMORY, cite
 
 _SOURCE = cite("miller")
@@ -20,16 +20,6 @@ def _coefficient(lanes: Lanes) -> Array:
         inside_diameter=lanes.numbers["inside_diameter"],
         taps=lanes.choices["taps"],
     )
-    return found
-
-
-def _share(ratio: Array) -> Array:
-    found: Array = segment.height_of_ratio(diameter_ratio=ratio)
-    return found
-
-
-def _ratio(share: Array) -> Array:
-    found: Array = segment.diameter_ratio(height_ratio=share)
     return found
 
 
@@ -104,14 +94,6 @@ FAMILY = family(
             *plate.STRENGTH,
         ),
         prepare=_prepare,
-        shape=Shape(
-            entry="segment_height",
-            term="segment_height",
-            hot_term="",
-            label="segment height",
-            equation="β² = (acos(1 - 2 h/D) - 2 (1 - 2 h/D) sqrt(h/D - (h/D)²)) / π",
-            share=_share,
-            ratio=_ratio,
-        ),
+        shape=chord.shape("segment_height", "segment height"),
     )
 )

@@ -3,19 +3,16 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from functools import partial
 
 import numpy as np
 
 from specsheet.findings import Level, Origin
 from specsheet.meters.dp import body, insertion, plain
-from specsheet.meters.dp.derivations import COMMON
-from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
-    Contribution,
     Derivation,
     Element,
-    Family,
     Given,
     Limit,
     Request,
@@ -39,15 +36,13 @@ def size(request: Request) -> Element:
     propped = tag.text("meter.support") == "far end supported"
     calibrated = tag.si("meter.flow_coefficient_uncertainty")
     numbers = {
-        **plain.base_numbers(request),
+        **insertion.numbers_of(request, width, 1.0),
         "flow_coefficient": k or body.figure(request, "flow_coefficient"),
         "width": width,
         "wall": body.figure(request, "wall_share") * width,
         "length": request.pipe.inside_diameter,
         "eigenvalue": probe.PROPPED if propped else probe.HELD_AT_ONE_END,
         "strouhal_number": body.figure(request, "strouhal_number"),
-        "blockage": insertion.blockage(request, width, 1.0),
-        "drag_coefficient": body.figure(request, "drag_coefficient"),
         "uncertainty.flow_coefficient": calibrated
         or body.figure(request, "coefficient_uncertainty"),
     }
@@ -62,7 +57,7 @@ def size(request: Request) -> Element:
         values={
             "probe_width": Given(width, origin, PRACTICE),
             "flow_coefficient": coefficient,
-            "blockage": Given(numbers["blockage"], Origin.DERIVED, "plane geometry"),
+            "blockage": insertion.blocked(numbers),
         },
         notes={
             "element": (
@@ -113,11 +108,6 @@ def _respond(
         )
 
 
-def at(element: Element, stream: Stream) -> Mapping[str, Array]:
-    """Return the response to a stream, arrays of shape (n,)."""
-    return _respond(element.numbers, element.choices, stream)
-
-
 def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
     """Return the limits of use."""
     return (
@@ -135,21 +125,13 @@ def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: AR
     )
 
 
-def budget(
-    element: Element, stream: Stream, values: Mapping[str, Array]
-) -> tuple[Contribution, ...]:
-    """Return the contributions to the uncertainty of the flow."""
-    return insertion.contributions(element, stream, values, ("flow_coefficient",))
-
-
-FAMILY = Family(
+FAMILY = plain.family(
     key="pitot_averaging",
-    size=guarded(size),
-    at=at,
+    size=size,
+    respond=_respond,
     limits=limits,
-    budget=budget,
+    budget=partial(insertion.contributions, factors=("flow_coefficient",)),
     derivations=(
-        *plain.shared_derivations(COMMON),
         *insertion.DERIVATIONS,
         Derivation(
             "differential_pressure",
@@ -177,5 +159,4 @@ FAMILY = Family(
             ("wake_frequency", "natural_frequency"),
         ),
     ),
-    signal="differential_pressure",
 )

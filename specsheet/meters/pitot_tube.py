@@ -3,19 +3,16 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from functools import partial
 
 import numpy as np
 
-from specsheet.findings import Finding, Level, Origin
+from specsheet.findings import Finding, Level
 from specsheet.meters.dp import body, insertion, plain
-from specsheet.meters.dp.derivations import COMMON
-from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
-    Contribution,
     Derivation,
     Element,
-    Family,
     Given,
     Limit,
     Request,
@@ -38,10 +35,8 @@ def size(request: Request) -> Element:
     position = tag.text("meter.position") or "traverse"
     profile = f"profile_uncertainty_{'traverse' if position == 'traverse' else 'point'}"
     numbers = {
-        **plain.base_numbers(request),
+        **insertion.numbers_of(request, width, 0.5),
         "pitot_coefficient": tag.si("meter.pitot_coefficient") or 1.0,
-        "blockage": insertion.blockage(request, width, 0.5),
-        "drag_coefficient": body.figure(request, "drag_coefficient"),
         "uncertainty.velocity_profile": body.figure(request, profile),
         "uncertainty.pitot_coefficient": body.figure(request, "coefficient_uncertainty"),
     }
@@ -53,7 +48,7 @@ def size(request: Request) -> Element:
         choices={"position": position},
         values={
             "probe_width": Given(width, tag.origin("meter.probe_diameter")),
-            "blockage": Given(numbers["blockage"], Origin.DERIVED, "plane geometry"),
+            "blockage": insertion.blocked(numbers),
         },
         notes={"element": places},
         findings=findings,
@@ -123,11 +118,6 @@ def _respond(
         )
 
 
-def at(element: Element, stream: Stream) -> Mapping[str, Array]:
-    """Return the response to a stream, arrays of shape (n,)."""
-    return _respond(element.numbers, element.choices, stream)
-
-
 def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
     """Return the limits of use; smallest Δp and probe from memory of ISO 3966."""
     source = f"{_SOURCE} ({MEMORY})"
@@ -156,23 +146,13 @@ def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: AR
     )
 
 
-def budget(
-    element: Element, stream: Stream, values: Mapping[str, Array]
-) -> tuple[Contribution, ...]:
-    """Return the contributions to the uncertainty of the flow."""
-    return insertion.contributions(
-        element, stream, values, ("velocity_profile", "pitot_coefficient")
-    )
-
-
-FAMILY = Family(
+FAMILY = plain.family(
     key="pitot_tube",
-    size=guarded(size),
-    at=at,
+    size=size,
+    respond=_respond,
     limits=limits,
-    budget=budget,
+    budget=partial(insertion.contributions, factors=("velocity_profile", "pitot_coefficient")),
     derivations=(
-        *plain.shared_derivations(COMMON),
         *insertion.DERIVATIONS,
         Derivation(
             "profile_factor",
@@ -191,5 +171,4 @@ FAMILY = Family(
             ("meter_velocity", "density", "pressure", "isentropic_exponent"),
         ),
     ),
-    signal="differential_pressure",
 )

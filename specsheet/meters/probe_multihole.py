@@ -4,19 +4,16 @@ from __future__ import annotations
 
 import math
 from collections.abc import Mapping
+from functools import partial
 
 import numpy as np
 
-from specsheet.findings import Level, Origin
+from specsheet.findings import Level
 from specsheet.meters.dp import body, insertion, plain
-from specsheet.meters.dp.derivations import COMMON
-from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
-    Contribution,
     Derivation,
     Element,
-    Family,
     Given,
     Limit,
     Request,
@@ -37,11 +34,9 @@ def size(request: Request) -> Element:
     angle = tag.si("meter.hole_angle") or math.radians(45.0)
     expected = tag.si("meter.flow_angle") or 0.0
     numbers = {
-        **plain.base_numbers(request),
+        **insertion.numbers_of(request, width, 0.5),
         "hole_angle": angle,
         "flow_angle": expected,
-        "blockage": insertion.blockage(request, width, 0.5),
-        "drag_coefficient": body.figure(request, "drag_coefficient"),
         "uncertainty.probe_calibration": body.figure(request, "calibration_uncertainty"),
         "uncertainty.velocity_profile": body.figure(request, "profile_uncertainty"),
     }
@@ -56,7 +51,7 @@ def size(request: Request) -> Element:
         choices={"holes": holes},
         values={
             "probe_width": Given(width, tag.origin("meter.probe_diameter")),
-            "blockage": Given(numbers["blockage"], Origin.DERIVED, "plane geometry"),
+            "blockage": insertion.blocked(numbers),
         },
         notes={
             "element": (
@@ -99,11 +94,6 @@ def _respond(
         )
 
 
-def at(element: Element, stream: Stream) -> Mapping[str, Array]:
-    """Return the response to a stream, arrays of shape (n,)."""
-    return _respond(element.numbers, element.choices, stream)
-
-
 def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
     """Return the limits of use."""
     return (
@@ -130,23 +120,13 @@ def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: AR
     )
 
 
-def budget(
-    element: Element, stream: Stream, values: Mapping[str, Array]
-) -> tuple[Contribution, ...]:
-    """Return the contributions to the uncertainty of the flow."""
-    return insertion.contributions(
-        element, stream, values, ("probe_calibration", "velocity_profile")
-    )
-
-
-FAMILY = Family(
+FAMILY = plain.family(
     key="probe_multihole",
-    size=guarded(size),
-    at=at,
+    size=size,
+    respond=_respond,
     limits=limits,
-    budget=budget,
+    budget=partial(insertion.contributions, factors=("probe_calibration", "velocity_profile")),
     derivations=(
-        *plain.shared_derivations(COMMON),
         *insertion.DERIVATIONS,
         Derivation(
             "differential_pressure",
@@ -168,5 +148,4 @@ FAMILY = Family(
             ("differential_pressure",),
         ),
     ),
-    signal="differential_pressure",
 )

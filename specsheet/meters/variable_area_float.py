@@ -7,9 +7,8 @@ from collections.abc import Mapping
 import numpy as np
 
 from specsheet.findings import Finding, Level, Origin
-from specsheet.meters.dp import body, plain
+from specsheet.meters.dp import body, plain, scale
 from specsheet.meters.dp.budget import density as density_contribution
-from specsheet.meters.dp.derivations import COMMON
 from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
@@ -42,7 +41,7 @@ def size(request: Request) -> Element:
     float_density = tag.si("meter.float_density") or body.figure(request, "float_density")
     reference = _AIR if gas else _WATER
     numbers = {
-        **_pipe(request),
+        **plain.pipe_numbers(request),
         "float_density": float_density,
         "float_height": body.figure(request, "float_height"),
         "reference_density": reference,
@@ -55,18 +54,14 @@ def size(request: Request) -> Element:
     if not np.isfinite(equivalent).all():
         findings = (_swims(),)
     largest = float(np.nanmax(equivalent)) if np.isfinite(equivalent).any() else 1e-6
-    scale = stated or signal.round_up(value=largest * 3600.0, series=_SERIES) / 3600.0
-    numbers["full_scale"] = scale
+    full = stated or signal.round_up(value=largest * 3600.0, series=_SERIES) / 3600.0
+    numbers["full_scale"] = full
     medium = "air at 0 °C, 101.325 kPa" if gas else "water at 20 °C"
     values = {
         "float_density": Given(float_density, tag.origin("meter.float_density")),
-        "equivalent_full_scale": Given(scale, Origin.GIVEN if stated else Origin.DERIVED, _SOURCE),
+        "equivalent_full_scale": Given(full, Origin.GIVEN if stated else Origin.DERIVED, _SOURCE),
         "equivalent_fluid": Given(medium, Origin.DERIVED, _SOURCE),
-        "inside_diameter_hot": Given(
-            float(plain.hot_diameter(numbers, request.stream)[request.normal]),
-            Origin.DERIVED,
-            "thermal growth",
-        ),
+        "inside_diameter_hot": plain.hot_inside(numbers, request),
     }
     notes = {
         "element": (
@@ -76,13 +71,6 @@ def size(request: Request) -> Element:
         "installation": _installation(request),
     }
     return Element(numbers, values, notes, (*findings, *_upright(request)), {})
-
-
-def _pipe(request: Request) -> dict[str, float]:
-    return {
-        "inside_diameter": request.pipe.inside_diameter,
-        "pipe_expansion": request.pipe.expansion,
-    }
 
 
 def _swims() -> Finding:
@@ -149,10 +137,8 @@ def at(element: Element, stream: Stream) -> Mapping[str, Array]:
             **values,
             "equivalent_flow": equivalent,
             "reading_factor": 1.0 / on_scale,
-            "signal_fraction": share,
-            "signal_current": signal.current(fraction=share),
             "pressure_loss": loss,
-            "error_limit": numbers["error"] / share,
+            **scale.signals(share, numbers["error"]),
         }
 
 
@@ -160,23 +146,10 @@ def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: AR
     """Return the limits of use: scale and viscosity."""
     immune = request.profile.typical["largest_viscosity"]
     return (
-        Limit(
-            "signal_fraction",
-            None,
-            1.0 + 1e-9,
-            Level.STOP,
-            "above-scale",
+        *scale.limits(
             "the float stands at its stop; choose a larger full scale",
-            _SOURCE,
-        ),
-        Limit(
-            "signal_fraction",
-            0.1,
-            None,
-            Level.CAUTION,
-            "below-scale",
             "below a tenth of full scale there is no mark; choose a smaller full scale",
-            PRACTICE,
+            _SOURCE,
         ),
         Limit(
             "viscosity",
@@ -229,12 +202,7 @@ FAMILY = Family(
     limits=limits,
     budget=budget,
     derivations=(
-        *(
-            item
-            for item in COMMON
-            if item.key
-            in ("inside_diameter_hot", "velocity", "reynolds_number", "dynamic_pressure")
-        ),
+        *plain.derivations(*plain.PIPE),
         Derivation(
             "equivalent_flow",
             "qe = q sqrt(ρ (ρf - ρe) / (ρe (ρf - ρ))), ρe of water at 20 °C or air at 0 °C",
@@ -260,21 +228,14 @@ FAMILY = Family(
             "definition",
             ("equivalent_flow", "equivalent_full_scale"),
         ),
-        Derivation(
-            "signal_current", "I = 4 mA + 16 mA × share of span", "definition", ("signal_fraction",)
-        ),
+        scale.CURRENT,
         Derivation(
             "pressure_loss",
             "ϖ = (ρf - ρ) g h, h the volume of the float by its cross-section: the float's weight",
             f"balance of forces; h typical ({MEMORY})",
             ("float_density", "density"),
         ),
-        Derivation(
-            "error_limit",
-            "error of full scale by share of span",
-            PRACTICE,
-            ("signal_fraction",),
-        ),
+        scale.ERROR,
     ),
     signal="signal_fraction",
 )

@@ -7,10 +7,9 @@ from collections.abc import Mapping
 
 import numpy as np
 
-from specsheet.findings import Level, Origin
-from specsheet.meters.dp import body, plain
+from specsheet.findings import Origin
+from specsheet.meters.dp import body, plain, scale
 from specsheet.meters.dp.budget import density as density_contribution
-from specsheet.meters.dp.derivations import COMMON
 from specsheet.meters.dp.given import guarded
 from specsheet.meters.family import (
     Array,
@@ -23,7 +22,7 @@ from specsheet.meters.family import (
     Request,
     Stream,
 )
-from specsheet.methods import signal, variable_area
+from specsheet.methods import variable_area
 from specsheet.methods.gum import RECTANGULAR
 from specsheet.sources import PRACTICE
 
@@ -48,8 +47,7 @@ def size(request: Request) -> Element:
     stated = tag.si("meter.slope")
     slope = stated or flow / (travel * math.sqrt(2.0 * top / float(stream.density[lead])))
     numbers = {
-        "inside_diameter": inside,
-        "pipe_expansion": request.pipe.expansion,
+        **plain.pipe_numbers(request),
         "area": area,
         "travel": travel,
         "preload": preload,
@@ -65,11 +63,7 @@ def size(request: Request) -> Element:
             preload + numbers["spring_rate"] * travel, Origin.DERIVED, _SOURCE
         ),
         "opening_slope": Given(slope, Origin.GIVEN if stated else Origin.DERIVED, _SOURCE),
-        "inside_diameter_hot": Given(
-            float(plain.hot_diameter(numbers, stream)[request.normal]),
-            Origin.DERIVED,
-            "thermal growth",
-        ),
+        "inside_diameter_hot": plain.hot_inside(numbers, request),
     }
     notes = {
         "element": (
@@ -101,32 +95,17 @@ def at(element: Element, stream: Stream) -> Mapping[str, Array]:
             "differential_pressure": pressure,
             "pressure_loss": pressure,
             "pressure_loss_coefficient": pressure / (0.5 * values["dynamic_pressure"]),
-            "signal_fraction": share,
-            "signal_current": signal.current(fraction=share),
-            "error_limit": numbers["error"] / share,
+            **scale.signals(share, numbers["error"]),
         }
 
 
 def limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: ARG001
     """Return the limits of use: the travel of the plunger."""
     return (
-        Limit(
-            "signal_fraction",
-            None,
-            1.0 + 1e-9,
-            Level.STOP,
-            "above-scale",
+        *scale.limits(
             "the plunger stands at its stop; choose a larger meter or a stiffer spring",
-            _SOURCE,
-        ),
-        Limit(
-            "signal_fraction",
-            0.1,
-            None,
-            Level.CAUTION,
-            "below-scale",
             "the plunger hardly moves: friction decides the reading; choose a smaller meter",
-            PRACTICE,
+            _SOURCE,
         ),
     )
 
@@ -154,18 +133,7 @@ FAMILY = Family(
     limits=limits,
     budget=budget,
     derivations=(
-        *(
-            item
-            for item in COMMON
-            if item.key
-            in (
-                "inside_diameter_hot",
-                "velocity",
-                "reynolds_number",
-                "dynamic_pressure",
-                "pressure_loss_coefficient",
-            )
-        ),
+        *plain.derivations(*plain.PIPE, "pressure_loss_coefficient"),
         Derivation(
             "displacement",
             "q = w x sqrt(2 Δp/ρ) with Δp A = F0 + k x, solved for x",
@@ -182,12 +150,8 @@ FAMILY = Family(
         Derivation(
             "signal_fraction", "x / travel", "definition", ("displacement", "plunger_travel")
         ),
-        Derivation(
-            "signal_current", "I = 4 mA + 16 mA × share of span", "definition", ("signal_fraction",)
-        ),
-        Derivation(
-            "error_limit", "error of full scale by share of span", PRACTICE, ("signal_fraction",)
-        ),
+        scale.CURRENT,
+        scale.ERROR,
         Derivation(
             "spring_full_load",
             "F1 = Δp at full travel × A; the rate is (F1 - F0) / travel",

@@ -7,10 +7,9 @@ import math
 import numpy as np
 
 from specsheet.findings import Finding, Level
-from specsheet.line.material import find_material
-from specsheet.meters.dp import adapters, wet
+from specsheet.meters.dp import adapters, body, nozzle, wet
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
+from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
 from specsheet.methods import iso5167_4
 from specsheet.methods.iso5167_4 import VENTURIS
@@ -40,23 +39,16 @@ def _coefficient_uncertainty(lanes: Lanes) -> Array:
     return found
 
 
-def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not depend on it
-    found: Array = iso5167_4.loss_ratio(
-        diameter_ratio=lanes.diameter_ratio, divergent_angle=lanes.numbers["divergent_angle"]
-    )
-    return found
-
-
 def _prepare(request: Request) -> Prepared:
     tag = request.tag
     stated = tag.text("meter.construction")
     construction = stated if stated in VENTURIS else _USUAL
     angle = tag.si("meter.divergent_angle") or math.radians(7.0)
-    material = find_material(tag.text("meter.throat_material"))
-    temperature = float(request.stream.temperature[request.normal])
-    numbers = {"divergent_angle": angle, "tapping_distance": _tapping_distance(request)}
-    if material is not None:
-        numbers["element_expansion"] = material.expansion(temperature)
+    numbers = {
+        "divergent_angle": angle,
+        "tapping_distance": _tapping_distance(request),
+        **body.expansion(request, "meter.throat_material"),
+    }
     values = {"divergent_angle": Given(angle, tag.origin("meter.divergent_angle"))}
     carried, printed, findings = wet.read(request)
     return Prepared(
@@ -81,15 +73,9 @@ def _bounds(request: Request, prepared: Prepared) -> Bounds:  # noqa: ARG001
 def _describe(request: Request, element: Element) -> Described:  # noqa: ARG001
     construction = element.choices["construction"]
     make = VENTURIS[construction]
-    carried: tuple[str, ...] = ()
-    if wet.is_wet(element.numbers):
-        carried = (
-            "Wet gas: the flow stated is that of the gas alone; the differential pressure "
-            "expected counts the over-reading. The liquid flow must be known from elsewhere.",
-        )
     notes = {
         "element": (
-            *carried,
+            *wet.notes(element.numbers),
             f"Classical Venturi tube, {construction}: entrance cylinder of D, convergent of 21° "
             "(±1°), cylindrical throat of length d, divergent of 7° to 15°.",
             "At least four tappings in each plane, joined by a ring or triple-T.",
@@ -117,7 +103,7 @@ def _limits(element: Element, request: Request) -> tuple[Limit, ...]:  # noqa: A
         ratio=make.ratio,
         reynolds=make.reynolds,
     )
-    return (*found, *wet.limits(element)) if wet.is_wet(element.numbers) else found
+    return (*found, *wet.limits(element, wet.VENTURI))
 
 
 _DERIVATIONS = (
@@ -141,7 +127,7 @@ FAMILY = family(
         coefficient_uncertainty=_coefficient_uncertainty,
         expansibility=adapters.nozzle_expansibility,
         expansibility_uncertainty=adapters.venturi_expansibility_uncertainty,
-        loss=_loss,
+        loss=adapters.venturi_loss,
         bounds=_bounds,
         limits=_limits,
         describe=_describe,
@@ -149,6 +135,6 @@ FAMILY = family(
         prepare=_prepare,
         over_reading=wet.over_reading,
         more=wet.more,
-        shape=Shape("throat", "throat_diameter", "throat_diameter_hot", "throat"),
+        shape=nozzle.SHAPE,
     )
 )

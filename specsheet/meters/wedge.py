@@ -3,34 +3,14 @@
 from __future__ import annotations
 
 from specsheet.findings import Level
-from specsheet.meters.dp import adapters, body
+from specsheet.meters.dp import adapters, body, chord
 from specsheet.meters.dp.build import family, standard_limits
-from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
-from specsheet.meters.family import Array, Derivation, Element, Limit, Request
+from specsheet.meters.dp.device import Bounds, Described, Device, Prepared
+from specsheet.meters.family import Derivation, Element, Limit, Request
 from specsheet.methods import iso5167_6, segment
 from specsheet.sources import cite
 
 _SOURCE = cite("iso5167-6")
-
-
-def _coefficient(lanes: Lanes) -> Array:
-    found: Array = iso5167_6.discharge_coefficient(diameter_ratio=lanes.diameter_ratio)
-    return found
-
-
-def _loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not depend on it
-    found: Array = iso5167_6.loss_ratio(diameter_ratio=lanes.diameter_ratio)
-    return found
-
-
-def _share(ratio: Array) -> Array:
-    found: Array = segment.height_of_ratio(diameter_ratio=ratio)
-    return found
-
-
-def _ratio(share: Array) -> Array:
-    found: Array = segment.diameter_ratio(height_ratio=share)
-    return found
 
 
 def _prepare(request: Request) -> Prepared:
@@ -72,11 +52,11 @@ FAMILY = family(
     Device(
         key="wedge",
         source=_SOURCE,
-        coefficient=_coefficient,
+        coefficient=adapters.of_ratio(iso5167_6.discharge_coefficient),
         coefficient_uncertainty=adapters.constant(iso5167_6.UNCERTAINTY),
         expansibility=adapters.nozzle_expansibility,
         expansibility_uncertainty=adapters.venturi_expansibility_uncertainty,
-        loss=_loss,
+        loss=adapters.loss_of_ratio(iso5167_6.loss_ratio),
         bounds=_bounds,
         limits=_limits,
         describe=_describe,
@@ -98,15 +78,7 @@ FAMILY = family(
             ),
         ),
         prepare=_prepare,
-        shape=Shape(
-            entry="wedge_height",
-            term="wedge_height",
-            hot_term="",
-            label="opening below the wedge",
-            equation="β² = (acos(1 - 2 h/D) - 2 (1 - 2 h/D) sqrt(h/D - (h/D)²)) / π",
-            share=_share,
-            ratio=_ratio,
-        ),
+        shape=chord.shape("wedge_height", "opening below the wedge"),
         assumed_expansion="as for a Venturi tube (ISO 5167-4:2003, 5.7.2), assumed",
     )
 )

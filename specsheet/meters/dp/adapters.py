@@ -3,12 +3,13 @@
 from __future__ import annotations
 
 from collections.abc import Callable
+from typing import Any
 
 import numpy as np
 
 from specsheet.meters.dp.device import Lanes
 from specsheet.meters.family import Array, Derivation
-from specsheet.methods import iso5167_1, iso5167_2, iso5167_3
+from specsheet.methods import iso5167_1, iso5167_2, iso5167_3, iso5167_4
 from specsheet.sources import cite
 
 
@@ -19,6 +20,38 @@ def constant(value: float) -> Callable[[Lanes], Array]:
         return np.full(lanes.mass_flow.shape, value)
 
     return same
+
+
+def of_ratio(published: Callable[..., Any]) -> Callable[[Lanes], Array]:
+    """Return a published coefficient, or uncertainty, that depends on β alone."""
+
+    def found(lanes: Lanes) -> Array:
+        value: Array = published(diameter_ratio=lanes.diameter_ratio)
+        return value
+
+    return found
+
+
+def of_ratio_and_reynolds(published: Callable[..., Any]) -> Callable[[Lanes], Array]:
+    """Return a published coefficient that depends on β and ReD."""
+
+    def found(lanes: Lanes) -> Array:
+        value: Array = published(
+            diameter_ratio=lanes.diameter_ratio, reynolds_number=lanes.reynolds_number
+        )
+        return value
+
+    return found
+
+
+def loss_of_ratio(published: Callable[..., Any]) -> Callable[[Lanes, Array], Array]:
+    """Return a published permanent loss by Δp that depends on β alone, not on C."""
+
+    def found(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - the protocol
+        value: Array = published(diameter_ratio=lanes.diameter_ratio)
+        return value
+
+    return found
 
 
 def plate_expansibility(ratio: Array, drop: Array, exponent: Array) -> Array:
@@ -63,6 +96,14 @@ def plate_loss(lanes: Lanes, coefficient: Array) -> Array:
     """Return the permanent loss by Δp of a plate or a nozzle (ISO 5167-2:2003, 5.4.1)."""
     found: Array = iso5167_1.loss_ratio(
         discharge_coefficient=coefficient, diameter_ratio=lanes.diameter_ratio
+    )
+    return found
+
+
+def venturi_loss(lanes: Lanes, coefficient: Array) -> Array:  # noqa: ARG001 - does not depend on it
+    """Return the permanent loss by Δp behind a divergent of ``divergent_angle``."""
+    found: Array = iso5167_4.loss_ratio(
+        diameter_ratio=lanes.diameter_ratio, divergent_angle=lanes.numbers["divergent_angle"]
     )
     return found
 

@@ -25,12 +25,21 @@ def prepare(
         tapping_share: usual distance of the tappings along the pipe, by D [-].
         choices, values, numbers, findings: what the device adds.
     """
-    found = {"tapping_distance": tapping_share * request.pipe.inside_diameter, **(numbers or {})}
-    material = find_material(request.tag.text("meter.element_material"))
-    if material is not None:
-        temperature = float(request.stream.temperature[request.normal])
-        found["element_expansion"] = material.expansion(temperature)
+    found = {
+        "tapping_distance": tapping_share * request.pipe.inside_diameter,
+        **(numbers or {}),
+        **expansion(request),
+    }
     return Prepared(found, choices or {}, values or {}, findings)
+
+
+def expansion(request: Request, entry: str = "meter.element_material") -> dict[str, float]:
+    """Return the element's expansion by its name [1/K]; nothing for an unknown material."""
+    material = find_material(request.tag.text(entry))
+    if material is None:
+        return {}
+    temperature = float(request.stream.temperature[request.normal])
+    return {"element_expansion": material.expansion(temperature)}
 
 
 def calibration_wanted(

@@ -7,14 +7,24 @@ from collections.abc import Mapping
 import numpy as np
 
 from specsheet.findings import Level, Origin
-from specsheet.meters.dp import budget, plain, transmitter
-from specsheet.meters.family import Array, Contribution, Derivation, Element, Limit, Request, Stream
+from specsheet.meters.dp import body, budget, plain, transmitter
+from specsheet.meters.family import (
+    Array,
+    Contribution,
+    Derivation,
+    Element,
+    Given,
+    Limit,
+    Request,
+    Stream,
+)
 from specsheet.methods import probe
 from specsheet.sources import MEMORY
 
 _DRAG = f"drag of a cylinder ({MEMORY})"
 
 DERIVATIONS: tuple[Derivation, ...] = (
+    *plain.derivations(*plain.SHARED),
     Derivation(
         "blockage",
         "B = 4 b l / (π D²)",
@@ -23,6 +33,29 @@ DERIVATIONS: tuple[Derivation, ...] = (
     ),
     Derivation("pressure_loss", "ϖ = CD B ρ v²/2", _DRAG, ("blockage", "density", "velocity")),
 )
+
+
+def numbers_of(request: Request, width: float, share: float) -> dict[str, float]:
+    """Return the numbers of pipe, transmitter and probe.
+
+    Args:
+        request: the tag's request.
+        width: of the probe [m].
+        share: length in the flow by D [-].
+    """
+    inside = request.pipe.inside_diameter
+    return {
+        **plain.base_numbers(request),
+        "blockage": float(
+            probe.blockage(width=width, length=share * inside, inside_diameter=inside)
+        ),
+        "drag_coefficient": body.figure(request, "drag_coefficient"),
+    }
+
+
+def blocked(numbers: Mapping[str, float]) -> Given:
+    """Return the frontal area of the probe by that of the pipe, to print [-]."""
+    return Given(numbers["blockage"], Origin.DERIVED, "plane geometry")
 
 
 def loss(
@@ -36,18 +69,6 @@ def loss(
         velocity=values["velocity"],
     )
     return found
-
-
-def blockage(request: Request, width: float, share: float) -> float:
-    """Return the frontal area of the probe by that of the pipe [-].
-
-    Args:
-        request: for the pipe.
-        width: of the probe [m].
-        share: length in the flow by D [-].
-    """
-    inside = request.pipe.inside_diameter
-    return float(probe.blockage(width=width, length=share * inside, inside_diameter=inside))
 
 
 def contributions(

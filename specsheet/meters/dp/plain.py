@@ -8,9 +8,21 @@ import numpy as np
 
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.dp import transmitter
+from specsheet.meters.dp.derivations import COMMON
+from specsheet.meters.dp.given import guarded
 from specsheet.meters.dp.notes import output_note
 from specsheet.meters.dp.response import signals
-from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request, Stream
+from specsheet.meters.family import (
+    Array,
+    Contribution,
+    Derivation,
+    Element,
+    Family,
+    Given,
+    Limit,
+    Request,
+    Stream,
+)
 from specsheet.methods import iso5167_1 as equation
 from specsheet.sources import PRACTICE
 
@@ -19,13 +31,13 @@ RANGE = "differential_pressure_range"
 #: numbers and choices -> response to a stream
 Respond = Callable[[Mapping[str, float], Mapping[str, str], Stream], Mapping[str, Array]]
 
-#: derivations that these families share with the throttling ones
+#: glossary keys of what any meter answers of its pipe
+PIPE = ("inside_diameter_hot", "velocity", "reynolds_number", "dynamic_pressure")
+
+#: glossary keys of what these families share with the throttling ones
 SHARED = (
-    "inside_diameter_hot",
-    "velocity",
-    "reynolds_number",
+    *PIPE,
     "pressure_loss_coefficient",
-    "dynamic_pressure",
     "signal_fraction",
     "signal_current",
     "signal_current_root",
@@ -37,11 +49,18 @@ SHARED = (
 )
 
 
-def base_numbers(request: Request) -> dict[str, float]:
-    """Return the numbers of pipe and transmitter."""
+def pipe_numbers(request: Request) -> dict[str, float]:
+    """Return the numbers of the pipe."""
     return {
         "inside_diameter": request.pipe.inside_diameter,
         "pipe_expansion": request.pipe.expansion,
+    }
+
+
+def base_numbers(request: Request) -> dict[str, float]:
+    """Return the numbers of pipe and transmitter."""
+    return {
+        **pipe_numbers(request),
         "cut_off": request.tag.si("meter.low_cut_off") or 0.0,
         "second_range": request.tag.si("meter.second_range") or 0.0,
         "pipe_diameter_uncertainty": request.tag.si("meter.pipe_diameter_uncertainty") or 0.0,
@@ -70,6 +89,12 @@ def hot_diameter(numbers: Mapping[str, float], stream: Stream) -> Array:
         temperature=stream.temperature,
     )
     return hot
+
+
+def hot_inside(numbers: Mapping[str, float], request: Request) -> Given:
+    """Return the inside diameter of the pipe at the normal point, to print."""
+    inside = float(hot_diameter(numbers, request.stream)[request.normal])
+    return Given(inside, Origin.DERIVED, "thermal growth")
 
 
 def with_signals(numbers: Mapping[str, float], values: Mapping[str, Array]) -> dict[str, Array]:
@@ -107,10 +132,9 @@ def element(
     flow = _upper_flow(request, respond, complete, choices, span)
     top = transmitter.top_of(flow, f"meter.{RANGE}", "response at the upper range value")
     legs = transmitter.legs(request, span, tapping_distance)
-    inside = float(hot_diameter(complete, request.stream)[request.normal])
     printed = {
         **values,
-        "inside_diameter_hot": Given(inside, Origin.DERIVED, "thermal growth"),
+        "inside_diameter_hot": hot_inside(complete, request),
         RANGE: Given(span, origin, PRACTICE),
         **top.values,
         **legs.values,
@@ -173,6 +197,31 @@ def limits(element: Element) -> tuple[Limit, ...]:
     return transmitter.limits(element.numbers, f"meter.{RANGE}")
 
 
-def shared_derivations(common: tuple[Derivation, ...]) -> tuple[Derivation, ...]:
-    """Return those of the group's derivations that apply."""
-    return tuple(item for item in common if item.key in SHARED)
+def derivations(*keys: str) -> tuple[Derivation, ...]:
+    """Return those of the group's derivations that a family shares."""
+    return tuple(item for item in COMMON if item.key in keys)
+
+
+def family(
+    *,
+    key: str,
+    size: Callable[[Request], Element],
+    respond: Respond,
+    limits: Callable[[Element, Request], tuple[Limit, ...]],
+    budget: Callable[[Element, Stream, Mapping[str, Array]], tuple[Contribution, ...]],
+    derivations: tuple[Derivation, ...],
+) -> Family:
+    """Return a family whose signal is a differential pressure; the arguments are the family's."""
+
+    def at(element: Element, stream: Stream) -> Mapping[str, Array]:
+        return respond(element.numbers, element.choices, stream)
+
+    return Family(
+        key=key,
+        size=guarded(size),
+        at=at,
+        limits=limits,
+        budget=budget,
+        derivations=derivations,
+        signal="differential_pressure",
+    )

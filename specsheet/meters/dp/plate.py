@@ -2,13 +2,13 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from collections.abc import Callable, Mapping
 
 from specsheet.findings import Finding, Level, Origin
 from specsheet.line.material import find_material
-from specsheet.meters.dp.adapters import BORE_HOT
-from specsheet.meters.dp.device import Described, Prepared, Shape
-from specsheet.meters.family import Derivation, Element, Given, Limit, Request
+from specsheet.meters.dp import adapters
+from specsheet.meters.dp.device import Bounds, Described, Device, Lanes, Prepared, Shape
+from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
 from specsheet.methods import orifice_plate as steel
 from specsheet.sources import PRACTICE, cite
 
@@ -43,7 +43,14 @@ STRENGTH: tuple[Derivation, ...] = (
 )
 
 
-DERIVATIONS: tuple[Derivation, ...] = (BORE_HOT, *STRENGTH)
+DERIVATIONS: tuple[Derivation, ...] = (adapters.BORE_HOT, *STRENGTH)
+
+#: what a plate takes over from the square-edged one
+SHARP: tuple[Derivation, ...] = (
+    adapters.PLATE_EXPANSIBILITY,
+    adapters.PLATE_LOSS,
+    adapters.BORE,
+)
 
 
 def prepare(request: Request) -> Prepared:
@@ -97,6 +104,39 @@ def without_hole(size: float, numbers: Mapping[str, float]) -> float:
 
 #: a round bore with a drain or vent hole beside it
 HOLED = Shape(effective=with_hole, machined=without_hole)
+
+
+def sharp(
+    *,
+    key: str,
+    source: str,
+    coefficient: Callable[[Lanes], Array],
+    coefficient_uncertainty: Callable[[Lanes], Array],
+    bounds: Callable[[Request, Prepared], Bounds],
+    limits: Callable[[Element, Request], tuple[Limit, ...]],
+    describe: Callable[[Request, Element], Described],
+    derivations: tuple[Derivation, ...],
+    prepare: Callable[[Request], Prepared],
+) -> Device:
+    """Return a plate with a round bore that expands and loses as a square-edged one.
+
+    The arguments are those of the device.
+    """
+    return Device(
+        key=key,
+        source=source,
+        coefficient=coefficient,
+        coefficient_uncertainty=coefficient_uncertainty,
+        expansibility=adapters.plate_expansibility,
+        expansibility_uncertainty=adapters.plate_expansibility_uncertainty,
+        loss=adapters.plate_loss,
+        bounds=bounds,
+        limits=limits,
+        describe=describe,
+        derivations=derivations,
+        prepare=prepare,
+        shape=HOLED,
+    )
 
 
 def thickness(request: Request, element: Element) -> Given:

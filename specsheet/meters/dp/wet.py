@@ -3,6 +3,8 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import dataclass
+from typing import Any
 
 import numpy as np
 
@@ -45,6 +47,12 @@ DERIVATIONS: tuple[Derivation, ...] = (
 )
 
 
+_NOTE = (
+    "Wet gas: the flow stated is that of the gas alone; the differential pressure expected counts "
+    "the over-reading. The liquid flow must be known from elsewhere."
+)
+
+
 def read(request: Request) -> tuple[dict[str, float], dict[str, Given], tuple[Finding, ...]]:
     """Return numbers, printed values and findings of the liquid carried by a gas."""
     tag = request.tag
@@ -75,22 +83,40 @@ def read(request: Request) -> tuple[dict[str, float], dict[str, Given], tuple[Fi
     return numbers, values, ()
 
 
+def notes(numbers: Mapping[str, float]) -> tuple[str, ...]:
+    """Return what the flow stated is in wet gas; nothing in dry gas and in liquid."""
+    return (_NOTE,) if is_wet(numbers) else ()
+
+
 def is_wet(numbers: Mapping[str, float]) -> bool:
     """Tell whether the correction applies."""
     return numbers.get("liquid_ratio", 0.0) > 0.0
 
 
+def densities_of(lanes: Lanes) -> dict[str, Any]:
+    """Return the densities of gas and liquid, as the equations name them [kg/m3]."""
+    return {"gas_density": lanes.density, "liquid_density": lanes.numbers["liquid_density"]}
+
+
+def flow_numbers(lanes: Lanes) -> dict[str, Array]:
+    """Return X and the Froude number of the gas in the pipe, by glossary key."""
+    densities = densities_of(lanes)
+    return {
+        "lockhart_martinelli": iso11583.lockhart_martinelli(
+            liquid_ratio=lanes.numbers["liquid_ratio"], **densities
+        ),
+        "froude_number": iso11583.gas_froude_number(
+            gas_mass_flow=lanes.mass_flow, inside_diameter=lanes.inside_diameter, **densities
+        ),
+    }
+
+
 def numbers_of(lanes: Lanes) -> dict[str, Array]:
     """Return X, the Froude numbers and the over-reading, by glossary key."""
-    of = lanes.numbers
-    densities = {"gas_density": lanes.density, "liquid_density": of["liquid_density"]}
-    x = iso11583.lockhart_martinelli(liquid_ratio=of["liquid_ratio"], **densities)
-    froude = iso11583.gas_froude_number(
-        gas_mass_flow=lanes.mass_flow, inside_diameter=lanes.inside_diameter, **densities
-    )
+    found = flow_numbers(lanes)
+    x, froude = found["lockhart_martinelli"], found["froude_number"]
     return {
-        "lockhart_martinelli": x,
-        "froude_number": froude,
+        **found,
         "throat_froude_number": iso11583.throat_froude_number(
             froude_number=froude, diameter_ratio=lanes.diameter_ratio
         ),
@@ -98,8 +124,8 @@ def numbers_of(lanes: Lanes) -> dict[str, Array]:
             lockhart_martinelli=x,
             froude_number=froude,
             diameter_ratio=lanes.diameter_ratio,
-            liquid_factor=of["liquid_factor"],
-            **densities,
+            liquid_factor=lanes.numbers["liquid_factor"],
+            **densities_of(lanes),
         ),
     }
 
@@ -131,41 +157,44 @@ def more(lanes: Lanes) -> Mapping[str, Array]:
     return numbers_of(lanes) if is_wet(lanes.numbers) else {}
 
 
-def limits(element: Element) -> tuple[Limit, ...]:
-    """Return the limits of the correlation."""
-    outside = "outside this the wet-gas correction does not hold; separate the liquid first"
-    density = element.numbers["liquid_density"]
+@dataclass(frozen=True, slots=True)
+class Validity:
+    """Within what a correlation for wet gas holds.
+
+    Attributes:
+        froude: glossary key of the Froude number that bounds it.
+        least_froude: its smallest value [-].
+        least_density_ratio: smallest density of the gas by that of the liquid [-].
+        ratio: smallest and largest β [-].
+        source: citation.
+    """
+
+    froude: str
+    least_froude: float
+    least_density_ratio: float
+    ratio: tuple[float, float]
+    source: str
+
+
+#: of the correlation for Venturi tubes
+VENTURI = Validity("throat_froude_number", 3.0, 0.02, (0.4, 0.75), _LIMITS)
+
+
+def limits(element: Element, holds: Validity) -> tuple[Limit, ...]:
+    """Return the limits of a correlation; none in dry gas and in liquid."""
+    if not is_wet(element.numbers):
+        return ()
+
+    def limit(
+        key: str, low: float | None, high: float | None, code: str, driver: str = ""
+    ) -> Limit:
+        outside = "outside this the wet-gas correction does not hold; separate the liquid first"
+        return Limit(key, low, high, Level.CAUTION, code, outside, holds.source, driver=driver)
+
+    density = holds.least_density_ratio * element.numbers["liquid_density"]
     return (
-        Limit(
-            "lockhart_martinelli",
-            None,
-            0.3,
-            Level.CAUTION,
-            "wet-gas-liquid",
-            outside,
-            _LIMITS,
-            driver="",
-        ),
-        Limit(
-            "throat_froude_number",
-            3.0,
-            None,
-            Level.CAUTION,
-            "wet-gas-slow",
-            outside,
-            _LIMITS,
-        ),
-        Limit(
-            "density",
-            0.02 * density,
-            None,
-            Level.CAUTION,
-            "wet-gas-density",
-            outside,
-            _LIMITS,
-            driver="density",
-        ),
-        Limit(
-            "diameter_ratio", 0.4, 0.75, Level.CAUTION, "wet-gas-ratio", outside, _LIMITS, driver=""
-        ),
+        limit("lockhart_martinelli", None, 0.3, "wet-gas-liquid"),
+        limit(holds.froude, holds.least_froude, None, "wet-gas-slow", "mass_flow"),
+        limit("density", density, None, "wet-gas-density", "density"),
+        limit("diameter_ratio", *holds.ratio, "wet-gas-ratio"),
     )

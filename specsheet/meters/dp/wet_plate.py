@@ -4,10 +4,9 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 
-from specsheet.findings import Level
 from specsheet.meters.dp import wet
 from specsheet.meters.dp.device import Lanes
-from specsheet.meters.family import Array, Derivation, Element, Limit
+from specsheet.meters.family import Array, Derivation
 from specsheet.methods import iso11583
 from specsheet.sources import cite
 
@@ -25,27 +24,15 @@ DERIVATIONS: tuple[Derivation, ...] = (
     ),
 )
 
-NOTE = (
-    "Wet gas: the flow stated is that of the gas alone; the differential pressure expected counts "
-    "the over-reading. The liquid flow must be known from elsewhere."
-)
+#: of the correlation for orifice plates
+PLATE = wet.Validity("froude_number", 0.2, 0.014, (0.24, 0.73), _SOURCE)
 
 
 def numbers_of(lanes: Lanes) -> dict[str, Array]:
     """Return X, the Froude number and the over-reading, by glossary key."""
-    of = lanes.numbers
-    densities = {"gas_density": lanes.density, "liquid_density": of["liquid_density"]}
-    x = iso11583.lockhart_martinelli(liquid_ratio=of["liquid_ratio"], **densities)
-    froude = iso11583.gas_froude_number(
-        gas_mass_flow=lanes.mass_flow, inside_diameter=lanes.inside_diameter, **densities
-    )
-    return {
-        "lockhart_martinelli": x,
-        "froude_number": froude,
-        "over_reading": iso11583.plate_over_reading(
-            lockhart_martinelli=x, froude_number=froude, **densities
-        ),
-    }
+    found = wet.flow_numbers(lanes)
+    over = iso11583.plate_over_reading(**found, **wet.densities_of(lanes))
+    return {**found, "over_reading": over}
 
 
 def over_reading(lanes: Lanes) -> Array | float:
@@ -56,26 +43,6 @@ def over_reading(lanes: Lanes) -> Array | float:
 def more(lanes: Lanes) -> Mapping[str, Array]:
     """Return the wet-gas numbers to put out; none in dry gas and in liquid."""
     return numbers_of(lanes) if wet.is_wet(lanes.numbers) else {}
-
-
-def limits(element: Element) -> tuple[Limit, ...]:
-    """Return the limits of the correlation; none in dry gas and in liquid."""
-    if not wet.is_wet(element.numbers):
-        return ()
-    outside = "outside this the wet-gas correction does not hold; separate the liquid first"
-    density = 0.014 * element.numbers["liquid_density"]
-
-    def limit(
-        key: str, low: float | None, high: float | None, code: str, driver: str = ""
-    ) -> Limit:
-        return Limit(key, low, high, Level.CAUTION, code, outside, _SOURCE, driver=driver)
-
-    return (
-        limit("lockhart_martinelli", None, 0.3, "wet-gas-liquid"),
-        limit("froude_number", 0.2, None, "wet-gas-slow", "mass_flow"),
-        limit("density", density, None, "wet-gas-density", "density"),
-        limit("diameter_ratio", 0.24, 0.73, "wet-gas-ratio"),
-    )
 
 
 def uncertainty(dry: Array) -> Array:
