@@ -40,7 +40,7 @@ def unknown(
     }
     if not missing:
         return ()
-    *first, last = (in_sentence(key) for key in missing)
+    *first, last = (in_sentence(key).split(",")[0] for key in missing)
     listed = f"{', '.join(first)} and {last}" if first else last
     text = f"The sheet leaves out {listed} of {name}: no method for that is at hand."
     if tuple(missing) != (_NO_ENTRY,):

@@ -2,15 +2,14 @@
 
 One saturation state of the equation of state costs up to a fifth of a millisecond, and every state
 asks for two. The logarithm of the vapour pressure over 1/T is so smooth that a polynomial through
-some forty Chebyshev points gives it to a part in a million; near the critical point and in the deep
+forty Chebyshev points gives it to a part in a million; near the critical point and in the deep
 cold the equation itself is asked.
 """
 
 from __future__ import annotations
 
-import bisect
 import math
-import operator
+from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cache
 from typing import Any
@@ -19,61 +18,61 @@ from specsheet.fluid import library
 from specsheet.fluid.names import Substance
 
 #: share of the critical temperature between which the curve stands in for the equation
-_COLD, _WARM = 0.45, 0.98
+_COLD, _WARM = 0.45, 0.99
 _NODES = 40
+#: coefficients of ln p that add nothing
+_NEGLIGIBLE = 1e-9
 
 
 @dataclass(frozen=True, slots=True)
 class Curve:
-    """Barycentric polynomial of ln p over 1/T through Chebyshev points of the second kind.
+    """Chebyshev polynomial of ln p over 1/T.
 
     Attributes:
-        nodes: 1/T [1/K], falling in temperature.
-        values: ln(p/Pa) at the nodes.
-        weights: barycentric weights.
+        first, last: 1/T at its ends [1/K], falling in temperature.
+        high, low: ln(p/Pa) there.
+        coefficients: of the Chebyshev polynomials, from the highest degree that matters down.
     """
 
-    nodes: tuple[float, ...]
-    values: tuple[float, ...]
-    weights: tuple[float, ...]
+    first: float
+    last: float
+    high: float
+    low: float
+    coefficients: tuple[float, ...]
 
     def pressure(self, temperature: float) -> float | None:
         """Return the vapour pressure [Pa] at a temperature [K]; None beyond the curve."""
         inverse = 1.0 / temperature
-        if not self.nodes[0] <= inverse <= self.nodes[-1]:
+        if not self.first <= inverse <= self.last:
             return None
         return math.exp(self._at(inverse))
 
     def temperature(self, pressure: float) -> float | None:
         """Return the boiling temperature [K] at a pressure [Pa]; None beyond the curve."""
         level = math.log(pressure)
-        if not self.values[-1] <= level <= self.values[0]:
+        if not self.low <= level <= self.high:
             return None
-        # values fall along the nodes; between two of them the curve is all but straight
-        right = bisect.bisect_left(self.values, -level, lo=1, hi=_NODES, key=operator.neg)
-        before, after = self.nodes[right - 1], self.nodes[right]
-        miss_before, miss_after = self.values[right - 1] - level, self.values[right] - level
-        for _ in range(8):
+        # the curve is all but straight: the secant rule from its ends needs a few steps
+        before, miss_before = self.first, self.high - level
+        after, miss_after = self.last, self.low - level
+        for _ in range(12):
             if miss_after == miss_before:
                 break
             step = after - miss_after * (after - before) / (miss_after - miss_before)
             before, miss_before = after, miss_after
-            after = min(max(step, self.nodes[0]), self.nodes[-1])
+            after = min(max(step, self.first), self.last)
             miss_after = self._at(after) - level
-            if abs(miss_after) < 1e-12:
+            if abs(miss_after) < 1e-11:
                 break
         return 1.0 / after
 
     def _at(self, inverse: float) -> float:
-        above = below = 0.0
-        for node, value, weight in zip(self.nodes, self.values, self.weights, strict=True):
-            gap = inverse - node
-            if gap == 0.0:
-                return value
-            share = weight / gap
-            above += share * value
-            below += share
-        return above / below
+        """Return ln p by the recurrence of Clenshaw."""
+        twice = 2.0 * (2.0 * inverse - self.first - self.last) / (self.last - self.first)
+        one = two = 0.0
+        for coefficient in self.coefficients:
+            one, two = coefficient + twice * one - two, one
+        return one - 0.5 * twice * two
 
 
 @cache
@@ -81,17 +80,28 @@ def _curve(item: Substance) -> Curve | None:
     """Return the curve of a substance; None where the equation gives no saturation."""
     coldest = max(item.lowest_temperature * 1.001, _COLD * item.critical_temperature)
     first, last = 1.0 / (_WARM * item.critical_temperature), 1.0 / coldest
-    nodes, values, weights = [], [], []
+    values = []
     for k in range(_NODES + 1):
-        share = 0.5 * (1.0 - math.cos(math.pi * k / _NODES))
-        node = first + (last - first) * share
-        found = _exact_pressure(item.equation, 1.0 / node)
+        share = 0.5 * (1.0 + math.cos(math.pi * k / _NODES))
+        found = _exact_pressure(item.equation, 1.0 / (first + (last - first) * share))
         if found is None:
             return None
-        nodes.append(node)
         values.append(math.log(found))
-        weights.append((0.5 if k in (0, _NODES) else 1.0) * (-1.0) ** k)
-    return Curve(tuple(nodes), tuple(values), tuple(weights))
+    coefficients = _chebyshev(values)
+    while len(coefficients) > 4 and abs(coefficients[-1]) < _NEGLIGIBLE:
+        coefficients.pop()
+    return Curve(first, last, values[-1], values[0], tuple(reversed(coefficients)))
+
+
+def _chebyshev(values: Sequence[float]) -> list[float]:
+    """Return the coefficients of the polynomial through values at cos(pi k/n), k from 0 to n."""
+    n = len(values) - 1
+    found = []
+    for degree in range(n + 1):
+        terms = [value * math.cos(math.pi * degree * k / n) for k, value in enumerate(values)]
+        total = sum(terms) - 0.5 * (terms[0] + terms[-1])
+        found.append(total * (1.0 if degree in (0, n) else 2.0) / n)
+    return found
 
 
 def vapour_pressure(item: Substance, temperature: float) -> float | None:

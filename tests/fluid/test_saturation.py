@@ -33,7 +33,7 @@ def test_curve_is_the_equation_to_a_part_in_a_million(key: str) -> None:
 @pytest.mark.parametrize("key", KEYS)
 def test_curve_and_equation_meet_at_its_ends(key: str) -> None:
     item = names.substances()[key]
-    edge = 0.98 * item.critical_temperature
+    edge = saturation._WARM * item.critical_temperature
     below = saturation.vapour_pressure(item, edge * (1 - 1e-7))
     above = saturation.vapour_pressure(item, edge * (1 + 1e-7))
     assert below == pytest.approx(above, rel=1e-5)

@@ -1,5 +1,30 @@
 """Published states of natural gases, and their compositions by mole."""
 
+# the reference implementation of AGA Report 8: its test gas of all components
+TWENTY_ONE = {
+    "methane": 0.77824,
+    "nitrogen": 0.02,
+    "carbon_dioxide": 0.06,
+    "ethane": 0.08,
+    "propane": 0.03,
+    "isobutane": 0.0015,
+    "n_butane": 0.003,
+    "isopentane": 0.0005,
+    "n_pentane": 0.00165,
+    "hexane": 0.00215,
+    "heptane": 0.00088,
+    "octane": 0.00024,
+    "nonane": 0.00015,
+    "decane": 9e-05,
+    "hydrogen": 0.004,
+    "oxygen": 0.005,
+    "carbon_monoxide": 0.002,
+    "water": 0.0001,
+    "hydrogen_sulfide": 0.0025,
+    "helium": 0.007,
+    "argon": 0.001,
+}
+
 # ISO 20765-2:2015, example gases
 ISO_GASES = {
     "Gas 1": {
