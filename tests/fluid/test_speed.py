@@ -115,6 +115,26 @@ def test_five_component_gas() -> None:
     assert ours / (20.0 * best(blind)) <= 0.1
 
 
+def test_near_its_dew_point_a_gas_costs_little_more_than_far_from_it() -> None:
+    """Once the dew curve of the composition is followed, as after the first state."""
+    far = conditions(11e5, 315.0, 335.0)
+    near = conditions(60e5, 248.0, 255.0)
+
+    def run(where: list[Condition]) -> float:
+        times = []
+        for _ in range(20):
+            evaluate._state.cache_clear()
+            mixture_transport.dilute_viscosity.cache_clear()
+            mixture_transport.dilute_conductivity.cache_clear()
+            start = time.perf_counter()
+            outcomes = [evaluate.state(FIVE, condition) for condition in where]
+            times.append(time.perf_counter() - start)
+            assert all(outcome.state and outcome.state.phase == "gas" for outcome in outcomes)
+        return min(times)
+
+    assert run(near) / run(far) <= 2.5
+
+
 def test_a_whole_tag_again_is_nearly_free() -> None:
     text = 'kind = "substance"\nsubstance = "steam"\nphase = "gas"'
     stated = tag(text, point("7 bar(g)", "185 degC"), point("7 bar(g)", "175 degC", "minimum"))
