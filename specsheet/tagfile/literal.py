@@ -53,7 +53,7 @@ def _string(text: str, like: str) -> str:
     if single and "'" not in text and text.isprintable():
         return f"'{text}'"
     if like.startswith('"""') or "\n" in text:
-        lines = text.replace("\r\n", "\n").split("\n")
+        lines = text.split("\n")
         return '"""\n' + "\n".join(_escaped(line) for line in lines) + '"""'
     return _basic(text)
 

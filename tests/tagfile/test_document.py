@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import difflib
+import tomllib
 from datetime import date
 
 import pytest
@@ -388,3 +389,12 @@ def test_upgrade() -> None:
     assert document.text() == 'schema = 1\n[line]\nsize = "DN 50"  # kept\n'
     document.upgrade()
     assert document.text() == 'schema = 1\n[line]\nsize = "DN 50"  # kept\n'
+
+
+@pytest.mark.parametrize("ending", ["\n", "\r\n"])
+@pytest.mark.parametrize("text", ["0\r\n0", "a\nb", "a\rb"])
+def test_line_ends_inside_a_text_survive(text: str, ending: str) -> None:
+    """TOML folds line ends inside a long string, so a return of the text's own is escaped."""
+    document = Document.parse(f'schema = 1{ending}tag = "A"{ending}')
+    document.set("tag", text)
+    assert tomllib.loads(document.text())["tag"] == text
