@@ -147,9 +147,7 @@ def _without_meter(
     """Return the evaluation with what the line alone can say; adds to ``findings``."""
     tag = evaluation.tag
     pipe = prepared.pipe.pipe
-    beside = line.assess(
-        tag, evaluation.profile, pipe, prepared.fluid, service=prepared.facts
-    )
+    beside = line.assess(tag, evaluation.profile, pipe, prepared.fluid, service=prepared.facts)
     findings.extend(beside.findings)
     return replace(
         evaluation,
