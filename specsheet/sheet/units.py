@@ -86,7 +86,9 @@ class Units:
         sizes = [abs(value) for value in values]
         if kind in self._stated:
             stated = self._stated[kind]
-            return shown if shown and _silly(kind, stated, sizes) else stated
+            # bar for a margin, MPa for a stress: the term's step of the ladder that the job is on
+            own = shown and (stated in LADDERS.get(kind, ()) or _silly(kind, stated, sizes))
+            return shown if own else stated
         if shown:
             return shown
         if kind in self._typed:

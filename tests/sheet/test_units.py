@@ -22,6 +22,24 @@ def test_the_job_decides_first() -> None:
     assert Units(tag("t/h", mass_flow="lb/h")).pick("mass_flow", [1e6]) == "lb/h"
 
 
+@pytest.mark.parametrize(
+    ("stated", "shown", "si", "unit"),
+    [
+        ("mbar", "MPa", 40e6, "MPa"),  # a stress in the plate
+        ("mbar", "MPa", 1e5, "MPa"),
+        ("mbar", "Pa", 1500.0, "Pa"),  # a momentum flux
+        ("psi", "bar", 3e5, "psi"),  # a job that thinks in psi
+        ("psi", "Pa", 20.0, "Pa"),  # unless it would be silly there
+        ("mbar", "", 3e5, "mbar"),
+    ],
+)
+def test_a_term_keeps_its_own_unit_where_the_job_names_another_of_that_ladder(
+    stated: str, shown: str, si: float, unit: str
+) -> None:
+    units = Units(tag(pressure_difference=stated))
+    assert units.pick("pressure_difference", [si], shown) == unit
+
+
 def test_then_the_unit_typed() -> None:
     assert Units(tag("t/h")).pick("mass_flow", [0.001]) == "t/h"
 
