@@ -187,6 +187,29 @@ def test_wet_gas_example():
     assert over == pytest.approx(1.23552, rel=1e-5)
 
 
+#: over-readings at X = 0.1, 50 and 800 kg/m3, Frg = 2, by older correlations (both from memory)
+DE_LEEUW = 1.185309  # De Leeuw (1997), a Venturi tube of β = 0.4: n = 0.606 (1 - e^(-0.746 Frg))
+MURDOCK = 1.126  # Murdock (1962), an orifice plate: 1 + 1.26 X
+
+
+def test_wet_venturi_stands_near_de_leeuw():
+    """Two fits of the same effect: within 3 %, the uncertainty stated of either."""
+    over = iso11583.over_reading(
+        lockhart_martinelli=0.1,
+        froude_number=2.0,
+        diameter_ratio=0.4,
+        liquid_factor=1.0,
+        **EXAMPLE,
+    )
+    assert over == pytest.approx(DE_LEEUW, rel=0.03)
+
+
+def test_wet_plate_stands_near_murdock():
+    """Two fits of the same effect: within 3 %, the uncertainty taken for a plate."""
+    over = iso11583.plate_over_reading(lockhart_martinelli=0.1, froude_number=2.0, **EXAMPLE)
+    assert over == pytest.approx(MURDOCK, rel=0.03)
+
+
 def test_dry_gas_does_not_over_read():
     x, over, coefficient = _wet(liquid_ratio=0.0)
     assert x == 0.0
