@@ -69,15 +69,24 @@ def _refusals(stated: Mapping[str, float | str]) -> tuple[Finding, ...]:
     for text, value in stated.items():
         if names.find(text) is None:
             near = names.nearest(text)
-            hint = f" Did you mean {' or '.join(near)}?" if near else ""
-            message = f"No substance is called {text!r}.{hint}"
+            hint = f"Did you mean {' or '.join(near)}?" if near else "Check the spelling."
+            message = (
+                f"A substance was wanted, {text!r} names none. {hint} A formula or CAS number "
+                "will do too."
+            )
             found.append(stop("substance-unknown", f"{_FIELD}.{text}", message))
         number = float(value) if isinstance(value, (int, float)) else math.nan
         if not 0.0 <= number <= 1e6:  # NaN fails too; percentages are caught by the sum
-            message = f"A fraction from 0 to 1 was wanted for {text!r}, {value} came."
+            message = f"A fraction from 0 to 1 was wanted for {text!r}, {value} came: correct it."
             found.append(stop("fraction-range", f"{_FIELD}.{text}", message))
     if not found and sum(float(value) for value in stated.values()) <= 0.0:
-        found.append(stop("fractions-sum", _FIELD, "All fractions are zero."))
+        found.append(
+            stop(
+                "fractions-sum",
+                _FIELD,
+                "Fractions that sum to 1 were wanted, all of them are zero: state them.",
+            )
+        )
     return tuple(found)
 
 

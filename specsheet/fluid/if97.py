@@ -115,7 +115,8 @@ def check_limits(temperature: float, pressure: float) -> None:
             stop(
                 "fluid-limit",
                 "temperature",
-                f"Steam is described up to 2000 °C; {celsius(temperature)} came.",
+                f"Steam is described up to 2000 °C; {celsius(temperature)} came. Check the "
+                "temperature, or state density and viscosity at each point.",
                 SOURCE,
             )
         )
@@ -126,7 +127,8 @@ def check_limits(temperature: float, pressure: float) -> None:
                 "fluid-limit",
                 "pressure",
                 f"Water at {celsius(temperature)} is described up to {bar(highest)}; "
-                f"{bar(pressure)} came.",
+                f"{bar(pressure)} came. Check the pressure, or state density and viscosity at each "
+                "point.",
                 SOURCE,
             )
         )

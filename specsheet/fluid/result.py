@@ -43,7 +43,7 @@ def derive(tag: Tag) -> FluidResult:
     with LOCK:
         constants = base_values.constants(tag, fluid)
         points, findings = _points(tag, fluid, constants)
-        bases, base_findings = _bases(tag, fluid)
+        bases, base_findings = _bases(tag, fluid, findings)
     missing = gaps.unknown(name or fluid.name, points, findings)
     return FluidResult(
         name or fluid.name,
@@ -140,15 +140,24 @@ def _at(point: Point, finding: Finding) -> Finding:
     return replace(finding, field=field, point=point.name)
 
 
-def _bases(tag: Tag, fluid: Fluid) -> tuple[Mapping[Base, State], tuple[Finding, ...]]:
+def _bases(
+    tag: Tag, fluid: Fluid, at_points: tuple[Finding, ...]
+) -> tuple[Mapping[Base, State], tuple[Finding, ...]]:
+    """Return the state at each base, and what is said of it that no point has said already."""
     bases: dict[Base, State] = {}
     findings: list[tuple[Base, Finding]] = []
     for base in base_values.bases_of(tag):
         outcome = evaluate.base(fluid, base)
         found, said = base_values.apply(tag, fluid, base, outcome)
         bases[base] = replace(found, findings=said)
-        findings += [(base, item) for item in said]
+        findings += [(base, item) for item in said if not _repeated(item, at_points)]
     return bases, repeats.over_bases(findings)
+
+
+def _repeated(finding: Finding, others: tuple[Finding, ...]) -> bool:
+    return any(
+        item.code == finding.code and item.message.startswith(finding.message) for item in others
+    )
 
 
 def _sorted(findings: tuple[Finding, ...]) -> tuple[Finding, ...]:

@@ -53,6 +53,12 @@ def test_two_base_conditions_are_one_finding() -> None:
     assert "(15 °C, 101.325 kPa; 0 °C, 101.325 kPa" in finding(result, "base-hypothetical").message
 
 
+def test_a_base_condition_does_not_repeat_what_stops_the_points() -> None:
+    text = 'kind = "seawater"\nsalinity = "40 %"\nphase = "liquid"'
+    result = fluid.derive(tag(text, point("3 bar(g)", "20 degC")))
+    assert codes(result) == ["concentration-limit"]
+
+
 def test_what_no_method_gives_is_said() -> None:
     text = 'kind = "solution"\nsolute = "NaOH"\nmass_fraction = "30 %"\nphase = "liquid"'
     result = fluid.derive(tag(text, point("3 bar(g)", "20 degC")))
