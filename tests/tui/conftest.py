@@ -185,6 +185,11 @@ def screen_text(app: object) -> str:
     return "\n".join(lines) + "\n"
 
 
+def words(app: object) -> str:
+    """Return the words on the screen in one line: where they wrap, a path decides."""
+    return " ".join(screen_text(app).split())
+
+
 async def until(pilot: object, holds: Callable[[], bool], timeout: float = 5.0) -> None:
     """Let the application work until ``holds``; fail with the screen after ``timeout`` seconds."""
     end = time.monotonic() + timeout

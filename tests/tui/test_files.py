@@ -12,7 +12,7 @@ from specsheet.tui.app import FormApp
 from specsheet.tui.browse_screen import BrowseScreen
 from specsheet.tui.form_screen import FormScreen
 from specsheet.tui.leftovers import survey
-from tests.tui.conftest import AtOnce, screen_text, send, until
+from tests.tui.conftest import AtOnce, screen_text, send, until, words
 from tests.tui.driving import at, drive, form_of, ready
 
 
@@ -113,10 +113,10 @@ def test_a_folder_lists_its_tags_opens_one_and_comes_back(
 
     async def play(app: FormApp, pilot: object) -> None:
         await until(pilot, lambda: "Cooling water return" in screen_text(app))
-        assert "2 tags" in screen_text(app)
+        await until(pilot, lambda: "2 tags" in screen_text(app))
         assert "broken.toml" in screen_text(app)
         await send(pilot, "enter")
-        await until(pilot, lambda: "is not valid" in screen_text(app))
+        await until(pilot, lambda: "is not valid" in words(app))
         await send(pilot, "escape")
         await until(pilot, lambda: isinstance(app.screen, BrowseScreen))
         await send(pilot, "end", "enter")
@@ -135,7 +135,7 @@ def test_a_new_tag_is_begun_from_the_list(tag_file: Path, evaluator: AtOnce) -> 
         await until(pilot, lambda: isinstance(app.screen, dialogs.Pick))
         await send(pilot, *"vortex", "enter")
         await until(pilot, lambda: isinstance(app.screen, FormScreen) and ready(app))
-        assert "new file" in screen_text(app)
+        await until(pilot, lambda: "new file" in screen_text(app))
         await send(pilot, "ctrl+s")
         path = tag_file.with_name("FT-77.toml")
         await until(pilot, path.exists)
@@ -157,7 +157,7 @@ def test_a_file_that_cannot_be_read_leads_to_the_list(tag_file: Path, evaluator:
     tag_file.write_text("tag = \n")
 
     async def play(app: FormApp, pilot: object) -> None:
-        await until(pilot, lambda: "is not valid" in screen_text(app))
+        await until(pilot, lambda: "is not valid" in words(app))
 
     drive(tag_file, evaluator, play)
 
