@@ -10,9 +10,9 @@ import numpy as np
 
 from specsheet.evaluate.model import Model
 from specsheet.evaluate.reserve import (
+    EVEN,
     FACTORS,
     NO_FLIPS,
-    STRAIGHT,
     Bounds,
     Flips,
     find_flips,
@@ -51,7 +51,7 @@ def check_limits(
     limits: Sequence[Limit],
     values: Mapping[str, Array],
     grid: Mapping[str, Array] | None,
-    straightness: float = STRAIGHT,
+    evenness: float = EVEN,
 ) -> Checked:
     """Check every limit at every operating point.
 
@@ -61,12 +61,10 @@ def check_limits(
         limits: the limits that apply.
         values: response at the operating points, shape (n,).
         grid: response over :func:`specsheet.evaluate.reserve.scaled`; None for no reserves.
-        straightness: as in :func:`specsheet.evaluate.reserve.find_flips`.
+        evenness: as in :func:`specsheet.evaluate.reserve.find_flips`.
     """
     driven = [limit for limit in limits if _driven_by_flow(limit, values)]
-    flips = (
-        NO_FLIPS if grid is None else find_flips(model, request.stream, driven, grid, straightness)
-    )
+    flips = NO_FLIPS if grid is None else find_flips(model, request.stream, driven, grid, evenness)
     crossings = _by_limit(flips, len(driven))
     checks: list[Check] = []
     findings: list[Finding] = []

@@ -18,11 +18,19 @@ from specsheet.meters.family import Array, Limit, Stream
 #: flow factors that the search looks at; 1 is among them
 FACTORS = np.geomspace(0.01, 100.0, 81)
 _LOGS = np.log(FACTORS)
-#: share of a step by which a margin may leave the straight line and be read off the grid: within
-#: 0.01 % of the closed-in flow then, as measured over the demo job
-STRAIGHT = 0.01
+#: share of a step by which two readings off the grid may differ and still be trusted: within
+#: 0.05 % of the closed-in flow then, as measured over the demo job
+EVEN = 0.001
+#: a value that rises over a step so much more than over those beside it jumps there
+_STEEP = 1.5
 #: points of the grid around a crossing, in steps from the one before it
-_AROUND = np.arange(-1, 3)
+_AROUND = np.arange(-2.0, 4.0)
+#: values at those points -> coefficients, in powers of the step, of the polynomial through all of
+#: them, and of the one through the inner four
+_POWERS = np.arange(6.0)
+_THROUGH_ALL = np.linalg.inv(np.vander(_AROUND, increasing=True)).T
+_THROUGH_INNER = np.zeros((6, 6))
+_THROUGH_INNER[1:5, :4] = np.linalg.inv(np.vander(_AROUND[1:5], increasing=True)).T
 #: twenty cuts narrow a step of the grid to 0.55 %, within which a value that follows a power of the
 #: flow is interpolated exactly, and a sum of powers to 1e-6
 _CUTS = np.linspace(0.0, 1.0, 22)[1:-1]
@@ -93,19 +101,6 @@ class Bounds:
         clipped = np.minimum(np.maximum(inside, -1e9), 1e9)
         return np.asarray(np.where(np.isnan(values), -1.0, clipped))
 
-    def straightened(self, margins: Array) -> Array:
-        """Return margins, shape (k, m), as logarithms of value by bound where that is sensible.
-
-        So it is where one bound decides and is no zero: a power of the flow is a straight line
-        over the logarithm of the flow there.
-        """
-        sign = np.where(np.isinf(self.high) & (self.low > 0.0), 1.0, 0.0)
-        sign = np.where(np.isinf(self.low) & (self.high > 0.0), -1.0, sign)
-        with np.errstate(all="ignore"):
-            straight = sign * np.log1p(sign * margins)
-        usable = (sign != 0.0) & np.isfinite(straight).all(axis=1, keepdims=True)
-        return np.asarray(np.where(usable, straight, margins))
-
 
 def margin(limit: Limit, values: Array) -> Array:
     """Return the margins of one limit, shape (n,) as ``values``; see :meth:`Bounds.margins`."""
@@ -134,20 +129,20 @@ def find_flips(
     stream: Stream,
     limits: Sequence[Limit],
     grid: Mapping[str, Array],
-    straightness: float = STRAIGHT,
+    evenness: float = EVEN,
 ) -> Flips:
     """Return all crossings of all limits at all points.
 
-    A crossing is read off the grid where the margin runs straight through it, and closed in on
-    with the model elsewhere.
+    A crossing is read off the grid where the value runs smoothly through its bound, and closed in
+    on with the model elsewhere.
 
     Args:
         model: the meter.
         stream: the operating points, n of them.
         limits: limits driven by the flow.
         grid: response over :func:`scaled`.
-        straightness: share of a step of the grid by which the margin may leave the straight
-            line around a crossing and still be read off the grid.
+        evenness: share of a step of the grid by which two readings of a crossing may differ and
+            still be trusted.
     """
     if not limits:
         return NO_FLIPS
@@ -159,50 +154,106 @@ def find_flips(
     of_limit, of_point, of_step = np.nonzero(holds[..., 1:] != holds[..., :-1])
     if not of_limit.size:
         return NO_FLIPS
-    own = bounds.take(of_limit)
-    factor, smooth = _interpolated(own, margins[of_limit, of_point], of_step, straightness)
+    table = values.reshape(holds.shape)[of_limit, of_point]
+    rising = holds[of_limit, of_point, of_step + 1]
+    edges = _Edges.of(bounds.take(of_limit), table, of_step + ~rising)
+    factor, smooth = _read(edges, table, of_step, evenness)
     rest = np.flatnonzero(~smooth)
     if rest.size:
         search = _Search(
             model,
             stream.take(np.repeat(points[of_point[rest]], _CUTS.size)),
-            own.take(rest),
+            edges.take(rest),
             [limits[index].key for index in of_limit[rest].tolist()],
         )
-        steps, rows = of_step[rest], margins[of_limit[rest], of_point[rest]]
-        lanes = np.arange(rest.size)
-        factor[rest] = search.close_in(
-            (_LOGS[steps], _LOGS[steps + 1]), (rows[lanes, steps], rows[lanes, steps + 1])
-        )
-    rising = holds[of_limit, of_point, of_step + 1]
+        factor[rest] = search.close_in(table[rest], of_step[rest])
     found = Flips(of_limit, points[of_point], factor, rising)
     return found if points.size == stream.mass_flow.size else _seen_from_all(found, stream)
 
 
-def _interpolated(
-    bounds: Bounds, margins: Array, steps: NDArray[np.intp], straightness: float
+@dataclass(frozen=True)
+class _Edges:
+    """The bound that each of k crossings goes over, as columns of shape (k, 1).
+
+    Attributes:
+        bound: the bound.
+        sense: 1 for a lower bound, -1 for an upper one.
+    """
+
+    bound: Array
+    sense: Array
+
+    @classmethod
+    def of(cls, bounds: Bounds, values: Array, outside: NDArray[np.intp]) -> _Edges:
+        """Return the bounds gone over.
+
+        Args:
+            bounds: bounds of the limit of each crossing.
+            values: values over the grid, shape (k, len(FACTORS)).
+            outside: place on the grid, beside each crossing, where the limit does not hold.
+        """
+        beyond = values[np.arange(outside.size), outside][:, None]
+        over = (beyond > bounds.high) | np.isnan(beyond) & np.isinf(bounds.low)
+        return cls(np.where(over, bounds.high, bounds.low), np.where(over, -1.0, 1.0))
+
+    def take(self, rows: NDArray[np.intp]) -> _Edges:
+        """Return the bounds of the chosen crossings."""
+        return _Edges(self.bound[rows], self.sense[rows])
+
+    def distance(self, values: Array) -> Array:
+        """Return how far inside the bound each value is, shape (k, m) as ``values``.
+
+        The logarithm of value by bound where there is one, since a power of the flow is a straight
+        line over the logarithm of the flow there; else the difference. NaN is outside by one.
+        """
+        unknown = np.isnan(values)
+        powers = (self.bound > 0.0) & ((values > 0.0) | unknown).all(axis=1, keepdims=True)
+        with np.errstate(all="ignore"):
+            inside = np.where(powers, np.log(values / self.bound), values - self.bound)
+        return np.asarray(np.where(unknown, -1.0, self.sense * inside))
+
+
+def _read(
+    edges: _Edges, values: Array, steps: NDArray[np.intp], evenness: float
 ) -> tuple[Array, NDArray[np.bool_]]:
     """Return the factors read off the grid for k crossings, and which of them can be trusted.
 
-    A cubic through the two points before and the two behind a crossing gives it; where it leaves
-    the straight line by little, the margin is smooth there.
+    The crossing of the polynomial through the three points before and the three behind it; where
+    the one through the inner four crosses elsewhere, the value is not smooth there. Where it jumps
+    they may agree, so its rise is compared with those beside it too.
 
     Args:
-        bounds: bounds of the limit of each crossing.
-        margins: margins over all factors for each crossing, shape (k, len(FACTORS)).
+        edges: the bound of each crossing.
+        values: values over the grid, shape (k, len(FACTORS)).
         steps: step of the grid in which each crossing lies.
-        straightness: as in :func:`find_flips`.
+        evenness: as in :func:`find_flips`.
     """
-    places = np.clip(steps[:, None] + _AROUND, 0, FACTORS.size - 1)
-    near = bounds.straightened(margins[np.arange(steps.size)[:, None], places])
+    middle = np.clip(steps, 2, FACTORS.size - 4)  # six points even at the ends of the grid
+    near = values[np.arange(steps.size)[:, None], middle[:, None] + _AROUND.astype(np.intp)]
+    inside = edges.distance(near)
     with np.errstate(all="ignore"):
-        straight = near[:, 1] / (near[:, 1] - near[:, 2])
-        cubic = np.zeros(steps.size)  # Lagrange, the factor over the margin
-        for place, own in zip(_AROUND, near.T, strict=True):
-            others = near[:, place != _AROUND]
-            cubic += place * np.prod(others / (others - own[:, None]), axis=1)
-        smooth = np.abs(cubic - straight) <= straightness
-        return np.exp(_LOGS[steps] + cubic * (_LOGS[1] - _LOGS[0])), smooth
+        start = inside[:, 2] / (inside[:, 2] - inside[:, 3])
+        inner = _root(inside @ _THROUGH_INNER, start)
+        place = _root(inside @ _THROUGH_ALL, inner)
+        smooth = (np.abs(place - inner) <= evenness) & ~np.isnan(near).any(axis=1)
+        rises = np.abs(np.diff(inside[:, 1:5]))
+        smooth &= rises[:, 1] <= _STEEP * np.minimum(rises[:, 0], rises[:, 2])
+        return np.exp(_LOGS[middle] + place * (_LOGS[1] - _LOGS[0])), smooth
+
+
+def _root(coefficients: Array, start: Array) -> Array:
+    """Return a root of each of k polynomials, by Newton's method.
+
+    Args:
+        coefficients: rising powers, shape (k, 6).
+        start: places near the roots, shape (k,).
+    """
+    place = start
+    for _ in range(3):
+        powers = place[:, None] ** _POWERS
+        rise = (coefficients[:, 1:] * powers[:, :-1]) @ _POWERS[1:]
+        place = place - (coefficients * powers).sum(axis=1) / rise
+    return place
 
 
 def _seen_from_all(flips: Flips, stream: Stream) -> Flips:
@@ -225,43 +276,50 @@ class _Search:
     Attributes:
         model: the meter.
         conditions: the point of each bracket, once for each cut, k * len(_CUTS) lanes.
-        bounds: bounds of the limit of each bracket.
+        edges: the bound gone over in each bracket.
         keys: glossary key of the limit of each bracket.
     """
 
     model: Model
     conditions: Stream
-    bounds: Bounds
+    edges: _Edges
     keys: Sequence[str]
 
-    def close_in(self, bracket: tuple[Array, Array], ends: tuple[Array, Array]) -> Array:
-        """Narrow each bracket (logarithms of the factor) by cuts; return the factors.
+    def close_in(self, values: Array, steps: NDArray[np.intp]) -> Array:
+        """Narrow each bracket by cuts; return the factors.
 
         Cuts instead of interpolation, since some values jump (an error that steps up below a
         Reynolds number) and a jump defeats interpolation.
+
+        Args:
+            values: values over the grid, shape (k, len(FACTORS)).
+            steps: step of the grid in which each crossing lies.
         """
-        (low, high), (at_low, at_high) = bracket, ends
-        rows = np.arange(low.size)
+        rows = np.arange(steps.size)
+        low, high = _LOGS[steps], _LOGS[steps + 1]
+        at_low, at_high = values[rows, steps], values[rows, steps + 1]
         for _ in range(_ROUNDS):
             cuts = low[:, None] + (high - low)[:, None] * _CUTS
+            table = np.column_stack([at_low, self._values(cuts), at_high])
+            inside = self.edges.distance(table)
+            flips = (inside[:, 1:] >= 0.0) != (inside[:, :1] >= 0.0)
+            step = np.argmax(flips, axis=1)
             edges = np.column_stack([low, cuts, high])
-            margins = np.column_stack([at_low, self._margins(cuts), at_high])
-            step = np.argmax((margins[:, 1:] >= 0.0) != (margins[:, :1] >= 0.0), axis=1)
-            even = np.abs(at_high - at_low) / (_CUTS.size + 1)
+            even = np.abs(inside[:, -1] - inside[:, 0]) / (_CUTS.size + 1)
             low, high = edges[rows, step], edges[rows, step + 1]
-            at_low, at_high = margins[rows, step], margins[rows, step + 1]
-            jumps = np.abs(at_high - at_low) > _JUMP * even
-            kinks = (np.abs(at_low) < _FLAT) | (np.abs(at_high) < _FLAT)
+            at_low, at_high = table[rows, step], table[rows, step + 1]
+            before, behind = inside[rows, step], inside[rows, step + 1]
+            jumps = np.abs(behind - before) > _JUMP * even
+            kinks = (np.abs(before) < _FLAT) | (np.abs(behind) < _FLAT)
             if not (jumps | kinks).any():
                 break
-        at_low, at_high = self.bounds.straightened(np.column_stack([at_low, at_high])).T
-        return np.asarray(np.exp(low - at_low * (high - low) / (at_high - at_low)))
+        return np.asarray(np.exp(low - before * (high - low) / (behind - before)))
 
-    def _margins(self, cuts: Array) -> Array:
-        """Return the margins at the cuts, shape (k, len(_CUTS))."""
+    def _values(self, cuts: Array) -> Array:
+        """Return the values at the cuts, shape (k, len(_CUTS))."""
         lanes = self.conditions.with_flow(self.conditions.mass_flow * np.exp(cuts.ravel()))
         values = self.model(lanes).values
         distinct = {key: place for place, key in enumerate(dict.fromkeys(self.keys))}
         table = np.array([values[key] for key in distinct]).reshape(-1, *cuts.shape)
         own = np.array([distinct[key] for key in self.keys])
-        return self.bounds.margins(table[own, np.arange(own.size)])
+        return np.asarray(table[own, np.arange(own.size)])

@@ -39,9 +39,9 @@ _OF_LINE = ("line-velocity-high", "line-velocity-low")
 _OF_FLANGES = ("rating-exceeded", "rating-temperature")
 #: uncertainties that part good from fair and poor [-]; common practice
 _CLASSES = (0.01, 0.02, 0.05)
-#: how straight a margin must run for its crossing to be read off the grid: within 0.3 % or so,
+#: how even a margin must run for its crossing to be read off the grid: within 0.3 % or so,
 #: which ranks families as well as an exact one
-_STRAIGHT_ENOUGH = 0.2
+_EVEN_ENOUGH = 0.03
 _RANK = {Level.STOP: 0, Level.CAUTION: 1, Level.NOTE: 2}
 
 
@@ -206,9 +206,7 @@ def _sized(
         limit for limit in limits_of(family, element, request) if limit.code not in _OF_LINE
     )
     stopped = _stops((*said, *element.findings)) or _breaks_stop(limits, values)
-    checked = check_limits(
-        request, model, limits, values, None if stopped else grid, _STRAIGHT_ENOUGH
-    )
+    checked = check_limits(request, model, limits, values, None if stopped else grid, _EVEN_ENOUGH)
     totals = summarise(request, values, checked.bands)
     short = () if stopped else check_turndown(request, totals)
     findings = (*said, *element.findings, *runs.findings, *checked.findings, *short)
