@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Mapping
 from dataclasses import dataclass, field
 from datetime import date
+from functools import cached_property
 from types import MappingProxyType
 
 from specsheet.findings import Origin
@@ -108,22 +109,22 @@ class Tag:
             return quantity.value + self.atmospheric_pressure
         return quantity.value
 
-    @property
+    @cached_property
     def name(self) -> str:
         """The tag number."""
         return self.text("tag")
 
-    @property
+    @cached_property
     def family(self) -> str:
         """Key of the meter family."""
         return self.text("family")
 
-    @property
+    @cached_property
     def phase(self) -> str:
         """The phase stated: "liquid" or "gas"."""
         return self.text("fluid.phase")
 
-    @property
+    @cached_property
     def atmospheric_pressure(self) -> float:
         """Pressure of the atmosphere at the site [Pa]: stated, else from the altitude.
 
@@ -137,7 +138,7 @@ class Tag:
         stated = self.quantity("job.atmospheric_pressure")
         return 101325.0 if stated is None else stated.value
 
-    @property
+    @cached_property
     def base(self) -> Base:
         """The job's own base condition."""
         temperature = self.quantity("job.base.temperature")
