@@ -3,8 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterable, Mapping
-
-import numpy as np
+from math import isnan
 
 from specsheet.evaluate.flows import calorific_value_by_mass, density_at_base
 from specsheet.evaluate.result import BudgetLine, PointResult, Result
@@ -31,33 +30,32 @@ def point_results(
     derivations: Mapping[str, Derivation],
 ) -> tuple[PointResult, ...]:
     """Return the values at every operating point of the tag, evaluated or not."""
+    lanes = derived(values, len(points.indices), derivations)
+    of_point = dict(zip(points.indices, lanes, strict=True))
     results: list[PointResult] = []
     for index, point in enumerate(tag.points):
-        row = _conditions(tag, point, fluid.points[index])
-        row.update(_flows(tag, fluid, point, points.mass_flows[index], fluid.points[index]))
-        if index in points.indices:
-            lane = points.indices.index(index)
-            for key, result in derived_at(values, lane, derivations).items():
-                row.setdefault(key, result)
+        state = fluid.points[index]
+        row = _conditions(tag, point, state)
+        row.update(_flows(tag, fluid, point, points.mass_flows[index], state))
+        for key, result in of_point.get(index, {}).items():
+            row.setdefault(key, result)
         results.append(PointResult(point.name, row))
     return tuple(results)
 
 
-def derived_at(
-    values: Mapping[str, Array], lane: int, derivations: Mapping[str, Derivation]
-) -> dict[str, Result]:
-    """Return what is known at one lane of a response, by glossary key."""
-    return {
-        key: _derived(float(array[lane]), derivations.get(key))
-        for key, array in values.items()
-        if not np.isnan(array[lane])
-    }
-
-
-def _derived(value: float, derivation: Derivation | None) -> Result:
-    if derivation is None:
-        return Result(value, Origin.DERIVED)
-    return Result(value, derivation.origin, derivation.source)
+def derived(
+    values: Mapping[str, Array], count: int, derivations: Mapping[str, Derivation]
+) -> tuple[dict[str, Result], ...]:
+    """Return what is known at each of the first ``count`` lanes of a response, by glossary key."""
+    lanes: tuple[dict[str, Result], ...] = tuple({} for _ in range(count))
+    for key, array in values.items():
+        derivation = derivations.get(key)
+        origin = Origin.DERIVED if derivation is None else derivation.origin
+        source = "" if derivation is None else derivation.source
+        for lane, value in zip(lanes, array.tolist(), strict=False):
+            if not isnan(value):
+                lane[key] = Result(value, origin, source)
+    return lanes
 
 
 def _conditions(tag: Tag, point: Point, state: State | None) -> dict[str, Result]:
@@ -143,7 +141,7 @@ def budget_lines(contributions: Iterable[Contribution], count: int) -> tuple[Bud
         BudgetLine(
             item.key,
             item.label,
-            tuple(float(share) for share in item.relative[:count]),
+            tuple(item.relative[:count].tolist()),
             item.origin,
             item.source,
         )

@@ -199,12 +199,13 @@ def _points(
     states: Sequence[int] = [
         prepared.points.indices[prepared.points.names.index(name)] for name in request.names
     ]
+    derived = assemble.derived(values, len(request.names), by_key)
     made = []
     for lane, name in enumerate(request.names):
         flow = float(request.stream.mass_flow[lane])
         row = assemble.flows_of(tag, fluid, flow, fluid.points[states[lane]])
         row["volume_flow"] = Result(float(request.stream.volume_flow[lane]), Origin.DERIVED)
-        row |= assemble.derived_at(values, lane, by_key)
+        row |= derived[lane]
         row[signal.key] = Result(float(values[signal.key][lane]), Origin.GIVEN, text=signal.shown)
         made.append(PointResult(name, row))
     return tuple(made)
