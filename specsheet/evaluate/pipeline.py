@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Iterable, Mapping
 from dataclasses import replace
+from math import log
 
 import numpy as np
 
@@ -21,12 +22,12 @@ from specsheet.evaluate.reserve import scaled
 from specsheet.evaluate.result import Evaluation, Result, Sweep
 from specsheet.evaluate.service import judge_habits, judge_service
 from specsheet.evaluate.state import phase_checks, rating_checks
-from specsheet.evaluate.stream import joined
+from specsheet.evaluate.stream import Lanes, with_lanes
 from specsheet.findings import Finding, Level
 from specsheet.fluid.state import FluidResult
 from specsheet.line import LineResult
 from specsheet.meters import registry
-from specsheet.meters.family import Element, Family, Given, Request, Stream
+from specsheet.meters.family import Element, Family, Given, Request
 from specsheet.packs import Profile
 from specsheet.tag import Tag
 
@@ -94,8 +95,7 @@ def _with_meter(
     beside, model = put_into_line(prepared, request, family, element)
     stream, count = request.stream, len(request.names)
     swept = _swept(request, element)
-    grid = scaled(stream)
-    response = model(joined(stream, swept, grid))
+    response = model(with_lanes(stream, swept, scaled(stream)))
     at_points = {key: values[:count] for key, values in response.values.items()}
     in_sweep = {
         key: values[count : count + _SWEEP_LANES] for key, values in response.values.items()
@@ -163,13 +163,13 @@ def _number(element: Element, key: str) -> float | None:
     return None if found is None or isinstance(found.value, str) else found.value
 
 
-def _swept(request: Request, element: Element) -> Stream:
+def _swept(request: Request, element: Element) -> Lanes:
     """Return the range at the conditions of the normal point, from below to above it."""
     flows = request.stream.mass_flow
     highest = max(float(flows.max()), _number(element, "upper_range_flow") or 0.0)
-    range_ = np.geomspace(0.3 * float(flows.min()), 1.3 * highest, _SWEEP_LANES)
-    lanes = request.stream.take(np.full(_SWEEP_LANES, request.normal))
-    return lanes.with_flow(range_)
+    ends = log(0.3 * float(flows.min())), log(1.3 * highest)
+    points = np.full(_SWEEP_LANES, request.normal)
+    return Lanes(points, np.exp(np.linspace(*ends, _SWEEP_LANES)))
 
 
 def _base(tag: Tag, state: FluidResult) -> dict[str, Result]:

@@ -13,6 +13,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from specsheet.evaluate.model import Model
+from specsheet.evaluate.stream import Lanes
 from specsheet.meters.family import Array, Limit, Stream
 
 #: flow factors that the search looks at; 1 is among them
@@ -117,11 +118,11 @@ def looked_at(stream: Stream) -> NDArray[np.intp]:
     return order[order.size // 2 :][:1] if stream.alike else np.arange(order.size)
 
 
-def scaled(stream: Stream) -> Stream:
+def scaled(stream: Stream) -> Lanes:
     """Return the points of :func:`looked_at` at every factor: m points give m * len(FACTORS)."""
-    points = looked_at(stream)
-    lanes = stream.take(np.repeat(points, FACTORS.size))
-    return lanes.with_flow(lanes.mass_flow * np.tile(FACTORS, points.size))
+    points = np.repeat(looked_at(stream), FACTORS.size)
+    flows = stream.mass_flow[points].reshape(-1, FACTORS.size) * FACTORS
+    return Lanes(points, flows.ravel())
 
 
 def find_flips(

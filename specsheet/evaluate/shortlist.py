@@ -23,7 +23,7 @@ from specsheet.evaluate.remarks import remarks
 from specsheet.evaluate.reserve import margin, scaled
 from specsheet.evaluate.result import Result
 from specsheet.evaluate.service import Service, judge_habits, judge_service
-from specsheet.evaluate.stream import joined
+from specsheet.evaluate.stream import with_lanes
 from specsheet.evaluate.summary import check_turndown, summarise
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.line import StraightResult
@@ -198,7 +198,7 @@ def _sized(
     element = family.size(request)
     runs = _runs(request, element)
     model = model_of(request, family, element, runs.additional_uncertainty)
-    every = model(joined(request.stream, scaled(request.stream))).values
+    every = model(with_lanes(request.stream, scaled(request.stream))).values
     count = len(request.names)
     values = {key: found[:count] for key, found in every.items()}
     grid = {key: found[count:] for key, found in every.items()}

@@ -5,11 +5,12 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 import numpy as np
+from numpy.typing import NDArray
 
 from specsheet.evaluate.flows import mass_flow
 from specsheet.findings import Finding, Level
 from specsheet.fluid.state import FluidResult, State
-from specsheet.meters.family import Stream
+from specsheet.meters.family import Array, Stream
 from specsheet.tag import Tag
 
 
@@ -30,6 +31,19 @@ class Points:
     stream: Stream
     mass_flows: tuple[float | None, ...]
     findings: tuple[Finding, ...]
+
+
+@dataclass(frozen=True)
+class Lanes:
+    """Flows at the conditions of operating points; arrays of shape (m,).
+
+    Attributes:
+        points: which point of the stream each flow is at.
+        mass_flow: [kg/s].
+    """
+
+    points: NDArray[np.intp]
+    mass_flow: Array
 
 
 _COLUMNS = (
@@ -102,7 +116,8 @@ def _row(flow: float, state: State, phase: str) -> tuple[float, ...]:
     )
 
 
-def joined(*streams: Stream) -> Stream:
-    """Return the conditions of several streams behind one another."""
-    names = Stream.__dataclass_fields__
-    return Stream(*(np.concatenate([getattr(one, name) for one in streams]) for name in names))
+def with_lanes(stream: Stream, *parts: Lanes) -> Stream:
+    """Return a stream followed by more flows at its own conditions."""
+    places = [np.arange(stream.mass_flow.size), *(part.points for part in parts)]
+    flows = [stream.mass_flow, *(part.mass_flow for part in parts)]
+    return stream.take(np.concatenate(places)).with_flow(np.concatenate(flows))
