@@ -20,7 +20,6 @@ from specsheet.evaluate.reserve import (
 )
 from specsheet.evaluate.result import Band, Check
 from specsheet.evaluate.words import facts
-from specsheet.fields.terms import in_sentence
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.meters.family import Array, Given, Limit, Request
 
@@ -276,7 +275,7 @@ def _band(request: Request, limit: Limit, crossings: Sequence[_Crossing]) -> Ban
     ends = [crossing.factor for crossing in here if not crossing.rising]
     low = flow * min(starts) if starts else None
     high = flow * max(ends) if ends else None
-    return Band(in_sentence(limit.key), low, high, limit.level)
+    return Band(limit.key, limit.low, limit.high, low, high, limit.level)
 
 
 def _tightest_first(bands: list[Band], request: Request) -> list[Band]:

@@ -82,12 +82,15 @@ class Band:
     """One window of flow on the range ruler.
 
     Attributes:
-        label: words ("Reynolds number", "velocity", "Δp range").
+        key: glossary key of the value that the limit bounds.
+        least, most: its bounds [SI], None where there is none.
         low, high: mass flows [kg/s] between which the limit holds; None where it is open.
         level: level of the limit.
     """
 
-    label: str
+    key: str
+    least: float | None
+    most: float | None
     low: float | None
     high: float | None
     level: Level

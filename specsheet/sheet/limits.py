@@ -85,8 +85,11 @@ def reserve(held: Reserve | None, units: Units, axis: FlowAxis, point: str) -> t
 
 
 def percent(fraction: float) -> str:
-    """Return a signed fraction as a percentage of at most two digits ("+32 %")."""
-    return f"{signed(100.0 * fraction)} %"
+    """Return a signed fraction as a percentage of at most two digits ("+32 %").
+
+    Less than a hundred-thousandth is nothing: a limit that stands there was sized to.
+    """
+    return f"{signed(100.0 * fraction)} %" if abs(fraction) >= 1e-5 else "0 %"
 
 
 def signed(value: float) -> str:

@@ -7,6 +7,7 @@ given value is never rounded: it is echoed as typed.
 from __future__ import annotations
 
 import math
+from collections.abc import Sequence
 
 from specsheet.sheet.model import NOTHING
 
@@ -88,6 +89,21 @@ def significant(value: float, count: int = DIGITS) -> str:
     if power < -4 or power >= 9:
         return f"{_minus(mantissa)}·10{_superscript(power)}"
     return group(f"{float(f'{mantissa}e{power}'):.{max(0, count - 1 - power)}f}")
+
+
+def shared_step(key: str, kind: str, values: Sequence[float]) -> float | None:
+    """Return the step that a row of values shares [SI], None where significant digits decide.
+
+    The largest value decides, so that 6.3 does not stand beside 3.222; where the smallest would
+    be printed as nothing, the step is a tenth or a hundredth of the usual one.
+    """
+    sizes = [abs(value) for value in values if math.isfinite(value)]
+    usual = step(key, kind, max(sizes, default=0.0))
+    if usual is None or key in KEY_STEPS:
+        return usual
+    steps = (usual, usual / 10.0, usual / 100.0)
+    least = min(size for size in sizes if size >= steps[-1])
+    return next(size for size in steps if size <= least)
 
 
 def to_step(value: float, smallest: float) -> str:

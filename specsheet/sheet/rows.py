@@ -32,8 +32,12 @@ _STATED = 8
 
 def number(value: float, key: str, kind: str, unit: str) -> str:
     """Return an SI value rounded to significance in ``unit`` (no unit in the text)."""
+    return _rounded(value, key, kind, unit, rounding.step(key, kind, value))
+
+
+def _rounded(value: float, key: str, kind: str, unit: str, smallest: float | None) -> str:
+    """Return an SI value rounded to a step [SI], or to significant digits where there is none."""
     shown = quantity.from_si(value, kind, unit)
-    smallest = rounding.step(key, kind, value)
     if smallest is None:
         return rounding.significant(shown, rounding.digits(key, kind))
     scale_kind = "temperature_difference" if kind == "temperature" else kind
@@ -80,7 +84,9 @@ def of_results(key: str, results: Sequence[Result | None], units: Units, note: s
     else:
         numbers = [r.value for r in present if isinstance(r.value, float | int)]
         internal = unit_of(key, numbers, units) if numbers else ""
-        cells = [_cell_text(result, key, internal) for result in results]
+        smallest = rounding.shared_step(key, kind_of(key), numbers)
+        computed = len(set(numbers)) > 1
+        cells = [_cell_text(result, key, internal, smallest, computed) for result in results]
         unit = units.currency if key == "yearly_cost" else words.unit(internal)
     return Row(
         key=key,
@@ -122,7 +128,19 @@ def origin(result: Result, key: str) -> Origin:
     return Origin.DERIVED if result.origin is Origin.GIVEN and converted else result.origin
 
 
-def _cell_text(result: Result | None, key: str, unit: str) -> str:
+def _cell_text(
+    result: Result | None, key: str, unit: str, smallest: float | None, computed: bool
+) -> str:
+    """Return one cell of a row.
+
+    Args:
+        result: the value, None for none.
+        key: glossary key.
+        unit: unit of the row.
+        smallest: step that the row shares [SI], None where significant digits decide.
+        computed: whether the row changes from point to point: then a typical value is no plain
+            figure of the trade, and is rounded as a derived one.
+    """
     if result is None:
         return NOTHING
     if isinstance(result.value, str):
@@ -131,9 +149,10 @@ def _cell_text(result: Result | None, key: str, unit: str) -> str:
     if echoes(result, key):
         figures, typed_unit = words.split(result.text)
         return figures if typed_unit == words.unit(unit) else f"{figures} {typed_unit}".strip()
-    if origin(result, key) is Origin.DERIVED:
-        return number(float(result.value), key, kind_of(key), unit)
-    digits = _STATED if result.origin is Origin.GIVEN else rounding.DIGITS
+    stated = result.origin is Origin.GIVEN
+    if origin(result, key) is Origin.DERIVED or (computed and not stated):
+        return _rounded(float(result.value), key, kind_of(key), unit, smallest)
+    digits = _STATED if stated else rounding.DIGITS
     return rounding.plain(quantity.from_si(float(result.value), kind_of(key), unit), digits)
 
 

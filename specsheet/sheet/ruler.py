@@ -3,12 +3,15 @@
 from __future__ import annotations
 
 import math
+import re
+from collections import Counter
 from collections.abc import Sequence
 from typing import TYPE_CHECKING
 
-from specsheet.sheet import rounding, words
+from specsheet.sheet import rounding, rows, words
 from specsheet.sheet.axis import FlowAxis, mass_flows
 from specsheet.sheet.model import Mark, Ruler, Tick, Window
+from specsheet.sheet.units import Units
 
 if TYPE_CHECKING:
     from specsheet.evaluate.result import Band, Evaluation
@@ -20,8 +23,11 @@ _REACH = 4.0
 #: a flow this close to the end of a window stands on it (an end solved for the point itself) [-]
 _TOUCH = 1e-6
 
+#: where the short name of a value ends: "Signal", "Reynolds number", "Velocity", "Load"
+_BEYOND_NAME = re.compile(r",| in the | at | by the ")
 
-def build(evaluation: Evaluation, axis: FlowAxis) -> Ruler | None:
+
+def build(evaluation: Evaluation, units: Units, axis: FlowAxis) -> Ruler | None:
     """Return the ruler, None when no operating point has a flow."""
     stated = mass_flows(evaluation)
     if not stated:
@@ -30,7 +36,10 @@ def build(evaluation: Evaluation, axis: FlowAxis) -> Ruler | None:
     flows = {name: flow * axis.factors[name] / axis.factor for name, flow in stated.items()}
     low, high = _ends(list(flows.values()), evaluation.bands)
     span = math.log(high / low)
-    windows = tuple(_window(band, axis, low, high, span) for band in evaluation.bands)
+    windows = tuple(
+        _window(band, label, axis, low, high, span)
+        for band, label in zip(evaluation.bands, _labels(evaluation.bands, units), strict=True)
+    )
     start = max((window.low for window in windows), default=0.0)
     end = min((window.high for window in windows), default=1.0)
     return Ruler(
@@ -76,13 +85,33 @@ def _inside(flow: float, bands: Sequence[Band]) -> bool:
     )
 
 
-def _window(band: Band, axis: FlowAxis, low: float, high: float, span: float) -> Window:
+def _labels(bands: Sequence[Band], units: Units) -> list[str]:
+    """Return what each window is called; the bounds tell two windows of one value apart."""
+    keys = Counter(band.key for band in bands)
+    return [
+        words.label(band.key) if keys[band.key] == 1 else _bounded(band, units) for band in bands
+    ]
+
+
+def _bounded(band: Band, units: Units) -> str:
+    """Return the short name of a value with its bounds: "Signal ≤ 100 %"."""
+    kind = rows.kind_of(band.key)
+    unit = rows.unit_of(band.key, [x for x in (band.least, band.most) if x is not None], units)
+    least, most = (
+        "" if bound is None else rows.bound(bound, kind, unit) for bound in (band.least, band.most)
+    )
+    allowed = f"{least} to {most}" if least and most else f"≥ {least}" if least else f"≤ {most}"
+    name = _BEYOND_NAME.split(words.label(band.key), maxsplit=1)[0]
+    return f"{name} {allowed} {words.unit(unit)}".rstrip()
+
+
+def _window(band: Band, label: str, axis: FlowAxis, low: float, high: float, span: float) -> Window:
     open_low = band.low is None or band.low < low
     open_high = band.high is None or band.high > high
     start = 0.0 if open_low or band.low is None else math.log(band.low / low) / span
     end = 1.0 if open_high or band.high is None else math.log(band.high / low) / span
     return Window(
-        label=words.capital(band.label),
+        label=label,
         low=min(max(start, 0.0), 1.0),
         high=min(max(end, 0.0), 1.0),
         open_low=open_low,

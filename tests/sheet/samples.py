@@ -143,9 +143,9 @@ _CHECKS = (
 )  # fmt: skip
 
 _BANDS = (
-    Band("Δp range", 0.35, 1.16667, Level.CAUTION),
-    Band("velocity", None, 1.0394, Level.CAUTION),
-    Band("Reynolds number", 0.0092, None, Level.STOP),
+    Band("signal_fraction", 0.05, 1.0, 0.35, 1.16667, Level.CAUTION),
+    Band("velocity", None, 14.0, None, 1.0394, Level.CAUTION),
+    Band("reynolds_number", 5000.0, None, 0.0092, None, Level.STOP),
 )
 
 _DERIVATIONS = (

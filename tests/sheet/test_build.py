@@ -9,7 +9,7 @@ from dataclasses import replace
 import pytest
 
 from specsheet import sheet
-from specsheet.evaluate.result import Check, Evaluation, PointResult, Result
+from specsheet.evaluate.result import Band, Check, Evaluation, PointResult, Result
 from specsheet.findings import Level, Origin, Reserve
 from specsheet.quantity.value import Base, Quantity
 from specsheet.sheet.model import Row, Sheet, Table
@@ -337,3 +337,27 @@ def test_cautions_stand_by_themselves(heading: str) -> None:
     assert made.cautions[0] == "Toxic."
     assert len(made.cautions) == 2  # and the standing one
     assert [clause.key for clause in made.clauses] == ["principle"]
+
+
+def test_two_windows_of_one_value_are_told_apart_by_their_bounds() -> None:
+    limits = [
+        ("signal_fraction", None, 1.0),
+        ("signal_fraction", 0.0009, None),
+        ("meter_velocity", 1.0, 4.0),
+        ("meter_velocity", None, 10.0),
+        ("meter_reynolds_number", 20_000.0, None),
+        ("meter_reynolds_number", 5000.0, None),
+        ("mach_number", None, 0.3),
+    ]
+    bands = tuple(Band(key, low, high, 0.1, 2.0, Level.CAUTION) for key, low, high in limits)
+    made = sheet.build(replace(samples.evaluation(), bands=bands))
+    assert made.ruler is not None
+    assert [window.label for window in made.ruler.windows] == [
+        "Signal ≤ 100 %",
+        "Signal ≥ 0.09 %",
+        "Velocity 1 to 4 m/s",
+        "Velocity ≤ 10 m/s",
+        "Reynolds number ≥ 20\u202f000",
+        "Reynolds number ≥ 5000",
+        "Mach number",
+    ]

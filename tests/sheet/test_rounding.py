@@ -6,9 +6,14 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from specsheet.sheet import rounding, rows
+from specsheet.evaluate.result import Result
+from specsheet.findings import Origin
+from specsheet.sheet import limits, rounding, rows
+from specsheet.sheet.units import Units
+from specsheet.tag import Tag
 
 THIN = "\u202f"
+_EMPTY = Tag({})
 
 
 @pytest.mark.parametrize(
@@ -84,6 +89,37 @@ def test_each_kind_has_its_own_significance(
     key: str, si: float, kind: str, unit: str, text: str
 ) -> None:
     assert rows.number(si, key, kind, unit) == text
+
+
+@pytest.mark.parametrize(
+    ("key", "values", "origin", "cells"),
+    [
+        # condensate close to boiling: a tenth of a kelvin is what the temperatures are good for
+        ("saturation_margin", (6.3, 3.2218, 2.0823), Origin.DERIVED, ("6.3", "3.2", "2.1")),
+        ("saturation_margin", (0.0, 14.6, 9.0), Origin.DERIVED, ("0.0", "14.6", "9.0")),
+        ("saturation_margin", (0.0, 0.0), Origin.DERIVED, ("0", "0")),
+        # nothing that is there is printed as nothing
+        ("saturation_margin", (14.61, 0.043), Origin.DERIVED, ("14.61", "0.04")),
+        ("saturation_margin", (0.9298, 0.9366), Origin.DERIVED, ("0.9298", "0.9366")),
+        # a typical value that changes from point to point is computed: no more digits than derived
+        ("saturation_margin", (87.333, 130.98), Origin.TYPICAL, ("87.3", "131.0")),
+        ("discharge_coefficient", (0.99, 0.99), Origin.TYPICAL, ("0.99", "0.99")),
+        ("reynolds_number", (1234.5, 987.65), Origin.DERIVED, ("1230", "988")),
+    ],
+)
+def test_one_row_has_even_digits(
+    key: str, values: tuple[float, ...], origin: Origin, cells: tuple[str, ...]
+) -> None:
+    row = rows.of_results(key, [Result(value, origin) for value in values], Units(_EMPTY))
+    assert tuple(cell.text for cell in row.cells) == cells
+
+
+@pytest.mark.parametrize(
+    ("fraction", "text"),
+    [(0.32, "+32 %"), (-0.0076, "−0.76 %"), (2e-5, "+0.0020 %"), (-1.8e-9, "0 %")],
+)
+def test_a_reserve_of_nothing_is_said_so(fraction: float, text: str) -> None:
+    assert limits.percent(fraction) == text
 
 
 @given(st.floats(1e-8, 1e12), st.integers(2, 6))
