@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
-from math import log
+from math import isnan, log, nan
 
 import numpy as np
 
@@ -16,7 +16,6 @@ from specsheet.evaluate.reserve import (
     Bounds,
     Flips,
     find_flips,
-    margin,
 )
 from specsheet.evaluate.result import Band, Check
 from specsheet.evaluate.words import facts
@@ -62,79 +61,108 @@ def check_limits(
         grid: response over :func:`specsheet.evaluate.reserve.scaled`; None for no reserves.
         evenness: as in :func:`specsheet.evaluate.reserve.find_flips`.
     """
-    driven = [limit for limit in limits if _driven_by_flow(limit, values)]
-    flips = NO_FLIPS if grid is None else find_flips(model, request.stream, driven, grid, evenness)
-    crossings = _by_limit(flips, len(driven))
+    rows = _rows(limits, values, model.element.values)
+    driven = [row for row in rows if row.limit.driver == "mass_flow" and row.limit.key in values]
+    flips = NO_FLIPS
+    if grid is not None:
+        own = [row.limit for row in driven]
+        flips = find_flips(model, request.stream, own, grid, evenness)
     checks: list[Check] = []
     findings: list[Finding] = []
     bands: list[Band] = []
-    for limit, own, inside in zip(driven, crossings, _margins(driven, values), strict=True):
-        judged = _judge_flow(request, limit, values[limit.key], inside, own)
-        checks.append(judged)
-        findings.extend(_findings(request, limit, judged, values[limit.key]))
-        band = _band(request, limit, own)
+    for row, crossings in zip(driven, _by_limit(flips, len(driven)), strict=True):
+        checks.append(_judge_flow(request, row, crossings))
+        findings.extend(_findings(request, row, checks[-1]))
+        band = _band(request, row.limit, crossings)
         if band is not None:
             bands.append(band)
-    for limit in limits:
-        judged_state = _judge_state(request, limit, values, model.element.values)
-        if judged_state is not None:
-            checks.append(judged_state)
-            stated = values.get(limit.key, np.array([judged_state.value]))
-            findings.extend(_findings(request, limit, judged_state, stated))
+    for row in rows:
+        if row not in driven:
+            checks.append(_judge_state(request, row))
+            findings.extend(_findings(request, row, checks[-1]))
     return Checked(tuple(checks), tuple(_tightest_first(bands, request)), tuple(findings))
 
 
-def _driven_by_flow(limit: Limit, values: Mapping[str, Array]) -> bool:
-    found = values.get(limit.key)
-    return limit.driver == "mass_flow" and found is not None and not bool(np.isnan(found).all())
+@dataclass(frozen=True, slots=True, eq=False)
+class _Row:
+    """A limit whose value is known.
+
+    Attributes:
+        limit: the limit.
+        values: at every point; one value where it belongs to the meter as a whole.
+        inside: margin of each value.
+    """
+
+    limit: Limit
+    values: Sequence[float]
+    inside: Sequence[float]
+
+
+def _rows(
+    limits: Sequence[Limit], values: Mapping[str, Array], element: Mapping[str, Given]
+) -> tuple[_Row, ...]:
+    """Return the limits whose value is known at some point, with its margins."""
+    known: list[tuple[Limit, list[float]]] = []
+    for limit in limits:
+        array, own = values.get(limit.key), element.get(limit.key)
+        if array is not None:
+            column = array.tolist()
+        elif own is not None and not isinstance(own.value, str):
+            column = [own.value]
+        else:
+            continue
+        if not all(map(isnan, column)):
+            known.append((limit, column))
+    if not known:
+        return ()
+    most = max(len(column) for _, column in known)
+    table = [column + [nan] * (most - len(column)) for _, column in known]
+    inside = Bounds.of([limit for limit, _ in known]).margins(np.array(table)).tolist()
+    return tuple(
+        _Row(limit, column, share[: len(column)])
+        for (limit, column), share in zip(known, inside, strict=True)
+    )
 
 
 @dataclass(frozen=True, slots=True)
 class _Crossing:
-    """One flip of one limit: at which point, at which flow factor, and in which sense."""
+    """One flip of one limit.
+
+    Attributes:
+        point: the operating point that it is seen from.
+        factor: the flow there by that of the point [-].
+        distance: logarithm of the factor, without its sign.
+        rising: whether the limit begins to hold there as the flow rises.
+    """
 
     point: int
     factor: float
+    distance: float
     rising: bool
-
-    @property
-    def distance(self) -> float:
-        return abs(log(self.factor))
 
 
 def _by_limit(flips: Flips, count: int) -> list[list[_Crossing]]:
     found: list[list[_Crossing]] = [[] for _ in range(count)]
-    rows = (flips.limit, flips.point, flips.factor, flips.rising)
-    for limit, point, factor, rising in zip(*(row.tolist() for row in rows), strict=True):
-        found[limit].append(_Crossing(point, factor, rising))
+    distance = np.abs(np.log(flips.factor))
+    columns = (flips.point, flips.factor, distance, flips.rising)
+    crossings = map(_Crossing, *(column.tolist() for column in columns))
+    for limit, crossing in zip(flips.limit.tolist(), crossings, strict=True):
+        found[limit].append(crossing)
     return found
 
 
-def _margins(limits: Sequence[Limit], values: Mapping[str, Array]) -> list[list[float]]:
-    """Return the margins of every limit at every point."""
-    if not limits:
-        return []
-    found: list[list[float]] = (
-        Bounds.of(limits).margins(np.array([values[limit.key] for limit in limits])).tolist()
-    )
-    return found
-
-
-def _judge_flow(
-    request: Request,
-    limit: Limit,
-    values: Array,
-    inside: Sequence[float],
-    crossings: Sequence[_Crossing],
-) -> Check:
+def _judge_flow(request: Request, row: _Row, crossings: Sequence[_Crossing]) -> Check:
     """Judge a limit that the flow drives, at the point where it is tightest."""
+    inside = row.inside
     broken = [index for index, share in enumerate(inside) if share < 0.0]
     nearest: dict[int, _Crossing] = {}
-    for crossing in sorted(crossings, key=lambda item: -item.distance):
-        nearest[crossing.point] = crossing
-    if broken and any(index in nearest for index in broken):
-        known = [index for index in broken if index in nearest]
-        worst = max(known, key=lambda index: nearest[index].distance)
+    for crossing in crossings:
+        known = nearest.get(crossing.point)
+        if known is None or crossing.distance <= known.distance:
+            nearest[crossing.point] = crossing
+    mended = [index for index in broken if index in nearest]
+    if mended:
+        worst = max(mended, key=lambda index: nearest[index].distance)
     elif broken or not nearest:
         worst = inside.index(min(inside))
     else:
@@ -144,46 +172,24 @@ def _judge_flow(
         factor = nearest[worst].factor
         flow = float(request.stream.mass_flow[worst])
         reserve = Reserve("mass_flow", flow * factor, factor - 1.0)
-    return _check(request, limit, worst, float(values[worst]), not broken, reserve)
+    return _check(request, row, worst, not broken, reserve)
 
 
-def _judge_state(
-    request: Request,
-    limit: Limit,
-    values: Mapping[str, Array],
-    element: Mapping[str, Given],
-) -> Check | None:
-    """Judge a limit that the flow does not drive; None when its value is not known."""
-    if limit.driver == "mass_flow" and limit.key in values:
-        return None
-    found = values.get(limit.key)
-    if found is None:
-        stated = element.get(limit.key)
-        if stated is None or isinstance(stated.value, str):
-            return None
-        found = np.array([stated.value])
-    if np.isnan(found).all():
-        return None
-    inside = margin(limit, found)
-    worst = int(inside.argmin())
-    value = float(found[worst])
+def _judge_state(request: Request, row: _Row) -> Check:
+    """Judge a limit that the flow does not drive."""
+    limit, worst = row.limit, row.inside.index(min(row.inside))
+    value = row.values[worst]
     bound = _nearest_bound(limit, value)
     reserve = Reserve(limit.key, bound, (bound - value) / value) if value and limit.driver else None
-    return _check(request, limit, worst, value, bool(inside[worst] >= 0.0), reserve)
+    return _check(request, row, worst, row.inside[worst] >= 0.0, reserve)
 
 
-def _check(
-    request: Request,
-    limit: Limit,
-    worst: int,
-    value: float,
-    holds: bool,
-    reserve: Reserve | None,
-) -> Check:
+def _check(request: Request, row: _Row, worst: int, holds: bool, reserve: Reserve | None) -> Check:
+    limit = row.limit
     return Check(
         key=limit.key,
         point=request.names[worst] if worst < len(request.names) else "",
-        value=value,
+        value=row.values[worst],
         low=limit.low,
         high=limit.high,
         holds=holds,
@@ -199,14 +205,14 @@ def _nearest_bound(limit: Limit, value: float) -> float:
     return min(bounds, key=lambda bound: abs(bound - value))
 
 
-def _findings(request: Request, limit: Limit, check: Check, values: Array) -> tuple[Finding, ...]:
+def _findings(request: Request, row: _Row, check: Check) -> tuple[Finding, ...]:
     if check.holds:
         return _near(request, check) if _is_near(check) else ()
-    broken = margin(limit, values) < 0.0
+    limit = row.limit
     others = [
         name
-        for name, wrong in zip(request.names, broken, strict=False)
-        if wrong and name != check.point
+        for name, share in zip(request.names, row.inside, strict=False)
+        if share < 0.0 and name != check.point
     ]
     also = f" The same holds at {', '.join(others)}." if others else ""
     message = f"{_facts(request, check)}: {limit.message}.{also}"
