@@ -19,6 +19,7 @@ class Term:
         symbol: the standards' symbol, or "".
         kind: key of its kind of quantity, or "text".
         shown: unit shown, where it differs from the kind's own.
+        of_gas: label and symbol where the fluid is a gas, if it is called otherwise there.
     """
 
     key: str
@@ -26,6 +27,7 @@ class Term:
     symbol: str
     kind: str
     shown: str = ""
+    of_gas: tuple[str, str] | None = None
 
 
 _TERMS = (
@@ -47,7 +49,13 @@ _TERMS = (
     Term("compressibility", "Compressibility factor", "Z", "dimensionless"),
     Term("base_compressibility", "Compressibility factor, base", "Zb", "dimensionless"),
     Term("sound_speed", "Speed of sound", "c", "velocity"),
-    Term("vapour_pressure", "Vapour pressure", "pv", "pressure_absolute"),
+    Term(
+        "vapour_pressure",
+        "Vapour pressure",
+        "pv",
+        "pressure_absolute",
+        of_gas=("Saturation pressure", "ps"),  # at its temperature
+    ),
     Term("dew_temperature", "Dew point", "td", "temperature"),
     Term("saturation_temperature", "Saturation temperature", "ts", "temperature"),
     Term("saturation_margin", "Margin to saturation", "Δts", "temperature_difference"),

@@ -62,7 +62,14 @@ def unit_of(key: str, values: Sequence[float], units: Units) -> str:
     return units.pick(kind_of(key), values, TERMS[key].shown if key in TERMS else "")
 
 
-def of_results(key: str, results: Sequence[Result | None], units: Units, note: str = "") -> Row:
+def of_results(
+    key: str,
+    results: Sequence[Result | None],
+    units: Units,
+    note: str = "",
+    *,
+    gas: bool = False,
+) -> Row:
     """Return the row of one term: one result for each column, None where there is none.
 
     Args:
@@ -70,8 +77,8 @@ def of_results(key: str, results: Sequence[Result | None], units: Units, note: s
         results: in the order of the columns.
         units: units of the tag.
         note: printed beside the label.
+        gas: whether the fluid is a gas, which has other words for a few terms.
     """
-    term = TERMS.get(key)
     present = [result for result in results if result is not None]
     typed = [result.text for result in present if echoes(result, key)]
     if key in _RANGE and units.flow:
@@ -88,10 +95,11 @@ def of_results(key: str, results: Sequence[Result | None], units: Units, note: s
         computed = len(set(numbers)) > 1
         cells = [_cell_text(result, key, internal, smallest, computed) for result in results]
         unit = units.currency if key == "yearly_cost" else words.unit(internal)
+    label, symbol = words.named_of(key, gas=gas)
     return Row(
         key=key,
-        label=term.label if term else words.from_key(key),
-        symbol=term.symbol if term else "",
+        label=label,
+        symbol=symbol,
         cells=tuple(
             _EMPTY if result is None or text == NOTHING else Cell(text, origin(result, key))
             for result, text in zip(results, cells, strict=True)

@@ -31,6 +31,7 @@ class Values:
         for place in (evaluation.element, evaluation.base, evaluation.fluid, evaluation.line):
             self._take(place)
         self._take(evaluation.summary)
+        self._gas = evaluation.tag.phase == "gas"
         self._made: dict[str, Row | None] = {}
 
     def _take(self, place: Mapping[str, Result]) -> None:
@@ -52,14 +53,15 @@ class Values:
     def alone(self, key: str, result: Result) -> Row:
         """Return the row of a value that stands alone in its own place."""
         row = self.row(key) if key not in self.varying and self.single.get(key) is result else None
-        return row or rows.of_results(key, (result,), self.units)
+        return row or rows.of_results(key, (result,), self.units, gas=self._gas)
 
     def _row(self, key: str) -> Row | None:
         results = self.results(key)
         if not results:
             return None
         note = f"at {self.evaluation.tag.base.name}" if key == "base_volume_flow" else ""
-        return rows.of_results(key, results, self.units, note if key in self.varying else "")
+        shown = note if key in self.varying else ""
+        return rows.of_results(key, results, self.units, shown, gas=self._gas)
 
     def _entry(self, path: str) -> Row | None:
         tag = self.evaluation.tag

@@ -117,6 +117,12 @@ def symbol(key: str) -> str:
         return ""
 
 
+def named_of(key: str, *, gas: bool) -> tuple[str, str]:
+    """Return label and symbol of a term, as a gas or a liquid has them."""
+    of_gas = TERMS[key].of_gas if key in TERMS and gas else None
+    return of_gas or (label(key), symbol(key))
+
+
 def named(text: str, sign: str) -> str:
     """Return a label with its symbol behind it, where the label does not end in it already."""
     return text if text.endswith(sign) else f"{text}  {sign}"

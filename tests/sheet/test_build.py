@@ -361,3 +361,17 @@ def test_two_windows_of_one_value_are_told_apart_by_their_bounds() -> None:
         "Reynolds number ≥ 5000",
         "Mach number",
     ]
+
+
+@pytest.mark.parametrize(
+    ("phase", "label", "symbol"),
+    [("liquid", "Vapour pressure", "pv"), ("gas", "Saturation pressure", "ps")],
+)
+def test_a_gas_has_a_saturation_pressure(phase: str, label: str, symbol: str) -> None:
+    held = samples.evaluation()
+    point = PointResult("normal", {"vapour_pressure": Result(1.123e6, Origin.DERIVED)})
+    tag = replace(held.tag, given={**held.tag.given, "fluid.phase": phase})
+    line = row(
+        sheet.build(replace(held, tag=tag, points=(point,))), "fluid_points", "vapour_pressure"
+    )
+    assert (line.label, line.symbol, texts(line), line.unit) == (label, symbol, ["11.23"], "bar(a)")
