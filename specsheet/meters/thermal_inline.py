@@ -84,21 +84,13 @@ def _build(request: Request, item: sizes.Size) -> Element:
 
 
 def _fluid_findings(request: Request) -> tuple[Finding, ...]:
-    """Return what moisture, dirt and a changing mixture do."""
+    """Return what steam, dirt and a changing mixture do."""
     tag = request.tag
     findings: list[Finding] = []
 
     def add(level: Level, code: str, field: str, message: str) -> None:
         findings.append(Finding(level, code, field, message, source=PRACTICE))
 
-    if (tag.si("fluid.relative_humidity") or 0.0) > request.profile.typical["most_humid"].value:
-        add(
-            Level.CAUTION,
-            "moisture",
-            "fluid.relative_humidity",
-            "Drops on the probe take far more heat than gas and drive the reading up; dry or heat "
-            "the gas, or choose another family.",
-        )
     if tag.text("fluid.substance") == "water":
         add(
             Level.STOP,

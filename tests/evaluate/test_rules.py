@@ -44,7 +44,10 @@ VERDICTS = [
     ("natural gas", "turbine_axial", FITS, ""),
     ("natural gas", "diaphragm_gas", NO, "pressure-limit"),
     ("biogas", "ultrasonic_transit", FITS, ""),
-    ("biogas", "thermal_inline", NO, "saturation-margin-limit"),
+    ("biogas", "thermal_inline", IF, "saturation-margin-limit"),  # saturated: doubtful, not wrong
+    ("biogas", "thermal_insertion", IF, "saturation-margin-limit"),
+    ("biogas", "mass_flow_controller", NO, "saturation-margin-limit"),
+    ("steam", "thermal_insertion", NO, "steam"),
     ("biogas", "variable_area_float", IF, "glass-tube"),
     ("flare", "optical_two_beam", IF, "mach-number-high"),
     ("flare", "orifice_conical_entrance", NO, "above-range"),

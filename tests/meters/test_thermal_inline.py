@@ -66,9 +66,7 @@ def test_window_flips(speed, holds):
     assert all(shortfall(item, values) == 0.0 for item in window) is holds
 
 
-def test_dry_and_clean_gas_only():
-    humid = tools.quantity(0.9, "ratio", "%")
-    assert ("moisture", Level.CAUTION) in found_in(air(fluid__relative_humidity=humid))
+def test_clean_gas_only():
     assert ("dirt", Level.CAUTION) in found_in(air(fluid__abrasive=True))
     assert ("mixture", Level.CAUTION) in found_in(air(fluid__kind="mixture"))
     assert ("steam", Level.STOP) in found_in(air(fluid__substance="water"))

@@ -67,13 +67,13 @@ CASES = {
     # Mass and thermal
     "coriolis": ("fuel oil", "flare", "mach-number-limit"),
     "thermal_inline": ("compressed air", "steam", "steam"),
-    "thermal_insertion": ("compressed air", "steam", "saturation-margin-limit"),
+    "thermal_insertion": ("compressed air", "steam", "steam"),
     "thermal_mems": ("tool air", "compressed air", "volume-flow-limit"),
     "mass_flow_controller": ("tool air", "water", "phase-unsuitable"),
     "intake_air_hot_wire": ("engine intake", "heating gas", "viscosity-limit"),
     "intake_air_vane": ("engine intake", "compressed air", "pressure-limit"),
     "anemometer_vane": ("duct", "compressed air", "pressure-limit"),
-    "anemometer_hot_wire": ("duct", "steam", "saturation-margin-limit"),
+    "anemometer_hot_wire": ("duct", "steam", "steam"),
     # Open channels need a free surface; field methods need turbulence or room
     "weir_vnotch": ("brook", "water", "free-surface-needed"),
     "weir_rectangular": ("canal", "penstock", "free-surface-needed"),
