@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping, Sequence
+from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
 from math import isnan, log, nan
 
@@ -10,11 +10,12 @@ import numpy as np
 
 from specsheet.evaluate.model import Model
 from specsheet.evaluate.reserve import (
-    EVEN,
+    EXACT,
     FACTORS,
     NO_FLIPS,
     Bounds,
     Flips,
+    Pains,
     find_flips,
 )
 from specsheet.evaluate.result import Band, Check
@@ -49,7 +50,9 @@ def check_limits(
     limits: Sequence[Limit],
     values: Mapping[str, Array],
     grid: Mapping[str, Array] | None,
-    evenness: float = EVEN,
+    pains: Pains = EXACT,
+    *,
+    sparing: bool = False,
 ) -> Checked:
     """Check every limit at every operating point.
 
@@ -59,14 +62,15 @@ def check_limits(
         limits: the limits that apply.
         values: response at the operating points, shape (n,).
         grid: response over :func:`specsheet.evaluate.reserve.scaled`; None for no reserves.
-        evenness: as in :func:`specsheet.evaluate.reserve.find_flips`.
+        pains: how exactly the reserves are wanted.
+        sparing: whether to look for no reserves where a stop is broken.
     """
     rows = _rows(limits, values, model.element.values)
     driven = [row for row in rows if row.limit.driver == "mass_flow" and row.limit.key in values]
     flips = NO_FLIPS
-    if grid is not None:
+    if grid is not None and not (sparing and _is_stopped(rows)):
         own = [row.limit for row in driven]
-        flips = find_flips(model, request.stream, own, grid, evenness)
+        flips = find_flips(model, request.stream, own, grid, pains)
     checks: list[Check] = []
     findings: list[Finding] = []
     bands: list[Band] = []
@@ -122,6 +126,11 @@ def _rows(
         _Row(limit, column, share[: len(column)])
         for (limit, column), share in zip(known, inside, strict=True)
     )
+
+
+def _is_stopped(rows: Iterable[_Row]) -> bool:
+    """Tell whether a stop is broken at an operating point."""
+    return any(row.limit.level is Level.STOP and min(row.inside) < 0.0 for row in rows)
 
 
 @dataclass(frozen=True, slots=True)

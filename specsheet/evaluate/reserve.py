@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
+from typing import NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -19,9 +20,6 @@ from specsheet.meters.family import Array, Limit, Stream
 #: flow factors that the search looks at; 1 is among them
 FACTORS = np.geomspace(0.01, 100.0, 81)
 _LOGS = np.log(FACTORS)
-#: share of a step by which two readings off the grid may differ and still be trusted: within
-#: 0.05 % of the closed-in flow then, as measured over the demo job
-EVEN = 0.001
 #: a value that rises over a step so much more than over those beside it jumps there
 _STEEP = 1.5
 #: points of the grid around a crossing, in steps from the one before it
@@ -39,7 +37,25 @@ _CUTS = np.linspace(0.0, 1.0, 22)[1:-1]
 _JUMP = 3.0
 #: a margin that ends at nothing bends there, as an error does that meets its limit and stays on it
 _FLAT = 1e-9
-_ROUNDS = 2
+
+
+class Pains(NamedTuple):
+    """How exactly a crossing is wanted.
+
+    Attributes:
+        evenness: share of a step of the grid by which two readings of a crossing may differ and
+            still be trusted.
+        rounds: of closing in at most.
+    """
+
+    evenness: float
+    rounds: int
+
+
+#: within 0.05 % of the flow, as measured over the demo job
+EXACT = Pains(0.001, 2)
+#: within 0.3 % or so, which ranks families as well
+ROUGH = Pains(0.03, 1)
 
 
 @dataclass(frozen=True)
@@ -103,12 +119,6 @@ class Bounds:
         return np.asarray(np.where(np.isnan(values), -1.0, clipped))
 
 
-def margin(limit: Limit, values: Array) -> Array:
-    """Return the margins of one limit, shape (n,) as ``values``; see :meth:`Bounds.margins`."""
-    margins: Array = Bounds.of([limit]).margins(values[None])[0]
-    return margins
-
-
 def looked_at(stream: Stream) -> NDArray[np.intp]:
     """Return the points whose flow is scaled: all, or one where they differ in the flow only.
 
@@ -130,7 +140,7 @@ def find_flips(
     stream: Stream,
     limits: Sequence[Limit],
     grid: Mapping[str, Array],
-    evenness: float = EVEN,
+    pains: Pains = EXACT,
 ) -> Flips:
     """Return all crossings of all limits at all points.
 
@@ -142,8 +152,7 @@ def find_flips(
         stream: the operating points, n of them.
         limits: limits driven by the flow.
         grid: response over :func:`scaled`.
-        evenness: share of a step of the grid by which two readings of a crossing may differ and
-            still be trusted.
+        pains: how exactly the crossings are wanted.
     """
     if not limits:
         return NO_FLIPS
@@ -158,7 +167,7 @@ def find_flips(
     table = values.reshape(holds.shape)[of_limit, of_point]
     rising = holds[of_limit, of_point, of_step + 1]
     edges = _Edges.of(bounds.take(of_limit), table, of_step + ~rising)
-    factor, smooth = _read(edges, table, of_step, evenness)
+    factor, smooth = _read(edges, table, of_step, pains.evenness)
     rest = np.flatnonzero(~smooth)
     if rest.size:
         search = _Search(
@@ -167,7 +176,7 @@ def find_flips(
             edges.take(rest),
             [limits[index].key for index in of_limit[rest].tolist()],
         )
-        factor[rest] = search.close_in(table[rest], of_step[rest])
+        factor[rest] = search.close_in(table[rest], of_step[rest], pains.rounds)
     found = Flips(of_limit, points[of_point], factor, rising)
     return found if points.size == stream.mass_flow.size else _seen_from_all(found, stream)
 
@@ -227,7 +236,7 @@ def _read(
         edges: the bound of each crossing.
         values: values over the grid, shape (k, len(FACTORS)).
         steps: step of the grid in which each crossing lies.
-        evenness: as in :func:`find_flips`.
+        evenness: as in :class:`Pains`.
     """
     middle = np.clip(steps, 2, FACTORS.size - 4)  # six points even at the ends of the grid
     near = values[np.arange(steps.size)[:, None], middle[:, None] + _AROUND.astype(np.intp)]
@@ -286,7 +295,7 @@ class _Search:
     edges: _Edges
     keys: Sequence[str]
 
-    def close_in(self, values: Array, steps: NDArray[np.intp]) -> Array:
+    def close_in(self, values: Array, steps: NDArray[np.intp], rounds: int) -> Array:
         """Narrow each bracket by cuts; return the factors.
 
         Cuts instead of interpolation, since some values jump (an error that steps up below a
@@ -295,11 +304,12 @@ class _Search:
         Args:
             values: values over the grid, shape (k, len(FACTORS)).
             steps: step of the grid in which each crossing lies.
+            rounds: of narrowing at most.
         """
         rows = np.arange(steps.size)
         low, high = _LOGS[steps], _LOGS[steps + 1]
         at_low, at_high = values[rows, steps], values[rows, steps + 1]
-        for _ in range(_ROUNDS):
+        for _ in range(rounds):
             cuts = low[:, None] + (high - low)[:, None] * _CUTS
             table = np.column_stack([at_low, self._values(cuts), at_high])
             inside = self.edges.distance(table)

@@ -20,7 +20,7 @@ from specsheet.evaluate.model import model_of
 from specsheet.evaluate.prepare import NO_PIPE, Prepared, prepare
 from specsheet.evaluate.prepare import request as requested
 from specsheet.evaluate.remarks import remarks
-from specsheet.evaluate.reserve import margin, scaled
+from specsheet.evaluate.reserve import ROUGH, scaled
 from specsheet.evaluate.result import Result
 from specsheet.evaluate.service import Service, judge_habits, judge_service
 from specsheet.evaluate.stream import with_lanes
@@ -28,7 +28,7 @@ from specsheet.evaluate.summary import check_turndown, summarise
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.line import StraightResult
 from specsheet.meters import registry
-from specsheet.meters.family import Array, Element, Family, Limit, Request
+from specsheet.meters.family import Array, Element, Family, Request
 from specsheet.packs import Profile
 from specsheet.tag import Tag
 from specsheet.tagfile import with_family
@@ -39,9 +39,6 @@ _OF_LINE = ("line-velocity-high", "line-velocity-low")
 _OF_FLANGES = ("rating-exceeded", "rating-temperature")
 #: uncertainties that part good from fair and poor [-]; common practice
 _CLASSES = (0.01, 0.02, 0.05)
-#: how even a margin must run for its crossing to be read off the grid: within 0.3 % or so,
-#: which ranks families as well as an exact one
-_EVEN_ENOUGH = 0.03
 _RANK = {Level.STOP: 0, Level.CAUTION: 1, Level.NOTE: 2}
 
 
@@ -205,8 +202,11 @@ def _sized(
     limits = tuple(
         limit for limit in limits_of(family, element, request) if limit.code not in _OF_LINE
     )
-    stopped = _stops((*said, *element.findings)) or _breaks_stop(limits, values)
-    checked = check_limits(request, model, limits, values, None if stopped else grid, _EVEN_ENOUGH)
+    ruled_out = _stops((*said, *element.findings))
+    checked = check_limits(
+        request, model, limits, values, None if ruled_out else grid, ROUGH, sparing=True
+    )
+    stopped = ruled_out or _stops(checked.findings)
     totals = summarise(request, values, checked.bands)
     short = () if stopped else check_turndown(request, totals)
     findings = (*said, *element.findings, *runs.findings, *checked.findings, *short)
@@ -224,17 +224,6 @@ def _sized(
         yearly_cost=_number(totals, "yearly_cost"),
         upstream=_upstream(runs),
         unknown=(*service.unknown, *_not_known(values, runs)),
-    )
-
-
-def _breaks_stop(limits: Iterable[Limit], values: Mapping[str, Array]) -> bool:
-    """Tell whether a stop limit is broken at an operating point: then no reserve is looked for."""
-    return any(
-        bool((margin(limit, values[limit.key]) < 0.0).any())
-        for limit in limits
-        if limit.level is Level.STOP
-        and limit.key in values
-        and not np.isnan(values[limit.key]).all()
     )
 
 
