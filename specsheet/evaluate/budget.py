@@ -124,9 +124,9 @@ def name_largest(
     """Return the findings, those on the uncertainty with its three largest contributions named."""
     named: list[Finding] = []
     for finding in findings:
-        message = finding.message
         if finding.code == "uncertainty-demanded" and finding.point in names:
             worst = largest(contributions, names.index(finding.point))
-            message = f"{message} Most of it comes from: {', '.join(worst)}."
-        named.append(replace(finding, message=message))
+            message = f"{finding.message} Most of it comes from: {', '.join(worst)}."
+            finding = replace(finding, message=message)
+        named.append(finding)
     return tuple(named)

@@ -74,7 +74,7 @@ class Model:
                 self.density,
             )
             if contributions:
-                relative = np.stack([item.relative for item in contributions])
+                relative = np.array([item.relative for item in contributions])
                 freedom = np.array([item.freedom for item in contributions])
                 combined = gum.combine(relative=relative, freedom=freedom)
                 values["uncertainty"] = combined.expanded + self.additional

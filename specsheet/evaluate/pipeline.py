@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from collections.abc import Iterable, Mapping
 from dataclasses import replace
-from math import log
 
 import numpy as np
 
@@ -32,6 +31,7 @@ from specsheet.packs import Profile
 from specsheet.tag import Tag
 
 _SWEEP_LANES = 41
+_SHARES = np.linspace(0.0, 1.0, _SWEEP_LANES)
 _RANK = {Level.STOP: 0, Level.CAUTION: 1, Level.NOTE: 2}
 
 
@@ -167,9 +167,8 @@ def _swept(request: Request, element: Element) -> Lanes:
     """Return the range at the conditions of the normal point, from below to above it."""
     flows = request.stream.mass_flow
     highest = max(float(flows.max()), _number(element, "upper_range_flow") or 0.0)
-    ends = log(0.3 * float(flows.min())), log(1.3 * highest)
-    points = np.full(_SWEEP_LANES, request.normal)
-    return Lanes(points, np.exp(np.linspace(*ends, _SWEEP_LANES)))
+    low, high = 0.3 * float(flows.min()), 1.3 * highest
+    return Lanes(np.full(_SWEEP_LANES, request.normal), low * (high / low) ** _SHARES)
 
 
 def _base(tag: Tag, state: FluidResult) -> dict[str, Result]:

@@ -5,8 +5,6 @@ from __future__ import annotations
 from dataclasses import dataclass
 from math import nan
 
-import numpy as np
-
 from specsheet import fluid, line
 from specsheet.evaluate.remarks import service_words
 from specsheet.evaluate.sanity import check_statements
@@ -119,15 +117,14 @@ def request(prepared: Prepared, profile: Profile, tag: Tag | None = None) -> Req
     if pipe is None or not names:
         return None
     flows = stream.mass_flow
-    order = np.argsort(flows)
-    middle = int(order[order.size // 2])
+    normal = names.index("normal") if "normal" in names else int(flows.argsort()[flows.size // 2])
     return Request(
         tag=prepared.tag if tag is None else tag,
         profile=profile,
         pipe=pipe,
         names=names,
         stream=stream,
-        normal=names.index("normal") if "normal" in names else middle,
+        normal=normal,
         maximum=int(flows.argmax()),
         minimum=int(flows.argmin()),
     )

@@ -23,7 +23,7 @@ _LOGS = np.log(FACTORS)
 #: a value that rises over a step so much more than over those beside it jumps there
 _STEEP = 1.5
 #: points of the grid around a crossing, in steps from the one before it
-_AROUND = np.arange(-2.0, 4.0)
+_AROUND = np.arange(-2, 4)
 #: values at those points -> coefficients, in powers of the step, of the polynomial through all of
 #: them, and of the one through the inner four
 _POWERS = np.arange(6.0)
@@ -124,8 +124,9 @@ def looked_at(stream: Stream) -> NDArray[np.intp]:
 
     There every limit flips at the same flow, whichever point it is seen from.
     """
-    order = np.argsort(stream.mass_flow)
-    return order[order.size // 2 :][:1] if stream.alike else np.arange(order.size)
+    if not stream.alike:
+        return np.arange(stream.mass_flow.size)
+    return np.argsort(stream.mass_flow)[stream.mass_flow.size // 2 :][:1]
 
 
 def scaled(stream: Stream) -> Lanes:
@@ -239,7 +240,7 @@ def _read(
         evenness: as in :class:`Pains`.
     """
     middle = np.clip(steps, 2, FACTORS.size - 4)  # six points even at the ends of the grid
-    near = values[np.arange(steps.size)[:, None], middle[:, None] + _AROUND.astype(np.intp)]
+    near = values[np.arange(steps.size)[:, None], middle[:, None] + _AROUND]
     inside = edges.distance(near)
     with np.errstate(all="ignore"):
         start = inside[:, 2] / (inside[:, 2] - inside[:, 3])
@@ -248,6 +249,7 @@ def _read(
         smooth = (np.abs(place - inner) <= evenness) & ~np.isnan(near).any(axis=1)
         rises = np.abs(np.diff(inside[:, 1:5]))
         smooth &= rises[:, 1] <= _STEEP * np.minimum(rises[:, 0], rises[:, 2])
+        smooth &= np.abs(place - (steps - middle) - 0.5) <= 0.5 + evenness  # in its own step
         return np.exp(_LOGS[middle] + place * (_LOGS[1] - _LOGS[0])), smooth
 
 
