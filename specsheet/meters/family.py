@@ -7,7 +7,7 @@ flow: the operating points come first, then the sweep along the range, in one ca
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping
-from dataclasses import dataclass, field, replace
+from dataclasses import dataclass, field
 from functools import cached_property
 
 import numpy as np
@@ -67,11 +67,31 @@ class Stream:
 
     def take(self, indices: NDArray[np.intp]) -> Stream:
         """Return the stream at the chosen conditions (repeats allowed)."""
-        return Stream(*(getattr(self, name)[indices] for name in self.__dataclass_fields__))
+        return Stream(
+            self.mass_flow[indices],
+            self.density[indices],
+            self.viscosity[indices],
+            self.pressure[indices],
+            self.temperature[indices],
+            self.isentropic_exponent[indices],
+            self.sound_speed[indices],
+            self.vapour_pressure[indices],
+            self.density_uncertainty[indices],
+        )
 
     def with_flow(self, mass_flow: Array) -> Stream:
         """Return the same conditions with other mass flows [kg/s]."""
-        return replace(self, mass_flow=mass_flow)
+        return Stream(
+            mass_flow,
+            self.density,
+            self.viscosity,
+            self.pressure,
+            self.temperature,
+            self.isentropic_exponent,
+            self.sound_speed,
+            self.vapour_pressure,
+            self.density_uncertainty,
+        )
 
 
 @dataclass(frozen=True, slots=True)

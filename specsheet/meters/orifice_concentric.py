@@ -18,6 +18,9 @@ from specsheet.sources import cite
 
 _SOURCE = cite("iso5167-2", "5.3.2.1")
 
+#: diameter ratios that a pipe may be smooth enough for, the largest first [-]
+_RATIOS = np.array([0.75, 0.65, 0.6, 0.55, 0.5, 0.45])
+
 
 def _coefficient(lanes: Lanes) -> Array:
     found: Array = iso5167_2.discharge_coefficient(
@@ -64,11 +67,9 @@ def _largest_ratio(request: Request) -> float:
     inside = request.pipe.inside_diameter
     roughness = request.pipe.roughness / math.pi / inside
     highest = _largest_reynolds(inside, request)
-    for ratio in (0.75, 0.65, 0.6, 0.55, 0.5, 0.45):
-        allowed = iso5167_2.largest_roughness(diameter_ratio=ratio, reynolds_number=highest)
-        if not roughness > allowed:
-            return ratio
-    return 0.4
+    allowed = iso5167_2.largest_roughness(diameter_ratio=_RATIOS, reynolds_number=highest)
+    held = ~(roughness > allowed)
+    return float(_RATIOS[held.argmax()]) if held.any() else 0.4
 
 
 def _largest_reynolds(inside: float, request: Request) -> float:
@@ -154,7 +155,7 @@ def _roughness(ratio: float, inside: float, request: Request) -> Limit:
     return Limit(
         "relative_roughness",
         None,
-        iso5167_2.largest_roughness(diameter_ratio=ratio, reynolds_number=highest),
+        float(iso5167_2.largest_roughness(diameter_ratio=ratio, reynolds_number=highest)),
         Level.CAUTION,
         "pipe-roughness",
         "the pipe may be rougher than the coefficient allows: ask for a smooth or honed upstream "

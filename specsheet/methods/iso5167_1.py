@@ -102,15 +102,24 @@ def fixed_point(step: Callable[[Any], Any], start: Any) -> Any:
 
 
 def _secant(step: Callable[[Any], Any], before: Array) -> Array:
+    """Step by step; the last step is not tried where its error is foreseen within the tolerance.
+
+    The error left by a secant step is the product of the two errors before it, times a curvature
+    by the slope, which for the equations here is less than 1 / (slope x).
+    """
     now: Array = np.asarray(step(before), dtype=np.float64)
     gap_before = now - before
     for _ in range(_ROUNDS):
         gap = step(now) - now
-        open_lanes = np.abs(gap) > _TOLERANCE * np.abs(now)
-        if not open_lanes.any():
-            return np.where(np.isnan(gap), np.nan, now)
-        slope = (gap - gap_before) / (now - before)
-        after = np.where(open_lanes, np.where(slope < 0.0, now - gap / slope, np.nan), now)
+        size = np.abs(now)
+        open_lanes = np.abs(gap) > _TOLERANCE * size
+        moved = now - before
+        slope = (gap - gap_before) / moved
+        change = gap / slope
+        after = np.where(open_lanes, np.where(slope < 0.0, now - change, np.nan), now)
+        left = np.abs(change * moved / slope)
+        if not (open_lanes & (left > _TOLERANCE * size * size)).any():
+            return np.where(np.isnan(gap), np.nan, after)
         before, gap_before, now = now, gap, after
     settled = np.abs(step(now) - now) <= _SETTLED * np.abs(now)
     return np.where(settled, now, np.nan)

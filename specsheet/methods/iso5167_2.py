@@ -133,12 +133,16 @@ _ROUGHNESS = (
 )
 
 
-def largest_roughness(*, diameter_ratio: float, reynolds_number: float) -> float:
+def largest_roughness(*, diameter_ratio: Any, reynolds_number: float) -> Any:
     """Return the largest Ra/D of the upstream pipe [-] (5.3.1, table 1; from memory).
 
     Between columns and rows the logarithm of ReD and β are interpolated; at the ends the last
     value holds.
+
+    Args:
+        diameter_ratio: β [-]
+        reynolds_number: of the pipe, ReD; one for all [-]
     """
     at = np.log10(max(reynolds_number, 1.0))
-    rows = [float(np.interp(at, _ROUGHNESS_RE, row)) for row in _ROUGHNESS]
-    return float(np.interp(diameter_ratio, _ROUGHNESS_BETA, rows)) * 1e-4
+    rows = [np.interp(at, _ROUGHNESS_RE, row) for row in _ROUGHNESS]
+    return np.interp(diameter_ratio, _ROUGHNESS_BETA, rows) * 1e-4

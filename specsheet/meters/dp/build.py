@@ -44,7 +44,7 @@ def size(device: Device, request: Request) -> Element:
     settled = sizing.led(sizing.task(device, request))
     task, sized = settled.task, settled.sized
     bare = task.element(sized.size, sized.span)
-    second, remarks = sizing.second_range(task, bare)
+    second, remarks = sizing.second_range(settled, bare)
     numbers = {**bare.numbers, "second_range": second, "machined": sized.machined}
     values = {**sizing.given_values(task, sized), **task.prepared.values}
     if second:

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping
-from dataclasses import dataclass, field, replace
+from dataclasses import dataclass, field
 
 from specsheet.findings import Finding
 from specsheet.meters.family import Array, Derivation, Element, Given, Limit, Request
@@ -32,12 +32,27 @@ class Lanes:
 
     def with_ratio(self, diameter_ratio: Array) -> Lanes:
         """Return the same lanes with another diameter ratio."""
-        return replace(self, diameter_ratio=diameter_ratio)
+        return Lanes(
+            diameter_ratio,
+            self.inside_diameter,
+            self.reynolds_number,
+            self.mass_flow,
+            self.density,
+            self.numbers,
+            self.choices,
+        )
 
     def with_flow(self, mass_flow: Array) -> Lanes:
         """Return the same lanes with another flow; the Reynolds number follows."""
-        reynolds = self.reynolds_number * (mass_flow / self.mass_flow)
-        return replace(self, mass_flow=mass_flow, reynolds_number=reynolds)
+        return Lanes(
+            self.diameter_ratio,
+            self.inside_diameter,
+            self.reynolds_number * (mass_flow / self.mass_flow),
+            mass_flow,
+            self.density,
+            self.numbers,
+            self.choices,
+        )
 
 
 #: ε of β, Δp/p1 and κ

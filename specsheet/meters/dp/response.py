@@ -71,6 +71,13 @@ def drop(
     return pressure, np.sqrt(bare / pressure)
 
 
+def pressure_of(device: Device, element: Element, stream: Stream) -> Array:
+    """Return Δp [Pa] at n conditions, shape (n,): all that the sizing asks of a response."""
+    with np.errstate(all="ignore"):
+        lanes = lanes_of(device, element, stream)
+        return drop(device, lanes, stream, coefficient(device, lanes))[0]
+
+
 def respond(device: Device, element: Element, stream: Stream) -> Mapping[str, Array]:
     """Return everything the device does at n conditions, by glossary key; arrays of shape (n,)."""
     with np.errstate(all="ignore"):

@@ -11,7 +11,7 @@ from numpy.typing import NDArray
 from specsheet.findings import Finding, Level, Origin
 from specsheet.meters.dp import transmitter
 from specsheet.meters.dp.device import Bounds, Device, Lanes, Prepared
-from specsheet.meters.dp.response import flow_from, lanes_of, ratio_for, respond
+from specsheet.meters.dp.response import flow_from, lanes_of, pressure_of, ratio_for
 from specsheet.meters.family import Array, Element, Given, Request, Stream
 from specsheet.methods import iso5167_1 as equation
 from specsheet.sources import PRACTICE, cite
@@ -59,8 +59,7 @@ class Task:
     def conditions(self, count: int) -> Stream:
         """Return the leading point ``count`` times, at the flow of the upper range value."""
         index: NDArray[np.intp] = np.full(count, self.lead, dtype=np.intp)
-        stream = self.request.stream.take(index)
-        return stream.with_flow(np.full(count, self.flow))
+        return self.request.stream.take(index).with_flow(np.full(count, self.flow))
 
     def element(self, size: float, span: float) -> Element:
         """Return a bare element of an effective dimension [m] and a range [Pa]."""
@@ -114,10 +113,11 @@ def _or_nan(request: Request, key: str) -> float:
 
 @dataclass(frozen=True)
 class Led:
-    """A task with the point that leads it, and what it comes to."""
+    """A task with the point that leads it, what it comes to, and Δp at the points [Pa]."""
 
     task: Task
     sized: Sized
+    pressure: Array
 
 
 def led(of: Task) -> Led:
@@ -127,19 +127,23 @@ def led(of: Task) -> Led:
     where all points stand under the same conditions.
     """
     stream = of.request.stream
-    sized = solve(of)
+    found = _solved(of)
     if stream.alike:
-        return Led(of, sized)
+        return found
     for _ in range(_ROUNDS):
-        found = respond(of.device, of.element(sized.size, sized.span), stream)
-        pressure = found["differential_pressure"]
-        if not np.isfinite(pressure).all() or int(np.argmax(pressure)) == of.lead:
+        lead = int(np.argmax(found.pressure))
+        if not np.isfinite(found.pressure).all() or lead == of.lead:
             break
-        lead = int(np.argmax(pressure))
         margin = of.flow / float(stream.mass_flow[of.lead])
         of = replace(of, lead=lead, flow=float(stream.mass_flow[lead]) * margin)
-        sized = solve(of)
-    return Led(of, sized)
+        found = _solved(of)
+    return found
+
+
+def _solved(of: Task) -> Led:
+    sized = solve(of)
+    element = of.element(sized.size, sized.span)
+    return Led(of, sized, pressure_of(of.device, element, of.request.stream))
 
 
 def solve(of: Task) -> Sized:
@@ -154,23 +158,36 @@ def solve(of: Task) -> Sized:
         return Sized(size, given, span, Origin.GIVEN, tag.origin(f"meter.{RANGE}"))
     if span is None:
         return _both(of)
-    ratio = float(_ratios(of, np.array([span]))[0])
+    ratio = float(_Asked.of(of, np.array([span])).ratios()[0])
     if ratio < _WIDEST:
         return _machine(of, ratio, span, Origin.GIVEN)
     sized = _machine(of, of.bounds.largest, span, Origin.GIVEN)
     return replace(sized, findings=(_impossible(of, span),))
 
 
-def _ratios(of: Task, spans: Array) -> Array:
-    """Return β for each upper range value, NaN where none gives it."""
-    stream = of.conditions(spans.size)
-    return ratio_for(of.device, _guess(of, stream), stream, spans)
+@dataclass(frozen=True)
+class _Asked:
+    """Upper range values [Pa] to size for, with the stream and the flow in the device at each.
 
+    The diameter ratio of ``lanes`` is the one aimed at.
+    """
 
-def _guess(of: Task, stream: Stream) -> Lanes:
-    inside = of.numbers["inside_diameter"]
-    share = of.device.shape.share(np.array([of.bounds.target]))
-    return lanes_of(of.device, of.element(inside * float(share[0]), 1.0), stream)
+    device: Device
+    spans: Array
+    stream: Stream
+    lanes: Lanes
+
+    @classmethod
+    def of(cls, task: Task, spans: Array) -> _Asked:
+        """Return the leading point at each upper range value."""
+        stream = task.conditions(spans.size)
+        share = float(task.device.shape.share(np.array([task.bounds.target]))[0])
+        aimed = task.element(task.numbers["inside_diameter"] * share, 1.0)
+        return cls(task.device, spans, stream, lanes_of(task.device, aimed, stream))
+
+    def ratios(self) -> Array:
+        """Return β for each upper range value, NaN where none gives it."""
+        return ratio_for(self.device, self.lanes, self.stream, self.spans)
 
 
 def _machine(of: Task, ratio: float, span: float, span_origin: Origin) -> Sized:
@@ -198,7 +215,7 @@ def _range_for(of: Task, size: float, given: float) -> Sized:
     stream = of.request.stream
     grown = of.flow / float(stream.mass_flow[of.lead])
     lanes = stream.with_flow(stream.mass_flow * grown)
-    found = respond(of.device, of.element(size, 1.0), lanes)["differential_pressure"]
+    found = pressure_of(of.device, of.element(size, 1.0), lanes)
     top = float(np.nanmax(found)) if np.isfinite(found).any() else np.nan
     findings: tuple[Finding, ...] = ()
     if not np.isfinite(found).all():
@@ -218,9 +235,10 @@ def _range_for(of: Task, size: float, given: float) -> Sized:
 def _both(of: Task) -> Sized:
     """Choose the preferred range whose β comes nearest to the target within all bounds."""
     bounds, spans = of.bounds, transmitter.SERIES
-    ratios = _ratios(of, spans)
-    stream = of.conditions(spans.size)
-    lanes = _guess(of, stream).with_ratio(ratios)
+    asked = _Asked.of(of, spans)
+    stream, ratios = asked.stream, asked.ratios()
+    lanes = asked.lanes.with_ratio(ratios)
+    vapour = np.where(np.isnan(stream.vapour_pressure), 0.0, stream.vapour_pressure)
     with np.errstate(all="ignore"):
         loss = of.device.loss(lanes, of.device.coefficient(lanes)) * spans
         back = float(of.request.stream.mass_flow[of.lead]) / of.flow
@@ -232,7 +250,7 @@ def _both(of: Task) -> Sized:
             + (~np.isnan(stream.isentropic_exponent))
             * (spans > bounds.largest_drop * stream.pressure)
             + _excess(loss * back * back, _largest_loss(of.request))
-            + (spans >= stream.pressure - np.nan_to_num(stream.vapour_pressure))
+            + (spans >= stream.pressure - vapour)
         )
         small = np.log10(np.maximum(_LEAST_SHARE * stream.pressure / spans, 1.0))
         wish = abs(ratios - bounds.target) + _SMALL_RANGE * small
@@ -280,14 +298,12 @@ def _no_match(of: Task, span: float) -> Finding:
     )
 
 
-def second_range(of: Task, bare: Element) -> tuple[float, tuple[Finding, ...]]:
+def second_range(of: Led, bare: Element) -> tuple[float, tuple[Finding, ...]]:
     """Return the range of a second, stacked transmitter [Pa] (0 for none), and what to say."""
-    tag = of.request.tag
+    tag, pressure = of.task.request.tag, of.pressure
     stated = tag.si("meter.second_range")
     if stated is not None:
         return transmitter.below(stated, bare.numbers["range"])
-    values = respond(of.device, bare, of.request.stream)
-    pressure = values["differential_pressure"]
     if not np.isfinite(pressure).any():
         return 0.0, ()
     lowest, span = float(np.nanmin(pressure)), bare.numbers["range"]
