@@ -26,7 +26,14 @@ FLUID: tuple[Entry, ...] = (
         ),
         needed=_ALWAYS,
     ),
-    Entry("fluid.name", "Name", "text", "Name printed on the sheet.", "Wet biogas"),
+    Entry(
+        "fluid.name",
+        "Name",
+        "text",
+        "Name printed on the sheet; condensate, feed water, demineralised or amine in it calls for "
+        "its material notes.",
+        "Wet biogas",
+    ),
     Entry(
         "fluid.substance",
         "Substance",

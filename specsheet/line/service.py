@@ -28,7 +28,8 @@ class Service:
 
     Attributes:
         fractions: substance key -> mole fraction; 1 for a pure substance, NaN where not known.
-        words: hazards, kind of fluid and derived words ("sour", "chlorides", "abrasive", "acid").
+        words: hazards, kind of fluid and derived words ("sour", "chlorides", "abrasive", "acid",
+            "demineralised_water", "boiler_water", "amine").
         phase: "liquid" or "gas", as stated.
         hottest, coldest: highest and lowest temperature, design and ambient included [K]; None
             where none is known.
@@ -164,7 +165,23 @@ def _words(tag: Tag, sulfide_pressure: float | None) -> set[str]:
         words.add("acid")
     if tag.flag("require.potable_water"):
         words.add("potable_water")
+    words.add(_named(tag))
     return {word for word in words if word}
+
+
+def _named(tag: Tag) -> str:
+    """Return the service that the name of the fluid tells, or the conductivity; "" for none."""
+    name = re.sub(r"[^0-9a-z]+", " ", tag.text("fluid.name").lower())
+    substance = tag.text("fluid.substance") if tag.text("fluid.kind") == "substance" else ""
+    conductivity = tag.si("fluid.electrical_conductivity")
+    for word, row in table("compatibility")["named"].items():
+        of = row.get("of")
+        if of and (tag.phase != "liquid" or not substance or substance_key(substance) != of):
+            continue
+        pure = conductivity is not None and conductivity < row.get("conductivity_below", 0.0)
+        if pure or any(f" {known.lower()} " in f" {name} " for known in row["names"]):
+            return str(word)
+    return ""
 
 
 @cache

@@ -75,6 +75,16 @@ LIQUID, GASEOUS = "liquid", "gas"
 # fluid, material, temperature [degC], verdict, a word of the note; common practice unless the pack
 # names a source
 RULES = [
+    # Demineralised and boiler water, by name or by conductivity: common practice, no source
+    (WATER + 'name = "Demineralised water"', "carbon steel", 20, "avoid", "nothing that protects"),
+    (WATER + 'electrical_conductivity = "2 uS/cm"', "carbon steel", 20, "avoid", "takes up iron"),
+    (WATER + 'name = "Deionised water"', "brass", 20, "conditional", "gives off copper"),
+    (WATER + 'name = "DI water, permeate"', "galvanised steel", 20, "avoid", "zinc"),
+    (WATER + 'name = "Demin water"', "stainless steel 316L", 20, "suited", "low-carbon"),
+    (WATER + 'name = "Condensate"', "carbon steel", 90, "conditional", "water treatment"),
+    (WATER + 'name = "Boiler feed water"', "brass", 90, "conditional", "ammonia and amines"),
+    (WATER + 'name = "Boiler feedwater"', "aluminium", 90, "avoid", "alkaline boiler water"),
+    (WATER + 'name = "Condensate"', "galvanised steel", 90, "avoid", "zinc"),
     (_substance("ammonia", GASEOUS), "brass", 20, "avoid", "copper alloys"),
     (_substance("ammonia"), "carbon steel", 20, "conditional", "stress relief"),
     (_substance("ammonia", GASEOUS), "FKM", 20, "avoid", "fluoroelastomers"),
@@ -164,6 +174,12 @@ def test_every_rule_speaks(fluid, material, celsius, verdict, words):
 
 SILENT = [
     (_substance("water"), "stainless steel 316L", 20),
+    # neither demineralised nor boiler water
+    (WATER, "carbon steel", 20),
+    (WATER + 'name = "Feeding water"', "carbon steel", 20),
+    (WATER + 'electrical_conductivity = "450 uS/cm"', "carbon steel", 20),
+    (_substance("n-pentane") + '\nname = "Gas condensate"', "carbon steel", 20),
+    (_substance("water", GASEOUS) + '\nname = "Condensate flash"', "galvanised steel", 150),
     (_substance("hydrogen", GASEOUS), "carbon steel", 150),
     (_substance("hydrogen", GASEOUS), "titanium", 70),
     (WATER + 'chlorides = "50 ppm"', "stainless steel 316L", 20),
