@@ -61,7 +61,7 @@ def test_what_was_written_before_has_no_say() -> None:
 
 def identity(data: bytes) -> bytes:
     """Line of the trailer with the two identifiers of the file."""
-    return data[data.rindex(b"/ID") : data.rindex(b"startxref")]
+    return data[data.rindex(b"/ID") : data.rindex(b"/Info")]
 
 
 def test_the_identity_follows_the_content() -> None:

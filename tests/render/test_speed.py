@@ -10,8 +10,6 @@ import tracemalloc
 from io import BytesIO
 
 import pytest
-from reportlab.pdfbase import pdfmetrics
-from reportlab.pdfbase.ttfonts import TTFont
 from reportlab.pdfgen.canvas import Canvas
 
 from specsheet import sheet
@@ -36,12 +34,12 @@ def seconds(repeats: int, count: int) -> float:
 
 def plain_canvas(texts: int) -> float:
     """Shortest time for a canvas that does nothing but draw so many short texts [s]."""
-    pdfmetrics.registerFont(TTFont("Plain", fonts.face().filename))
+    fonts.font()
     best = float("inf")
     for _ in range(5):
         start = time.perf_counter()
-        canvas = Canvas(BytesIO(), invariant=1, pageCompression=0, initialFontName="Plain")
-        canvas.setFont("Plain", 8)
+        canvas = Canvas(BytesIO(), invariant=1, pageCompression=0, initialFontName=fonts.NAME)
+        canvas.setFont(fonts.NAME, 8)
         for place in range(texts):
             canvas.drawString(50.0 + place % 400, 50.0 + place % 700, f"some text {place}")
         canvas.getpdfdata()

@@ -7,12 +7,16 @@ content, nothing is compressed, and neither clock nor environment has a say.
 from __future__ import annotations
 
 import hashlib
-from collections.abc import Sequence
-from datetime import date
+from datetime import UTC, date, datetime
+from io import BytesIO
+from typing import Any
+
+import reportlab
+from reportlab.lib.utils import TimeStamp
+from reportlab.pdfgen.canvas import Canvas
 
 import specsheet
-from specsheet.render.pdf import embed, fonts, style, wrap
-from specsheet.render.pdf.objects import Objects, string
+from specsheet.render.pdf import fonts, style, wrap
 from specsheet.render.pdf.page import Book
 from specsheet.sheet.model import Sheet
 
@@ -20,74 +24,62 @@ from specsheet.sheet.model import Sheet
 _NO_DATE = date(2000, 1, 1)
 
 
-def close(book: Book, sheet: Sheet) -> bytes:
-    """Return the finished document: every page with its foot, outline and page labels."""
-    _furnish(book, sheet)
-    objects = Objects()
-    root, tree = objects.add(), objects.add()
-    info = objects.add(_description(sheet))
-    contents = [page.content().encode("ascii") for page in book.pages]
-    used = embed.fonts_of(objects, set[int]().union(*(page.fonts for page in book.pages)))
-    resources = objects.add(f"<< /Font {used} >>")
-    pages = [_page(objects, tree, content, resources) for content in contents]
-    _tree(objects, tree, book, pages)
-    outline = _outline(objects, book, pages)
-    labels = f"<< /Nums [0 << /S /D /St 1 /P {string(f'{sheet.tag}-')} >>] >>"
-    objects.put(
-        root,
-        f"<< /Type /Catalog /Pages {tree} 0 R /Outlines {outline} 0 R /PageLabels {labels} "
-        "/Lang (en-GB) /ViewerPreferences << /DisplayDocTitle true >> >>",
+def open_canvas(sheet: Sheet) -> Canvas:
+    """Return an empty canvas of the sheet's paper, with pinned date and identity."""
+    fonts.font()
+    canvas = Canvas(
+        BytesIO(),
+        pagesize=style.PAPERS.get(sheet.paper, style.PAPERS["A4"]),
+        invariant=1,
+        pageCompression=0,
+        lang="en-GB",
+        initialFontName=fonts.NAME,
     )
-    identity = hashlib.md5(b"".join(contents), usedforsecurity=False).hexdigest()
-    return objects.file(root, info, identity)
+    canvas._doc._timeStamp = _stamp(sheet.date or _NO_DATE)
+    _describe(canvas, sheet)
+    return canvas
 
 
-def _description(sheet: Sheet) -> str:
+def _stamp(day: date) -> TimeStamp:
+    """Return midnight UTC of a day, whatever the clock and the environment say."""
+    moment = datetime(day.year, day.month, day.day, tzinfo=UTC)
+    stamp = TimeStamp.__new__(TimeStamp)
+    stamp.t = moment.timestamp()
+    stamp.lt = moment.timetuple()
+    stamp.YMDhms = moment.timetuple()[:6]
+    stamp.dhh = stamp.dmm = 0
+    stamp.tzname = "UTC"
+    return stamp
+
+
+def _describe(canvas: Canvas, sheet: Sheet) -> None:
     parts = (sheet.tag, sheet.title, f"revision {sheet.revision}" if sheet.revision else "")
     author = next((line.text for line in sheet.head if line.key == "job.author"), "")
-    program = string(f"specsheet {specsheet.__version__}")
-    day = sheet.date or _NO_DATE
-    # midnight UTC of the day of the revision, whatever the clock and the environment say
-    midnight = f"(D:{day.year:04d}{day.month:02d}{day.day:02d}000000Z)"
-    return (
-        f"<< /Title {string(', '.join(part for part in parts if part))} /Author {string(author)} "
-        f"/Subject {string(sheet.service)} /Creator {program} /Producer {program} "
-        f"/CreationDate {midnight} /ModDate {midnight} >>"
-    )
+    canvas.setTitle(", ".join(part for part in parts if part))
+    canvas.setAuthor(author)
+    canvas.setSubject(sheet.service)
+    canvas.setKeywords("")
+    canvas.setCreator(f"specsheet {specsheet.__version__}")
+    canvas.setProducer(f"reportlab {reportlab.Version}")
+    canvas.setViewerPreference("DisplayDocTitle", "true")
 
 
-def _page(objects: Objects, tree: int, content: bytes, resources: int) -> int:
-    stream = objects.stream(content)
-    return objects.add(
-        f"<< /Type /Page /Parent {tree} 0 R /Resources {resources} 0 R /Contents {stream} 0 R >>"
-    )
-
-
-def _tree(objects: Objects, tree: int, book: Book, pages: Sequence[int]) -> None:
-    """Write the list of the pages and the size of their paper."""
-    kids = " ".join(f"{page} 0 R" for page in pages)
-    wide, high = book.size
-    objects.put(
-        tree,
-        f"<< /Type /Pages /Count {len(pages)} /Kids [{kids}] /MediaBox [0 0 {wide:g} {high:g}] >>",
-    )
-
-
-def _outline(objects: Objects, book: Book, pages: Sequence[int]) -> int:
-    """Add the outline with one entry for each heading, in the order of the pages."""
-    headings = sorted(book.headings, key=lambda heading: heading.page)
-    root = objects.add()
-    first, last = root + 1, root + len(headings)
-    for place, heading in enumerate(headings, start=first):
-        before = f"/Prev {place - 1} 0 R " if place > first else ""
-        after = f"/Next {place + 1} 0 R " if place < last else ""
-        goal = f"[{pages[heading.page]} 0 R /XYZ 0 {heading.top + 6.0:.2f} 0]"
-        objects.add(
-            f"<< /Title {string(heading.title)} /Parent {root} 0 R {before}{after}/Dest {goal} >>"
-        )
-    ends = f"/First {first} 0 R /Last {last} 0 R " if headings else ""
-    objects.put(root, f"<< /Type /Outlines {ends}/Count {len(headings)} >>")
-    return root
+def close(canvas: Any, book: Book, sheet: Sheet) -> bytes:
+    """Return the finished document: every page with its foot, outline and page labels."""
+    _furnish(book, sheet)
+    contents = [page.content().encode("ascii") for page in book.pages]
+    canvas._doc.signature = hashlib.md5(b"".join(contents), usedforsecurity=False)
+    for index, content in enumerate(contents):
+        for place, heading in enumerate(book.headings):
+            if heading.page == index:
+                key = f"h{place}"
+                canvas.bookmarkHorizontal(key, 0, heading.top + 6.0)
+                canvas.addOutlineEntry(heading.title, key, level=0)
+        canvas.showPage()
+        canvas._doc.Pages.pages[-1].stream = content  # as bytes: nothing left to encode
+    canvas.addPageLabel(0, style="ARABIC", start=1, prefix=f"{sheet.tag}-")
+    data: bytes = canvas.getpdfdata()
+    return data
 
 
 def _furnish(book: Book, sheet: Sheet) -> None:
