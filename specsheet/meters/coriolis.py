@@ -7,6 +7,7 @@ usual figures, for the bidder to confirm.
 from __future__ import annotations
 
 from collections.abc import Mapping
+from functools import partial
 
 import numpy as np
 
@@ -37,7 +38,9 @@ _SUM = "sum"
 
 def size(request: Request) -> Element:
     """Choose the largest size that holds base error, velocity and loss, or rate the one stated."""
-    return choose_largest(request, _build, Rules(at, limits, budget))
+    signals = output.output(request, by_mass=True)
+    build = partial(_build, request, signals, _tube_material(request))
+    return choose_largest(request, build, Rules(at, limits, budget))
 
 
 def _figures(request: Request, item: sizes.Size) -> dict[str, Given]:
@@ -59,10 +62,9 @@ def _figures(request: Request, item: sizes.Size) -> dict[str, Given]:
     }
 
 
-def _build(request: Request, item: sizes.Size) -> Element:
+def _build(request: Request, signals: output.Output, material: Given, item: sizes.Size) -> Element:
     tag, typical = request.tag, request.profile.typical
     figures = _figures(request, item)
-    signals = output.output(request, by_mass=True)
     named = {key: float(found.value) for key, found in figures.items()}
     numbers = {
         **response.numbers(request, item),
@@ -75,7 +77,7 @@ def _build(request: Request, item: sizes.Size) -> Element:
     }
     values = {
         "meter_size": sizes.size_values(request, item)["meter_size"],
-        "tube_material": _tube_material(request),
+        "tube_material": material,
         **figures,
         **signals.values,
     }

@@ -6,6 +6,8 @@ Source: ISO 20456 (terms, U = k B D v). Usual limits, liners and figures stand i
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import dataclass
+from functools import partial
 
 import numpy as np
 
@@ -24,7 +26,7 @@ from specsheet.meters.family import (
 from specsheet.meters.shared import errors, full_bore, output, response, sizes
 from specsheet.meters.shared.choice import Rules, choose
 from specsheet.meters.wetted.conductivity import conductivity_findings, conductivity_limits
-from specsheet.meters.wetted.electrode import earthing, electrode
+from specsheet.meters.wetted.electrode import Part, earthing, electrode
 from specsheet.meters.wetted.liner import Liner, liner
 from specsheet.meters.wetted.service import is_slurry, service
 from specsheet.methods import duct, electromagnetic
@@ -47,16 +49,28 @@ def size(request: Request) -> Element:
 
     order = tuple(sorted(found.sizes, key=dislike))
     liking = f"the size nearest to {low:g} to {high:g} m/s at the normal flow"
-    return choose(request, found, order, _build, Rules(at, limits, budget), liking)
+    build = partial(_build, request, _Wetted.of(request), output.output(request))
+    return choose(request, found, order, build, Rules(at, limits, budget), liking)
 
 
-def _build(request: Request, item: sizes.Size) -> Element:
+@dataclass(frozen=True, slots=True)
+class _Wetted:
+    """The wetted parts, which the service decides whatever the size."""
+
+    lined: Liner
+    metal: Part
+    earth: Part
+
+    @classmethod
+    def of(cls, request: Request) -> _Wetted:
+        """Return the parts for the service of a request."""
+        feels = service(request)
+        return cls(liner(request, feels), electrode(request, feels), earthing(request, feels))
+
+
+def _build(request: Request, wetted: _Wetted, signals: output.Output, item: sizes.Size) -> Element:
     tag, typical = request.tag, request.profile.typical
-    feels = service(request)
-    lined = liner(request, feels)
-    metal = electrode(request, feels)
-    earth = earthing(request, feels)
-    signals = output.output(request)
+    lined, metal, earth = wetted.lined, wetted.metal, wetted.earth
     values = {
         **sizes.size_values(request, item),
         "liner": lined.given,

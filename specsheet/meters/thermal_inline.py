@@ -7,6 +7,8 @@ in the profile.
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import replace
+from functools import partial
 
 import numpy as np
 
@@ -36,12 +38,17 @@ _NORMAL_TEMPERATURE, _NORMAL_PRESSURE = 273.15, 101325.0
 
 def size(request: Request) -> Element:
     """Choose the largest size that the limits allow, or rate the one stated."""
-    return choose_largest(request, _build, Rules(at, limits, budget))
+    build = partial(_build, request, output.output(request, by_mass=True))
+    element = choose_largest(request, build, Rules(at, limits, budget))
+    factor = at(element, request.stream)["gas_factor"][request.normal]
+    if not np.isfinite(factor):
+        return element
+    told = Given(float(factor), Origin.DERIVED, _METHOD)
+    return replace(element, values={**element.values, "gas_factor": told})
 
 
-def _build(request: Request, item: sizes.Size) -> Element:
+def _build(request: Request, signals: output.Output, item: sizes.Size) -> Element:
     tag, typical = request.tag, request.profile.typical
-    signals = output.output(request, by_mass=True)
     numbers = {
         **response.numbers(request, item),
         **signals.numbers,
@@ -55,7 +62,7 @@ def _build(request: Request, item: sizes.Size) -> Element:
         ),
         **signals.values,
     }
-    element = Element(
+    return Element(
         numbers=numbers,
         values=values,
         notes={
@@ -77,10 +84,6 @@ def _build(request: Request, item: sizes.Size) -> Element:
         ),
         choices={**signals.choices, "phase": tag.phase},
     )
-    factor = at(element, request.stream)["gas_factor"][request.normal]
-    if np.isfinite(factor):
-        values["gas_factor"] = Given(float(factor), Origin.DERIVED, _METHOD)
-    return element
 
 
 def _fluid_findings(request: Request) -> tuple[Finding, ...]:

@@ -6,6 +6,7 @@ Sources: ISO 12242 (liquids), ISO 17089 (gases). Usual limits and figures stand 
 from __future__ import annotations
 
 from collections.abc import Mapping
+from functools import partial
 
 import numpy as np
 
@@ -33,9 +34,10 @@ _ONE_PATH, _USUAL_PATHS = "1", "2"
 
 def size(request: Request) -> Element:
     """Choose the largest size that the limits allow; clamped on, the pipe is the meter."""
+    build = partial(_build, request, output.output(request))
     if request.tag.text("meter.mounting") == _CLAMPED:
-        return _build(request, _pipe_as_meter(request))
-    return choose_largest(request, _build, Rules(at, limits, budget))
+        return build(_pipe_as_meter(request))
+    return choose_largest(request, build, Rules(at, limits, budget))
 
 
 def _pipe_as_meter(request: Request) -> sizes.Size:
@@ -43,7 +45,7 @@ def _pipe_as_meter(request: Request) -> sizes.Size:
     return sizes.Size(nominal, request.pipe.inside_diameter, {}, Origin.DERIVED, "pipe")
 
 
-def _build(request: Request, item: sizes.Size) -> Element:
+def _build(request: Request, signals: output.Output, item: sizes.Size) -> Element:
     tag, typical = request.tag, request.profile.typical
     clamped = tag.text("meter.mounting") == _CLAMPED
     paths = _ONE_PATH if clamped else tag.text("meter.paths") or _USUAL_PATHS
@@ -51,7 +53,6 @@ def _build(request: Request, item: sizes.Size) -> Element:
     path_angle = sizes.stated_or_typical(angle, typical["path_angle"])
     phase = "gas" if tag.phase == "gas" else "liquid"
     error = typical["clamp_on_error" if clamped else f"error_paths_{paths}"]
-    signals = output.output(request)
     numbers = {
         **response.numbers(request, item),
         **signals.numbers,

@@ -7,6 +7,7 @@ with its source. Volume flow is measured, so a mass flow needs the density at th
 from __future__ import annotations
 
 from collections.abc import Mapping
+from functools import partial
 
 import numpy as np
 
@@ -32,10 +33,11 @@ _METHOD = cite("iso12764")
 
 def size(request: Request) -> Element:
     """Choose the largest size up to the line's that the limits allow, or rate the one stated."""
-    return choose_largest(request, _build, Rules(at, limits, budget))
+    build = partial(_build, request, output.output(request))
+    return choose_largest(request, build, Rules(at, limits, budget))
 
 
-def _build(request: Request, item: sizes.Size) -> Element:
+def _build(request: Request, signals: output.Output, item: sizes.Size) -> Element:
     tag, typical = request.tag, request.profile.typical
     width = sizes.stated(request, "bluff_width")
     factor = sizes.stated(request, "k_factor")
@@ -46,7 +48,6 @@ def _build(request: Request, item: sizes.Size) -> Element:
         factor = float(vortex.k_factor(strouhal_number=strouhal, bluff_width=bluff, bore=item.bore))
     else:
         strouhal = float(vortex.strouhal_number(k_factor=factor, bluff_width=bluff, bore=item.bore))
-    signals = output.output(request)
     typical_source = typical["strouhal_number"].source
     values = {
         **sizes.size_values(request, item),

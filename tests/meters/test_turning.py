@@ -70,7 +70,7 @@ def test_turbine_takes_the_line_size_or_less():
     assert TURBINE.size(ask("turbine_axial", [8, 20, 40])).values["meter_size"].value == "DN 100"
     element = TURBINE.size(ask("turbine_axial", [3, 6, 12]))
     assert element.values["meter_size"].value == "DN 50"
-    assert any("smallest of the size" in text for text in element.notes["element"])
+    assert any("flow by the smallest flow" in text for text in element.notes["element"])
 
 
 @pytest.mark.parametrize(

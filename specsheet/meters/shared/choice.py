@@ -46,33 +46,24 @@ class Rules:
     budget: Callable[[Element, Stream, Mapping[str, Array]], tuple[Contribution, ...]]
 
 
-def attempt(request: Request, element: Element, rules: Rules) -> Trial:
-    """Try one candidate at the operating points."""
+def attempt(request: Request, element: Element, rules: Rules, beside: Sequence[Limit]) -> Trial:
+    """Try one candidate at the operating points, with the limits ``beside`` the family's own."""
     values = dict(rules.at(element, request.stream))
     parts = rules.budget(element, request.stream, values)
     if parts:
         with np.errstate(all="ignore"):
             values["uncertainty"] = 2.0 * np.sqrt(sum(part.relative**2 for part in parts))
-    every = (
-        *rules.limits(element, request),
-        *shared_limits.of_profile(request),
-        *shared_limits.of_purchase(request),
-        *shared_limits.of_physics(),
-    )
-    found = [
-        (shared_limits.shortfall(limit, values), limit)
-        for limit in every
-        if limit.phase in ("", request.tag.phase)
-    ]
+    own = (item for item in rules.limits(element, request) if item.phase in ("", request.tag.phase))
+    found = [(shared_limits.shortfall(limit, values), limit) for limit in (*own, *beside)]
     worst = sorted((pair for pair in found if pair[0] > 0.0), key=lambda pair: -pair[0])
 
     def total(level: Level) -> float:
-        return sum(size for size, limit in found if limit.level is level)
+        return sum(size for size, limit in worst if limit.level is level)
 
     return Trial(
         element=element,
         values=values,
-        harm=sum(size for size, limit in found if _harmful(limit, values)),
+        harm=sum(size for size, limit in worst if _harmful(limit, values)),
         stops=total(Level.STOP),
         cautions=total(Level.CAUTION),
         notes=total(Level.NOTE),
@@ -81,11 +72,12 @@ def attempt(request: Request, element: Element, rules: Rules) -> Trial:
 
 
 def _harmful(limit: Limit, values: Mapping[str, Array]) -> bool:
+    """Tell whether a limit that is broken damages the meter."""
     if limit.level is not Level.STOP:
         return False
     if limit.key == "back_pressure_margin":
         return True
-    return limit.high is not None and shared_limits.shortfall(replace(limit, low=None), values) > 0
+    return limit.high is not None and bool((values[limit.key] > limit.high).any())
 
 
 def best(trials: Sequence[Trial]) -> int:
@@ -102,12 +94,13 @@ def best(trials: Sequence[Trial]) -> int:
 
 
 def _tried(
-    request: Request, order: Sequence[Size], build: Callable[[Request, Size], Element], rules: Rules
+    request: Request, order: Sequence[Size], build: Callable[[Size], Element], rules: Rules
 ) -> list[Trial]:
     """Try the candidates in their order, up to the first that breaks nothing: none beats it."""
+    beside = shared_limits.beside_own(request)
     trials: list[Trial] = []
     for size in order:
-        trials.append(attempt(request, build(request, size), rules))
+        trials.append(attempt(request, build(size), rules, beside))
         if not trials[-1].broken:
             break
     return trials
@@ -117,7 +110,7 @@ def choose(
     request: Request,
     found: Candidates,
     order: Sequence[Size],
-    build: Callable[[Request, Size], Element],
+    build: Callable[[Size], Element],
     rules: Rules,
     liking: str,
 ) -> Element:
@@ -127,7 +120,7 @@ def choose(
         request: the tag's request.
         found: the sizes in question, with what is wrong with what the user stated.
         order: the same sizes, the most liked first.
-        build: builds the element of one size.
+        build: builds the element of one size; what no size changes is worked out before.
         rules: the family's functions.
         liking: how the order came about ("the largest size").
     """
@@ -141,9 +134,7 @@ def choose(
     return replace(element, notes=notes, findings=(*found.findings, *element.findings))
 
 
-def choose_largest(
-    request: Request, build: Callable[[Request, Size], Element], rules: Rules
-) -> Element:
+def choose_largest(request: Request, build: Callable[[Size], Element], rules: Rules) -> Element:
     """Return the largest candidate that the limits allow, or the size stated, rated."""
     found = sizes.candidates(request)
     order = tuple(reversed(found.sizes))

@@ -3,8 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
-
-import numpy as np
+from math import isfinite, log
 
 from specsheet.findings import Level
 from specsheet.meters.family import Array, Limit, Request
@@ -65,50 +64,64 @@ def of_purchase(request: Request) -> tuple[Limit, ...]:
     return tuple(wanted)
 
 
+_PHYSICS = (
+    Limit(
+        key="back_pressure_margin",
+        low=0.0,
+        high=None,
+        level=Level.STOP,
+        code="cavitation",
+        message="the liquid flashes or cavitates in the meter: the reading is wrong and the "
+        "meter is damaged; raise the pressure, cool the liquid, or lower the loss",
+        source="vapour pressure of the liquid",
+        phase="liquid",
+    ),
+    Limit(
+        key="mach_number",
+        low=None,
+        high=0.3,
+        level=Level.CAUTION,
+        code="mach-number-high",
+        message="above this the gas can no longer be taken as nearly incompressible in the "
+        "pipe; choose a larger pipe",
+        source=PRACTICE,
+        phase="gas",
+    ),
+)
+
+
 def of_physics() -> tuple[Limit, ...]:
     """Return the limits that hold for every family: no cavitation, no fast gas."""
-    return (
-        Limit(
-            key="back_pressure_margin",
-            low=0.0,
-            high=None,
-            level=Level.STOP,
-            code="cavitation",
-            message="the liquid flashes or cavitates in the meter: the reading is wrong and the "
-            "meter is damaged; raise the pressure, cool the liquid, or lower the loss",
-            source="vapour pressure of the liquid",
-            phase="liquid",
-        ),
-        Limit(
-            key="mach_number",
-            low=None,
-            high=0.3,
-            level=Level.CAUTION,
-            code="mach-number-high",
-            message="above this the gas can no longer be taken as nearly incompressible in the "
-            "pipe; choose a larger pipe",
-            source=PRACTICE,
-            phase="gas",
-        ),
-    )
+    return _PHYSICS
+
+
+def beside_own(request: Request) -> tuple[Limit, ...]:
+    """Return the limits of the tag's phase that do not depend on the element."""
+    every = (*of_profile(request), *of_purchase(request), *of_physics())
+    return tuple(limit for limit in every if limit.phase in ("", request.tag.phase))
 
 
 def shortfall(limit: Limit, values: Mapping[str, Array]) -> float:
     """Return by how much a limit is broken at its worst point: 0 where it holds everywhere.
 
     The logarithm of value over bound, so that limits of any unit weigh alike [-]. A value that is
-    not known everywhere (all NaN) breaks nothing.
+    not known breaks nothing.
     """
     found = values.get(limit.key)
-    if found is None or bool(np.isnan(found).all()):
+    if found is None:
         return 0.0
+    low, high = limit.low, limit.high
     worst = 0.0
-    with np.errstate(all="ignore"):
-        for bound, sign in ((limit.low, 1.0), (limit.high, -1.0)):
-            if bound is None:
-                continue
-            broken = sign * (found - bound) < 0.0
-            distance = np.abs(np.log(found / bound)) if bound else np.full(found.shape, 1.0)
-            distance = np.where(np.isfinite(distance), distance, _HOPELESS)
-            worst = max(worst, float(np.max(np.where(broken, distance, 0.0), initial=0.0)))
-    return min(worst, _HOPELESS)
+    for value in found.tolist():
+        if low is not None and value < low:
+            worst = max(worst, _distance(value, low))
+        if high is not None and value > high:
+            worst = max(worst, _distance(value, high))
+    return worst
+
+
+def _distance(value: float, bound: float) -> float:
+    if not bound:
+        return 1.0
+    ratio = value / bound
+    return min(abs(log(ratio)), _HOPELESS) if ratio > 0.0 and isfinite(ratio) else _HOPELESS

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass
+from functools import partial
 
 import numpy as np
 
@@ -41,10 +42,8 @@ class Rotor:
 def family(rotor: Rotor) -> Family:
     """Return the family of a rotor."""
 
-    def build(request: Request, item: sizes.Size) -> Element:
-        return _build(rotor, request, item)
-
     def size(request: Request) -> Element:
+        build = partial(_build, rotor, request, output.output(request))
         return choose_largest(request, build, Rules(at, limits, budget))
 
     return Family(
@@ -90,10 +89,9 @@ def _phase(request: Request) -> str:
     return request.tag.phase if request.tag.phase in request.profile.phases else "liquid"
 
 
-def _build(rotor: Rotor, request: Request, item: sizes.Size) -> Element:
+def _build(rotor: Rotor, request: Request, signals: output.Output, item: sizes.Size) -> Element:
     typical = request.profile.typical
     ranges = _range(rotor, request, item.bore)
-    signals = output.output(request)
     register = signals.numbers["pulse"] * 10.0**_DIGITS
     largest = float(request.stream.volume_flow[request.maximum])
     values = {
