@@ -1,6 +1,7 @@
 """The pipeline: a tag in, its evaluation out. Every front end calls :func:`evaluate`.
 
 * :mod:`specsheet.evaluate.prepare`  what every family shares on one tag
+* :mod:`specsheet.evaluate.judge`    the findings, with all that they rest on as arrays
 * :mod:`specsheet.evaluate.service`  what the service rules out, whatever the size
 * :mod:`specsheet.evaluate.remarks`  what usual practice says of a family in a service
 * :mod:`specsheet.evaluate.state`    where phase and flange rating flip
@@ -22,6 +23,6 @@
 
 from specsheet.evaluate.pipeline import evaluate
 from specsheet.evaluate.result import Evaluation
-from specsheet.evaluate.settled import evaluate_settled, unsettled
+from specsheet.evaluate.settled import evaluate_settled, findings_settled, unsettled
 
-__all__ = ["Evaluation", "evaluate", "evaluate_settled", "unsettled"]
+__all__ = ["Evaluation", "evaluate", "evaluate_settled", "findings_settled", "unsettled"]

@@ -16,8 +16,8 @@ from specsheet import packs
 from specsheet.evaluate import assemble
 from specsheet.evaluate.checks import check_limits
 from specsheet.evaluate.common import COMMON_DERIVATIONS
+from specsheet.evaluate.judge import put_into_line
 from specsheet.evaluate.limits import limits_of
-from specsheet.evaluate.pipeline import put_into_line
 from specsheet.evaluate.prepare import Prepared, prepare
 from specsheet.evaluate.prepare import request as requested
 from specsheet.evaluate.result import PointResult, Result

@@ -14,8 +14,26 @@ _ORDER = ("minimum", "normal", "maximum", "design")
 
 
 def check_statements(tag: Tag, points: Points) -> tuple[Finding, ...]:
-    """Return what is wrong with the statements as such: order of points, gauge and absolute."""
-    return (*_order(tag, points), *_pressures(tag))
+    """Return what is wrong with the statements as such.
+
+    What of the file is not used, points that are missing, their order, gauge and absolute.
+    """
+    return (*_unused(tag), *_points(tag), *_order(tag, points), *_pressures(tag))
+
+
+def _unused(tag: Tag) -> Iterator[Finding]:
+    """Yield what stands in the file and is not used: without it the sheet may look sound."""
+    for path, message in tag.unused:
+        where = "job.toml" if path.startswith("job.") else "The file"
+        yield Finding(
+            Level.STOP, "entry-unusable", path, f"{where} holds what cannot be used here: {message}"
+        )
+
+
+def _points(tag: Tag) -> Iterator[Finding]:
+    if not tag.points:
+        message = "State at least one operating point: its name, flow, pressure and temperature."
+        yield Finding(Level.STOP, "points-missing", "points", message)
 
 
 def _order(tag: Tag, points: Points) -> Iterator[Finding]:

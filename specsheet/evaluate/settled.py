@@ -2,16 +2,29 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
+from typing import Protocol, TypeVar
+
 from specsheet import fluid
+from specsheet.evaluate.judge import judge
 from specsheet.evaluate.pipeline import evaluate
 from specsheet.evaluate.result import Evaluation
+from specsheet.findings import Finding
 from specsheet.tag import Tag
 
 #: time that the search for a phase may take [s]
 PATIENCE = 10.0
 
 
-def unsettled(evaluation: Evaluation) -> bool:
+class _WithFindings(Protocol):
+    @property
+    def findings(self) -> tuple[Finding, ...]: ...
+
+
+_Verdict = TypeVar("_Verdict", bound=_WithFindings)
+
+
+def unsettled(evaluation: _WithFindings) -> bool:
     """Tell whether the phase at some operating point was left undecided."""
     return any(finding.code == "phase-unverified" for finding in evaluation.findings)
 
@@ -23,7 +36,16 @@ def evaluate_settled(tag: Tag, seconds: float = PATIENCE) -> Evaluation:
         tag: the tag.
         seconds: after which the search is given up, for good in this process.
     """
-    first = evaluate(tag)
+    return _settled(evaluate, tag, seconds)
+
+
+def findings_settled(tag: Tag, seconds: float = PATIENCE) -> tuple[Finding, ...]:
+    """Return the findings of :func:`evaluate_settled`, without the sheet that they belong to."""
+    return _settled(judge, tag, seconds).findings
+
+
+def _settled(work: Callable[[Tag], _Verdict], tag: Tag, seconds: float) -> _Verdict:
+    first = work(tag)
     if unsettled(first) and fluid.settle(tag, seconds):
-        return evaluate(tag)
+        return work(tag)
     return first

@@ -2,7 +2,7 @@
 
 import pytest
 
-from specsheet.evaluate import evaluate, evaluate_settled, unsettled
+from specsheet.evaluate import evaluate, evaluate_settled, findings_settled, unsettled
 from specsheet.fluid import dew_curve, envelope
 from specsheet.fluid import evaluate as states
 from tests.support.tags import WATER, point, tag_of
@@ -34,6 +34,7 @@ def test_open_phase_is_settled(temperature, phase, stopped):
     assert not unsettled(settled)
     assert settled.points[0].values["phase"].value == phase
     assert ("phase-disagrees" in {item.code for item in settled.findings}) is stopped
+    assert findings_settled(tag, 60.0) == settled.findings
 
 
 def test_time_that_runs_out_leaves_the_caution():
