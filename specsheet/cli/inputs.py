@@ -1,21 +1,13 @@
-"""Tag files named on the command line: read, with their problems narrated."""
+"""One tag file named on the command line: read, with its problems narrated."""
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Sequence
 
-from specsheet import job, tagfile
+from specsheet import tagfile
 from specsheet.cli.narrate import say
-from specsheet.job import Scan
+from specsheet.tag import Tag
 from specsheet.tagfile import Change, Reading
-
-
-def read_all(paths: Iterable[str]) -> Scan:
-    """Read every tag file of files and folders, and narrate each problem once."""
-    found = job.scan(paths)
-    for text in dict.fromkeys(str(problem) for problem in found.all_problems):
-        say(text)
-    return found
 
 
 def read_one(path: str, changes: Sequence[Change] = ()) -> tuple[Reading, bool]:
@@ -29,17 +21,20 @@ def read_one(path: str, changes: Sequence[Change] = ()) -> tuple[Reading, bool]:
     for problem in problems:
         say(str(problem))
     if changes and reading.tag is not None:
-        reading = supposed(path, changes)
+        supposed = suppose(path, changes)
+        if isinstance(supposed, str):
+            say(supposed)
+        reading = Reading(None) if isinstance(supposed, str) else Reading(supposed)
     return reading, bool(problems) or reading.tag is None
 
 
-def supposed(path: str, changes: Sequence[Change]) -> Reading:
-    """Read one tag file as if its entries held other values; narrate a refusal, without a tag."""
+def suppose(path: str, changes: Sequence[Change]) -> Tag | str:
+    """Return the tag of a file as if its entries held other values, or why it is refused."""
     text = tagfile.read_text(path)
     if not isinstance(text, str):
-        return Reading(None, (text,))
+        return str(text)
     try:
-        return tagfile.suppose(text, changes, path, tagfile.find_job(path))
+        reading = tagfile.suppose(text, changes, path, tagfile.find_job(path))
     except tagfile.EditError as refused:
-        say(f"{path}: --set {refused}")
-        return Reading(None)
+        return f"{path}: --set {refused}"
+    return reading.tag or "; ".join(map(str, reading.problems))

@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import re
-from collections.abc import Iterable
 from dataclasses import dataclass, replace
 from pathlib import Path
 
@@ -31,6 +30,37 @@ class TagFile:
         return (tag.name if tag else "") or self.path.stem
 
 
+class Numbers:
+    """The tag numbers met so far, so that one that comes twice in a job is found."""
+
+    def __init__(self) -> None:
+        self._first: dict[tuple[Path, str], Path] = {}
+
+    def repeated(self, name: str, path: Path, home: Path) -> Problem | None:
+        """Return the problem of a file whose tag number an earlier one has, else None.
+
+        Args:
+            name: the tag number, upper and lower case alike; "" where none could be read.
+            path: the file.
+            home: what the number must be unique in, a folder of a job.
+        """
+        if not name:
+            return None
+        first = self._first.setdefault((home, name.casefold()), path)
+        if first == path:
+            return None
+        message = f'{first} is tag "{name}" already; each tag needs its own number'
+        return Problem(str(path), 1, "tag", message)
+
+    def marked(self, file: TagFile, home: Path) -> TagFile:
+        """Return a file as it was read, with the problem of a repeated number if it has one."""
+        reading = file.reading
+        problem = self.repeated(reading.tag.name if reading.tag else "", file.path, home)
+        if problem is None:
+            return file
+        return replace(file, reading=replace(reading, problems=(*reading.problems, problem)))
+
+
 @dataclass(frozen=True, slots=True)
 class JobFolder:
     """A job as it stands on the disk.
@@ -49,8 +79,9 @@ class JobFolder:
 
     def read(self) -> tuple[TagFile, ...]:
         """Read every tag file. A tag number that a file before it has too is a problem."""
+        numbers = Numbers()
         files = (TagFile(path, tagfile.load(path, self.job)) for path in self.paths)
-        return with_duplicates(files)
+        return tuple(numbers.marked(file, self.folder) for file in files)
 
     def find(self, name: str) -> TagFile | None:
         """Return the file of a tag number, upper and lower case alike; None where none has it."""
@@ -83,24 +114,6 @@ def open_job(path: str | Path) -> JobFolder:
         return JobFolder(path, job, (), (Problem(str(tags), 1, "file", message),))
     home = Path(job.folder) if job.folder else path
     return JobFolder(home, job, tuple(sorted(found, key=lambda item: natural_order(item.name))))
-
-
-def with_duplicates(files: Iterable[TagFile]) -> tuple[TagFile, ...]:
-    """Return the files, a problem added to each whose tag number an earlier one has."""
-    first: dict[str, Path] = {}
-    found: list[TagFile] = []
-    for file in files:
-        tag = file.reading.tag
-        key = tag.name.casefold() if tag else ""
-        if key and key in first:
-            message = f'{first[key]} is tag "{file.name}" already; each tag needs its own number'
-            problem = Problem(str(file.path), 1, "tag", message)
-            problems = (*file.reading.problems, problem)
-            file = replace(file, reading=replace(file.reading, problems=problems))
-        elif key:
-            first[key] = file.path
-        found.append(file)
-    return tuple(found)
 
 
 def natural_order(name: str) -> tuple[tuple[int, str], ...]:

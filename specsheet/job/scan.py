@@ -1,4 +1,4 @@
-"""Files and folders, as named on a command line -> every tag file in them, read."""
+"""Files and folders, as named on a command line -> every tag file in them, to be read in turn."""
 
 from __future__ import annotations
 
@@ -7,8 +7,28 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from specsheet import tagfile
-from specsheet.job.folder import JobFolder, TagFile, is_folder, open_job, with_duplicates
-from specsheet.tagfile import Job, Problem, Reading
+from specsheet.job.folder import JobFolder, TagFile, is_folder, open_job
+from specsheet.tagfile import Job, Problem
+
+
+@dataclass(frozen=True, slots=True)
+class Listed:
+    """One tag file that was found. It is read when it is wanted: a job may hold thousands.
+
+    Attributes:
+        path: the file.
+        job: the job it belongs to, read already.
+        home: what its tag number is unique in: the folder of the job; the file itself where
+            there is none, since files without a job may be drafts of one tag.
+    """
+
+    path: Path
+    job: Job
+    home: Path
+
+    def read(self) -> TagFile:
+        """Read the file, within its job. Nothing that stands there raises."""
+        return TagFile(self.path, tagfile.load(self.path, self.job))
 
 
 @dataclass(frozen=True, slots=True)
@@ -20,27 +40,17 @@ class Scan:
         problems: those of the jobs, each job once, and of folders that hold no tag.
     """
 
-    files: tuple[TagFile, ...]
+    files: tuple[Listed, ...]
     problems: tuple[Problem, ...]
-
-    def readings(self) -> tuple[Reading, ...]:
-        """Return the readings of all files, in order."""
-        return tuple(file.reading for file in self.files)
-
-    @property
-    def all_problems(self) -> tuple[Problem, ...]:
-        """The problems of jobs, folders and tags together."""
-        return (*self.problems, *(p for file in self.files for p in file.reading.problems))
 
 
 def scan(paths: Iterable[str | Path]) -> Scan:
-    """Read every tag file in ``paths``: tag files, folders of tags, folders of jobs.
+    """Find every tag file in ``paths``: tag files, folders of tags, folders of jobs.
 
-    Each ``job.toml`` is read once. Two files of one job with the same tag number are a problem.
+    Each ``job.toml`` is read once, no tag file is read yet.
     """
     jobs: dict[Path, Job] = {}
-    found: dict[Path, TagFile] = {}
-    groups: dict[Path, list[TagFile]] = {}
+    found: dict[Path, Listed] = {}
     problems: list[Problem] = []
     for path in paths:
         opened = _open(Path(path), jobs)
@@ -49,13 +59,9 @@ def scan(paths: Iterable[str | Path]) -> Scan:
             message = "no tag file is in this folder; name one, or the folder of a job"
             problems.append(Problem(str(path), 1, "file", message))
         for item in opened.paths:
-            if item not in found:
-                found[item] = TagFile(item, tagfile.load(item, opened.job))
-                groups.setdefault(opened.folder, []).append(found[item])
+            found.setdefault(item, Listed(item, opened.job, opened.folder))
     read_once = {job.path: job for job in jobs.values()}
     problems.extend(problem for job in read_once.values() for problem in job.problems)
-    for group in groups.values():
-        found.update((file.path, file) for file in with_duplicates(group))
     return Scan(tuple(found.values()), tuple(problems))
 
 
@@ -68,5 +74,4 @@ def _open(path: Path, jobs: dict[Path, Job]) -> JobFolder:
     if path.parent not in jobs:
         jobs[path.parent] = tagfile.find_job(path)
     job = jobs[path.parent]
-    # files without a job are compared with none: they may be drafts of one tag
     return JobFolder(Path(job.folder) if job.folder else path, job, (path,))

@@ -1,4 +1,4 @@
-"""Files and folders of a command line become tag files, each read once."""
+"""Files and folders of a command line become tag files, each listed once."""
 
 from __future__ import annotations
 
@@ -7,7 +7,7 @@ from pathlib import Path
 import pytest
 
 from specsheet import tagfile
-from specsheet.job import scan
+from specsheet.job import Numbers, scan
 
 TAG = """\
 schema = 1
@@ -48,9 +48,9 @@ def test_folders_and_files_in_the_order_named(site: Path) -> None:
         "a/tags/ft-9.toml",
         "a/tags/ft-10.toml",
     ]
-    assert found.all_problems == ()
-    titles = [file.reading.tag.text("job.title") for file in found.files if file.reading.tag]
-    assert titles == ["", "b", "b", "a", "a"]
+    assert found.problems == ()
+    tags = [file.read().reading.tag for file in found.files]
+    assert [tag.text("job.title") for tag in tags if tag] == ["", "b", "b", "a", "a"]
 
 
 def test_each_job_is_read_once(site: Path, monkeypatch: pytest.MonkeyPatch) -> None:
@@ -70,29 +70,46 @@ def test_problems_of_a_job_are_reported_once(site: Path) -> None:
     (site / "a" / "job.toml").write_text("schema = 1\nnonsense = 1\n")
     files = sorted((site / "a" / "tags").iterdir())
     for paths in ([site / "a"], files, [site / "a", *files, site / "a" / "job.toml"]):
-        (problem,) = scan(paths).all_problems
+        (problem,) = scan(paths).problems
         assert str(problem).startswith(f"{site}/a/job.toml:2: nonsense: ")
 
 
+def _repeated(paths: list[Path]) -> list[str]:
+    """Return the files whose number an earlier one of their job has."""
+    numbers = Numbers()
+    return [
+        problem.path
+        for file in scan(paths).files
+        if (problem := numbers.repeated(file.read().name, file.path, file.home))
+    ]
+
+
 def test_the_same_number_within_one_job_only(site: Path) -> None:
-    twin = write(site / "a" / "tags" / "twin.toml", "FT-9")
-    assert [p.path for p in scan([site / "a", site / "b"]).all_problems] == [str(twin)]
+    twin = write(site / "a" / "tags" / "twin.toml", "ft-9")
+    assert _repeated([site / "a", site / "b"]) == [str(twin)]
     drafts = [write(site / "x" / name, "FT-9") for name in ("one.toml", "two.toml")]
-    assert scan(drafts).all_problems == ()
+    assert _repeated(drafts) == []
+
+
+def test_no_tag_file_is_read_before_it_is_wanted(
+    site: Path, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    read: list[Path] = []
+    monkeypatch.setattr(tagfile, "load", lambda path, job: read.append(path))
+    files = scan([site / "a", site / "b"]).files
+    assert read == []
+    files[1].read()
+    assert read == [files[1].path]
 
 
 def test_what_is_not_there(site: Path) -> None:
     (site / "empty").mkdir()
     found = scan([site / "no.toml", site / "empty", site / "a" / "tags" / "ft-9.toml"])
-    assert [str(problem) for problem in found.all_problems] == [
+    assert [str(problem) for problem in found.problems] == [
         f"{site}/empty:1: file: no tag file is in this folder; name one, or the folder of a job",
-        f"{site}/no.toml:1: file: there is no such file",
     ]
-    assert [file.reading.tag is None for file in found.files] == [True, False]
-
-
-def test_one_bad_file_does_not_hide_the_others(site: Path) -> None:
-    (site / "a" / "tags" / "ft-9.toml").write_text("flow = 3 t/h")
-    found = scan([site / "a"])
-    assert [file.reading.tag is None for file in found.files] == [True, False]
-    assert len(found.all_problems) == 1
+    absent, present = (file.read().reading for file in found.files)
+    assert present.tag is not None
+    assert [str(problem) for problem in absent.problems] == [
+        f"{site}/no.toml:1: file: there is no such file"
+    ]

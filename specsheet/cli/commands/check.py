@@ -4,37 +4,61 @@ from __future__ import annotations
 
 from argparse import Namespace
 from collections import Counter
+from collections.abc import Sequence
+from dataclasses import dataclass
+from functools import partial
 
-from specsheet.cli.inputs import read_all, supposed
+from specsheet.cli.batch import Batch
+from specsheet.cli.inputs import suppose
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status, verdict
 from specsheet.evaluate import evaluate_settled
 from specsheet.findings import Finding, Level
+from specsheet.tag import Tag
+from specsheet.tagfile import Change
+
+
+@dataclass(frozen=True, slots=True)
+class _Checked:
+    """The findings of one tag: as lines, and how many of each level."""
+
+    lines: str
+    levels: Counter[Level]
 
 
 def run(arguments: Namespace) -> Status:
     """Write one line a finding to stdout and the totals to stderr."""
     counts: Counter[Level] = Counter()
-    scanned = read_all(arguments.paths)
-    readings = scanned.readings()
+    tags = 0
     refused = False
-    if arguments.set:
-        usable = [file.path for file in scanned.files if file.reading.tag is not None]
-        readings = tuple(supposed(str(path), arguments.set) for path in usable)
-        refused = any(reading.tag is None for reading in readings)
-    tags = [reading.tag for reading in readings if reading.tag is not None]
-    for tag in tags:
-        for finding in evaluate_settled(tag).findings:
-            counts[finding.level] += 1
-            if arguments.all or finding.level is not Level.NOTE:
-                data(_line(tag.path, finding))
+    batch = Batch(arguments.paths)
+    for checked in batch.each(partial(_check, changes=arguments.set, notes=arguments.all)):
+        if isinstance(checked, str):
+            say(checked)
+            refused = True
+        elif checked is not None:
+            tags += 1
+            counts += checked.levels
+            if checked.lines:
+                data(checked.lines)
     say(
-        f"{len(tags)} tag{'s' if len(tags) != 1 else ''}: {counts[Level.STOP]} stop, "
+        f"{tags} tag{'s' if tags != 1 else ''}: {counts[Level.STOP]} stop, "
         f"{counts[Level.CAUTION]} caution, {counts[Level.NOTE]} note"
     )
-    if scanned.all_problems or refused:
+    if batch.unusable or refused:
         return Status.UNUSABLE
     return verdict(counts, strict=arguments.strict)
+
+
+def _check(tag: Tag, *, changes: Sequence[Change], notes: bool) -> _Checked | str:
+    """Return the findings of a tag, or why the changes to it are refused."""
+    supposed = suppose(tag.path, changes) if changes else tag
+    if isinstance(supposed, str):
+        return supposed
+    findings = evaluate_settled(supposed).findings
+    shown = (item for item in findings if notes or item.level is not Level.NOTE)
+    levels = Counter(item.level for item in findings)
+    return _Checked("".join(_line(tag.path, item) for item in shown), levels)
 
 
 def _line(path: str, finding: Finding) -> str:
@@ -42,4 +66,4 @@ def _line(path: str, finding: Finding) -> str:
     if finding.reserve is not None:
         margin = f" [{finding.reserve.driver.replace('_', ' ')} {finding.reserve.fraction:+.1%}]"
     where = f" {finding.field}:" if finding.field else ""
-    return f"{path}: {finding.level} {finding.code}:{where} {finding.message}{margin}"
+    return f"{path}: {finding.level} {finding.code}:{where} {finding.message}{margin}\n"

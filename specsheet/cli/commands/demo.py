@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from argparse import Namespace
 from collections import Counter
+from dataclasses import dataclass, replace
 from pathlib import Path
 
 from rich.console import Console
@@ -12,16 +13,28 @@ from rich.table import Table
 from rich.text import Text
 
 from specsheet import packs, sheet, tagfile, tui
-from specsheet.cli.inputs import read_all
+from specsheet.cli.batch import Batch
 from specsheet.cli.narrate import say
 from specsheet.cli.status import Status
-from specsheet.evaluate import Evaluation, evaluate_settled
+from specsheet.evaluate import evaluate_settled
 from specsheet.findings import Level
 from specsheet.render import pdf
+from specsheet.tag import Tag
 from specsheet.tui import terminal
 
 #: spaces between two columns of the summary, and the least that is shown of a service
 _GAP, _LEAST_SERVICE = 2, 12
+
+
+@dataclass(frozen=True, slots=True)
+class _Made:
+    """What one tag came to: its line of the summary and its sheet."""
+
+    name: str
+    service: str
+    family: str
+    levels: Counter[Level]
+    document: bytes
 
 
 def run(arguments: Namespace) -> int | Status:
@@ -54,41 +67,45 @@ def _write_job(folder: Path) -> None:
         tagfile.save(target, path.read_text(encoding="utf-8"))
 
 
-def _print_all(folder: Path, output: Path) -> list[Evaluation]:
+def _print_all(folder: Path, output: Path) -> list[_Made]:
     """Derive and print every tag, with a bar on stderr."""
-    done: list[Evaluation] = []
-    readings = read_all([str(folder)]).readings()
+    done: list[_Made] = []
+    batch = Batch([str(folder)])
     columns = (TextColumn("{task.description}"), BarColumn(), MofNCompleteColumn())
     with Progress(*columns, console=Console(stderr=True)) as progress:
-        for reading in progress.track(readings, description="printing"):
-            if reading.tag is not None:
-                evaluation = evaluate_settled(reading.tag)
-                pdf.write(sheet.build(evaluation), output / pdf.file_name(reading.tag.name))
-                done.append(evaluation)
+        for made in progress.track(batch.each(_make), total=batch.count, description="printing"):
+            if made is not None:
+                pdf.store(made.document, output / pdf.file_name(made.name))
+                done.append(replace(made, document=b""))
     return done
 
 
-def _show(evaluations: list[Evaluation]) -> None:
+def _make(tag: Tag) -> _Made:
+    evaluation = evaluate_settled(tag)
+    levels = Counter(finding.level for finding in evaluation.findings)
+    document = pdf.to_bytes(sheet.build(evaluation))
+    return _Made(tag.name, tag.text("service"), tag.family, levels, document)
+
+
+def _show(tags: list[_Made]) -> None:
     """Write the summary table to stdout."""
     console = Console()
     table = Table(box=None, pad_edge=False)
     table.add_column("tag", no_wrap=True)
-    width = _room_for_service(console.width, evaluations)
+    width = _room_for_service(console.width, tags)
     table.add_column("service", no_wrap=True, overflow="ellipsis", max_width=width)
     table.add_column("family", no_wrap=True)
     for level in Level:
         table.add_column(level, justify="right", no_wrap=True)
-    for evaluation in evaluations:
-        tag = evaluation.tag
-        counts = Counter(finding.level for finding in evaluation.findings)
-        cells = (tag.name, tag.text("service"), tag.family, *(str(counts[x]) for x in Level))
+    for tag in tags:
+        cells = (tag.name, tag.service, tag.family, *(str(tag.levels[x]) for x in Level))
         table.add_row(*(Text(cell) for cell in cells))
     console.print(table)
 
 
-def _room_for_service(width: int, evaluations: list[Evaluation]) -> int:
+def _room_for_service(width: int, tags: list[_Made]) -> int:
     """Return how wide the services may be so that nothing else is cut [characters]."""
-    tag = max((len(item.tag.name) for item in evaluations), default=0)
-    family = max((len(item.tag.family) for item in evaluations), default=0)
+    name = max((len(item.name) for item in tags), default=0)
+    family = max((len(item.family) for item in tags), default=0)
     levels = sum(len(level) + _GAP for level in Level)
-    return max(_LEAST_SERVICE, width - tag - family - levels - 2 * _GAP)
+    return max(_LEAST_SERVICE, width - name - family - levels - 2 * _GAP)

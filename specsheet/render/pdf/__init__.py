@@ -2,6 +2,7 @@
 
 * :func:`to_bytes`   the document
 * :func:`write`      the document into a file, in one step
+* :func:`store`      a document made before into a file
 * :func:`file_name`  the name of the file of a tag
 """
 
@@ -15,7 +16,7 @@ from specsheet.sheet.model import Sheet
 from specsheet.tagfile.writing import SaveError as WriteError
 from specsheet.tagfile.writing import save
 
-__all__ = ["WriteError", "file_name", "to_bytes", "write"]
+__all__ = ["WriteError", "file_name", "store", "to_bytes", "write"]
 
 #: names that one common file system keeps for devices
 _RESERVED = re.compile(r"(?i)(con|prn|aux|nul|com\d|lpt\d)(\..*)?")
@@ -42,10 +43,18 @@ def write(sheet: Sheet, path: str | Path, paper: str | None = None) -> None:
     Raises:
         WriteError: it could not be written; an older file of that name is untouched.
     """
-    data = to_bytes(replace(sheet, paper=paper) if paper else sheet)
+    store(to_bytes(replace(sheet, paper=paper) if paper else sheet), path)
+
+
+def store(document: bytes, path: str | Path) -> None:
+    """Write a document made by :func:`to_bytes`; as :func:`write` otherwise.
+
+    Raises:
+        WriteError: it could not be written; an older file of that name is untouched.
+    """
     try:
         Path(path).parent.mkdir(parents=True, exist_ok=True)
     except OSError as error:
         reason = error.strerror or type(error).__name__
         raise WriteError(f"{path} was not saved: its folder cannot be made ({reason})") from error
-    save(path, data, flush=False)  # it can be printed again
+    save(path, document, flush=False)  # it can be printed again
