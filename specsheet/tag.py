@@ -54,6 +54,8 @@ class Tag:
         revisions: the revision block, oldest first.
         path: file the tag came from, or "".
         folder: job folder it belongs to, or "".
+        unused: path and message of each thing that stands in the file of the tag, or of its job
+            ("job."), and cannot be used.
     """
 
     given: Mapping[str, Value]
@@ -62,6 +64,7 @@ class Tag:
     revisions: tuple[Revision, ...] = ()
     path: str = ""
     folder: str = ""
+    unused: tuple[tuple[str, str], ...] = ()
 
     def get(self, path: str) -> Value | None:
         """Return the value of an entry, given or assumed, or None."""

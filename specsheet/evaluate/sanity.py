@@ -24,7 +24,7 @@ def check_statements(tag: Tag, points: Points) -> tuple[Finding, ...]:
 def _unused(tag: Tag) -> Iterator[Finding]:
     """Yield what stands in the file and is not used: without it the sheet may look sound."""
     for path, message in tag.unused:
-        where = "job.toml" if path.startswith("job.") else "The file"
+        where = "The file job.toml" if path.startswith("job.") else "The file"
         yield Finding(
             Level.STOP, "entry-unusable", path, f"{where} holds what cannot be used here: {message}"
         )

@@ -24,11 +24,11 @@ class Collector:
         self._text = text
         self._path = path
         self._sections = sections
-        self._found: list[tuple[Place, str, str]] = []
+        self._found: list[tuple[Place, str, str, bool]] = []
 
-    def add(self, place: Place, field: str, message: str) -> None:
-        """Report a problem at a place of the file."""
-        self._found.append((place, field, message))
+    def add(self, place: Place, field: str, message: str, *, lacking: bool = False) -> None:
+        """Report a problem at a place of the file; ``lacking`` where nothing stands there."""
+        self._found.append((place, field, message, lacking))
 
     def problems(self) -> tuple[Problem, ...]:
         """Return all problems in the order of the file. The text is scanned only when needed."""
@@ -36,8 +36,8 @@ class Collector:
             return ()
         lines = Lines(self._text)
         found = [
-            Problem(self._path, lines.of(place), printable(field, 200), message)
-            for place, field, message in self._found
+            Problem(self._path, lines.of(place), printable(field, 200), message, lacking)
+            for place, field, message, lacking in self._found
         ]
         return tuple(sorted(found, key=lambda problem: problem.line))
 
@@ -75,7 +75,7 @@ class Collector:
                 else:
                     found[key] = taken
         for entry in missing(keys, raw):
-            self.add(place, join(field, entry.key), needed_message(entry))
+            self.add(place, join(field, entry.key), needed_message(entry), lacking=True)
         return found
 
     def _unknown(

@@ -21,12 +21,14 @@ class Problem:
         line: line it stands on, from 1; 1 where the whole file is meant.
         field: path of the entry ("points.minimum.flow"), or "file".
         message: what was wanted, what came, how to mend it.
+        lacking: whether the file holds nothing there, so that nothing of it goes unused.
     """
 
     path: str
     line: int
     field: str
     message: str
+    lacking: bool = False
 
     def __str__(self) -> str:
         return f"{self.path or '-'}:{self.line}: {self.field}: {self.message}"

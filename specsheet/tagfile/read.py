@@ -86,8 +86,15 @@ def _read(data: dict[str, Any], text: str, path: str, job: Job, schema: int) -> 
     revisions = _revisions(data.get("revisions", []), collector, sections)
     given.update(job.given)
     assumed = _assumed(family, given, collector)
-    tag = Tag(given, assumed, points, revisions, path, job.folder)
-    return Reading(tag, collector.problems(), schema)
+    problems = collector.problems()
+    unused = (*_unused("", problems), *_unused("job.", job.problems))
+    tag = Tag(given, assumed, points, revisions, path, job.folder, unused)
+    return Reading(tag, problems, schema)
+
+
+def _unused(prefix: str, problems: tuple[Problem, ...]) -> tuple[tuple[str, str], ...]:
+    """Return path and message of each problem about something that stands in the file."""
+    return tuple((prefix + item.field, item.message) for item in problems if not item.lacking)
 
 
 def _check_schema(data: Mapping[str, Any], collector: Collector) -> None:
@@ -113,7 +120,7 @@ def _check_fluid(
     key = _ESSENTIAL.get(str(given.get("fluid.kind")))
     if key and isinstance(raw, dict) and blank(raw.get(key, "")):
         message = needed_message(sections["fluid"][key])
-        collector.add(("fluid",), f"fluid.{key}", message)
+        collector.add(("fluid",), f"fluid.{key}", message, lacking=True)
 
 
 def _points(raw: object, collector: Collector, sections: Any) -> tuple[Point, ...]:
@@ -123,7 +130,7 @@ def _points(raw: object, collector: Collector, sections: Any) -> tuple[Point, ..
             "at least one operating point is wanted; write [[points]] and below it "
             'name = "normal", flow, pressure and temperature'
         )
-        collector.add(("points",), "points", message)
+        collector.add(("points",), "points", message, lacking=True)
         return ()
     if not isinstance(raw, list):
         message = f"operating points were wanted, {came(raw)} came; write [[points]] (two brackets)"

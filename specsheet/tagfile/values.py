@@ -224,6 +224,8 @@ def _quantity(entry: Entry, raw: object) -> Value | Refusal:
     typed = printable(number_text(raw))  # type: ignore[arg-type]
     if entry.kind == "dimensionless":
         return quantity.parse(typed, entry.kind)
+    if not math.isfinite(raw):  # type: ignore[arg-type]
+        return Refusal(_wanted(entry, f"{KINDS[entry.kind].label}, with its unit,", raw))
     unit = entry.example.partition(" ")[2]
     return Refusal(
         f"{KINDS[entry.kind].label}, with its unit, was wanted, {came(raw)} came; "

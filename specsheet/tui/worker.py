@@ -47,6 +47,8 @@ def _sheet(request: Derive | Print, *, settle: bool) -> Derived:
     job = tagfile.find_job(request.path)
     reading = tagfile.loads(request.text, request.path, job)
     problems = (*reading.problems, *job.problems)
+    if reading.tag is not None:  # what is in the file and unusable is among the sheet's findings
+        problems = tuple(problem for problem in problems if problem.lacking)
     troubles = tuple(Trouble(problem.field, problem.message) for problem in problems)
     if reading.tag is None:
         return Derived(request.number, None, troubles)

@@ -4,6 +4,7 @@ import math
 
 import pytest
 
+from specsheet import tagfile
 from specsheet.evaluate import evaluate
 from specsheet.findings import Level
 from tests.support.tags import NITROGEN, STEAM, WATER, point, tag_of
@@ -79,6 +80,44 @@ def test_wrong_order_of_points_is_said():
     )
     found = [item for item in evaluate(tag).findings if item.code == "points-out-of-order"]
     assert [item.field for item in found] == ["points.minimum.flow"]
+
+
+def spoilt(*points, family="orifice_concentric", rest=""):
+    """Return the evaluation of a steam tag whose file has problems."""
+    text = f'family = "{family}"\n[fluid]\n{STEAM}\n[line]\nsize = "DN 150"\nschedule = "40"\n'
+    reading = tagfile.loads(f'tag = "FT-1"\n{text}{"".join(points)}{rest}')
+    assert reading.problems
+    return evaluate(reading.tag)
+
+
+def test_what_the_file_holds_and_cannot_be_used_is_a_stop():
+    """Without it steam of a refused temperature passes for saturated steam, on the sheet too."""
+    refused = point("normal", "1 t/h", "7 bar(g)", "-300 degC")
+    evaluation = spoilt(refused, rest='[meter]\ntapz = "corner"\n')
+    found = [item for item in evaluation.findings if item.code == "entry-unusable"]
+    assert [item.field for item in found] == ["points.normal.temperature", "meter.tapz"]
+    assert {item.level for item in found} == {Level.STOP}
+    assert "-273.15 degC" in found[0].message
+
+
+def test_what_the_job_holds_and_cannot_be_used_is_a_stop(tmp_path):
+    job = tmp_path / "job.toml"
+    job.write_text('atmospheric_pressure = "1,0 bar(a)"\n')
+    text = f'tag = "FT-1"\nfamily = "vortex"\n[fluid]\n{STEAM}\n'
+    reading = tagfile.loads(text, str(tmp_path / "FT-1.toml"), tagfile.load_job(job))
+    found = [item for item in evaluate(reading.tag).findings if item.code == "entry-unusable"]
+    assert [item.field for item in found] == ["job.atmospheric_pressure"]
+    assert found[0].message.startswith("The file job.toml holds")
+
+
+def test_an_entry_that_is_not_filled_in_yet_is_no_unusable_one():
+    evaluation = spoilt(point("normal", "1 t/h", "7 bar(g)", "185 degC"), family="")
+    assert "entry-unusable" not in {item.code for item in evaluation.findings}
+
+
+def test_a_tag_without_operating_points_is_stopped():
+    found = {item.code: item.level for item in spoilt().findings}
+    assert found["points-missing"] is Level.STOP
 
 
 @pytest.mark.parametrize(

@@ -228,6 +228,7 @@ ONE_PROBLEM = [
     ('"3.1 t/h"', '"185 degC"', 26, "points.normal.flow", "flow"),
     ('"3.1 t/h"', "{ a = 1 }", 26, "points.normal.flow", "a table came"),
     ('"3.1 t/h"', '"nan t/h"', 26, "points.normal.flow", ""),
+    ('"3.1 t/h"', "inf", 26, "points.normal.flow", 'inf came; write flow = "3.1 t/h"'),
     ("1.310", "nan", 29, "points.normal.isentropic_exponent", ""),
     ("1.310", "true", 29, "points.normal.isentropic_exponent", "true came"),
     ('"7.0 bar(g)"', '"7.0 bar"', 27, "points.normal.pressure", ""),
