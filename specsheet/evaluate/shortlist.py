@@ -162,18 +162,25 @@ def candidate(
     service = judge_service(prepared, profile)
     in_line = "closed pipe" in profile.applies_to
     said = (*(of_flanges if in_line else ()), *service.findings)
+    if _stops(said):
+        return _unfit(profile, family, said, service)
     own = prepared.tag.family == profile.key
     tag = prepared.tag if own else with_family(prepared.tag, profile.key)
-    request = None if _stops(said) else requested(prepared, profile, tag)
+    request = requested(prepared, profile, tag)
     if request is None:
-        missing = () if _stops(said) else _stops(prepared.findings(profile))
-        reasons = _deciding((*said, *missing))
-        return Candidate(
-            profile, Verdict.UNFIT, family is not None, reasons, unknown=service.unknown
-        )
+        missing = _stops(prepared.findings(profile))
+        return _unfit(profile, family, (*said, *missing), service)
     habits = () if family is not None else judge_habits(prepared, profile)
     choosing = remarks(profile, tag.phase, prepared.words, choosing=True)
     return _sized(request, family, (*said, *habits, *choosing), service)
+
+
+def _unfit(
+    profile: Profile, family: Family | None, findings: Iterable[Finding], service: Service
+) -> Candidate:
+    """Return a family that is ruled out before it is sized."""
+    reasons = _deciding(findings)
+    return Candidate(profile, Verdict.UNFIT, family is not None, reasons, unknown=service.unknown)
 
 
 def _stops(findings: Iterable[Finding]) -> tuple[Finding, ...]:
