@@ -10,7 +10,6 @@ import pytest
 from specsheet import sheet
 from specsheet.evaluate.result import Evaluation
 from specsheet.render import pdf
-from specsheet.render.pdf import document
 from specsheet.render.pdf.compose import compose
 from specsheet.sheet.model import Sheet
 from tests.sheet import samples
@@ -110,7 +109,7 @@ def test_headings_of_a_table_are_set_again_overleaf() -> None:
 
 def test_the_bidders_places_are_known() -> None:
     made = sheet.build(samples.evaluation())
-    book = compose(made, document.open_canvas(made)._doc)
+    book = compose(made)
     assert [place.name for place in book.places] == [item.key for item in made.reply]
     for place in book.places:
         assert place.right - place.left > 100.0

@@ -34,7 +34,7 @@ def seconds(repeats: int, count: int) -> float:
 
 def plain_canvas(texts: int) -> float:
     """Shortest time for a canvas that does nothing but draw so many short texts [s]."""
-    fonts.font()
+    fonts.face()
     best = float("inf")
     for _ in range(5):
         start = time.perf_counter()

@@ -4,10 +4,11 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 
-from specsheet.render.pdf import fonts, style, wrap
+from specsheet.render.pdf import fonts, style
+from specsheet.render.pdf.fonts import Run
 from specsheet.render.pdf.page import Columns, Frame
 from specsheet.render.pdf.style import Style
-from specsheet.render.shared import FIXED, figures, groups, numbers, put_in, source
+from specsheet.render.shared import figures, groups, numbers, put_in, source
 from specsheet.sheet.model import Sheet, Working
 from specsheet.sheet.words import named
 
@@ -65,27 +66,27 @@ def _working(frame: Columns, sheet: Sheet, group: Sequence[Working]) -> None:
 def _result(frame: Columns, working: Working) -> None:
     """Set the name of a value and, at the right, its figures; below one another where too wide."""
     name = frame.book.clean(named(working.label, working.symbol))
-    shown = frame.book.clean(figures(working.result)).replace(FIXED, " ")
+    shown = frame.book.clean(figures(working.result))
     wide = fonts.width(shown, style.FINE_STRONG.size)
     if fonts.width(name, style.FINE_STRONG.size) + _APART + wide <= frame.width:
         frame.keep(style.FINE_STRONG.leading)
         frame.page.right(
             frame.x + frame.width, frame.y - style.FINE_STRONG.size, shown, style.FINE_STRONG
         )
-        _set(frame, (name,), style.FINE_STRONG)
+        _set(frame, _lines(frame, name, frame.width), style.FINE_STRONG)
     else:
         _set(frame, _lines(frame, name, frame.width), style.FINE_STRONG)
         _set(frame, _lines(frame, figures(working.result), frame.width), style.FINE_STRONG)
 
 
-def _lines(frame: Frame, text: str, room: float) -> tuple[str, ...]:
-    return wrap.lines(frame.book.clean(text), room, style.FINE.size)
+def _lines(frame: Frame, text: str, room: float) -> tuple[Run, ...]:
+    return frame.book.lines(text, room, style.FINE)
 
 
-def _set(frame: Frame, lines: Sequence[str], look: Style, indent: float = 0.0) -> None:
+def _set(frame: Frame, lines: Sequence[Run], look: Style, indent: float = 0.0) -> None:
     for line in lines:
         frame.keep(look.leading)
-        frame.page.text(frame.x + indent, frame.y - look.size, line.replace(FIXED, " "), look)
+        frame.page.run(frame.x + indent, frame.y - look.size, line, look)
         frame.y -= look.leading
 
 

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from specsheet.render.pdf import annex, body, document, head, ruler, style
-from specsheet.render.pdf.page import Book, Frame, Pen
+from specsheet.render.pdf.page import Book, Frame
 from specsheet.sheet.model import Sheet
 
 _ANNEX = 0.4  # of a page: with less room left the annex starts overleaf
@@ -11,15 +11,13 @@ _ANNEX = 0.4  # of a page: with less room left the annex starts overleaf
 
 def to_bytes(sheet: Sheet) -> bytes:
     """Return the sheet as a PDF document; equal sheets give equal bytes."""
-    canvas = document.open_canvas(sheet)
-    book = compose(sheet, canvas._doc)
-    return document.close(canvas, book, sheet)
+    return document.bound(compose(sheet), sheet)
 
 
-def compose(sheet: Sheet, pdf: object) -> Book:
+def compose(sheet: Sheet) -> Book:
     """Return the pages of the sheet, without running heads and feet."""
     size = style.PAPERS.get(sheet.paper, style.PAPERS["A4"])
-    book = Book(Pen(pdf), size, body.narrowest(sheet))
+    book = Book(size, body.narrowest(sheet))
     frame = Frame(book, style.SIDE, book.size[0] - 2.0 * style.SIDE, 0, book.top(0))
     head.band(frame, sheet)
     head.details(frame, sheet)

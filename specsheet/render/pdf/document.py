@@ -16,7 +16,7 @@ from reportlab.lib.utils import TimeStamp
 from reportlab.pdfgen.canvas import Canvas
 
 import specsheet
-from specsheet.render.pdf import fonts, style, wrap
+from specsheet.render.pdf import embed, fonts, style, wrap
 from specsheet.render.pdf.page import Book
 from specsheet.sheet.model import Sheet
 
@@ -24,9 +24,9 @@ from specsheet.sheet.model import Sheet
 _NO_DATE = date(2000, 1, 1)
 
 
-def open_canvas(sheet: Sheet) -> Canvas:
+def _canvas(sheet: Sheet) -> Canvas:
     """Return an empty canvas of the sheet's paper, with pinned date and identity."""
-    fonts.font()
+    fonts.face()
     canvas = Canvas(
         BytesIO(),
         pagesize=style.PAPERS.get(sheet.paper, style.PAPERS["A4"]),
@@ -64,9 +64,11 @@ def _describe(canvas: Canvas, sheet: Sheet) -> None:
     canvas.setViewerPreference("DisplayDocTitle", "true")
 
 
-def close(canvas: Any, book: Book, sheet: Sheet) -> bytes:
+def bound(book: Book, sheet: Sheet) -> bytes:
     """Return the finished document: every page with its foot, outline and page labels."""
     _furnish(book, sheet)
+    canvas: Any = _canvas(sheet)
+    embed.add(canvas._doc, set[int]().union(*(page.fonts for page in book.pages)))
     contents = [page.content().encode("ascii") for page in book.pages]
     canvas._doc.signature = hashlib.md5(b"".join(contents), usedforsecurity=False)
     for index, content in enumerate(contents):

@@ -8,7 +8,8 @@ from __future__ import annotations
 from collections.abc import Callable, Sequence
 from typing import NamedTuple
 
-from specsheet.render.pdf import style, wrap
+from specsheet.render.pdf import style
+from specsheet.render.pdf.fonts import Run
 from specsheet.render.pdf.page import Frame, Page
 from specsheet.render.pdf.style import Style
 
@@ -49,7 +50,7 @@ class Line(NamedTuple):
 class _Cell(NamedTuple):
     """One cell ready to be set: lines, style, and its left or its right edge in the frame."""
 
-    lines: tuple[str, ...]
+    lines: tuple[Run, ...]
     look: Style
     x: float
     right: bool
@@ -140,6 +141,7 @@ def _headings(frame: Frame, columns: Sequence[Column]) -> None:
 
 def _made(frame: Frame, columns: Sequence[Column], line: Line) -> _Row:
     """Return a row with its texts broken into lines."""
+    book = frame.book
     cells = []
     x = size = 0.0
     count = 1
@@ -149,7 +151,7 @@ def _made(frame: Frame, columns: Sequence[Column], line: Line) -> _Row:
             size = look.size
         if text:
             room = max(column.width - _BETWEEN, look.size)
-            lines = wrap.lines(frame.book.clean(text), room, look.size)
+            lines = book.lines(text, room, look)
             edge = x + column.width - _BETWEEN if column.right else x
             cells.append(_Cell(lines, look, edge, column.right))
             if len(lines) > count:
@@ -187,9 +189,10 @@ def _overleaf(frame: Frame, title: str, columns: Sequence[Column]) -> None:
 def _draw(frame: Frame, row: _Row, start: int, count: int) -> None:
     page = frame.page
     baseline = frame.y - _PADDING / 2.0 - row.size * 0.93
+    leading = row.leading
     for lines, look, x, right in row.cells:
-        put = page.right if right else page.text
+        edge = frame.x + x
         y = baseline
         for line in lines[start : start + count]:
-            put(frame.x + x, y, line, look)
-            y -= row.leading
+            page.run(edge - line.width if right else edge, y, line, look)
+            y -= leading

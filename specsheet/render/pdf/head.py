@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from specsheet.findings import Level
-from specsheet.render.pdf import fonts, style, wrap
+from specsheet.render.pdf import fonts, style
 from specsheet.render.pdf.page import Frame, Page
 from specsheet.render.pdf.style import Style
 from specsheet.render.pdf.wrap import shorten
@@ -22,8 +22,8 @@ def band(frame: Frame, sheet: Sheet) -> None:
     room = frame.width - right - 44.0
     lines: list[tuple[str, Style]] = []
     for text, look, most in _lines(sheet):
-        wrapped = wrap.lines(book.clean(text), room, look.size) if text else ()
-        lines += [(line, look) for line in wrapped[:most]]
+        wrapped = book.lines(text, room, look) if text else ()
+        lines += [(line.text, look) for line in wrapped[:most]]
         if len(wrapped) > most:
             lines[-1] = (f"{lines[-1][0]} …", look)
             book.overlong.append(text)
@@ -69,7 +69,7 @@ def details(frame: Frame, sheet: Sheet) -> None:
     wide = frame.width / _COLUMNS
     for start in range(0, len(sheet.head), _COLUMNS):
         shown = [
-            (detail.label, wrap.lines(frame.book.clean(detail.text), wide - 10.0, style.BODY.size))
+            (detail.label, frame.book.lines(detail.text, wide - 10.0, style.BODY))
             for detail in sheet.head[start : start + _COLUMNS]
         ]
         tallest = max(len(lines) for _, lines in shown)
@@ -82,15 +82,15 @@ def details(frame: Frame, sheet: Sheet) -> None:
                     frame.page.text(x, frame.y - style.SMALL.size, label, style.SMALL)
                 if row < len(lines):
                     y = frame.y - label_height - style.BODY.size
-                    frame.page.text(x, y, lines[row], style.BODY)
+                    frame.page.run(x, y, lines[row], style.BODY)
             frame.y -= label_height + style.BODY.leading
         frame.y -= 4.0
 
 
 def verdict(frame: Frame, sheet: Sheet) -> None:
     """Set the verdict in its box, with the badge of the worst level."""
-    lines = wrap.lines(frame.book.clean(sheet.verdict), frame.width - _BADGE - 34.0, 9.0)
     look = Style(9.0, True)
+    lines = frame.book.lines(sheet.verdict, frame.width - _BADGE - 34.0, look)
     height = len(lines) * look.leading + 9.0
     frame.skip(3.0)
     frame.keep(height)
@@ -98,7 +98,7 @@ def verdict(frame: Frame, sheet: Sheet) -> None:
     badge(frame.page, frame.x + 8.0, frame.y - 16.2, sheet.worst)
     for place, line in enumerate(lines):
         y = frame.y - 5.0 - look.size - place * look.leading + 1.0
-        frame.page.text(frame.x + _BADGE + 18.0, y, line, look)
+        frame.page.run(frame.x + _BADGE + 18.0, y, line, look)
     frame.y -= height + 4.0
 
 
@@ -129,10 +129,10 @@ def cautions(frame: Frame, sheet: Sheet) -> None:
     frame.heading("Cautions")
     frame.y -= 3.0
     for text in sheet.cautions:
-        for line in wrap.lines(frame.book.clean(text), frame.width - 14.0, style.BODY.size):
+        for line in frame.book.lines(text, frame.width - 14.0, style.BODY):
             frame.keep(style.BODY.leading)
             high = style.BODY.leading
             frame.page.box(frame.x, frame.y - high - 1.0, 3.0, high, fill=style.ACCENT)
-            frame.page.text(frame.x + 12.0, frame.y - style.BODY.size, line, style.BODY)
+            frame.page.run(frame.x + 12.0, frame.y - style.BODY.size, line, style.BODY)
             frame.y -= high
         frame.y -= 4.0

@@ -6,73 +6,21 @@ content, in the order they are made, so equal sheets give equal bytes.
 
 from __future__ import annotations
 
-import re
 from dataclasses import dataclass, field
 from functools import cache
-from typing import Any
-
-from reportlab.lib.rl_accel import escapePDF
 
 from specsheet.render.pdf import fonts, style, wrap
+from specsheet.render.pdf.fonts import Run
 from specsheet.render.pdf.style import Style
-
-_ESCAPED = str.maketrans({"\\": r"\\", "(": r"\(", ")": r"\)"})
-_SPECIAL = re.compile(r"[\\()]").search
 
 _BOLD_STROKE = 0.035  # of the size: the stroke that makes a regular letter look bold
 
 
-class Pen:
-    """Writes text as page content in the font of one document; every letter is encoded once.
-
-    Attributes:
-        font: name of the font's first subset on the pages; nearly every letter is in it.
-    """
-
-    def __init__(self, document: Any) -> None:
-        self._document = document
-        fonts.font().splitString(" ", document)  # opens the first subset
-        self.font: str = fonts.font().getSubsetInternalName(0, document)
-        self._codes: dict[float, _Codes] = {}
-
-    def show(self, text: str, size: float) -> str:
-        """Return the operators that show a text at the place where the pen is.
-
-        The first subset at ``size`` is taken for set, and is set again afterwards.
-        """
-        if text.isascii():  # the first subset of the font holds ASCII under its own codes
-            return f"({text.translate(_ESCAPED)}) Tj" if _SPECIAL(text) else f"({text}) Tj"
-        codes = self._codes.get(size)
-        if codes is None:
-            codes = self._codes[size] = _Codes(self, size)
-        return f"({text.translate(codes)}) Tj"
-
-    def code(self, letter: str, size: float) -> str:
-        """Return a letter as it stands in a shown text; one of another subset sets its font."""
-        font = fonts.font()
-        ((subset, chunk),) = font.splitString(letter, self._document)
-        if not subset:
-            return str(escapePDF(chunk))
-        name = font.getSubsetInternalName(subset, self._document)
-        return f") Tj {name} {size:g} Tf ({escapePDF(chunk)}) Tj {self.font} {size:g} Tf ("
-
-
-class _Codes(dict[int, str]):
-    """The letters met so far as a table for ``str.translate``, at one size."""
-
-    def __init__(self, pen: Pen, size: float) -> None:
-        self._pen = pen
-        self._size = size
-
-    def __missing__(self, code: int) -> str:
-        return self.setdefault(code, self._pen.code(chr(code), self._size))
-
-
 @cache
 def _look(look: Style) -> str:
-    """Return the operators that set size, colour and weight of a text."""
+    """Return the operators that set font, size, colour and weight of a text."""
     weight = f"2 Tr {look.size * _BOLD_STROKE:.3f} w {look.colour} RG" if look.bold else "0 Tr"
-    return f"{look.size:g} Tf {look.colour} rg {weight}"
+    return f"{fonts.name(0)} {look.size:g} Tf {look.colour} rg {weight}"
 
 
 @dataclass(frozen=True, slots=True)
@@ -102,10 +50,13 @@ class Page:
 
     Texts that follow one another share one text object, and what is set already is not set again.
     The rules between the rows of tables are drawn together, last.
+
+    Attributes:
+        fonts: code pages of the font that its texts need.
     """
 
-    def __init__(self, pen: Pen) -> None:
-        self._pen = pen
+    def __init__(self) -> None:
+        self.fonts = {0}
         self._code: list[str] = []
         self._set: Style | None = None  # style of the open text object
         self._rules: list[str] = []
@@ -123,21 +74,30 @@ class Page:
 
     def text(self, x: float, y: float, text: str, look: Style) -> None:
         """Set one line with its left end at x and its baseline at y."""
+        self.run(x, y, fonts.run(text, look.size), look)
+
+    def right(self, x: float, y: float, text: str, look: Style) -> None:
+        """Set one line with its right end at x."""
+        run = fonts.run(text, look.size)
+        self.run(x - run.width, y, run, look)
+
+    def middle(self, x: float, y: float, text: str, look: Style) -> None:
+        """Set one line with its middle at x."""
+        run = fonts.run(text, look.size)
+        self.run(x - run.width / 2.0, y, run, look)
+
+    def run(self, x: float, y: float, run: Run, look: Style) -> None:
+        """Set one line, made at the size of ``look``, with its left end at x."""
+        text, _, shown, pages = run
         if not text:
             return
         if look != self._set:
             start = "BT " if self._set is None else ""
-            self._code.append(f"{start}{self._pen.font} {_look(look)}")
+            self._code.append(f"{start}{_look(look)}")
             self._set = look
-        self._code.append(f"1 0 0 1 {x:.2f} {y:.2f} Tm {self._pen.show(text, look.size)}")
-
-    def right(self, x: float, y: float, text: str, look: Style) -> None:
-        """Set one line with its right end at x."""
-        self.text(x - fonts.width(text, look.size), y, text, look)
-
-    def middle(self, x: float, y: float, text: str, look: Style) -> None:
-        """Set one line with its middle at x."""
-        self.text(x - fonts.width(text, look.size) / 2.0, y, text, look)
+        self._code.append(f"1 0 0 1 {x:.2f} {y:.2f} Tm {shown}")
+        if pages:
+            self.fonts |= pages
 
     def rule(self, x1: float, x2: float, y: float) -> None:
         """Draw the hairline below a row."""
@@ -171,7 +131,6 @@ class Book:
     """The pages of one document.
 
     Attributes:
-        pen: writes text in the document's font.
         size: width and height of the paper [pt].
         column: width of a column of values by operating point [pt].
         pages: so far; made on demand.
@@ -181,7 +140,6 @@ class Book:
         missing: characters without a glyph, in the order met.
     """
 
-    pen: Pen
     size: tuple[float, float]
     column: float
     pages: list[Page] = field(default_factory=list)
@@ -193,7 +151,7 @@ class Book:
     def page(self, index: int) -> Page:
         """Return a page, made with all pages before it where it is new."""
         while len(self.pages) <= index:
-            self.pages.append(Page(self.pen))
+            self.pages.append(Page())
         return self.pages[index]
 
     def top(self, index: int) -> float:
@@ -206,6 +164,10 @@ class Book:
         if missing:
             self.missing.update(dict.fromkeys(missing))
         return printable
+
+    def lines(self, text: str, room: float, look: Style) -> tuple[Run, ...]:
+        """Return a text of the user in lines of ``room`` points."""
+        return wrap.lines(self.clean(text), room, look.size)
 
 
 @dataclass
@@ -274,9 +236,9 @@ class Frame:
 
     def paragraph(self, text: str, look: Style, indent: float = 0.0) -> None:
         """Set wrapped text, line by line and overleaf where the page is full."""
-        for line in wrap.lines(self.book.clean(text), self.width - indent, look.size):
+        for line in self.book.lines(text, self.width - indent, look):
             self.keep(look.leading)
-            self.page.text(self.x + indent, self.y - look.size, line, look)
+            self.page.run(self.x + indent, self.y - look.size, line, look)
             self.y -= look.leading
 
 

@@ -70,7 +70,7 @@ def _window(
     """Draw one window: its words, its bar, and the flows where it ends."""
     start, end = left + window.low * long, left + window.high * long
     tone = style.ACCENT if window.level is Level.STOP else style.MIDDLE
-    words = wrap.lines(words, _GUTTER - 10.0, style.QUIET.size)[0]
+    words = wrap.lines(words, _GUTTER - 10.0, style.QUIET.size)[0].text
     page.right(x + _GUTTER - 10.0, y - _BAR + 1.0, words, style.QUIET)
     page.box(start, y - _BAR, max(end - start, 0.6), _BAR, fill=tone)
     for is_open, tip, into in ((window.open_low, start, 5.0), (window.open_high, end, -5.0)):

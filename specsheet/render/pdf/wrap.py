@@ -4,18 +4,18 @@ from __future__ import annotations
 
 from functools import lru_cache
 
-from specsheet.render.pdf.fonts import width
+from specsheet.render.pdf.fonts import Run, run, width
 
 
 @lru_cache(maxsize=8_000)
-def lines(text: str, room: float, size: float) -> tuple[str, ...]:
+def lines(text: str, room: float, size: float) -> tuple[Run, ...]:
     """Return the lines of a text in ``room`` points at ``size`` points; "" gives one empty line."""
     if "\n" not in text and width(text, size) <= room:
-        return (text,)
+        return (run(text, size),)
     made: list[str] = []
     for paragraph in text.split("\n"):
         made.extend(_paragraph(paragraph, room, size))
-    return tuple(made)
+    return tuple(run(line, size) for line in made)
 
 
 def _paragraph(text: str, room: float, size: float) -> list[str]:
