@@ -13,7 +13,8 @@
 * :mod:`specsheet.evaluate.reserve`  where a verdict flips
 * :mod:`specsheet.evaluate.checks`   checks, findings and bands
 * :mod:`specsheet.evaluate.summary`  turndown and cost
-* :mod:`specsheet.evaluate.shortlist` every family held against one tag
+* :mod:`specsheet.evaluate.candidates` families held against one tag
+* :mod:`specsheet.evaluate.shortlist` every family held against one tag, ranked
 * :mod:`specsheet.evaluate.whatif`   the verdict against one figure
 * :mod:`specsheet.evaluate.measured` the flow from a measured signal
 * :mod:`specsheet.evaluate.signals`  which signal a measured figure is

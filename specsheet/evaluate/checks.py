@@ -2,22 +2,14 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Mapping, Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from math import isnan, log, nan
 
 import numpy as np
 
 from specsheet.evaluate.model import Model
-from specsheet.evaluate.reserve import (
-    EXACT,
-    FACTORS,
-    NO_FLIPS,
-    Bounds,
-    Flips,
-    Pains,
-    find_flips,
-)
+from specsheet.evaluate.reserve import FACTORS, NO_FLIPS, Bounds, Flips, Search
 from specsheet.evaluate.result import Band, Check
 from specsheet.evaluate.words import facts
 from specsheet.findings import Finding, Level, Reserve
@@ -44,46 +36,80 @@ class Checked:
     findings: tuple[Finding, ...]
 
 
-def check_limits(
-    request: Request,
-    model: Model,
-    limits: Sequence[Limit],
-    values: Mapping[str, Array],
-    grid: Mapping[str, Array] | None,
-    pains: Pains = EXACT,
-    *,
-    sparing: bool = False,
-) -> Checked:
-    """Check every limit at every operating point.
+@dataclass(frozen=True)
+class Held:
+    """A meter held against its limits, before reserves are looked for.
+
+    Attributes:
+        request: the tag's request; n points.
+        model: the meter.
+        driven: limits that the flow drives.
+        others: limits that it does not.
+    """
+
+    request: Request
+    model: Model
+    driven: tuple[_Row, ...]
+    others: tuple[_Row, ...]
+
+    @property
+    def stopped(self) -> bool:
+        """Whether a stop is broken at an operating point."""
+        rows = (*self.driven, *self.others)
+        return any(row.limit.level is Level.STOP and min(row.inside) < 0.0 for row in rows)
+
+    def search(self, grid: Mapping[str, Array]) -> Search:
+        """Return the search for its reserves.
+
+        Args:
+            grid: response over :func:`specsheet.evaluate.reserve.scaled`.
+        """
+        return Search(self.model, [row.limit for row in self.driven], grid)
+
+
+def hold(
+    request: Request, model: Model, limits: Sequence[Limit], values: Mapping[str, Array]
+) -> Held:
+    """Hold a meter against its limits at every operating point.
 
     Args:
         request: the tag's request; n points.
         model: the meter.
         limits: the limits that apply.
         values: response at the operating points, shape (n,).
-        grid: response over :func:`specsheet.evaluate.reserve.scaled`; None for no reserves.
-        pains: how exactly the reserves are wanted.
-        sparing: whether to look for no reserves where a stop is broken.
     """
-    rows = _rows(limits, values, model.element.values)
-    driven = [row for row in rows if row.limit.driver == "mass_flow" and row.limit.key in values]
-    flips = NO_FLIPS
-    if grid is not None and not (sparing and _is_stopped(rows)):
-        own = [row.limit for row in driven]
-        flips = find_flips(model, request.stream, own, grid, pains)
+    driven: list[_Row] = []
+    others: list[_Row] = []
+    for row in _rows(limits, values, model.element.values):
+        by_flow = row.limit.driver == "mass_flow" and row.limit.key in values
+        (driven if by_flow else others).append(row)
+    return Held(request, model, tuple(driven), tuple(others))
+
+
+def judge_limits(held: Held, flips: Flips = NO_FLIPS, *, near: bool = True) -> Checked:
+    """Judge every limit.
+
+    Args:
+        held: the meter, held against them.
+        flips: what the search for reserves found.
+        near: whether a limit that holds narrowly is worth a note.
+    """
+    request = held.request
     checks: list[Check] = []
     findings: list[Finding] = []
     bands: list[Band] = []
-    for row, crossings in zip(driven, _by_limit(flips, len(driven)), strict=True):
-        checks.append(_judge_flow(request, row, crossings))
-        findings.extend(_findings(request, row, checks[-1]))
-        band = _band(request, row.limit, crossings)
+    crossings = _by_limit(flips, len(held.driven))
+    for row, own in zip(held.driven, crossings, strict=True):
+        checks.append(_judge_flow(request, row, own))
+        band = _band(request, row.limit, own)
         if band is not None:
             bands.append(band)
-    for row in rows:
-        if row not in driven:
-            checks.append(_judge_state(request, row))
-            findings.extend(_findings(request, row, checks[-1]))
+    checks.extend(_judge_state(request, row) for row in held.others)
+    for row, check in zip((*held.driven, *held.others), checks, strict=True):
+        if not check.holds:
+            findings.append(_broken(request, row, check))
+        elif near and _is_near(check):
+            findings.append(_near(request, check))
     return Checked(tuple(checks), tuple(_tightest_first(bands, request)), tuple(findings))
 
 
@@ -126,11 +152,6 @@ def _rows(
         _Row(limit, column, share[: len(column)])
         for (limit, column), share in zip(known, inside, strict=True)
     )
-
-
-def _is_stopped(rows: Iterable[_Row]) -> bool:
-    """Tell whether a stop is broken at an operating point."""
-    return any(row.limit.level is Level.STOP and min(row.inside) < 0.0 for row in rows)
 
 
 @dataclass(frozen=True, slots=True)
@@ -214,9 +235,7 @@ def _nearest_bound(limit: Limit, value: float) -> float:
     return min(bounds, key=lambda bound: abs(bound - value))
 
 
-def _findings(request: Request, row: _Row, check: Check) -> tuple[Finding, ...]:
-    if check.holds:
-        return _near(request, check) if _is_near(check) else ()
+def _broken(request: Request, row: _Row, check: Check) -> Finding:
     limit = row.limit
     others = [
         name
@@ -225,16 +244,14 @@ def _findings(request: Request, row: _Row, check: Check) -> tuple[Finding, ...]:
     ]
     also = f" The same holds at {', '.join(others)}." if others else ""
     message = f"{_facts(request, check)}: {limit.message}.{also}"
-    return (
-        Finding(
-            limit.level,
-            limit.code,
-            _field(check),
-            message[0].upper() + message[1:],
-            check.point,
-            limit.source,
-            check.reserve,
-        ),
+    return Finding(
+        limit.level,
+        limit.code,
+        _field(check),
+        message[0].upper() + message[1:],
+        check.point,
+        limit.source,
+        check.reserve,
     )
 
 
@@ -247,23 +264,21 @@ def _is_near(check: Check) -> bool:
     )
 
 
-def _near(request: Request, check: Check) -> tuple[Finding, ...]:
+def _near(request: Request, check: Check) -> Finding:
     assert check.reserve is not None
     fraction = check.reserve.fraction
     message = (
         f"{_facts(request, check)}; the limit holds, but a flow "
         f"{100.0 * abs(fraction):.2g} % {'higher' if fraction > 0 else 'lower'} would cross it."
     )
-    return (
-        Finding(
-            Level.NOTE,
-            "limit-near",
-            _field(check),
-            message[0].upper() + message[1:],
-            check.point,
-            check.source,
-            check.reserve,
-        ),
+    return Finding(
+        Level.NOTE,
+        "limit-near",
+        _field(check),
+        message[0].upper() + message[1:],
+        check.point,
+        check.source,
+        check.reserve,
     )
 
 

@@ -11,12 +11,12 @@ from specsheet import line, packs
 from specsheet.evaluate import summary
 from specsheet.evaluate.budget import name_largest
 from specsheet.evaluate.by_limits import family_by_limits
-from specsheet.evaluate.checks import Checked, check_limits
+from specsheet.evaluate.checks import Checked, hold, judge_limits
 from specsheet.evaluate.limits import limits_of
 from specsheet.evaluate.model import Model, Response, model_of
 from specsheet.evaluate.prepare import NO_PIPE, Prepared, prepare
 from specsheet.evaluate.prepare import request as requested
-from specsheet.evaluate.reserve import scaled
+from specsheet.evaluate.reserve import find_flips, scaled
 from specsheet.evaluate.result import Result
 from specsheet.evaluate.service import Service, judge_habits, judge_service
 from specsheet.evaluate.stream import Lanes, with_lanes
@@ -126,7 +126,9 @@ def _metered(family: Family, request: Request, prepared: Prepared) -> Metered:
     shown = count + swept.mass_flow.size
     at_points = {key: values[:count] for key, values in answered.values.items()}
     on_grid = {key: values[shown:] for key, values in answered.values.items()}
-    checked = check_limits(request, model, limits_of(family, element, request), at_points, on_grid)
+    held = hold(request, model, limits_of(family, element, request), at_points)
+    (flips,) = find_flips(request.stream, (held.search(on_grid),))
+    checked = judge_limits(held, flips)
     totals = summary.summarise(request, at_points, checked.bands)
     return Metered(
         family,

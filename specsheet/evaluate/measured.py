@@ -14,7 +14,7 @@ from numpy.typing import NDArray
 
 from specsheet import packs
 from specsheet.evaluate import assemble
-from specsheet.evaluate.checks import check_limits
+from specsheet.evaluate.checks import hold, judge_limits
 from specsheet.evaluate.common import COMMON_DERIVATIONS
 from specsheet.evaluate.judge import put_into_line
 from specsheet.evaluate.limits import limits_of
@@ -111,7 +111,7 @@ def _found(
     _, model = put_into_line(prepared, request, family, element)
     response = model(at_flow.stream)
     limits = [limit for limit in limits_of(family, element, request) if limit.driver == "mass_flow"]
-    checked = check_limits(at_flow, model, limits, response.values, None)
+    checked = judge_limits(hold(at_flow, model, limits, response.values))
     crossed = [item for item in checked.findings if item.level is not Level.NOTE]
     points = _points(prepared, at_flow, family, signal, response.values)
     return Measured(signal, points, (*missing, *crossed))

@@ -136,50 +136,64 @@ def scaled(stream: Stream) -> Lanes:
     return Lanes(points, flows.ravel())
 
 
-def find_flips(
-    model: Model,
-    stream: Stream,
-    limits: Sequence[Limit],
-    grid: Mapping[str, Array],
-    pains: Pains = EXACT,
-) -> Flips:
-    """Return all crossings of all limits at all points.
+@dataclass(frozen=True)
+class Search:
+    """What is looked for with one meter.
 
-    A crossing is read off the grid where the value runs smoothly through its bound, and closed in
-    on with the model elsewhere.
-
-    Args:
+    Attributes:
         model: the meter.
-        stream: the operating points, n of them.
         limits: limits driven by the flow.
         grid: response over :func:`scaled`.
+    """
+
+    model: Model
+    limits: Sequence[Limit]
+    grid: Mapping[str, Array]
+
+
+def find_flips(
+    stream: Stream, searches: Sequence[Search], pains: Pains = EXACT
+) -> tuple[Flips, ...]:
+    """Return all crossings of all limits at all points, for each search.
+
+    A crossing is read off the grid where the value runs smoothly through its bound, and closed in
+    on with the model elsewhere. Many searches are read off as one.
+
+    Args:
+        stream: the operating points, n of them.
+        searches: one for each meter.
         pains: how exactly the crossings are wanted.
     """
+    limits = [limit for search in searches for limit in search.limits]
     if not limits:
-        return NO_FLIPS
+        return tuple(NO_FLIPS for _ in searches)
     points = looked_at(stream)
+    values = np.array([search.grid[limit.key] for search in searches for limit in search.limits])
     bounds = Bounds.of(limits)
-    values = np.array([grid[limit.key] for limit in limits])
     margins = bounds.margins(values).reshape(len(limits), points.size, FACTORS.size)
     holds = margins >= 0.0
     of_limit, of_point, of_step = np.nonzero(holds[..., 1:] != holds[..., :-1])
-    if not of_limit.size:
-        return NO_FLIPS
     table = values.reshape(holds.shape)[of_limit, of_point]
     rising = holds[of_limit, of_point, of_step + 1]
     edges = _Edges.of(bounds.take(of_limit), table, of_step + ~rising)
     factor, smooth = _read(edges, table, of_step, pains.evenness)
-    rest = np.flatnonzero(~smooth)
-    if rest.size:
-        search = _Search(
-            model,
-            stream.take(np.repeat(points[of_point[rest]], _CUTS.size)),
-            edges.take(rest),
-            [limits[index].key for index in of_limit[rest].tolist()],
-        )
-        factor[rest] = search.close_in(table[rest], of_step[rest], pains.rounds)
-    found = Flips(of_limit, points[of_point], factor, rising)
-    return found if points.size == stream.mass_flow.size else _seen_from_all(found, stream)
+    found = []
+    first = 0
+    for search in searches:
+        own = (of_limit >= first) & (of_limit < first + len(search.limits))
+        rest = np.flatnonzero(own & ~smooth)
+        if rest.size:
+            brackets = _Brackets(
+                search.model,
+                stream.take(np.repeat(points[of_point[rest]], _CUTS.size)),
+                edges.take(rest),
+                [limits[index].key for index in of_limit[rest].tolist()],
+            )
+            factor[rest] = brackets.close_in(table[rest], of_step[rest], pains.rounds)
+        flips = Flips(of_limit[own] - first, points[of_point[own]], factor[own], rising[own])
+        found.append(_seen_from_all(flips, stream, points))
+        first += len(search.limits)
+    return tuple(found)
 
 
 @dataclass(frozen=True)
@@ -268,9 +282,17 @@ def _root(coefficients: Array, start: Array) -> Array:
     return place
 
 
-def _seen_from_all(flips: Flips, stream: Stream) -> Flips:
-    """Return the flips of one point as each of n points sees them, its own flow at factor 1."""
+def _seen_from_all(flips: Flips, stream: Stream, seen: NDArray[np.intp]) -> Flips:
+    """Return flips as each of n points sees them, its own flow at factor 1.
+
+    Args:
+        flips: flips as the points looked at see them.
+        stream: the operating points.
+        seen: the points looked at: all, or one that stands for all.
+    """
     count = stream.mass_flow.size
+    if seen.size == count:
+        return flips
     points = np.tile(np.arange(count), flips.limit.size)
     flows = np.repeat(flips.factor * stream.mass_flow[flips.point], count)
     return Flips(
@@ -282,7 +304,7 @@ def _seen_from_all(flips: Flips, stream: Stream) -> Flips:
 
 
 @dataclass(frozen=True)
-class _Search:
+class _Brackets:
     """The search inside k brackets at once.
 
     Attributes:

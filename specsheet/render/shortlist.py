@@ -7,7 +7,8 @@ import textwrap
 from collections.abc import Iterable, Sequence
 from typing import Any
 
-from specsheet.evaluate.shortlist import Candidate, Shortlist, Verdict
+from specsheet.evaluate.candidates import Candidate, Verdict
+from specsheet.evaluate.shortlist import Shortlist
 from specsheet.evaluate.words import say
 from specsheet.findings import Finding, Level
 from specsheet.render.json import SCHEMA, finding_data, reserve_data, si_unit

@@ -12,9 +12,10 @@ from services import service, service_text
 
 from specsheet import packs, tagfile
 from specsheet.evaluate import evaluate
+from specsheet.evaluate.candidates import Candidate, Verdict, candidates
 from specsheet.evaluate.prepare import Prepared, prepare
 from specsheet.evaluate.result import Evaluation
-from specsheet.evaluate.shortlist import Candidate, Shortlist, Verdict, candidate, shortlist
+from specsheet.evaluate.shortlist import Shortlist, shortlist
 
 FITS, IF, NO = Verdict.FITS, Verdict.CONDITIONS, Verdict.UNFIT
 
@@ -209,7 +210,7 @@ def ranked(name: str) -> Shortlist:
 
 
 def held(name: str, family: str) -> Candidate:
-    return candidate(prepared(name), packs.profile(family))
+    return candidates(prepared(name), [packs.profile(family)])[0]
 
 
 def changed(name: str, family: str, changes: dict[str, str]) -> Evaluation:

@@ -12,7 +12,8 @@ from services import service, service_text
 
 from specsheet import packs, tagfile
 from specsheet.evaluate import evaluate
-from specsheet.evaluate.shortlist import Candidate, Shortlist, Verdict, shortlist
+from specsheet.evaluate.candidates import Candidate, Verdict
+from specsheet.evaluate.shortlist import Shortlist, shortlist
 from specsheet.findings import Level
 from specsheet.meters import registry
 

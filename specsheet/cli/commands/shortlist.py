@@ -20,7 +20,8 @@ def run(arguments: Namespace) -> Status:
     if reading.tag is None:
         return Status.UNUSABLE
 
-    from specsheet.evaluate.shortlist import Verdict, shortlist  # numpy: only once it is needed
+    from specsheet.evaluate.candidates import Verdict  # numpy: only once it is needed
+    from specsheet.evaluate.shortlist import shortlist
     from specsheet.render import shortlist as render
 
     found = shortlist(reading.tag)
