@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 
-from specsheet.render.pdf import fonts, style
+from specsheet.render.pdf import style
 from specsheet.render.pdf.fonts import Run
 from specsheet.render.pdf.page import Columns, Frame
 from specsheet.render.pdf.style import Style
@@ -65,18 +65,18 @@ def _working(frame: Columns, sheet: Sheet, group: Sequence[Working]) -> None:
 
 def _result(frame: Columns, working: Working) -> None:
     """Set the name of a value and, at the right, its figures; below one another where too wide."""
-    name = frame.book.clean(named(working.label, working.symbol))
-    shown = frame.book.clean(figures(working.result))
-    wide = fonts.width(shown, style.FINE_STRONG.size)
-    if fonts.width(name, style.FINE_STRONG.size) + _APART + wide <= frame.width:
-        frame.keep(style.FINE_STRONG.leading)
-        frame.page.right(
-            frame.x + frame.width, frame.y - style.FINE_STRONG.size, shown, style.FINE_STRONG
-        )
-        _set(frame, _lines(frame, name, frame.width), style.FINE_STRONG)
+    look = style.FINE_STRONG
+    names = _lines(frame, named(working.label, working.symbol), frame.width)
+    shown = _lines(frame, figures(working.result), frame.width)
+    name, figure = names[0], shown[0]
+    if len(names) == len(shown) == 1 and name.width + _APART + figure.width <= frame.width:
+        frame.keep(look.leading)
+        y = frame.y - look.size
+        frame.page.run(frame.x + frame.width - figure.width, y, figure, look)
+        _set(frame, names, look)
     else:
-        _set(frame, _lines(frame, name, frame.width), style.FINE_STRONG)
-        _set(frame, _lines(frame, figures(working.result), frame.width), style.FINE_STRONG)
+        _set(frame, names, look)
+        _set(frame, shown, look)
 
 
 def _lines(frame: Frame, text: str, room: float) -> tuple[Run, ...]:

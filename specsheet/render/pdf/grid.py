@@ -47,6 +47,15 @@ class Line(NamedTuple):
     ornament: Ornament | None = None
 
 
+class _Place(NamedTuple):
+    """Where the cells of a column stand: left or right edge in the frame, room, style."""
+
+    x: float
+    room: float
+    look: Style
+    right: bool
+
+
 class _Cell(NamedTuple):
     """One cell ready to be set: lines, style, and its left or its right edge in the frame."""
 
@@ -63,14 +72,8 @@ class _Row(NamedTuple):
     ornament: Ornament | None
     lines: int
     size: float  # of the largest letters
-
-    @property
-    def leading(self) -> float:
-        return self.size * style.LEADING
-
-    @property
-    def height(self) -> float:
-        return self.lines * self.leading + _PADDING
+    leading: float
+    height: float
 
 
 def grid(
@@ -79,7 +82,7 @@ def grid(
     """Set a table with its title, ``gap`` below what stands above; nothing without rows."""
     if not rows:
         return
-    made = [_made(frame, columns, row) for row in rows]
+    made = _made(frame, columns, rows)
     whole = sum(row.height for row in made)
     start = min(sum(row.height for row in made[:_START]), frame.full / 2.0)
     frame.skip(gap)
@@ -112,7 +115,7 @@ def halves(frame: Frame, title: str, columns: Sequence[Column], rows: Sequence[L
     """
     if not rows:
         return
-    made = [_made(frame, columns, row) for row in rows]
+    made = _made(frame, columns, rows)
     half = sum(row.height for row in made) / 2.0
     cut, left = 0, 0.0
     while left < half:
@@ -133,31 +136,48 @@ def halves(frame: Frame, title: str, columns: Sequence[Column], rows: Sequence[L
 def _headings(frame: Frame, columns: Sequence[Column]) -> None:
     if not any(column.heading for column in columns):
         return
-    row = _made(frame, columns, Line([Text(column.heading, style.HEADING) for column in columns]))
+    headings = [Text(column.heading, style.HEADING) for column in columns]
+    (row,) = _made(frame, columns, [Line(headings)])
     _draw(frame, row, 0, row.lines)
     frame.y -= row.height
     frame.page.line(frame.x, frame.y, frame.x + frame.width, frame.y, style.GREY, 0.5)
 
 
-def _made(frame: Frame, columns: Sequence[Column], line: Line) -> _Row:
-    """Return a row with its texts broken into lines."""
-    book = frame.book
+def _made(frame: Frame, columns: Sequence[Column], lines: Sequence[Line]) -> list[_Row]:
+    """Return rows with their texts broken into lines."""
+    places = _places(columns)
+    return [_broken(frame, places, line) for line in lines]
+
+
+def _places(columns: Sequence[Column]) -> list[_Place]:
+    places = []
+    x = 0.0
+    for column in columns:
+        edge = x + column.width - _BETWEEN if column.right else x
+        places.append(_Place(edge, column.width - _BETWEEN, column.look, column.right))
+        x += column.width
+    return places
+
+
+def _broken(frame: Frame, places: Sequence[_Place], line: Line) -> _Row:
+    broken = frame.book.lines
     cells = []
-    x = size = 0.0
+    size = 0.0
     count = 1
-    for column, cell in zip(columns, line.cells, strict=True):
-        text, look = (cell, column.look) if isinstance(cell, str) else cell
+    for (x, room, look, right), cell in zip(places, line.cells, strict=True):
+        if isinstance(cell, str):
+            text = cell
+        else:
+            text, look = cell
         if look.size > size:
             size = look.size
         if text:
-            room = max(column.width - _BETWEEN, look.size)
-            lines = book.lines(text, room, look)
-            edge = x + column.width - _BETWEEN if column.right else x
-            cells.append(_Cell(lines, look, edge, column.right))
+            lines = broken(text, max(room, look.size), look)
+            cells.append(_Cell(lines, look, x, right))
             if len(lines) > count:
                 count = len(lines)
-        x += column.width
-    return _Row(cells, line.ornament, count, size)
+    leading = size * style.LEADING
+    return _Row(cells, line.ornament, count, size, leading, count * leading + _PADDING)
 
 
 def _row(frame: Frame, title: str, columns: Sequence[Column], row: _Row) -> None:

@@ -167,7 +167,10 @@ class Book:
 
     def lines(self, text: str, room: float, look: Style) -> tuple[Run, ...]:
         """Return a text of the user in lines of ``room`` points."""
-        return wrap.lines(self.clean(text), room, look.size)
+        runs, missing = wrap.lines(text, room, look.size)
+        if missing:
+            self.missing.update(dict.fromkeys(missing))
+        return runs
 
 
 @dataclass

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from specsheet.findings import Level
 from specsheet.render.pdf import fonts, style, wrap
+from specsheet.render.pdf.fonts import Run
 from specsheet.render.pdf.page import Frame, Page
 from specsheet.render.pdf.style import Style
 from specsheet.sheet.model import Mark, Ruler, Window
@@ -45,7 +46,7 @@ def draw(frame: Frame, ruler: Ruler) -> None:
         x = left + mark.position * long
         page.line(x, axis, x, top + lane * _LABEL_LANE + 0.5, style.INK, 0.7)
     for place, window in enumerate(ruler.windows):
-        words = frame.book.clean(window.label)
+        words = frame.book.lines(window.label, _GUTTER - 10.0, style.QUIET)[0]
         _window(page, window, words, frame.x, left, long, top - 4.0 - place * _LANE)
     _axis(frame, ruler, left, long, axis)
     for mark, name, centre, lane in zip(ruler.marks, names, centres, lanes, strict=True):
@@ -65,13 +66,12 @@ def _usable(page: Page, ruler: Ruler, left: float, long: float, top: float, axis
 
 
 def _window(
-    page: Page, window: Window, words: str, x: float, left: float, long: float, y: float
+    page: Page, window: Window, words: Run, x: float, left: float, long: float, y: float
 ) -> None:
     """Draw one window: its words, its bar, and the flows where it ends."""
     start, end = left + window.low * long, left + window.high * long
     tone = style.ACCENT if window.level is Level.STOP else style.MIDDLE
-    words = wrap.lines(words, _GUTTER - 10.0, style.QUIET.size)[0].text
-    page.right(x + _GUTTER - 10.0, y - _BAR + 1.0, words, style.QUIET)
+    page.run(x + _GUTTER - 10.0 - words.width, y - _BAR + 1.0, words, style.QUIET)
     page.box(start, y - _BAR, max(end - start, 0.6), _BAR, fill=tone)
     for is_open, tip, into in ((window.open_low, start, 5.0), (window.open_high, end, -5.0)):
         if is_open:  # the limit leaves this end open: cut the bar to an arrow

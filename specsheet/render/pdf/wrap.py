@@ -3,19 +3,28 @@
 from __future__ import annotations
 
 from functools import lru_cache
+from typing import NamedTuple
 
-from specsheet.render.pdf.fonts import Run, run, width
+from specsheet.render.pdf.fonts import Run, printable, run, width
+
+
+class Lines(NamedTuple):
+    """A text broken into lines, and the characters that the font lacks."""
+
+    runs: tuple[Run, ...]
+    missing: tuple[str, ...]
 
 
 @lru_cache(maxsize=8_000)
-def lines(text: str, room: float, size: float) -> tuple[Run, ...]:
-    """Return the lines of a text in ``room`` points at ``size`` points; "" gives one empty line."""
+def lines(text: str, room: float, size: float) -> Lines:
+    """Return a text in lines of ``room`` points at ``size`` points; "" gives one empty line."""
+    text, missing = printable(text)
     if "\n" not in text and width(text, size) <= room:
-        return (run(text, size),)
+        return Lines((run(text, size),), missing)
     made: list[str] = []
     for paragraph in text.split("\n"):
         made.extend(_paragraph(paragraph, room, size))
-    return tuple(run(line, size) for line in made)
+    return Lines(tuple(run(line, size) for line in made), missing)
 
 
 def _paragraph(text: str, room: float, size: float) -> list[str]:
