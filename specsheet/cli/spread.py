@@ -17,8 +17,8 @@ Result = TypeVar("Result")
 
 #: items done before a crew is thought of, and the fewest that pay for one
 FIRST, WORTHWHILE = 24, 24
-#: processes at most
-LARGEST_CREW = 4
+#: processes at most: each takes some 25 MB beside what all share, 40 MB where sheets are printed
+LARGEST_CREW = 3
 
 
 @dataclass(frozen=True, slots=True)

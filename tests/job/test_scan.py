@@ -95,7 +95,7 @@ def test_no_tag_file_is_read_before_it_is_wanted(
     site: Path, monkeypatch: pytest.MonkeyPatch
 ) -> None:
     read: list[Path] = []
-    monkeypatch.setattr(tagfile, "load", lambda path, job: read.append(path))
+    monkeypatch.setattr(tagfile, "load", lambda path, _: read.append(path))
     files = scan([site / "a", site / "b"]).files
     assert read == []
     files[1].read()
