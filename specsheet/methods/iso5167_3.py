@@ -13,6 +13,8 @@ import numpy as np
 
 #: smallest Δp/p1 told from none
 _NOTHING = 1e-300
+#: too little to change any exponent but one of nothing
+_LESS = 1e-305
 
 
 def expansibility(
@@ -32,11 +34,10 @@ def expansibility(
     beta4 = beta2 * beta2
     drop = np.maximum(pressure_drop_ratio, _NOTHING)
     log_tau = np.log1p(-drop)
-    exponent = log_tau - log_tau / isentropic_exponent
-    contraction = np.exp(2.0 * log_tau / isentropic_exponent)
-    flat = np.abs(exponent) < _NOTHING
-    growth = (np.expm1(exponent) + flat) / (exponent + flat)
-    work = -log_tau / drop * growth
+    share = log_tau / isentropic_exponent
+    contraction = np.exp(2.0 * share)
+    exponent = log_tau - share - _LESS  # where κ = 1 it would be nothing, and divide nothing
+    work = np.expm1(exponent) / exponent * log_tau / -drop
     return np.sqrt(contraction * (1.0 - beta4) / (1.0 - beta4 * contraction) * work)
 
 

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from math import floor, isfinite, log10
 from typing import Any
 
 import numpy as np
@@ -15,9 +16,9 @@ DECADES = (1.0, 10.0)
 
 def round_up(*, value: float, series: tuple[float, ...] = RANGE_SERIES) -> float:
     """Return the smallest number ``series`` x 10^n that is not below ``value`` (above 0)."""
-    if not (value > 0.0 and np.isfinite(value)):
+    if not (value > 0.0 and isfinite(value)):
         return value
-    decade = 10.0 ** np.floor(np.log10(value))
+    decade = 10.0 ** floor(log10(value))
     mantissa = value / decade
     for step in series:
         if mantissa <= step * (1.0 + 1e-12):

@@ -3,8 +3,11 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import dataclass
+from math import isfinite, nan
 
 import numpy as np
+from numpy.typing import NDArray
 
 from specsheet.meters.dp.device import Device, Lanes
 from specsheet.meters.family import Array, Element, Stream
@@ -40,10 +43,35 @@ def lanes_of(device: Device, element: Element, stream: Stream) -> Lanes:
 
 def coefficient(device: Device, lanes: Lanes) -> Array:
     """Return C: the calibrated one where it is stated, else that of the standard."""
-    calibrated = lanes.numbers.get("calibrated_coefficient", np.nan)
-    if np.isfinite(calibrated):
+    calibrated = lanes.numbers.get("calibrated_coefficient", nan)
+    if isfinite(calibrated):
         return np.full(lanes.mass_flow.shape, calibrated)
     return device.coefficient(lanes)
+
+
+@dataclass(frozen=True)
+class Expansion:
+    """ε of a device in one stream as a function of β and Δp/p1: 1 where the stream is liquid."""
+
+    device: Device
+    exponent: Array
+    liquid: NDArray[np.bool_]
+    all_liquid: bool
+    all_gas: bool
+
+    @classmethod
+    def of(cls, device: Device, stream: Stream) -> Expansion:
+        """Return that of a stream; a liquid has no isentropic exponent."""
+        exponent = stream.isentropic_exponent
+        liquid = np.isnan(exponent)
+        return cls(device, exponent, liquid, bool(liquid.all()), not liquid.any())
+
+    def __call__(self, diameter_ratio: Array, ratio: Array) -> Array | float:
+        """Return ε, shape (n,) or one for all."""
+        if self.all_liquid:
+            return 1.0
+        found = self.device.expansibility(diameter_ratio, ratio, self.exponent)
+        return found if self.all_gas else np.where(self.liquid, 1.0, found)
 
 
 def drop(
@@ -57,16 +85,13 @@ def drop(
         inside_diameter=lanes.inside_diameter,
         density=stream.density,
     )
-    exponent = stream.isentropic_exponent
-    if np.isnan(exponent).all():
+    expansion = Expansion.of(device, stream)
+    if expansion.all_liquid:
         return bare, np.ones_like(bare)
-
-    def epsilon(ratio: Array) -> Array:
-        expanded = device.expansibility(lanes.diameter_ratio, ratio, exponent)
-        return np.where(np.isnan(exponent), 1.0, expanded)
-
     pressure = equation.differential_pressure(
-        incompressible=bare, pressure=stream.pressure, expansibility=epsilon
+        incompressible=bare,
+        pressure=stream.pressure,
+        expansibility=lambda ratio: expansion(lanes.diameter_ratio, ratio),
     )
     return pressure, np.sqrt(bare / pressure)
 
@@ -139,20 +164,18 @@ def flow_from(
     with np.errstate(all="ignore"):
         lanes = lanes_of(device, element, stream)
         ratio = differential_pressure / stream.pressure
-        exponent = stream.isentropic_exponent
-        expanded = device.expansibility(lanes.diameter_ratio, ratio, exponent)
-        epsilon = np.where(np.isnan(exponent), 1.0, expanded)
+        by_coefficient = equation.mass_flow(
+            discharge_coefficient=1.0,
+            expansibility=Expansion.of(device, stream)(lanes.diameter_ratio, ratio),
+            diameter_ratio=lanes.diameter_ratio,
+            inside_diameter=lanes.inside_diameter,
+            differential_pressure=differential_pressure,
+            density=stream.density,
+        )
 
         def step(mass_flow: Array) -> Array:
             at = lanes.with_flow(mass_flow)
-            found: Array = equation.mass_flow(
-                discharge_coefficient=coefficient(device, at),
-                expansibility=epsilon,
-                diameter_ratio=at.diameter_ratio,
-                inside_diameter=at.inside_diameter,
-                differential_pressure=differential_pressure,
-                density=stream.density,
-            ) / device.over_reading(at)
+            found: Array = by_coefficient * coefficient(device, at) / device.over_reading(at)
             return found
 
         flow: Array = equation.fixed_point(step, stream.mass_flow)
@@ -170,16 +193,15 @@ def ratio_for(device: Device, lanes: Lanes, stream: Stream, differential_pressur
     """
     with np.errstate(all="ignore"):
         drop_ratio = differential_pressure / stream.pressure
-        exponent = stream.isentropic_exponent
+        expansion = Expansion.of(device, stream)
         area = np.pi / 4.0 * lanes.inside_diameter**2
         speed = lanes.mass_flow / (area * np.sqrt(2.0 * differential_pressure * stream.density))
 
         def step(invariant: Array) -> Array:
             beta = equation.ratio_of_invariant(invariant=invariant)
             at = lanes.with_ratio(beta)
-            expanded = device.expansibility(beta, drop_ratio, exponent)
-            epsilon = np.where(np.isnan(exponent), 1.0, expanded)
-            return speed * device.over_reading(at) / (coefficient(device, at) * epsilon)
+            through = coefficient(device, at) * expansion(beta, drop_ratio)
+            return speed * device.over_reading(at) / through
 
         guess = lanes.diameter_ratio**2 / np.sqrt(1.0 - lanes.diameter_ratio**4)
         beta: Array = equation.ratio_of_invariant(invariant=equation.fixed_point(step, guess))

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass, replace
+from math import isfinite, sqrt
 
 import numpy as np
 from numpy.typing import NDArray
@@ -304,10 +305,11 @@ def second_range(of: Led, bare: Element) -> tuple[float, tuple[Finding, ...]]:
     stated = tag.si("meter.second_range")
     if stated is not None:
         return transmitter.below(stated, bare.numbers["range"])
-    if not np.isfinite(pressure).any():
+    known = [value for value in pressure.tolist() if isfinite(value)]
+    if not known:
         return 0.0, ()
-    lowest, span = float(np.nanmin(pressure)), bare.numbers["range"]
-    proposal = transmitter.next_range(float(np.sqrt(lowest * span)))
+    lowest, span = min(known), bare.numbers["range"]
+    proposal = transmitter.next_range(sqrt(lowest * span))
     if tag.text("meter.second_range") == "propose":
         return (proposal, ()) if proposal < span else (0.0, ())
     parts = transmitter.contributions(bare.numbers, bare.choices, np.array([lowest]))
