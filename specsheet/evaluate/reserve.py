@@ -21,15 +21,24 @@ from specsheet.meters.family import Array, Limit, Stream
 FACTORS = np.geomspace(0.01, 100.0, 81)
 _LOGS = np.log(FACTORS)
 #: a value that rises over a step so much more than over those beside it jumps there
-_STEEP = 1.5
-#: points of the grid around a crossing, in steps from the one before it
+_STEEP = 2.5
+#: six points of the grid around a crossing, in steps from the one before it
 _AROUND = np.arange(-2, 4)
-#: values at those points -> coefficients, in powers of the step, of the polynomial through all of
-#: them, and of the one through the inner four
 _POWERS = np.arange(6.0)
-_THROUGH_ALL = np.linalg.inv(np.vander(_AROUND, increasing=True)).T
-_THROUGH_INNER = np.zeros((6, 6))
-_THROUGH_INNER[1:5, :4] = np.linalg.inv(np.vander(_AROUND[1:5], increasing=True)).T
+
+
+def _through(first: int, last: int) -> Array:
+    """Return values at the six points -> coefficients of the polynomial through some of them."""
+    chosen = slice(first, last)
+    powers = np.vander(_AROUND[chosen], increasing=True)
+    matrix = np.zeros((6, 6))
+    matrix[chosen, : last - first] = np.linalg.inv(powers).T
+    return matrix
+
+
+_THROUGH_ALL = _through(0, 6)
+#: through four points around the crossing, by the place of the one before it
+_THROUGH_FOUR = np.array([_through(first, first + 4) for first in (0, 0, 1, 2, 2)])
 #: twenty cuts narrow a step of the grid to 0.55 %, within which a value that follows a power of the
 #: flow is interpolated exactly, and a sum of powers to 1e-6
 _CUTS = np.linspace(0.0, 1.0, 22)[1:-1]
@@ -46,16 +55,19 @@ class Pains(NamedTuple):
         evenness: share of a step of the grid by which two readings of a crossing may differ and
             still be trusted.
         rounds: of closing in at most.
+        brink: whether to close in on a flow beyond which nothing is possible (the gas chokes);
+            else the last flow of the grid before it counts, up to 12 % short of it.
     """
 
     evenness: float
     rounds: int
+    brink: bool
 
 
 #: within 0.05 % of the flow, as measured over the demo job
-EXACT = Pains(0.001, 2)
+EXACT = Pains(0.001, 2, brink=True)
 #: within 0.3 % or so, which ranks families as well
-ROUGH = Pains(0.03, 1)
+ROUGH = Pains(0.03, 1, brink=False)
 
 
 @dataclass(frozen=True)
@@ -176,12 +188,16 @@ def find_flips(
     table = values.reshape(holds.shape)[of_limit, of_point]
     rising = holds[of_limit, of_point, of_step + 1]
     edges = _Edges.of(bounds.take(of_limit), table, of_step + ~rising)
-    factor, smooth = _read(edges, table, of_step, pains.evenness)
+    factor, clear = _read(edges, table, of_step, pains.evenness)
+    if not pains.brink:
+        brink = np.isnan(table[np.arange(of_step.size), of_step + ~rising])
+        factor = np.where(brink, FACTORS[of_step + rising], factor)
+        clear |= brink
     found = []
     first = 0
     for search in searches:
         own = (of_limit >= first) & (of_limit < first + len(search.limits))
-        rest = np.flatnonzero(own & ~smooth)
+        rest = np.flatnonzero(own & ~clear)
         if rest.size:
             brackets = _Brackets(
                 search.model,
@@ -243,9 +259,9 @@ def _read(
 ) -> tuple[Array, NDArray[np.bool_]]:
     """Return the factors read off the grid for k crossings, and which of them can be trusted.
 
-    The crossing of the polynomial through the three points before and the three behind it; where
-    the one through the inner four crosses elsewhere, the value is not smooth there. Where it jumps
-    they may agree, so its rise is compared with those beside it too.
+    The crossing of the polynomial through six points, three before and three behind it where they
+    are possible; where the one through four crosses elsewhere, the value is not smooth there. Where
+    it jumps they may agree, so its rise is compared with those beside it too.
 
     Args:
         edges: the bound of each crossing.
@@ -253,18 +269,24 @@ def _read(
         steps: step of the grid in which each crossing lies.
         evenness: as in :class:`Pains`.
     """
-    middle = np.clip(steps, 2, FACTORS.size - 4)  # six points even at the ends of the grid
-    near = values[np.arange(steps.size)[:, None], middle[:, None] + _AROUND]
-    inside = edges.distance(near)
+    rows = np.arange(steps.size)
+    last = FACTORS.size - 1 - np.argmax(~np.isnan(values)[:, ::-1], axis=1)
+    middle = np.clip(np.minimum(steps, last - 3), 2, FACTORS.size - 4)
+    beyond = steps - middle  # steps from the middle of the six points to the crossing
+    inside = edges.distance(values[rows[:, None], middle[:, None] + _AROUND])
+    place = np.clip(beyond + 2, 0, 4)
+    before, behind = inside[rows, place], inside[rows, place + 1]
     with np.errstate(all="ignore"):
-        start = inside[:, 2] / (inside[:, 2] - inside[:, 3])
-        inner = _root(inside @ _THROUGH_INNER, start)
-        place = _root(inside @ _THROUGH_ALL, inner)
-        smooth = (np.abs(place - inner) <= evenness) & ~np.isnan(near).any(axis=1)
-        rises = np.abs(np.diff(inside[:, 1:5]))
-        smooth &= rises[:, 1] <= _STEEP * np.minimum(rises[:, 0], rises[:, 2])
-        smooth &= np.abs(place - (steps - middle) - 0.5) <= 0.5 + evenness  # in its own step
-        return np.exp(_LOGS[middle] + place * (_LOGS[1] - _LOGS[0])), smooth
+        start = beyond + before / (before - behind)
+        four = np.einsum("ki,kij->kj", inside, _THROUGH_FOUR[place])
+        inner = _root(four, start)
+        found = _root(inside @ _THROUGH_ALL, inner)
+        clear = (np.abs(found - inner) <= evenness) & (place == beyond + 2)
+        clear &= np.abs(found - beyond - 0.5) <= 0.5 + evenness  # in its own step
+        rises = np.abs(np.diff(inside))
+        beside = np.minimum(rises[rows, np.abs(place - 1)], rises[rows, 4 - np.abs(3 - place)])
+        clear &= rises[rows, place] <= _STEEP * beside
+        return np.exp(_LOGS[middle] + found * (_LOGS[1] - _LOGS[0])), clear
 
 
 def _root(coefficients: Array, start: Array) -> Array:
