@@ -70,6 +70,7 @@ _SOURCES = (
     Source("asme-b31.3", "ASME B31.3", "process piping: low temperature"),
     Source("iso15156-2", "ISO 15156-2", "sour service: carbon steel", "published values"),
     Source("iso15156-3", "ISO 15156-3", "sour service: corrosion-resistant alloys"),
+    Source("iso23936-2", "ISO 23936-2", "elastomers in gas under pressure"),
     Source("iec60079-0", "IEC 60079-0", "explosive atmospheres: temperature classes"),
     Source("iec60079-20", "IEC 60079-20-1:2010", "ignition temperatures", "published values"),
     Source("eiga13", "EIGA Doc 13", "oxygen pipelines: velocity and materials"),

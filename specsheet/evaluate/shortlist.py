@@ -43,6 +43,7 @@ def shortlist(tag: Tag) -> Shortlist:
     beside = (
         *line.rate(tag, prepared.fluid, nominal=pipe.nominal if pipe else 0).findings,
         *line.materials(tag, None, prepared.fluid).findings,
+        *line.seals(tag, None, prepared.fluid).findings,
         *line.cautions(tag, prepared.fluid).findings,
     )
     of_flanges = tuple(item for item in stops(beside) if item.code in _OF_FLANGES)

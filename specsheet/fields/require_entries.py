@@ -85,6 +85,15 @@ REQUIRE: tuple[Entry, ...] = (
         "Of the wetted body.",
         "stainless steel 316L",
     ),
+    Entry(
+        "require.seal_material",
+        "Seal material",
+        "text",
+        "Of the seals and gaskets that the fluid touches; those that suit are proposed.",
+        "EPDM",
+        words=("propose",),
+        default="propose",
+    ),
     Entry("require.output", "Output", "list", "Signals wanted.", '["4-20 mA", "pulse"]'),
     Entry("require.supply", "Supply", "text", "Electrical supply.", "24 V DC, two-wire"),
     Entry(

@@ -221,6 +221,7 @@ _TERMS = (
     Term("pipe_expansion", "Thermal expansion of the pipe", "α", "expansion"),
     Term("flange_rating", "Flange rating", "", "text"),
     Term("allowable_pressure", "Allowable pressure of the rating", "", "pressure_gauge"),
+    Term("seal_material", "Seals", "", "text"),
     Term("flange_pressure", "Pressure on the flanges", "", "pressure_gauge"),
     Term("flange_temperature", "Temperature of the flanges", "", "temperature"),
 )

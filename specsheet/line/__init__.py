@@ -15,6 +15,7 @@ from specsheet.line.compatibility import (
 from specsheet.line.pipe import Pipe
 from specsheet.line.piping import PipeResult, pipe_of
 from specsheet.line.rating import RatingResult, rate
+from specsheet.line.seals import SealResult, seals
 from specsheet.line.straight import StraightResult, straight
 from specsheet.line.velocity import velocity_limits
 
@@ -25,6 +26,7 @@ __all__ = [
     "Pipe",
     "PipeResult",
     "RatingResult",
+    "SealResult",
     "StraightResult",
     "assess",
     "avoided_rules",
@@ -32,6 +34,7 @@ __all__ = [
     "materials",
     "pipe_of",
     "rate",
+    "seals",
     "straight",
     "unsuited_parts",
     "velocity_limits",

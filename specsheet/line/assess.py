@@ -11,6 +11,7 @@ from specsheet.line.cautions import cautions
 from specsheet.line.compatibility import materials
 from specsheet.line.pipe import Pipe
 from specsheet.line.rating import Margin, rate
+from specsheet.line.seals import seals
 from specsheet.line.service import Service
 from specsheet.line.straight import straight
 from specsheet.packs import Profile
@@ -22,7 +23,7 @@ class LineResult:
     """What the line has to say.
 
     Attributes:
-        values: glossary key -> value: straight lengths, flange rating, allowable pressure.
+        values: glossary key -> value: straight lengths, flange rating, allowable pressure, seals.
         notes: heading -> sentences, in the order of printing.
         findings: what does not hold or must be decided.
         additional_uncertainty: of the flow, by reduced straight lengths, to be added
@@ -47,7 +48,7 @@ def assess(
     meter_diameter: float | None = None,
     service: Service | None = None,
 ) -> LineResult:
-    """Judge straight lengths, flange rating, materials and cautions of one tag.
+    """Judge straight lengths, flange rating, seals, materials and cautions of one tag.
 
     Args:
         tag: the tag.
@@ -60,10 +61,16 @@ def assess(
     """
     rating = rate(tag, fluid, nominal=pipe.nominal if pipe else 0)
     wetted = materials(tag, profile, fluid, service=service)
+    sealed = seals(tag, profile, fluid, service=service)
     warned = cautions(tag, fluid, service=service)
-    values: dict[str, Given] = dict(rating.values)
-    notes = {"Flange rating": rating.notes, "Materials": wetted.notes, "Cautions": warned.notes}
-    findings = (*rating.findings, *wetted.findings, *warned.findings)
+    values: dict[str, Given] = {**rating.values, **sealed.values}
+    notes = {
+        "Flange rating": rating.notes,
+        "Seals": sealed.notes,
+        "Materials": wetted.notes,
+        "Cautions": warned.notes,
+    }
+    findings = (*rating.findings, *sealed.findings, *wetted.findings, *warned.findings)
     if profile is None or pipe is None:
         return LineResult(values, notes, findings, margin=rating.margin)
     runs = straight(

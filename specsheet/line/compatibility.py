@@ -23,6 +23,10 @@ _CLOSING = (
     "temperature and traces; local codes come first."
 )
 _AS_LINE = "as the line"
+#: parts that are seals, by their names
+SEALS = re.compile(r"\b(seals?|gaskets?)\b")
+_SEAL = "require.seal_material"
+_NOT_OF_SEALS = frozenset(("any", "abrasive", "slurry"))
 
 
 @dataclass(frozen=True, slots=True)
@@ -46,6 +50,11 @@ class _Part:
     text: str
     entry: str = ""
 
+    @property
+    def rules(self) -> frozenset[int]:
+        """Return the indices of the rules that concern it."""
+        return rules_about(self.text, seal=bool(SEALS.search(self.name)))
+
 
 def materials(
     tag: Tag,
@@ -57,7 +66,8 @@ def materials(
     """Return the notes on the materials that the fluid touches.
 
     Args:
-        tag: the tag; ``require.body_material`` and ``line.material`` count as wetted.
+        tag: the tag; ``require.body_material``, ``require.seal_material`` and ``line.material``
+            count as wetted.
         profile: the family's profile with its wetted parts, or None.
         fluid: states at the operating points, where saturation decides temperature or pressure.
         service: facts of the service, where the caller has them already.
@@ -68,11 +78,11 @@ def materials(
     findings: list[Finding] = []
     parts = tuple(_parts(tag, profile))
     rules = table("compatibility")["rule"]
-    for index in sorted(set().union(*(_rules_about(part.text) for part in parts))):
+    for index in sorted(set().union(*(part.rules for part in parts))):
         rule = rules[index]
         if not _holds(rule, service, words):
             continue
-        hit = [part for part in parts if index in _rules_about(part.text)]
+        hit = [part for part in parts if index in part.rules]
         verdict, text, source = rule["verdict"], rule["text"], rule["source"]
         lines[verdict].append(f"{_named(hit)}: {verdict}; {text} ({source}).")
         findings.extend(
@@ -91,12 +101,20 @@ def materials(
     return MaterialResult((*notes, _CLOSING), tuple(dict.fromkeys(findings)))
 
 
-def avoided_rules(service: Service, words: frozenset[str]) -> frozenset[int]:
-    """Return which rules call a material one to avoid in a service; ``words`` with its dangers."""
+def avoided_rules(
+    service: Service, words: frozenset[str], verdict: str = "avoid"
+) -> frozenset[int]:
+    """Return which rules call a material one to avoid in a service; ``words`` with its dangers.
+
+    Args:
+        service: facts of the service.
+        words: words of the service with its dangers.
+        verdict: another verdict asked for ("conditional").
+    """
     return frozenset(
         index
         for index, rule in enumerate(table("compatibility")["rule"])
-        if rule["verdict"] == "avoid" and _holds(rule, service, words)
+        if rule["verdict"] == verdict and _holds(rule, service, words)
     )
 
 
@@ -113,7 +131,7 @@ def unsuited_parts(profile: Profile, avoided: frozenset[int]) -> tuple[Finding, 
     found = []
     for name, choices in profile.wetted.items():
         known = [text for text in choices if text != _AS_LINE]
-        hits = [avoided & _rules_about(text) for text in known]
+        hits = [avoided & rules_about(text) for text in known]
         if not known or not all(hits):
             continue
         rule = rules[min(hits[0])]
@@ -134,9 +152,12 @@ def _parts(tag: Tag, profile: Profile | None) -> Iterator[_Part]:
     body = tag.text("require.body_material")
     if body:
         yield _Part("body", body, "require.body_material")
+    seal = tag.text(_SEAL) if _SEAL in tag.given else ""
+    if seal:
+        yield _Part("seal", seal, _SEAL)
     if profile is not None:
         for name, choices in profile.wetted.items():
-            for text in choices:
+            for text in () if seal and SEALS.search(name) else choices:
                 yield _Part(name, line if text == _AS_LINE else text)
 
 
@@ -167,10 +188,20 @@ def _holds(rule: Mapping[str, Any], service: Service, words: frozenset[str]) -> 
 
 
 @lru_cache(maxsize=4096)
-def _rules_about(text: str) -> frozenset[int]:
-    """Return the indices of the rules that concern a material."""
+def rules_about(text: str, *, seal: bool = False) -> frozenset[int]:
+    """Return the indices of the rules that concern a material.
+
+    Args:
+        text: the material.
+        seal: whether it is a seal: its temperatures stand in the pack of seals, not in the rules,
+            and it does not stand in the flow to be worn.
+    """
     rules = table("compatibility")["rule"]
-    return frozenset(index for index, rule in enumerate(rules) if _touches(rule, text))
+    return frozenset(
+        index
+        for index, rule in enumerate(rules)
+        if _touches(rule, text) and not (seal and _NOT_OF_SEALS.issuperset(rule["when"]))
+    )
 
 
 def _touches(rule: Mapping[str, Any], text: str) -> bool:

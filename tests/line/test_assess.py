@@ -26,14 +26,22 @@ def _assessed(tag, **more):
 
 def test_everything_in_one_call():
     result = _assessed(line_tag(design=DESIGN))
-    assert list(result.notes) == ["Straight lengths", "Flange rating", "Materials", "Cautions"]
+    assert list(result.notes) == [
+        "Straight lengths",
+        "Flange rating",
+        "Seals",
+        "Materials",
+        "Cautions",
+    ]
     assert set(result.values) == {
         "upstream_length",
         "downstream_length",
         "flange_rating",
         "allowable_pressure",
+        "seal_material",
     }
     assert result.values["flange_rating"].value == "Class 150"
+    assert result.values["seal_material"].value == "spiral wound with graphite"
 
 
 def test_every_value_is_a_term_of_the_glossary():

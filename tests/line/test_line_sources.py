@@ -16,6 +16,7 @@ PACKS = (
     "materials",
     "compatibility",
     "ignition",
+    "seals",
 )
 
 

@@ -152,6 +152,22 @@ RULES = [
     (WATER + "abrasive = true", "PTFE", 20, "avoid", "solids"),
     (WATER + "abrasive = true", "soft rubber", 20, "suited", "wears little"),
     (WATER + "abrasive = true", "stainless steel 316L", 20, "conditional", "hard facing"),
+    # Seals
+    (_substance("water", GASEOUS), "FKM", 150, "avoid", "steam hardens"),
+    (_substance("water", GASEOUS), "PTFE", 150, "conditional", "hot steam"),
+    ('kind = "given"\nname = "Rich amine"\nphase = "liquid"', "FKM", 40, "avoid", "amines"),
+    (_solution("caustic soda"), "silicone rubber", 20, "avoid", "EPDM or PTFE"),
+    (_substance("toluene"), "NBR", 20, "avoid", "aromatics"),
+    (_substance("methanol"), "FKM", 20, "conditional", "usual grades swell"),
+    (_solution("bleach"), "NBR", 20, "avoid", "strong oxidisers destroy"),
+    (
+        GAS.format("methane = 0.99, hydrogen_sulfide = 0.01"),
+        "NBR",
+        40,
+        "conditional",
+        "hardens nitrile",
+    ),
+    (WATER, "FKM", 210, "avoid", "200 degC"),
     (WATER, "hard rubber", 90, "avoid", "80 degC"),
     (WATER, "NBR", 110, "avoid", "100 degC"),
     (WATER, "EPDM", 140, "avoid", "130 degC"),
@@ -203,7 +219,12 @@ def test_no_rule_speaks_out_of_turn(fluid, material, celsius):
 
 
 def test_every_rule_of_the_pack_is_complete_and_tested():
-    spoken = {words for *_, words in RULES} | {"22 HRC", "corrosion-resistant", "lead-free"}
+    spoken = {words for *_, words in RULES} | {
+        "22 HRC",
+        "corrosion-resistant",
+        "lead-free",
+        "gas taken up",
+    }
     for rule in packs.table("compatibility")["rule"]:
         assert rule["verdict"] in ("avoid", "conditional", "suited")
         assert rule["source"]
@@ -261,6 +282,12 @@ def test_words_match_whole():
 def test_drinking_water(material, require, words):
     notes = _notes(WATER, material, require=require)
     assert [words in note for note in notes] == ([True] if words else [])
+
+
+def test_rubber_in_gas_under_pressure():
+    notes = _notes(_substance("nitrogen", GASEOUS), "FKM", bar=150)
+    assert any("ISO 23936-2" in note for note in notes)
+    assert _notes(_substance("nitrogen", GASEOUS), "FKM", bar=50) == []
 
 
 def test_alloys_in_sour_service():
