@@ -8,6 +8,7 @@ from __future__ import annotations
 
 import math
 import re
+from bisect import bisect_left
 from collections.abc import Mapping
 from dataclasses import dataclass
 from functools import cache
@@ -88,11 +89,13 @@ def pressure_numbers() -> tuple[float, ...]:
     return tuple(float(number) for number in table("flanges_en1092")["ratings"])
 
 
+@cache
 def standard(system: str) -> str:
     """Return the standard of a system of ratings."""
     return str(table("flanges_b165" if system == CLASS else "flanges_en1092")["standard"])
 
 
+@cache
 def lowest_temperature(system: str) -> float:
     """Return the lowest temperature that the ratings of a system hold at [K]."""
     return float(table("flanges_b165" if system == CLASS else "flanges_en1092")["lowest"]) + (
@@ -100,6 +103,7 @@ def lowest_temperature(system: str) -> float:
     )
 
 
+@cache
 def proposals() -> tuple[Rating, ...]:
     """Return the classes to choose from, rising; Class 400 is left out as unusual."""
     return tuple(Rating(CLASS, float(number)) for number in classes() if number != 400)
@@ -134,11 +138,12 @@ def allowed(rating: Rating, material: Material | None, temperature: float) -> Al
 def _on_curve(curve: _Curve, temperature: float) -> Allowed:
     if temperature <= curve.temperatures[0]:
         return Allowed(curve.pressures[0], curve.source)
-    points = zip(curve.temperatures, curve.pressures, strict=True)
-    for (low, first), (high, second) in pairwise(points):
-        if temperature <= high:
-            share = (temperature - low) / (high - low)
-            return Allowed(first + (second - first) * share, curve.source)
+    above = bisect_left(curve.temperatures, temperature)
+    if above < len(curve.temperatures):
+        low, high = curve.temperatures[above - 1 : above + 1]
+        first, second = curve.pressures[above - 1 : above + 1]
+        share = (temperature - low) / (high - low)
+        return Allowed(first + (second - first) * share, curve.source)
     last = curve.temperatures[-1] - _CELSIUS
     whose = "the standard" if curve.complete else "the table here"
     reason = f"{whose} ends at {last:.0f} degC for this material"

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass
 
 from specsheet.findings import Finding, Given, Level, Origin, Reserve
@@ -100,24 +100,23 @@ def rate(tag: Tag, fluid: FluidResult | None = None, *, nominal: int = 0) -> Rat
         found = allowed(chosen, material, decisive.temperature)
         if found.pressure is not None:
             values["allowable_pressure"] = Given(found.pressure, Origin.DERIVED, found.source)
-    for demand in demands.every:
-        findings.extend(_check(chosen, material, demand))
+    answers = [(demand, allowed(chosen, material, demand.temperature)) for demand in demands.every]
+    for demand, found in answers:
+        findings.extend(_check(chosen, demand, found))
     findings.extend(_mating(chosen, line))
     findings.extend(_size(chosen, nominal))
     findings.extend(_cold(tag, chosen, material, demands))
     findings.extend(_test(tag, chosen, material, demands))
     notes = (*_general_notes(tag, material_text, material, demands), *_test_notes(chosen, material))
-    nearest = _margin(chosen, material, demands)
+    nearest = _margin(chosen, material, answers)
     return RatingResult(values, notes, tuple(dict.fromkeys(findings)), nearest)
 
 
-def _margin(rating: Rating, material: Material | None, demands: Demands) -> Margin | None:
+def _margin(
+    rating: Rating, material: Material | None, answers: Sequence[tuple[Demand, Allowed]]
+) -> Margin | None:
     """Return the margin of the demand that uses most of what is allowed."""
-    known = [
-        (demand, found.pressure, found.source)
-        for demand in demands.every
-        if (found := allowed(rating, material, demand.temperature)).pressure
-    ]
+    known = [(demand, found.pressure, found.source) for demand, found in answers if found.pressure]
     if not known:
         return None
     demand, pressure, source = max(known, key=lambda item: item[0].pressure / item[1])
@@ -190,8 +189,7 @@ def _propose(
     return None
 
 
-def _check(rating: Rating, material: Material | None, demand: Demand) -> Iterator[Finding]:
-    found = allowed(rating, material, demand.temperature)
+def _check(rating: Rating, demand: Demand, found: Allowed) -> Iterator[Finding]:
     point = "" if demand.name == "design" else demand.name
     if found.pressure is None:
         level = Level.STOP if found.forbidden else Level.CAUTION

@@ -9,9 +9,9 @@ or a list right in the table ("single bend" and "single_bend" are one); ``downst
 from __future__ import annotations
 
 import math
+from bisect import bisect_left
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
-from itertools import pairwise
 from typing import Any
 
 from specsheet import quantity
@@ -209,7 +209,9 @@ def _interpolated(rules: Mapping[str, Any], lengths: Any, beta: float | None) ->
         return float(max(lengths))
     if beta <= betas[0]:
         return float(lengths[0])
-    for (low, first), (high, second) in pairwise(zip(betas, lengths, strict=True)):
-        if beta <= high:
-            return float(first + (second - first) * (beta - low) / (high - low))
-    return float(lengths[-1])
+    above = bisect_left(betas, beta)
+    if above == len(betas):
+        return float(lengths[-1])
+    low, high = betas[above - 1 : above + 1]
+    first, second = lengths[above - 1 : above + 1]
+    return float(first + (second - first) * (beta - low) / (high - low))
