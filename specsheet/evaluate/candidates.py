@@ -28,7 +28,7 @@ from specsheet.evaluate.summary import check_turndown, summarise
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.line import StraightResult
 from specsheet.meters import registry
-from specsheet.meters.family import Array, Element, Family, Request
+from specsheet.meters.family import Array, Element, Family, Request, Stream
 from specsheet.packs import Profile
 from specsheet.tagfile import with_family
 
@@ -87,10 +87,12 @@ def candidates(
         profiles: the families.
         of_flanges: stops on the flange rating asked for; they concern meters in the line.
     """
-    tried = [_tried(prepared, profile, of_flanges) for profile in profiles]
+    stream = prepared.points.stream
+    lanes = with_lanes(stream, scaled(stream)) if prepared.points.names else stream
+    tried = [_tried(prepared, profile, lanes, of_flanges) for profile in profiles]
     open_ones = [one for one in tried if isinstance(one, _Trial) and not one.stopped]
     searches = [one.held.search(one.grid) for one in open_ones]
-    flips = find_flips(prepared.points.stream, searches, ROUGH)
+    flips = find_flips(stream, searches, ROUGH)
     found = {one.request.profile.key: own for one, own in zip(open_ones, flips, strict=True)}
     return [
         one
@@ -133,9 +135,16 @@ class _Trial:
 
 
 def _tried(
-    prepared: Prepared, profile: Profile, of_flanges: tuple[Finding, ...]
+    prepared: Prepared, profile: Profile, lanes: Stream, of_flanges: tuple[Finding, ...]
 ) -> Candidate | _Trial:
-    """Try one family; one that the service rules out is not sized."""
+    """Try one family; one that the service rules out is not sized.
+
+    Args:
+        prepared: the tag without a meter.
+        profile: the family.
+        lanes: the operating points, and the flows that reserves are looked for at.
+        of_flanges: as in :func:`candidates`.
+    """
     family = registry.family(profile.key)
     service = judge_service(prepared, profile)
     in_line = "closed pipe" in profile.applies_to
@@ -150,7 +159,7 @@ def _tried(
         return _unfit(profile, family, (*said, *missing), service)
     habits = () if family is not None else judge_habits(prepared, profile)
     choosing = remarks(profile, tag.phase, prepared.words, choosing=True)
-    return _sized(request, family, (*said, *habits, *choosing), service)
+    return _sized(request, family, lanes, (*said, *habits, *choosing), service)
 
 
 def _unfit(
@@ -173,14 +182,18 @@ def _deciding(findings: Iterable[Finding]) -> tuple[Finding, ...]:
 
 
 def _sized(
-    request: Request, equations: Family | None, said: tuple[Finding, ...], service: Service
+    request: Request,
+    equations: Family | None,
+    lanes: Stream,
+    said: tuple[Finding, ...],
+    service: Service,
 ) -> _Trial:
     """Size one family, or judge it by its limits, and hold it against the operating points."""
     family = equations or family_by_limits(request.profile)
     element = family.size(request)
     runs = _runs(request, element)
     model = model_of(request, family, element, runs.additional_uncertainty)
-    every = model(with_lanes(request.stream, scaled(request.stream))).values
+    every = model(lanes).values
     count = len(request.names)
     values = {key: found[:count] for key, found in every.items()}
     limits = tuple(
