@@ -78,6 +78,12 @@ _LINE = (
         ("flange_rating", "design.temperature"),
     ),
     Derivation(
+        "seal_material",
+        "usual for the family, or of the table: within its bounds and not attacked by the fluid",
+        "",
+        ("design.temperature",),
+    ),
+    Derivation(
         "upstream_length",
         "the longest that any of the fittings asks for, by the source",
         "",
