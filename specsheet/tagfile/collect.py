@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping
-from typing import Any
+from collections.abc import Mapping
 
 from specsheet.fields import Entry
 from specsheet.quantity.value import Refusal
@@ -13,8 +12,6 @@ from specsheet.tagfile.problem import Problem
 from specsheet.tagfile.spans import Lines, Place
 from specsheet.tagfile.values import from_toml
 from specsheet.tagfile.words import came, did_you_mean, nearest, printable
-
-_ALWAYS = "always"
 
 
 class Collector:
@@ -74,8 +71,9 @@ class Collector:
                     self.add((*place, key), join(field, key), taken.message)
                 else:
                     found[key] = taken
-        for entry in missing(keys, raw):
-            self.add(place, join(field, entry.key), needed_message(entry), lacking=True)
+        for entry in keys.required:
+            if blank(raw.get(entry.key, "")):
+                self.add(place, join(field, entry.key), needed_message(entry), lacking=True)
         return found
 
     def _unknown(
@@ -108,13 +106,6 @@ def blank(value: object) -> bool:
 def join(field: str, key: str) -> str:
     """Return the path of a key in messages."""
     return f"{field}.{key}" if field else key
-
-
-def missing(keys: Keys, raw: Mapping[str, Any]) -> Iterator[Entry]:
-    """Yield the entries that every file must state and this one does not."""
-    for key, entry in keys.items():
-        if entry.needed == _ALWAYS and blank(raw.get(key, "")):
-            yield entry
 
 
 def needed_message(entry: Entry) -> str:

@@ -12,8 +12,21 @@ from specsheet.quantity.value import Refusal
 from specsheet.tag import Value
 from specsheet.tagfile.values import from_text
 
-#: entries of one section, by key
-Keys = Mapping[str, Entry]
+
+class Keys(dict[str, Entry]):
+    """The entries of one section, by key.
+
+    Attributes:
+        required: those that every file must state.
+    """
+
+    def __init__(self, entries: Iterable[Entry] = ()) -> None:
+        super().__init__((entry.key, entry) for entry in entries)
+        self.required = tuple(entry for entry in self.values() if entry.needed == "always")
+
+
+#: of a section in which nothing is known
+NO_KEYS = Keys()
 
 
 @dataclass(frozen=True, slots=True)
@@ -55,10 +68,10 @@ def job_defaults() -> Defaults:
 
 
 def _sections(entries: Iterable[Entry]) -> Mapping[str, Keys]:
-    found: dict[str, dict[str, Entry]] = {}
+    found: dict[str, list[Entry]] = {}
     for entry in entries:
-        found.setdefault(entry.section, {})[entry.key] = entry
-    return found
+        found.setdefault(entry.section, []).append(entry)
+    return {section: Keys(group) for section, group in found.items()}
 
 
 def _defaults(entries: Iterable[Entry]) -> Defaults:

@@ -6,7 +6,7 @@ from typing import Any
 
 from specsheet.fields import Entry
 from specsheet.quantity.value import Refusal
-from specsheet.tagfile.known import job_sections, tag_sections
+from specsheet.tagfile.known import NO_KEYS, job_sections, tag_sections
 from specsheet.tagfile.literal import value_text
 from specsheet.tagfile.values import is_number, to_toml
 from specsheet.tagfile.words import Number, number_text
@@ -25,7 +25,7 @@ def entry_of(path: str, family: str) -> Entry | None:
     groups = job_sections() if parts[0] == "job" else tag_sections(family)
     for length in (len(parts), len(parts) - 1):
         section, _, key = ".".join(parts[:length]).rpartition(".")
-        found = groups.get(section, {}).get(key)
+        found = groups.get(section, NO_KEYS).get(key)
         if found and (length == len(parts) or found.kind in _TABLE_KINDS):
             return found
     return None

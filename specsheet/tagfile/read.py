@@ -17,7 +17,7 @@ from specsheet.fields import REVISION, SECTIONS
 from specsheet.tag import Point, Revision, Tag, Value
 from specsheet.tagfile.collect import Collector, blank, needed_message
 from specsheet.tagfile.jobfile import NO_JOB, Job, find_job
-from specsheet.tagfile.known import job_defaults, tag_defaults, tag_sections
+from specsheet.tagfile.known import NO_KEYS, job_defaults, tag_defaults, tag_sections
 from specsheet.tagfile.migrate import CURRENT, migrate
 from specsheet.tagfile.problem import Problem, Reading
 from specsheet.tagfile.source import BOM, objection, read_text
@@ -79,7 +79,9 @@ def _read(data: dict[str, Any], text: str, path: str, job: Job, schema: int) -> 
         if section == "meter" and not known:
             continue  # what may stand there is not known
         raw = data.get(section, {})
-        values = collector.table(raw, sections.get(section, {}), place=(section,), field=section)
+        values = collector.table(
+            raw, sections.get(section, NO_KEYS), place=(section,), field=section
+        )
         given.update((f"{section}.{key}", value) for key, value in values.items())
     _check_fluid(data.get("fluid"), given, collector, sections)
     points = _points(data.get("points"), collector, sections)

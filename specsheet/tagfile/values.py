@@ -33,7 +33,7 @@ def from_toml(entry: Entry, raw: object) -> Value | Refusal:
     Quantities become :class:`~specsheet.quantity.value.Quantity`; a nominal size and a straight
     length are checked and stay the text typed. A blank text is the caller's to leave out.
     """
-    if isinstance(raw, str) and raw.strip() in entry.words:
+    if entry.words and isinstance(raw, str) and raw.strip() in entry.words:
         return raw.strip()
     return _READERS.get(entry.kind, _quantity)(entry, raw)
 

@@ -29,7 +29,7 @@ def entry_at(family: str, path: str) -> Entry | None:
     """
     sections = known.tag_sections(family)
     section, _, key = path.rpartition(".")
-    found = sections.get(section, {}).get(key)
+    found = sections.get(section, known.NO_KEYS).get(key)
     if found is None and section.count("."):
         found = entry_at(family, ".".join(path.split(".")[:2]))
         return found if found is not None and found.kind == _FRACTIONS else None
