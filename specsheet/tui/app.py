@@ -12,6 +12,7 @@ from typing import ClassVar
 
 from textual.app import App
 from textual.binding import Binding, BindingType
+from textual.driver import Driver
 from textual.reactive import Reactive
 from textual.screen import Screen
 from textual.theme import Theme
@@ -48,7 +49,7 @@ class FormApp(App[int], inherit_bindings=False, inherit_css=False):
             path: a tag file, or the folder of a job or of tags.
             evaluator: what derives; by default a worker process.
         """
-        super().__init__(ansi_color=wants_no_colour())
+        super().__init__(driver_class=_driver_class(), ansi_color=wants_no_colour())
         self.path = path
         self.evaluator: Evaluator = WorkerEvaluator() if evaluator is None else evaluator
         self.register_theme(THEME)
@@ -66,11 +67,16 @@ class FormApp(App[int], inherit_bindings=False, inherit_css=False):
     def on_mount(self) -> None:
         """Take the signals; look for garbage again once the first screen is drawn."""
         self.call_after_refresh(_collect_garbage)
+        self.app_resume_signal.subscribe(self, self._on_resume)
         if sys.platform != "win32":
             loop = asyncio.get_running_loop()
             for name in _SIGNALS:
                 number = getattr(signal, name)
                 loop.add_signal_handler(number, self._on_signal(number))
+
+    def _on_resume(self, _: object) -> None:
+        """Draw the whole screen again: what was on the terminal meanwhile is not known."""
+        self.screen.refresh(layout=True)
 
     async def on_unmount(self) -> None:
         """End the worker."""
@@ -93,6 +99,15 @@ class FormApp(App[int], inherit_bindings=False, inherit_css=False):
         say: Callable[[str], None] | None = getattr(self.screen, "say", None)
         if say is not None:
             say("Ctrl+Q quits")
+
+
+def _driver_class() -> type[Driver] | None:
+    """Return the driver of this system's terminals; None for the library's own."""
+    if sys.platform == "win32":
+        return None
+    from specsheet.tui.driver import TerminalDriver
+
+    return TerminalDriver
 
 
 def _collect_garbage() -> None:

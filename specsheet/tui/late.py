@@ -2,29 +2,30 @@
 
 from __future__ import annotations
 
-import sys
-from importlib.util import LazyLoader, find_spec, module_from_spec
+from importlib import import_module
 from typing import Any
 
 
+class _Late:
+    """A stand-in that looks everything up in the module of its name, and keeps what it found.
+
+    The library's lazy modules are of no use here: a package of theirs that is first met by the
+    import of a module in it loads that module twice, with two classes of one name.
+    """
+
+    def __init__(self, name: str) -> None:
+        self._name = name
+
+    def __getattr__(self, name: str) -> Any:
+        found = getattr(import_module(self._name), name)
+        setattr(self, name, found)
+        return found
+
+
 def late(name: str) -> Any:
-    """Return a module that loads itself at the first look into it.
+    """Return a stand-in for a module that is loaded at the first look into it.
 
     Args:
-        name: full name of the module.
-
-    Raises:
-        ImportError: there is no such module.
+        name: full name of the module. Where there is none, the first look raises ImportError.
     """
-    if name in sys.modules:
-        return sys.modules[name]
-    spec = find_spec(name)
-    if spec is None or spec.loader is None:
-        raise ImportError(f"there is no module {name}")
-    spec.loader = LazyLoader(spec.loader)
-    module = module_from_spec(spec)
-    sys.modules[name] = module
-    spec.loader.exec_module(module)
-    parent, _, child = name.rpartition(".")
-    setattr(sys.modules[parent], child, module)
-    return module
+    return _Late(name)

@@ -68,16 +68,21 @@ class Terminal:
 
     def end(self, timeout: float = 15.0) -> int:
         """Read to the end of the program and return its exit status."""
-        self.read(lambda _: self._ended(), timeout)
+        self.read(lambda _: self.ended(), timeout)
         last = time.monotonic() + timeout
-        while not self._ended():  # the line closes a moment before the process is gone
+        while not self.ended():  # the line closes a moment before the process is gone
             assert time.monotonic() < last, self.text
             time.sleep(0.01)
         os.close(self._line)
         assert self.code is not None
         return self.code
 
-    def _ended(self) -> bool:
+    def hang_up(self) -> None:
+        """Take the terminal away."""
+        os.close(self._line)
+
+    def ended(self) -> bool:
+        """Tell whether the program has ended."""
         if self.code is None:
             done, status = os.waitpid(self.process, os.WNOHANG)
             if done:
@@ -183,3 +188,31 @@ def test_in_tmux_keys_arrive_and_the_terminal_is_given_back(
     wait("STATUS 0")
     assert tmux("display", "-p", "#{alternate_on} #{cursor_flag} #{mouse_any_flag}") == "0 1 0\n"
     assert 'size = "DN 100"' in tag_file.read_text()
+
+
+def test_a_terminal_that_has_gone_ends_the_program_and_keeps_the_edits(tag_file: Path) -> None:
+    """As when a window is closed or a connection is lost: hang-up, go on, and nowhere to draw."""
+    terminal = Terminal(tag_file)
+    terminal.read(lambda text: "Kind of fluid" in text)
+    terminal.write("\rBrine")
+    terminal.read(lambda text: "Brine" in text)
+    terminal.hang_up()
+    end = time.monotonic() + 15.0
+    while not terminal.ended():
+        assert time.monotonic() < end, "it waits for a terminal that has gone"
+        time.sleep(0.05)
+    (leftover,) = survey(tag_file).leftovers
+    assert "Brine" in leftover.state.text
+
+
+def test_after_a_stop_the_whole_screen_is_drawn_again(tag_file: Path) -> None:
+    terminal = Terminal(tag_file)
+    terminal.read(lambda text: "Kind of fluid" in text and "reserve" in text)
+    os.kill(terminal.process, signal.SIGTSTP)
+    terminal.read(lambda _: b"\x1b[?1049l" in terminal.seen)
+    os.waitpid(terminal.process, os.WUNTRACED)
+    terminal.seen = b""
+    os.kill(terminal.process, signal.SIGCONT)
+    terminal.read(lambda text: "Kind of fluid" in text and "Quit" in text)
+    terminal.write("\x11")
+    assert terminal.end() == 0
