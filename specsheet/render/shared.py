@@ -24,12 +24,13 @@ def marks(origins: Iterable[Origin]) -> str:
 
 def mark(row: Row) -> str:
     """Return the mark of a row; "" where the origins vary and stand in the cells."""
-    return marks(row.origins) if len(row.origins) == 1 else ""
+    origins = row.origins
+    return MARKS[origins[0]] if len(origins) == 1 else ""
 
 
 def numbers(sheet: Sheet, source: str) -> str:
     """Return the numbers of the sources of a row ("[3]")."""
-    found = sheet.numbers(source)
+    found = sheet.numbers(source) if source else ()
     return f"[{','.join(map(str, found))}]" if found else ""
 
 
@@ -45,12 +46,10 @@ def values(row: Row, part: slice) -> list[str]:
 
     A value that does not depend on the point stands at each.
     """
-    mixed = len(row.origins) > 1
     shown = row.cells * (part.stop - part.start) if len(row.cells) == 1 else row.cells[part]
-    return [
-        f"{marks((cell.origin,))} {cell.text}" if mixed and cell.origin else cell.text
-        for cell in shown
-    ]
+    if len(row.origins) < 2:
+        return [cell.text for cell in shown]
+    return [f"{MARKS[cell.origin]} {cell.text}" if cell.origin else cell.text for cell in shown]
 
 
 def label(row: Row) -> str:
@@ -65,7 +64,7 @@ def figures(row: Row) -> str:
     """
     texts = values(row, slice(0, len(row.cells)))
     told = texts if len(set(texts)) > 1 else texts[:1]
-    joined = f"{FIXED}| ".join(fixed(text) for text in told)
+    joined = f"{FIXED}| ".join([fixed(text) for text in told])
     return f"{joined}{FIXED}{fixed(row.unit)}" if row.unit else joined
 
 
@@ -84,7 +83,7 @@ def put_in(working: Working) -> str:
     for row in working.inputs:
         alone = row.symbol and signs.count(row.symbol) == 1
         name = row.symbol if alone else named(row.label, row.symbol).replace("  ", " ")
-        said = fixed(f"{mark(row)} {name} =".strip())
+        said = fixed(f"{mark(row)} {name} =".lstrip())
         texts.append(f"{said}{FIXED}{figures(row)}")
     return "; ".join(texts)
 
@@ -94,7 +93,8 @@ def groups(workings: Iterable[Working]) -> list[list[Working]]:
     made: dict[tuple[object, ...], list[Working]] = {}
     for working in workings:
         shared = bool(working.equation)
-        key = (working.equation, working.source, working.inputs if shared else working.key)
+        inputs = tuple([row.key for row in working.inputs])  # one row has one key on a sheet
+        key = (working.equation, working.source, inputs if shared else working.key)
         made.setdefault(key, []).append(working)
     return list(made.values())
 

@@ -20,7 +20,7 @@ CITATION_JOINT = "; "
 
 def citations(source: str) -> tuple[str, ...]:
     """Return the single citations of a row: several are joined by "; "."""
-    return tuple(item for item in source.split(CITATION_JOINT) if item)
+    return tuple([item for item in source.split(CITATION_JOINT) if item])
 
 
 @dataclass(frozen=True, slots=True)
@@ -61,7 +61,11 @@ class Row:
     @property
     def origins(self) -> tuple[Origin, ...]:
         """The origins met in the row, each once, in the order of the cells."""
-        return tuple(dict.fromkeys(cell.origin for cell in self.cells if cell.origin is not None))
+        met: list[Origin] = []
+        for cell in self.cells:
+            if cell.origin is not None and cell.origin not in met:
+                met.append(cell.origin)
+        return tuple(met)
 
     @property
     def text(self) -> str:
@@ -328,5 +332,5 @@ class Sheet:
 
     def numbers(self, source: str) -> tuple[int, ...]:
         """Return the numbers of the citations of a row in the list of sources."""
-        cited = citations(source)
-        return tuple(self.sources.index(item) + 1 for item in cited if item in self.sources)
+        listed = self.sources
+        return tuple([listed.index(item) + 1 for item in citations(source) if item in listed])

@@ -7,7 +7,6 @@ from collections.abc import Sequence
 from specsheet.render.pdf import style
 from specsheet.render.pdf.fonts import Run
 from specsheet.render.pdf.page import Columns, Frame
-from specsheet.render.pdf.style import Style
 from specsheet.render.shared import figures, groups, numbers, put_in, source
 from specsheet.sheet.model import Sheet, Working
 from specsheet.sheet.words import named
@@ -56,8 +55,8 @@ def _working(frame: Columns, sheet: Sheet, group: Sequence[Working]) -> None:
         _result(frame, one)
     cited = numbers(sheet, working.source)
     frame.page.right(frame.x + frame.width, frame.y - style.FINE.size, cited, style.SMALL)
-    _set(frame, equation, style.FINE)
-    _set(frame, inputs, style.QUIET)
+    frame.put(equation, style.FINE)
+    frame.put(inputs, style.QUIET)
     frame.y -= _GAP
     frame.page.rule(frame.x, frame.x + frame.width, frame.y)
     frame.y -= _GAP
@@ -73,21 +72,14 @@ def _result(frame: Columns, working: Working) -> None:
         frame.keep(look.leading)
         y = frame.y - look.size
         frame.page.run(frame.x + frame.width - figure.width, y, figure, look)
-        _set(frame, names, look)
+        frame.put(names, look)
     else:
-        _set(frame, names, look)
-        _set(frame, shown, look)
+        frame.put(names, look)
+        frame.put(shown, look)
 
 
 def _lines(frame: Frame, text: str, room: float) -> tuple[Run, ...]:
     return frame.book.lines(text, room, style.FINE)
-
-
-def _set(frame: Frame, lines: Sequence[Run], look: Style, indent: float = 0.0) -> None:
-    for line in lines:
-        frame.keep(look.leading)
-        frame.page.run(frame.x + indent, frame.y - look.size, line, look)
-        frame.y -= look.leading
 
 
 def _sources(frame: Columns, sheet: Sheet) -> None:
@@ -100,7 +92,7 @@ def _sources(frame: Columns, sheet: Sheet) -> None:
         lines = _lines(frame, source(cited), frame.width - _NUMBER)
         frame.keep(style.FINE.leading)
         frame.page.text(frame.x, frame.y - style.FINE.size, f"[{number}]", style.QUIET)
-        _set(frame, lines, style.FINE, _NUMBER)
+        frame.put(lines, style.FINE, _NUMBER)
         frame.y -= 0.8
     if frame.book.missing:
         frame.skip(8.0)

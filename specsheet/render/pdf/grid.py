@@ -48,7 +48,7 @@ class Line(NamedTuple):
 
 
 class _Place(NamedTuple):
-    """Where the cells of a column stand: left or right edge in the frame, room, style."""
+    """Where the cells of a column stand: left or right edge in the frame, room and style."""
 
     x: float
     room: float
@@ -56,19 +56,10 @@ class _Place(NamedTuple):
     right: bool
 
 
-class _Cell(NamedTuple):
-    """One cell ready to be set: lines, style, and its left or its right edge in the frame."""
-
-    lines: tuple[Run, ...]
-    look: Style
-    x: float
-    right: bool
-
-
 class _Row(NamedTuple):
     """One row ready to be set: the cells that hold something, and how high they stand."""
 
-    cells: Sequence[_Cell]
+    cells: Sequence[tuple[tuple[Run, ...], Style, _Place]]
     ornament: Ornament | None
     lines: int
     size: float  # of the largest letters
@@ -154,7 +145,8 @@ def _places(columns: Sequence[Column]) -> list[_Place]:
     x = 0.0
     for column in columns:
         edge = x + column.width - _BETWEEN if column.right else x
-        places.append(_Place(edge, column.width - _BETWEEN, column.look, column.right))
+        room = max(column.width - _BETWEEN, column.look.size)
+        places.append(_Place(edge, room, column.look, column.right))
         x += column.width
     return places
 
@@ -164,16 +156,13 @@ def _broken(frame: Frame, places: Sequence[_Place], line: Line) -> _Row:
     cells = []
     size = 0.0
     count = 1
-    for (x, room, look, right), cell in zip(places, line.cells, strict=True):
-        if isinstance(cell, str):
-            text = cell
-        else:
-            text, look = cell
+    for place, cell in zip(places, line.cells, strict=True):
+        text, look = (cell, place.look) if isinstance(cell, str) else cell
         if look.size > size:
             size = look.size
         if text:
-            lines = broken(text, max(room, look.size), look)
-            cells.append(_Cell(lines, look, x, right))
+            lines = broken(text, place.room, look)
+            cells.append((lines, look, place))
             if len(lines) > count:
                 count = len(lines)
     leading = size * style.LEADING
@@ -209,10 +198,9 @@ def _overleaf(frame: Frame, title: str, columns: Sequence[Column]) -> None:
 def _draw(frame: Frame, row: _Row, start: int, count: int) -> None:
     page = frame.page
     baseline = frame.y - _PADDING / 2.0 - row.size * 0.93
-    leading = row.leading
-    for lines, look, x, right in row.cells:
-        edge = frame.x + x
+    for lines, look, place in row.cells:
+        edge = frame.x + place.x
         y = baseline
         for line in lines[start : start + count]:
-            page.run(edge - line.width if right else edge, y, line, look)
-            y -= leading
+            page.run(edge - line.width if place.right else edge, y, line, look)
+            y -= row.leading

@@ -6,6 +6,7 @@ content, in the order they are made, so equal sheets give equal bytes.
 
 from __future__ import annotations
 
+from collections.abc import Iterable
 from dataclasses import dataclass, field
 from functools import cache
 
@@ -133,7 +134,7 @@ class Book:
     Attributes:
         size: width and height of the paper [pt].
         column: width of a column of values by operating point [pt].
-        pages: so far; made on demand.
+        pages: so far.
         headings: for the outline.
         places: what the bidder fills in.
         overlong: texts that the band at the top had to cut; they are printed in full further on.
@@ -142,17 +143,11 @@ class Book:
 
     size: tuple[float, float]
     column: float
-    pages: list[Page] = field(default_factory=list)
+    pages: list[Page] = field(default_factory=lambda: [Page()])
     headings: list[Heading] = field(default_factory=list)
     places: list[Place] = field(default_factory=list)
     overlong: list[str] = field(default_factory=list)
     missing: dict[str, None] = field(default_factory=dict)
-
-    def page(self, index: int) -> Page:
-        """Return a page, made with all pages before it where it is new."""
-        while len(self.pages) <= index:
-            self.pages.append(Page())
-        return self.pages[index]
 
     def top(self, index: int) -> float:
         """Return where the text of a page starts."""
@@ -193,7 +188,7 @@ class Frame:
     @property
     def page(self) -> Page:
         """The page the frame stands on."""
-        return self.book.page(self.index)
+        return self.book.pages[self.index]
 
     @property
     def room(self) -> float:
@@ -211,14 +206,15 @@ class Frame:
         return self.book.top(1) - style.FOOT
 
     def turn(self) -> None:
-        """Go on overleaf."""
+        """Go on overleaf, on a new page where the frame is the first to come there."""
         self.index += 1
         self.y = self.book.top(self.index)
-        self.book.page(self.index)
+        if self.index == len(self.book.pages):
+            self.book.pages.append(Page())
 
     def keep(self, height: float) -> bool:
         """Turn the page where ``height`` does not fit; tell whether it was turned."""
-        if height <= self.room or self.y == self.top:
+        if height <= self.y - style.FOOT or self.y == self.top:
             return False
         self.turn()
         return True
@@ -239,10 +235,15 @@ class Frame:
 
     def paragraph(self, text: str, look: Style, indent: float = 0.0) -> None:
         """Set wrapped text, line by line and overleaf where the page is full."""
-        for line in self.book.lines(text, self.width - indent, look):
-            self.keep(look.leading)
+        self.put(self.book.lines(text, self.width - indent, look), look, indent)
+
+    def put(self, lines: Iterable[Run], look: Style, indent: float = 0.0) -> None:
+        """Set lines made at the size of ``look``, overleaf where the page is full."""
+        leading = look.leading
+        for line in lines:
+            self.keep(leading)
             self.page.run(self.x + indent, self.y - look.size, line, look)
-            self.y -= look.leading
+            self.y -= leading
 
 
 @dataclass
