@@ -59,11 +59,10 @@ class Stream:
     @cached_property
     def alike(self) -> bool:
         """Whether all conditions are the same but for the flow."""
-        columns = (getattr(self, name) for name in self.__dataclass_fields__ if name != "mass_flow")
-        return all(
-            bool(((column == column[:1]) | np.isnan(column) & np.isnan(column[:1])).all())
-            for column in columns
-        )
+        names = [name for name in self.__dataclass_fields__ if name != "mass_flow"]
+        table = np.array([getattr(self, name) for name in names])
+        first, unknown = table[:, :1], np.isnan(table)
+        return bool(((table == first) | unknown & unknown[:, :1]).all())
 
     def take(self, indices: NDArray[np.intp]) -> Stream:
         """Return the stream at the chosen conditions (repeats allowed)."""

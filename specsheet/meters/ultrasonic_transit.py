@@ -6,6 +6,7 @@ Sources: ISO 12242 (liquids), ISO 17089 (gases). Usual limits and figures stand 
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import replace
 from functools import partial
 
 import numpy as np
@@ -36,7 +37,8 @@ def size(request: Request) -> Element:
     """Choose the largest size that the limits allow; clamped on, the pipe is the meter."""
     build = partial(_build, request, output.output(request))
     if request.tag.text("meter.mounting") == _CLAMPED:
-        return build(_pipe_as_meter(request))
+        element = build(_pipe_as_meter(request))
+        return replace(element, findings=(*sizes.not_positive(request), *element.findings))
     return choose_largest(request, build, Rules(at, limits, budget))
 
 

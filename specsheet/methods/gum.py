@@ -72,10 +72,10 @@ def combine(
     degrees = np.atleast_1d(np.asarray(freedom, dtype=np.float64))
     if degrees.shape != parts.shape[:1]:
         raise ValueError(f"{parts.shape[0]} contributions but {degrees.size} degrees of freedom")
-    if np.any(degrees < 1.0):
+    if (degrees < 1.0).any():
         raise ValueError("degrees of freedom must be at least 1")
     if correlation is None:
-        standard = np.sqrt(np.sum(parts**2, axis=0))
+        standard = np.sqrt((parts**2).sum(axis=0))
         effective = effective_freedom(parts, degrees)
     else:
         if np.any(np.isfinite(degrees)):
@@ -122,7 +122,7 @@ def coverage_factor(freedom: ArrayLike, *, level: float = TWO_SIGMA) -> Array:
     degrees = np.asarray(freedom, dtype=np.float64)
     if not 0.0 < level < 1.0:
         raise ValueError(f"a level of confidence between 0 and 1 was wanted, {level} came")
-    if np.any(degrees < 1.0):
+    if (degrees < 1.0).any():
         raise ValueError("degrees of freedom must be at least 1")
     if np.isinf(degrees).all():
         return np.full(degrees.shape, _student(math.inf, level))

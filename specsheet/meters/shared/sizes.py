@@ -86,6 +86,11 @@ def line_nominal(request: Request, sizes: tuple[Size, ...]) -> int:
 
 def candidates(request: Request) -> Candidates:
     """Return the sizes in question: the one stated, else every size up to that of the line."""
+    found = _in_question(request)
+    return replace(found, findings=(*found.findings, *not_positive(request)))
+
+
+def _in_question(request: Request) -> Candidates:
     sizes = series(request.profile)
     name = request.tag.text("meter.size")
     bore = stated(request, "bore")
@@ -148,7 +153,7 @@ def stated(request: Request, key: str) -> float | None:
     return found if found is not None and found > 0.0 else None
 
 
-def _not_positive(request: Request) -> tuple[Finding, ...]:
+def not_positive(request: Request) -> tuple[Finding, ...]:
     """Return a stop for each figure of the meter that is not above zero."""
     findings = []
     for entry in request.profile.entries:
@@ -173,13 +178,11 @@ def size_values(request: Request, size: Size) -> dict[str, Given]:
 
 
 def size_findings(request: Request, size: Size) -> tuple[Finding, ...]:
-    """Return what is wrong with the figures stated, and a caution on a meter above the line."""
-    wrong = _not_positive(request)
+    """Return a caution on a meter larger than the line."""
     nominal = line_nominal(request, series(request.profile))
     if size.nominal <= nominal:
-        return wrong
+        return ()
     return (
-        *wrong,
         Finding(
             Level.CAUTION,
             "meter-larger-than-line",
