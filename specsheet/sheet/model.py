@@ -206,6 +206,41 @@ class Mark:
 
 
 @dataclass(frozen=True, slots=True)
+class Scale:
+    """One driver other than the flow on a linear scale of its own: where its verdict flips.
+
+    Attributes:
+        label, unit: the driver.
+        low, high: ends of the stretch in which the verdict holds, as fractions of the length.
+        open_low, open_high: whether the limit leaves that end open, or lies beyond the scale.
+        zero: the zero of the unit.
+        flip: the value at the flip, without its unit.
+        mark: the driver's value at the operating point; inside where the verdict holds.
+        reserve: change that flips the verdict ("−12 K", "+32 %").
+        level: level of the limit.
+        ceiling: whether the verdict flips at the upper end of the stretch.
+    """
+
+    label: str
+    unit: str
+    low: float
+    high: float
+    open_low: bool
+    open_high: bool
+    zero: float
+    flip: str
+    mark: Mark
+    reserve: str
+    level: Level
+    ceiling: bool
+
+    @property
+    def flips(self) -> float:
+        """Where the verdict flips, as a fraction of the length."""
+        return self.high if self.ceiling else self.low
+
+
+@dataclass(frozen=True, slots=True)
 class Ruler:
     """The range ruler: a logarithmic axis of flow with windows and operating points.
 
@@ -216,6 +251,8 @@ class Ruler:
         windows: tightest first.
         marks: in the order of the operating points.
         usable: ends of the stretch that every window leaves open; None where there is none.
+        scales: what flips a verdict beside the flow, tightest first.
+        more: a line on the scales left out, or "".
     """
 
     label: str
@@ -224,6 +261,8 @@ class Ruler:
     windows: tuple[Window, ...]
     marks: tuple[Mark, ...]
     usable: tuple[float, float] | None
+    scales: tuple[Scale, ...] = ()
+    more: str = ""
 
 
 @dataclass(frozen=True, slots=True)

@@ -8,7 +8,7 @@ from collections import Counter
 from collections.abc import Sequence
 from typing import TYPE_CHECKING
 
-from specsheet.sheet import rounding, rows, words
+from specsheet.sheet import rounding, rows, scales, words
 from specsheet.sheet.axis import FlowAxis, mass_flows
 from specsheet.sheet.model import Mark, Ruler, Tick, Window
 from specsheet.sheet.units import Units
@@ -42,6 +42,7 @@ def build(evaluation: Evaluation, units: Units, axis: FlowAxis) -> Ruler | None:
     )
     start = max((window.low for window in windows), default=0.0)
     end = min((window.high for window in windows), default=1.0)
+    beside, more = scales.build(evaluation, units, axis)
     return Ruler(
         label=axis.label,
         unit=axis.printed_unit,
@@ -57,6 +58,8 @@ def build(evaluation: Evaluation, units: Units, axis: FlowAxis) -> Ruler | None:
             for name, flow in flows.items()
         ),
         usable=(start, end) if start < end else None,
+        scales=beside,
+        more=more,
     )
 
 

@@ -6,8 +6,7 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
 from specsheet.findings import Level, Origin
-from specsheet.render.text.layout import heading
-from specsheet.render.text.ruler import draw
+from specsheet.render.text.ruler import beside, by_flow
 from specsheet.sheet.model import Row, Ruler, Sheet, Table
 from specsheet.tui.glyphs import LEVEL_LETTERS, ORIGIN_LETTERS
 from specsheet.tui.lines import Line, wrap
@@ -203,13 +202,14 @@ def finding_lines(found: Sequence[Item], width: int) -> tuple[list[Line], list[i
 
 
 def ruler_lines(ruler: Ruler, width: int) -> list[Line]:
-    """Return the range ruler."""
-    texts = draw(ruler, width)[len(heading("", width)) :]
+    """Return the range ruler, below it what else flips a verdict."""
+    texts, scales = by_flow(ruler, width), beside(ruler, width)
     windows = len(ruler.windows)
     lanes = len(texts) - windows - 2
-    # The scale goes right below the points: a low pane still shows both.
-    texts = [*texts[:lanes], *texts[-2:], *texts[lanes:-2]]
+    # The axis goes right below the points: a low pane still shows both.
+    texts = [*texts[:lanes], *texts[-2:], *texts[lanes:-2], *scales]
     tones = ["head"] * lanes + ["text", "label"] + ["accent"] * windows
+    tones += ["label", *["accent"] * (len(scales) - 1)] if scales else []
     return [((text, tone),) for text, tone in zip(texts, tones, strict=True)]
 
 

@@ -8,7 +8,7 @@ import pytest
 from rich.style import Style
 
 from specsheet.findings import Level, Origin
-from specsheet.sheet.model import Cell, LimitRow, Row, Table
+from specsheet.sheet.model import Cell, LimitRow, Mark, Row, Scale, Table
 from specsheet.tui import readout
 from specsheet.tui.glyphs import plain_ascii, printable
 from specsheet.tui.lines import strip_of
@@ -63,6 +63,23 @@ def test_the_ruler_shows_points_scale_and_windows() -> None:
     for words in ("normal", "minimum", "Mass flow, t/h", "velocity", "10"):
         assert words in joined
     assert max(map(len, lines)) <= 78
+
+
+def test_what_flips_a_verdict_beside_the_flow_stands_below_the_windows() -> None:
+    ruler = sheet().ruler
+    assert ruler is not None
+    bare = text_of(readout.ruler_lines(ruler, 78))
+    mark = Mark("minimum", "182.0", 0.8, True)
+    words = ("170.4", mark, "−12 K", Level.STOP, False)
+    scale = Scale("Temperature", "°C", 0.7, 1.0, False, True, 0.0, *words)
+    lines = readout.ruler_lines(replace(ruler, scales=(scale, scale), more="1 more."), 78)
+    assert text_of(lines)[: len(bare)] == bare
+    head, *scales, more = lines[len(bare) :]
+    assert [line[0][1] for line in (head, *scales, more)] == ["label", *["accent"] * 3]
+    for ((said, _),) in scales:
+        assert said.startswith("           Temperature, °C  ─┴")
+        assert said.endswith("182.0     170.4    −12 K")
+        assert len(said) == 78
 
 
 @pytest.mark.parametrize("text", ["━┿◂▸┣┫│─┴╴◆◇✓✗▸", "Δ ρ ≤ 5 m³/h ± 1 °C ·"])

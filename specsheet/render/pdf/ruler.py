@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from specsheet.findings import Level
-from specsheet.render.pdf import fonts, style, wrap
+from specsheet.render.pdf import fonts, scales, style, wrap
 from specsheet.render.pdf.fonts import Run
 from specsheet.render.pdf.page import Frame, Page
 from specsheet.render.pdf.style import Style
@@ -36,7 +36,7 @@ def draw(frame: Frame, ruler: Ruler) -> None:
     head = (max(lanes, default=0) + 1) * _LABEL_LANE + 5.0
     body = len(ruler.windows) * _LANE + 6.0
     frame.skip(9.0)
-    frame.keep(head + body + _AXIS + 18.0)
+    frame.keep(head + body + _AXIS + scales.height(ruler) + 18.0)
     frame.heading("Range ruler")
     top = frame.y - head
     axis = top - body
@@ -53,6 +53,7 @@ def draw(frame: Frame, ruler: Ruler) -> None:
         _named(page, name, centre, top + lane * _LABEL_LANE)
         _mark(page, mark, left + mark.position * long, axis)
     frame.y = axis - _AXIS
+    scales.draw(frame, ruler, _GUTTER)
 
 
 def _usable(page: Page, ruler: Ruler, left: float, long: float, top: float, axis: float) -> None:

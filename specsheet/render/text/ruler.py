@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from specsheet.render.text import scales
 from specsheet.render.text.layout import clean, heading
 from specsheet.sheet.model import Ruler, Window
 from specsheet.sheet.ruler import stagger
@@ -11,6 +12,11 @@ _GUTTER = 26
 
 def draw(ruler: Ruler, width: int) -> list[str]:
     """Return the ruler in lines of ``width`` columns."""
+    return [*heading("Range ruler", width), *by_flow(ruler, width), *beside(ruler, width)]
+
+
+def by_flow(ruler: Ruler, width: int) -> list[str]:
+    """Return the points, a line for each window, and the axis with its labels."""
     long = width - _GUTTER - 2
     names = [clean(f"{mark.name[:30]} {mark.text}") for mark in ruler.marks]
     columns = [round(mark.position * (long - 1)) for mark in ruler.marks]
@@ -21,7 +27,7 @@ def draw(ruler: Ruler, width: int) -> list[str]:
     ]
     centres = [start + length / 2 for start, length in zip(starts, lengths, strict=True)]
     lanes = stagger(centres, lengths, 1.0)
-    lines = heading("Range ruler", width)
+    lines: list[str] = []
     for lane in reversed(range(max(lanes, default=0) + 1)):
         line = [" "] * long
         for name, start, at in zip(names, starts, lanes, strict=True):
@@ -35,10 +41,14 @@ def draw(ruler: Ruler, width: int) -> list[str]:
     for mark, column in zip(ruler.marks, columns, strict=True):
         axis[column] = "◆" if mark.inside else "◇"
     lines.append(_line("", axis))
-    room = _GUTTER - len(ruler.unit) - 2
-    label = ruler.label if len(ruler.label) <= room else f"{ruler.label[: room - 1]}…"
-    lines.append(_line(f"{label}, {ruler.unit}", _labels(ruler, long)))
+    words = scales.named(ruler.label, ruler.unit, _GUTTER)
+    lines.append(_line(words, _labels(ruler, long)))
     return lines
+
+
+def beside(ruler: Ruler, width: int) -> list[str]:
+    """Return the scales of the other drivers, none where there are none."""
+    return scales.draw(ruler, _GUTTER, width)
 
 
 def _bar(window: Window, long: int, columns: list[int]) -> list[str]:
