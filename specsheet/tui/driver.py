@@ -17,7 +17,7 @@ from typing import Any
 from textual.drivers.linux_driver import LinuxDriver
 
 
-class _Outlet:
+class Outlet:
     """A file to write to for as long as somebody reads it."""
 
     def __init__(self, file: Any) -> None:
@@ -40,7 +40,7 @@ class TerminalDriver(LinuxDriver):
     def __init__(self, *arguments: Any, **options: Any) -> None:
         """Make the driver, as Textual does."""
         super().__init__(*arguments, **options)
-        self._file: Any = _Outlet(self._file)
+        self._file: Any = Outlet(self._file)
 
     def _sigcont_application(self, *_: object) -> None:
         if self._must_signal_resume:

@@ -216,3 +216,17 @@ def test_after_a_stop_the_whole_screen_is_drawn_again(tag_file: Path) -> None:
     terminal.read(lambda text: "Kind of fluid" in text and "Quit" in text)
     terminal.write("\x11")
     assert terminal.end() == 0
+
+
+def test_a_terminal_that_was_not_given_back_is_not_taken_twice(tag_file: Path) -> None:
+    """A hang-up brings this signal as well; a second taking leaves threads that never end."""
+    terminal = Terminal(tag_file)
+    terminal.read(lambda text: "Kind of fluid" in text and "reserve" in text)
+    os.kill(terminal.process, signal.SIGCONT)
+    terminal.write("\x1b[21~")
+    terminal.read(lambda text: "Ctrl+Left, Ctrl+Right" in text)  # the keys, in a terminal as before
+    terminal.write("\x1b")
+    time.sleep(0.5)  # a lone Esc is known by what does not follow it
+    terminal.write("\x11")
+    assert terminal.end() == 0
+    assert terminal.seen.count(b"\x1b[?1049h") == 1
