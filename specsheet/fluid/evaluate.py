@@ -30,24 +30,19 @@ class Outcome:
 
 def state(fluid: Fluid, condition: Condition) -> Outcome:
     """Return the state of a fluid, its phase checked against the one stated."""
-    for value, field, unit, lowest in (
-        (condition.temperature, "temperature", "K", LOWEST_TEMPERATURE),
-        (condition.pressure, "pressure", "Pa", LOWEST_PRESSURE),
-    ):
-        if value is not None and not (math.isfinite(value) and value >= lowest):
-            return Outcome(
-                None,
-                (
-                    stop(
-                        "fluid-limit",
-                        field,
-                        f"An absolute {field} above {lowest:g} {unit} was wanted, {value:g} {unit} "
-                        "came.",
-                    ),
-                ),
-            )
+    temperature, pressure = condition.temperature, condition.pressure
+    if temperature is not None and not LOWEST_TEMPERATURE <= temperature < math.inf:
+        return _too_low("temperature", temperature, LOWEST_TEMPERATURE, "K")
+    if pressure is not None and not LOWEST_PRESSURE <= pressure < math.inf:
+        return _too_low("pressure", pressure, LOWEST_PRESSURE, "Pa")
     with LOCK:
         return _state(fluid, condition)
+
+
+def _too_low(field: str, value: float, lowest: float, unit: str) -> Outcome:
+    """Return the refusal of a temperature or pressure at which nothing flows."""
+    text = f"An absolute {field} above {lowest:g} {unit} was wanted, {value:g} {unit} came."
+    return Outcome(None, (stop("fluid-limit", field, text),))
 
 
 @lru_cache(maxsize=4096)

@@ -81,7 +81,8 @@ def _near_boiling(state: State) -> Finding | None:
     vapour = state.value("vapour_pressure")
     if vapour is None or state.pressure > NEAR * vapour:
         return None
-    spare = max(state.pressure - vapour, 0.0)
+    spare = state.pressure - vapour
+    spare = spare if spare > 1e-6 * vapour else 0.0  # on the line itself only rounding is left
     near = caution(
         "near-boiling",
         "pressure",

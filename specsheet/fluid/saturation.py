@@ -8,6 +8,7 @@ cold the equation itself is asked.
 
 from __future__ import annotations
 
+import bisect
 import math
 from collections.abc import Sequence
 from dataclasses import dataclass
@@ -15,13 +16,15 @@ from functools import cache
 from typing import Any
 
 from specsheet.fluid import library
-from specsheet.fluid.names import Substance
+from specsheet.fluid.names import Substance, substances
 
 #: share of the critical temperature between which the curve stands in for the equation
 _COLD, _WARM = 0.45, 0.99
 _NODES = 40
 #: coefficients of ln p that add nothing
 _NEGLIGIBLE = 1e-9
+#: miss of ln p from which one more step of the secant rule leaves nothing to find
+_NEAR = 1e-7
 
 
 @dataclass(frozen=True, slots=True)
@@ -30,15 +33,16 @@ class Curve:
 
     Attributes:
         first, last: 1/T at its ends [1/K], falling in temperature.
-        high, low: ln(p/Pa) there.
-        coefficients: of the Chebyshev polynomials, from the highest degree that matters down.
+        coefficients: of the Chebyshev polynomials, from the highest degree that matters down,
+            two and two.
+        inverses, levels: 1/T [1/K] and ln(p/Pa) of its points, rising in temperature.
     """
 
     first: float
     last: float
-    high: float
-    low: float
-    coefficients: tuple[float, ...]
+    coefficients: tuple[tuple[float, float], ...]
+    inverses: tuple[float, ...]
+    levels: tuple[float, ...]
 
     def pressure(self, temperature: float) -> float | None:
         """Return the vapour pressure [Pa] at a temperature [K]; None beyond the curve."""
@@ -50,47 +54,53 @@ class Curve:
     def temperature(self, pressure: float) -> float | None:
         """Return the boiling temperature [K] at a pressure [Pa]; None beyond the curve."""
         level = math.log(pressure)
-        if not self.low <= level <= self.high:
+        if not self.levels[0] <= level <= self.levels[-1]:
             return None
-        # the curve is all but straight: the secant rule from its ends needs a few steps
-        before, miss_before = self.first, self.high - level
-        after, miss_after = self.last, self.low - level
+        # between two points the curve is all but straight: the secant rule needs a few steps
+        place = max(bisect.bisect_left(self.levels, level), 1)
+        before, miss_before = self.inverses[place - 1], self.levels[place - 1] - level
+        after, miss_after = self.inverses[place], self.levels[place] - level
         for _ in range(12):
             if miss_after == miss_before:
                 break
             step = after - miss_after * (after - before) / (miss_after - miss_before)
             before, miss_before = after, miss_after
             after = min(max(step, self.first), self.last)
-            miss_after = self._at(after) - level
-            if abs(miss_after) < 1e-11:
+            if abs(miss_before) < _NEAR:
                 break
+            miss_after = self._at(after) - level
         return 1.0 / after
 
     def _at(self, inverse: float) -> float:
         """Return ln p by the recurrence of Clenshaw."""
         twice = 2.0 * (2.0 * inverse - self.first - self.last) / (self.last - self.first)
         one = two = 0.0
-        for coefficient in self.coefficients:
-            one, two = coefficient + twice * one - two, one
+        for higher, lower in self.coefficients:
+            two = higher + twice * one - two
+            one = lower + twice * two - one
         return one - 0.5 * twice * two
 
 
 @cache
-def _curve(item: Substance) -> Curve | None:
+def _curve(key: str) -> Curve | None:
     """Return the curve of a substance; None where the equation gives no saturation."""
+    item = substances()[key]
     coldest = max(item.lowest_temperature * 1.001, _COLD * item.critical_temperature)
     first, last = 1.0 / (_WARM * item.critical_temperature), 1.0 / coldest
-    values = []
+    inverses, values = [], []
     for k in range(_NODES + 1):
-        share = 0.5 * (1.0 + math.cos(math.pi * k / _NODES))
-        found = _exact_pressure(item.equation, 1.0 / (first + (last - first) * share))
+        inverse = first + (last - first) * 0.5 * (1.0 + math.cos(math.pi * k / _NODES))
+        found = _exact_pressure(item.equation, 1.0 / inverse)
         if found is None:
             return None
+        inverses.append(inverse)
         values.append(math.log(found))
     coefficients = _chebyshev(values)
     while len(coefficients) > 4 and abs(coefficients[-1]) < _NEGLIGIBLE:
         coefficients.pop()
-    return Curve(first, last, values[-1], values[0], tuple(reversed(coefficients)))
+    coefficients += [0.0] * (len(coefficients) % 2)
+    pairs = zip(coefficients[::-2], coefficients[-2::-2], strict=True)
+    return Curve(first, last, tuple(pairs), tuple(inverses), tuple(values))
 
 
 def _chebyshev(values: Sequence[float]) -> list[float]:
@@ -108,7 +118,7 @@ def vapour_pressure(item: Substance, temperature: float) -> float | None:
     """Return the vapour pressure [Pa] at a temperature [K]; None off the saturation line."""
     if not item.lowest_temperature <= temperature < 0.9995 * item.critical_temperature:
         return None
-    curve = _curve(item)
+    curve = _curve(item.key)
     found = None if curve is None else curve.pressure(temperature)
     return _exact_pressure(item.equation, temperature) if found is None else found
 
@@ -117,7 +127,7 @@ def boiling_temperature(item: Substance, pressure: float) -> float | None:
     """Return the boiling temperature [K] at a pressure [Pa]; None off the saturation line."""
     if not 0.0 < pressure < 0.999 * item.critical_pressure:
         return None
-    curve = _curve(item)
+    curve = _curve(item.key)
     found = None if curve is None else curve.temperature(pressure)
     return _exact_temperature(item.equation, pressure) if found is None else found
 

@@ -5,7 +5,7 @@ from __future__ import annotations
 import math
 from collections.abc import Mapping
 from dataclasses import dataclass
-from functools import cache
+from functools import cache, lru_cache
 from typing import Any
 
 from specsheet.findings import Finding
@@ -49,6 +49,19 @@ def state_of(equation: str) -> Any:
     return library.fluids().AbstractState("HEOS", equation)
 
 
+@lru_cache(maxsize=64)
+def _range(key: str) -> limits.Range:
+    """Return the limits of the equation of a substance."""
+    item = names.substances()[key]
+    return limits.Range(
+        item.lowest_temperature,
+        item.highest_temperature,
+        item.highest_pressure,
+        _SOURCE,
+        above=0.1 * item.highest_temperature,
+    )
+
+
 @dataclass(frozen=True, slots=True)
 class Pure:
     """A pure substance; ``phase`` is the one stated."""
@@ -72,7 +85,7 @@ class Pure:
         temperature, pressure = condition.temperature, condition.pressure
         if temperature is None or pressure is None:
             return self._saturated(condition, ())
-        findings = self._range().check(temperature, pressure, self.name)
+        findings = _range(self.key).check(temperature, pressure, self.name)
         boiling = self.boiling(pressure)
         if boiling is not None and abs(temperature - boiling) <= SNAP:
             return self._saturated(Condition(None, pressure), (*findings, self._snapped()))
@@ -139,16 +152,6 @@ class Pure:
             "density by many per cent. Meter it elsewhere, or by mass."
         )
         return (caution("near-critical", "temperature", text, _SOURCE),)
-
-    def _range(self) -> limits.Range:
-        item = self.substance
-        return limits.Range(
-            item.lowest_temperature,
-            item.highest_temperature,
-            item.highest_pressure,
-            _SOURCE,
-            above=0.1 * item.highest_temperature,
-        )
 
     def _update(
         self,
