@@ -70,7 +70,7 @@ class FormAsking(FormEditing):
             if panel is not None:
                 panel.show(answer.number, answer.lines)
         elif isinstance(answer, protocol.Failed) and panel is not None:
-            panel.show(answer.number, (f"cannot be tried: {answer.message}",))
+            panel.refuse(answer.number, answer.message)
         elif isinstance(answer, protocol.Failed) and answer.number == self._comparing:
             self.say(f"families cannot be compared: {answer.message}")
         else:

@@ -14,7 +14,7 @@ from textual.containers import Vertical
 from textual.screen import ModalScreen
 
 from specsheet.tui.dialogs import DialogField
-from specsheet.tui.lines import Bar, Line, Lines
+from specsheet.tui.lines import Bar, Line, Lines, wrap
 
 _RANGE = re.compile(r"\s+(?:to|\.\.)\s+")
 _MARK = "WHAT IF - nothing here is written to the file"
@@ -81,6 +81,11 @@ class WhatIf(ModalScreen[None]):
     def action_step(self, step: int) -> None:
         """Scroll the result."""
         self._lines.action_step(step)
+
+    def refuse(self, number: int, reason: str) -> None:
+        """Say in full why a value cannot be tried."""
+        room = self._lines.size.width - 1
+        self.show(number, tuple(wrap(f"cannot be tried: {reason}", room)))
 
     def show(self, number: int, lines: tuple[str, ...]) -> None:
         """Show an answer, unless another question was asked since."""

@@ -96,6 +96,8 @@ def test_a_value_that_cannot_be_is_refused_in_the_panel(tag_file: Path, evaluato
         await until(pilot, lambda: isinstance(app.screen, WhatIf))
         await send(pilot, "ctrl+u", *"30 apples", "enter")
         await until(pilot, lambda: "cannot be tried" in screen_text(app), timeout=20.0)
+        said = " ".join(screen_text(app).split())
+        assert "units read are kg/h, t/h," in said  # the whole of it, in as many rows as it takes
 
     drive(tag_file, evaluator, play)
 
