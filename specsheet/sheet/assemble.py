@@ -98,10 +98,15 @@ def build(evaluation: Evaluation, *, annexed: bool = True) -> Sheet:
         cautions=(*_cautions(evaluation), STANDING_CAUTION),
         revisions=_revisions(tag),
         annex=workings,
-        sources=tuple(dict.fromkeys(one for item in cited for one in citations(item.source))),
+        sources=_sources(item.source for item in cited),
         reply=_reply(evaluation, units),
         remarks=tag.text("remarks"),
     )
+
+
+def _sources(cited: Iterable[str]) -> tuple[str, ...]:
+    """Return every citation once, in the order of first use."""
+    return tuple(dict.fromkeys(one for source in dict.fromkeys(cited) for one in citations(source)))
 
 
 def _head(evaluation: Evaluation) -> tuple[Detail, ...]:
@@ -116,17 +121,22 @@ def _assumptions(tag: Tag, made: Iterable[Table], budget: Table | None) -> tuple
     met: dict[str, Row] = {}
     for table in made:
         for row in table.rows:
-            if Origin.ASSUMED in row.origins:
-                met.setdefault(row.key, _only_assumed(row, row.label))
+            if _is_assumed(row) and row.key not in met:
+                met[row.key] = _only_assumed(row, row.label)
     site = {"job.atmospheric_pressure"} if tag.quantity("job.altitude") is not None else set()
     for path in tag.assumed:
         silent = path in site or path in _HOUSEKEEPING or not tables.matters(tag, path)
         if path not in met and not silent:
             met[path] = of_entry(tag, path, words.label(path))
     for row in budget.rows if budget else ():
-        if Origin.ASSUMED in row.origins:
+        if _is_assumed(row):
             met[f"budget.{row.key}"] = _only_assumed(row, f"Contribution: {row.label}")
     return tuple(row for row in met.values() if row.origins)
+
+
+def _is_assumed(row: Row) -> bool:
+    """Tell whether any value of a row is assumed."""
+    return any(cell.origin is Origin.ASSUMED for cell in row.cells)
 
 
 def _only_assumed(row: Row, label: str) -> Row:

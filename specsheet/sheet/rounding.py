@@ -88,7 +88,8 @@ def significant(value: float, count: int = DIGITS) -> str:
     power = int(exponent)
     if power < -4 or power >= 9:
         return f"{_minus(mantissa)}·10{_superscript(power)}"
-    return group(f"{float(f'{mantissa}e{power}'):.{max(0, count - 1 - power)}f}")
+    text = f"{float(f'{mantissa}e{power}'):.{max(0, count - 1 - power)}f}"
+    return text if value > 0.0 and power < 4 else group(text)
 
 
 def shared_step(key: str, kind: str, values: Sequence[float]) -> float | None:

@@ -21,7 +21,8 @@ if TYPE_CHECKING:
 
 _EMPTY = Cell(NOTHING)
 
-_PLACES = {key: place for place, key in enumerate(TERMS)}
+#: place of each key in the glossary
+PLACES = {key: place for place, key in enumerate(TERMS)}
 
 #: mass flows at the ends of the range, shown in the kind of flow that the user states
 _RANGE = ("upper_range_flow", "lower_range_flow", "largest_flow")
@@ -89,7 +90,7 @@ def of_results(
     elif typed and len(typed) == len(present):
         cells, unit = _as_typed([result.text if result else "" for result in results])
     else:
-        numbers = [r.value for r in present if isinstance(r.value, float | int)]
+        numbers = [r.value for r in present if isinstance(r.value, (float, int))]
         internal = unit_of(key, numbers, units) if numbers else ""
         smallest = rounding.shared_step(key, kind_of(key), numbers)
         computed = len(set(numbers)) > 1
@@ -101,12 +102,14 @@ def of_results(
         label=label,
         symbol=symbol,
         cells=tuple(
-            _EMPTY if result is None or text == NOTHING else Cell(text, origin(result, key))
-            for result, text in zip(results, cells, strict=True)
+            [
+                _EMPTY if result is None or text == NOTHING else Cell(text, origin(result, key))
+                for result, text in zip(results, cells, strict=True)
+            ]
         ),
         unit=unit,
         source=CITATION_JOINT.join(
-            dict.fromkeys(result.source for result in present if result.source)
+            dict.fromkeys([result.source for result in present if result.source])
         ),
         note=note,
     )
@@ -132,8 +135,10 @@ def _is_of(text: str, kind: str) -> bool:
 
 def origin(result: Result, key: str) -> Origin:
     """Return the origin that is printed: a number typed as another kind has been converted."""
+    if result.origin is not Origin.GIVEN:
+        return result.origin
     converted = result.text and not isinstance(result.value, str) and not echoes(result, key)
-    return Origin.DERIVED if result.origin is Origin.GIVEN and converted else result.origin
+    return Origin.DERIVED if converted else Origin.GIVEN
 
 
 def _cell_text(
@@ -218,4 +223,4 @@ def of_entry(tag: Tag, path: str, label: str, symbol: str = "") -> Row:
 
 def ordered(keys: Mapping[str, object] | Sequence[str]) -> list[str]:
     """Return glossary keys in the glossary's order, unknown ones last in their own order."""
-    return sorted(keys, key=lambda key: _PLACES.get(key, len(_PLACES)))
+    return sorted(keys, key=lambda key: PLACES.get(key, len(PLACES)))

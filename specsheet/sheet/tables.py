@@ -2,11 +2,11 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from collections.abc import Mapping, Sequence, Set
 from dataclasses import replace
 from typing import TYPE_CHECKING
 
-from specsheet.fields import COMMON, JOB, TERMS, Entry
+from specsheet.fields import COMMON, JOB, Entry
 from specsheet.findings import Origin
 from specsheet.quantity.value import Base, Quantity
 from specsheet.sheet import rounding, rows, words
@@ -21,6 +21,9 @@ if TYPE_CHECKING:
 _FIRST_OF_THE_METER = "inside_diameter"
 
 _ENTRIES: dict[str, Entry] = {item.path: item for item in (*COMMON, *JOB)}
+
+#: sections of the file that are printed as they stand, under their own heading
+_SECTIONS = ("meter", "fluid", "line", "design", "require")
 
 #: job entries printed with the base conditions; the rest of the job stands in the head
 _SITE = (
@@ -69,8 +72,7 @@ def atmosphere(tag: Tag) -> Row:
 def by_point(values: Values) -> list[Table]:
     """Return the values at the operating points: of the fluid, then of the meter."""
     names = tuple(point.name for point in values.evaluation.points)
-    order = {key: place for place, key in enumerate(TERMS)}
-    border = order[_FIRST_OF_THE_METER]
+    border = rows.PLACES[_FIRST_OF_THE_METER]
     stated = pressures_stated(values.evaluation.tag)
     fluid: list[Row] = []
     meter: list[Row] = []
@@ -80,7 +82,7 @@ def by_point(values: Values) -> list[Table]:
             continue  # stands in the table of operating points already
         row = values.row(key)
         if row is not None:
-            (fluid if order.get(key, border) < border else meter).append(row)
+            (fluid if rows.PLACES.get(key, border) < border else meter).append(row)
     tables = (
         Table("fluid_points", "Fluid at the operating points", names, tuple(fluid)),
         Table("meter_points", "Meter at the operating points", names, tuple(meter)),
@@ -99,31 +101,42 @@ def single(values: Values) -> list[Table]:
     evaluation = values.evaluation
     tag = evaluation.tag
     profile = evaluation.profile
-    labels = {item.path: item for item in (profile.entries if profile else ())} | _ENTRIES
-    sections: tuple[tuple[str, str, tuple[Row, ...], Mapping[str, Result]], ...] = (
-        ("element", "Meter", _section(tag, "meter.", labels), evaluation.element),
-        ("fluid", "Fluid", _section(tag, "fluid.", labels), evaluation.fluid),
-        ("line", "Line", _section(tag, "line.", labels), evaluation.line),
-        ("design", "Design conditions", _section(tag, "design.", labels), {}),
+    stated = _stated(tag, {item.path: item for item in (profile.entries if profile else ())})
+    sections: tuple[tuple[str, str, Sequence[Row], Mapping[str, Result]], ...] = (
+        ("element", "Meter", stated.get("meter", ()), evaluation.element),
+        ("fluid", "Fluid", stated.get("fluid", ()), evaluation.fluid),
+        ("line", "Line", stated.get("line", ()), evaluation.line),
+        ("design", "Design conditions", stated.get("design", ()), {}),
         ("base", "Site and base conditions", _site(tag), evaluation.base),
-        ("require", "The purchase demands", _section(tag, "require.", labels), {}),
+        ("require", "The purchase demands", stated.get("require", ()), {}),
         ("summary", "Range and running cost", _cost(evaluation), evaluation.summary),
     )
+    typed = {(held.kind, held.value) for held in tag.given.values() if isinstance(held, Quantity)}
     made = [
-        Table(key, title, (), (*stated, *_results(values, found, stated)))
-        for key, title, stated, found in sections
+        Table(key, title, (), (*lines, *_results(values, found, lines, typed)))
+        for key, title, lines, found in sections
     ]
     return [table for table in made if table.rows]
 
 
-def _section(tag: Tag, prefix: str, labels: Mapping[str, Entry]) -> tuple[Row, ...]:
-    """Return what was stated or assumed in one section of the file, in the glossary's order."""
-    known = [path for path in labels if path.startswith(prefix)]
-    stated = [path for path in (*tag.given, *tag.assumed) if path.startswith(prefix)]
-    places = {path: place for place, path in enumerate(known)}
-    stated = [path for path in stated if path in tag.given or matters(tag, path)]
-    paths = sorted(dict.fromkeys(stated), key=lambda path: places.get(path, len(places)))
-    return tuple(_entry(tag, path, labels) for path in paths)
+def _stated(tag: Tag, own: Mapping[str, Entry]) -> dict[str, list[Row]]:
+    """Return what was stated or assumed in each section of the file, in the glossary's order.
+
+    Args:
+        tag: the tag.
+        own: the entries of its family.
+    """
+    labels = {**own, **_ENTRIES}
+    places = {path: place for place, path in enumerate(labels)}
+    paths = [
+        path for path in {**tag.given, **tag.assumed} if path in tag.given or matters(tag, path)
+    ]
+    lines: dict[str, list[Row]] = {}
+    for path in sorted(paths, key=lambda path: places.get(path, len(places))):
+        section = path.partition(".")[0]
+        if section in _SECTIONS:
+            lines.setdefault(section, []).append(_entry(tag, path, labels))
+    return lines
 
 
 def matters(tag: Tag, path: str) -> bool:
@@ -178,12 +191,20 @@ def _cost(evaluation: Evaluation) -> tuple[Row, ...]:
 
 
 def _results(
-    values: Values, found: Mapping[str, Result], stated: tuple[Row, ...]
+    values: Values,
+    found: Mapping[str, Result],
+    stated: Sequence[Row],
+    typed: Set[tuple[str, float | str]],
 ) -> tuple[Row, ...]:
-    """Return the rows of results, leaving out given values that the rows above echo already."""
-    typed = (held for held in values.evaluation.tag.given.values() if isinstance(held, Quantity))
-    echoed: set[tuple[str, float | str]] = {(held.kind, held.value) for held in typed}
-    echoed |= {("text", row.text) for row in stated}
+    """Return the rows of results, leaving out given values that the rows above echo already.
+
+    Args:
+        values: of the evaluation.
+        found: the results.
+        stated: the rows above.
+        typed: kind and value of every quantity on the tag.
+    """
+    echoed = {*typed, *(("text", row.text) for row in stated)}
     return tuple(
         values.alone(key, found[key])
         for key in rows.ordered(found)

@@ -13,7 +13,7 @@ from specsheet.tag import Tag
 if TYPE_CHECKING:
     from specsheet.sheet.axis import FlowAxis
 
-#: units of one kind from small to large, for values that would be silly in the unit shown
+#: units of a kind from small to large, for values that would be silly in the unit shown
 LADDERS = {
     "pressure_difference": ("Pa", "mbar", "bar"),
     "pressure_absolute": ("mbar(a)", "bar(a)"),
@@ -102,7 +102,7 @@ def _silly(kind: str, unit: str, sizes: list[float]) -> bool:
 
 
 def _scaled(kind: str, unit: str, sizes: list[float]) -> str:
-    ladder = [step for step in LADDERS.get(kind, ()) if step in quantity.units(kind)]
+    ladder = LADDERS.get(kind, ())
     largest = max(sizes, default=0.0)
     if unit not in ladder or largest == 0.0:
         return unit

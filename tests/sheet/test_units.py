@@ -4,8 +4,9 @@ from __future__ import annotations
 
 import pytest
 
+from specsheet import quantity
 from specsheet.quantity.value import Quantity
-from specsheet.sheet.units import Units
+from specsheet.sheet.units import LADDERS, Units
 from specsheet.tag import Point, Tag
 
 
@@ -85,3 +86,9 @@ def test_gauge_and_absolute_go_together(typed: str, unit: str, other: str, partn
 )
 def test_silly_values_move_along_the_ladder(kind: str, si: list[float], unit: str) -> None:
     assert Units(tag()).pick(kind, si) == unit
+
+
+@pytest.mark.parametrize("kind", LADDERS)
+def test_every_step_of_a_ladder_is_a_unit_of_its_kind_and_larger_than_the_last(kind: str) -> None:
+    sizes = [quantity.to_si(1.0, kind, step) for step in LADDERS[kind]]
+    assert sizes == sorted(set(sizes))
