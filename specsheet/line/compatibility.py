@@ -76,13 +76,13 @@ def materials(
     words = service.words | dangers(service)
     lines: dict[str, list[str]] = {verdict: [] for verdict in _ORDER}
     findings: list[Finding] = []
-    parts = tuple(_parts(tag, profile))
-    rules = table("compatibility")["rule"]
-    for index in sorted(set().union(*(part.rules for part in parts))):
+    parts = [(part, part.rules) for part in _parts(tag, profile)]
+    rules, conditions, known = table("compatibility")["rule"], _conditions(), _known(service, words)
+    for index in sorted(set().union(*(concerned for _, concerned in parts))):
         rule = rules[index]
-        if not _holds(rule, service, words):
+        if not _holds(conditions[index], service, known):
             continue
-        hit = [part for part in parts if index in part.rules]
+        hit = [part for part, concerned in parts if index in concerned]
         verdict, text, source = rule["verdict"], rule["text"], rule["source"]
         lines[verdict].append(f"{_named(hit)}: {verdict}; {text} ({source}).")
         findings.extend(
@@ -111,10 +111,13 @@ def avoided_rules(
         words: words of the service with its dangers.
         verdict: another verdict asked for ("conditional").
     """
+    known = _known(service, words)
     return frozenset(
         index
-        for index, rule in enumerate(table("compatibility")["rule"])
-        if rule["verdict"] == verdict and _holds(rule, service, words)
+        for index, (rule, condition) in enumerate(
+            zip(table("compatibility")["rule"], _conditions(), strict=True)
+        )
+        if rule["verdict"] == verdict and _holds(condition, service, known)
     )
 
 
@@ -171,18 +174,55 @@ def _named(parts: Sequence[_Part]) -> str:
     return listed[0].upper() + listed[1:]
 
 
-def _holds(rule: Mapping[str, Any], service: Service, words: frozenset[str]) -> bool:
+@dataclass(frozen=True, slots=True)
+class _Condition:
+    """When a rule holds: for one of the words, and within every bound that it has.
+
+    Attributes:
+        when: substances and words of a service; "any" is of every service.
+        phase: "liquid", "gas" or "" for both.
+        above, below: temperatures [degC], None where there is no bound.
+        chlorides_above: mass fraction [-], None where there is no bound.
+    """
+
+    when: frozenset[str]
+    phase: str
+    above: float | None
+    below: float | None
+    chlorides_above: float | None
+
+
+@cache
+def _conditions() -> tuple[_Condition, ...]:
+    """Return the condition of every rule, in their order."""
+    return tuple(
+        _Condition(
+            frozenset(rule["when"]),
+            rule.get("phase", ""),
+            rule.get("above"),
+            rule.get("below"),
+            rule.get("chlorides_above"),
+        )
+        for rule in table("compatibility")["rule"]
+    )
+
+
+def _known(service: Service, words: frozenset[str]) -> frozenset[str]:
+    """Return every word that a rule may be about in a service; ``words`` with its dangers."""
+    return words.union(service.words, service.fractions, ("any",))
+
+
+def _holds(rule: _Condition, service: Service, known: frozenset[str]) -> bool:
     """Tell whether the service is one the rule is about; an unknown fact holds no bound."""
-    concerned = any(word == "any" or word in words or service.has(word) for word in rule["when"])
-    return concerned and all(
-        (
-            "phase" not in rule or rule["phase"] == service.phase,
-            "above" not in rule
-            or (service.hottest is not None and service.hottest - _CELSIUS > rule["above"]),
-            "below" not in rule
-            or (service.coldest is not None and service.coldest - _CELSIUS < rule["below"]),
-            "chlorides_above" not in rule
-            or (service.chlorides is not None and service.chlorides > rule["chlorides_above"]),
+    if rule.when.isdisjoint(known) or rule.phase not in ("", service.phase):
+        return False
+    hottest, coldest, chlorides = service.hottest, service.coldest, service.chlorides
+    return (
+        (rule.above is None or (hottest is not None and hottest - _CELSIUS > rule.above))
+        and (rule.below is None or (coldest is not None and coldest - _CELSIUS < rule.below))
+        and (
+            rule.chlorides_above is None
+            or (chlorides is not None and chlorides > rule.chlorides_above)
         )
     )
 
