@@ -9,6 +9,7 @@ from textual.app import ComposeResult
 from textual.binding import Binding, BindingType
 
 from specsheet import job
+from specsheet.tagfile.source import BOM, read_text
 from specsheet.tagfile.syntax import parse
 from specsheet.tui.commands import BROWSE
 from specsheet.tui.compat import CalmScreen
@@ -86,7 +87,7 @@ class BrowseScreen(CalmScreen):
         """Read the heads of some files and come back for the next: the keys go on working."""
         stop = min(start + _AT_ONCE, len(self._paths))
         for place in range(start, stop):
-            self._lines[place] = _head(self._paths[place])
+            self._lines[place] = head_line(self._paths[place])
         self._show()
         if stop < len(self._paths):
             self.set_timer(0.001, lambda: self._read_on(stop))
@@ -175,12 +176,12 @@ class BrowseScreen(CalmScreen):
         self.app.exit(0)
 
 
-def _head(path: Path) -> Line:
+def head_line(path: Path) -> Line:
     """Return the line of one file: what it says of itself, or that it cannot be read."""
-    try:
-        data = parse(path.read_text(encoding="utf-8"), str(path))
-    except (OSError, UnicodeDecodeError):
+    text = read_text(path)
+    if not isinstance(text, str):
         return ((f" {path.name:<16} ", "text"), ("cannot be read", "stop"))
+    data = parse(text.removeprefix(BOM), str(path))
     if not isinstance(data, dict):
         return ((f" {path.name:<16} ", "text"), ("cannot be read as a tag file", "stop"))
     texts = [shown(data.get(key)) for key, _ in _COLUMNS]

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import os
+import threading
 from pathlib import Path
 
 import pytest
@@ -9,9 +11,10 @@ import pytest
 from specsheet.tui import dialogs
 from specsheet.tui.address import Address
 from specsheet.tui.app import FormApp
-from specsheet.tui.browse_screen import BrowseScreen
+from specsheet.tui.browse_screen import BrowseScreen, head_line
 from specsheet.tui.form_screen import FormScreen
 from specsheet.tui.leftovers import survey
+from specsheet.tui.lines import Line
 from tests.tui.conftest import AtOnce, screen_text, send, until, words
 from tests.tui.driving import at, drive, form_of, ready
 
@@ -172,3 +175,20 @@ def test_a_signal_keeps_what_is_being_typed(tag_file: Path, evaluator: AtOnce) -
     assert app.return_code == 143
     (leftover,) = survey(tag_file).leftovers
     assert "Brine" in leftover.state.text
+
+
+@pytest.mark.skipif(not hasattr(os, "mkfifo"), reason="needs a pipe with a name")
+def test_a_pipe_among_the_tags_does_not_hold_up_the_list(tmp_path: Path) -> None:
+    pipe = tmp_path / "FT-1.toml"
+    os.mkfifo(pipe)
+    lines: list[Line] = []
+    reading = threading.Thread(target=lambda: lines.append(head_line(pipe)), daemon=True)
+    reading.start()
+    reading.join(10.0)
+    assert "cannot be read" in str(lines)
+
+
+def test_a_byte_order_mark_does_not_spoil_the_list(tmp_path: Path) -> None:
+    file = tmp_path / "FT-1.toml"
+    file.write_bytes(b'\xef\xbb\xbftag = "FT-1"\nservice = "Brine"\n')
+    assert "Brine" in str(head_line(file))
