@@ -17,7 +17,7 @@ def open_session(path: Path) -> Session | str:
 
     A file that does not exist starts a new tag of no family yet; it is made at the first save.
     """
-    if not path.exists() and path.suffix == ".toml" and path.parent.is_dir():
+    if _is_absent(path) and path.suffix == ".toml" and path.parent.is_dir():
         return Session(path, _bare_text(path.stem), None)
     text = read_text(path)
     if isinstance(text, Problem):
@@ -30,6 +30,17 @@ def open_session(path: Path) -> Session | str:
     except OSError as error:
         return f"{path}: cannot be read: {error.strerror or error}"
     return Session(path, text, content)
+
+
+def _is_absent(path: Path) -> bool:
+    """Tell whether nothing stands at a path; what cannot be looked at is there."""
+    try:
+        path.stat()
+    except FileNotFoundError:
+        return True
+    except (OSError, ValueError):
+        return False
+    return False
 
 
 def new_session(path: Path, tag: str, family: str) -> Session:

@@ -15,6 +15,7 @@ from specsheet.tui.browse_screen import BrowseScreen, head_line
 from specsheet.tui.form_screen import FormScreen
 from specsheet.tui.leftovers import survey
 from specsheet.tui.lines import Line
+from specsheet.tui.opening import open_session
 from tests.tui.conftest import AtOnce, screen_text, send, until, words
 from tests.tui.driving import at, drive, form_of, ready
 
@@ -192,3 +193,12 @@ def test_a_byte_order_mark_does_not_spoil_the_list(tmp_path: Path) -> None:
     file = tmp_path / "FT-1.toml"
     file.write_bytes(b'\xef\xbb\xbftag = "FT-1"\nservice = "Brine"\n')
     assert "Brine" in str(head_line(file))
+
+
+@pytest.mark.skipif(os.name != "posix", reason="needs symbolic links")
+def test_links_that_lead_in_a_circle_are_no_new_tag(tmp_path: Path) -> None:
+    link = tmp_path / "FT-1.toml"
+    link.symlink_to(link)
+    said = open_session(link)
+    assert isinstance(said, str)
+    assert "cannot be read" in said
