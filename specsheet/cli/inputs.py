@@ -7,7 +7,7 @@ from collections.abc import Sequence
 from specsheet import tagfile
 from specsheet.cli.narrate import say
 from specsheet.tag import Tag
-from specsheet.tagfile import Change, Reading
+from specsheet.tagfile import Change, Job, Reading
 
 
 def read_one(path: str, changes: Sequence[Change] = ()) -> tuple[Reading, bool]:
@@ -21,20 +21,20 @@ def read_one(path: str, changes: Sequence[Change] = ()) -> tuple[Reading, bool]:
     for problem in problems:
         say(str(problem))
     if changes and reading.tag is not None:
-        supposed = suppose(path, changes)
+        supposed = suppose(path, changes, home)
         if isinstance(supposed, str):
             say(supposed)
         reading = Reading(None) if isinstance(supposed, str) else Reading(supposed)
     return reading, bool(problems) or reading.tag is None
 
 
-def suppose(path: str, changes: Sequence[Change]) -> Tag | str:
-    """Return the tag of a file as if its entries held other values, or why it is refused."""
+def suppose(path: str, changes: Sequence[Change], home: Job) -> Tag | str:
+    """Return the tag of a file as if its entries held other values, or why that is refused."""
     text = tagfile.read_text(path)
     if not isinstance(text, str):
         return str(text)
     try:
-        reading = tagfile.suppose(text, changes, path, tagfile.find_job(path))
+        reading = tagfile.suppose(text, changes, path, home)
     except tagfile.EditError as refused:
         return f"{path}: --set {refused}"
     return reading.tag or "; ".join(map(str, reading.problems))

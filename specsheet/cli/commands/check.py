@@ -4,18 +4,15 @@ from __future__ import annotations
 
 from argparse import Namespace
 from collections import Counter
-from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import partial
 
 from specsheet.cli.batch import Batch
-from specsheet.cli.inputs import suppose
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status, verdict
 from specsheet.evaluate import evaluate_settled
 from specsheet.findings import Finding, Level
 from specsheet.tag import Tag
-from specsheet.tagfile import Change
 
 
 @dataclass(frozen=True, slots=True)
@@ -30,13 +27,9 @@ def run(arguments: Namespace) -> Status:
     """Write one line a finding to stdout and the totals to stderr."""
     counts: Counter[Level] = Counter()
     tags = 0
-    refused = False
     batch = Batch(arguments.paths)
-    for checked in batch.each(partial(_check, changes=arguments.set, notes=arguments.all)):
-        if isinstance(checked, str):
-            say(checked)
-            refused = True
-        elif checked is not None:
+    for checked in batch.each(partial(_check, notes=arguments.all), arguments.set):
+        if checked is not None:
             tags += 1
             counts += checked.levels
             if checked.lines:
@@ -45,17 +38,13 @@ def run(arguments: Namespace) -> Status:
         f"{tags} tag{'s' if tags != 1 else ''}: {counts[Level.STOP]} stop, "
         f"{counts[Level.CAUTION]} caution, {counts[Level.NOTE]} note"
     )
-    if batch.unusable or refused:
+    if batch.unusable:
         return Status.UNUSABLE
     return verdict(counts, strict=arguments.strict)
 
 
-def _check(tag: Tag, *, changes: Sequence[Change], notes: bool) -> _Checked | str:
-    """Return the findings of a tag, or why the changes to it are refused."""
-    supposed = suppose(tag.path, changes) if changes else tag
-    if isinstance(supposed, str):
-        return supposed
-    findings = evaluate_settled(supposed).findings
+def _check(tag: Tag, *, notes: bool) -> _Checked:
+    findings = evaluate_settled(tag).findings
     shown = (item for item in findings if notes or item.level is not Level.NOTE)
     levels = Counter(item.level for item in findings)
     return _Checked("".join(_line(tag.path, item) for item in shown), levels)
