@@ -15,7 +15,7 @@ from specsheet.findings import Finding, Reserve
 from specsheet.sheet.rows import ordered
 
 if TYPE_CHECKING:
-    from specsheet.evaluate.result import Evaluation, Result
+    from specsheet.evaluate.result import Check, Evaluation, Result
 
 SCHEMA = 1
 
@@ -40,6 +40,7 @@ def document(evaluation: Evaluation) -> dict[str, Any]:
         "fluid": values_data(evaluation.fluid),
         "line": values_data(evaluation.line),
         "summary": values_data(evaluation.summary),
+        "limits": [check_data(check) for check in evaluation.checks],
         "findings": [finding_data(finding) for finding in evaluation.findings],
     }
 
@@ -69,6 +70,26 @@ def si_unit(key: str) -> str:
     """Return the SI unit of a term's value; "1" for a plain number."""
     kind = TERMS[key].kind if key in TERMS else "dimensionless"
     return KINDS[kind].si if kind in KINDS else "1"
+
+
+def check_data(check: Check) -> dict[str, Any]:
+    """Return one limit looked at as plain Python data, with its reserve while it still holds."""
+    numbers = {"value": check.value, "low": check.low, "high": check.high}
+    return {
+        "key": check.key,
+        "point": check.point,
+        **{
+            name: float(number)
+            for name, number in numbers.items()
+            if number is not None and math.isfinite(number)
+        },
+        "unit": si_unit(check.key),
+        "holds": check.holds,
+        "level": str(check.level),
+        "message": check.message,
+        "source": check.source,
+        **reserve_data(check.reserve),
+    }
 
 
 def finding_data(finding: Finding) -> dict[str, Any]:

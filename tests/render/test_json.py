@@ -9,7 +9,7 @@ from __future__ import annotations
 import json
 from pathlib import Path
 
-from specsheet.evaluate.result import PointResult, Result
+from specsheet.evaluate.result import Check, PointResult, Result
 from specsheet.findings import Finding, Level, Origin, Reserve
 from specsheet.render import json as sheet_json
 from tests.sheet import samples
@@ -23,9 +23,17 @@ def test_golden() -> None:
 
 def test_the_document_has_the_parts_of_the_contract() -> None:
     document = json.loads(sheet_json.text(samples.evaluation()))
-    assert {"schema", "tag", "family", "points", "element", "base", "fluid", "findings"} <= set(
-        document
-    )
+    assert {
+        "schema",
+        "tag",
+        "family",
+        "points",
+        "element",
+        "base",
+        "fluid",
+        "limits",
+        "findings",
+    } <= set(document)
     assert (document["schema"], document["tag"]) == (1, "FT-2104")
     normal = document["points"][1]
     assert normal["name"] == "normal"
@@ -50,6 +58,29 @@ def test_findings_carry_their_reserve() -> None:
     }
 
 
+def test_limits_carry_their_reserve_while_they_hold() -> None:
+    held = {limit["key"]: limit for limit in sheet_json.document(samples.evaluation())["limits"]}
+    assert held["saturation_margin"] == {
+        "key": "saturation_margin",
+        "point": "normal",
+        "value": 14.587,
+        "low": 5.0,
+        "unit": "K",
+        "holds": True,
+        "level": "caution",
+        "message": "the steam is close to saturation",
+        "source": samples.PRACTICE,
+        "reserve": {
+            "driver": "temperature",
+            "at": 448.563,
+            "unit": "K",
+            "fraction": -0.020926,
+        },
+    }
+    assert held["velocity"]["holds"] is False
+    assert "reserve" not in held["diameter_ratio"]
+
+
 def test_no_number_is_no_key() -> None:
     nan = Result(float("nan"), Origin.DERIVED)
     infinite = Result(float("inf"), Origin.DERIVED)
@@ -57,8 +88,12 @@ def test_no_number_is_no_key() -> None:
     finding = Finding(
         Level.NOTE, "x", "", "m", reserve=Reserve("mass_flow", float("inf"), float("inf"))
     )
-    made = sheet_json.document(samples.evaluation(points=(point,), findings=(finding,)))
+    bare = Check("velocity", "normal", float("nan"), None, 14.0, True, Level.STOP, "m", "")
+    made = sheet_json.document(
+        samples.evaluation(points=(point,), findings=(finding,), checks=(bare,))
+    )
     assert made["points"][0]["values"] == {}
+    assert not {"value", "low", "reserve"} & set(made["limits"][0])
     assert "reserve" not in made["findings"][0]
 
 
