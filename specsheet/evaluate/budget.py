@@ -126,7 +126,7 @@ def name_largest(
     for finding in findings:
         if finding.code == "uncertainty-demanded" and finding.point in names:
             worst = largest(contributions, names.index(finding.point))
-            message = f"{finding.message} Most of it comes from: {', '.join(worst)}."
+            message = f"{finding.message} Most of it comes from: {'; '.join(worst)}."
             finding = replace(finding, message=message)
         named.append(finding)
     return tuple(named)

@@ -73,8 +73,14 @@ def check_turndown(request: Request, results: Mapping[str, Result]) -> tuple[Fin
             Level.CAUTION,
             "turndown-short",
             "require.turndown" if "require.turndown" in request.tag.given else "points",
-            f"The range asked for is {number(asked)} to 1; the limits leave "
-            f"{number(float(available.value))} to 1 at the normal point. Choose a smaller range, "
-            "two meters, or a family with a wider one.",
+            f"The range asked for is {number(asked)} to 1; {_left(float(available.value))} at the "
+            "normal point. Choose a smaller range, two meters, or a family with a wider one.",
         ),
     )
+
+
+def _left(available: float) -> str:
+    """Return what the limits leave of the range, in words; 0 where no flow is left."""
+    if available == 0.0:
+        return "no flow holds all limits"
+    return f"the limits leave {number(available)} to 1"

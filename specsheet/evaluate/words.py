@@ -14,7 +14,10 @@ def number(value: float, digits: int = 3) -> str:
     """Return a number with significant digits, without an exponent where it stays readable."""
     if value == 0.0 or 1e-3 <= abs(value) < 1e7:
         text = f"{value:.{digits}g}"
-        return f"{float(text):,.0f}".replace(",", " ") if "e" in text else text
+        if "e" not in text:
+            return text
+        whole = f"{float(text):.0f}"
+        return whole if len(whole.lstrip("-")) < 5 else f"{float(whole):,.0f}".replace(",", " ")
     return f"{value:.{digits}g}"
 
 

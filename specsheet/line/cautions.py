@@ -11,7 +11,7 @@ from specsheet.findings import Finding
 from specsheet.fluid.state import FluidResult
 from specsheet.line.explosive import explosive_findings, explosive_notes
 from specsheet.line.service import Service, hazards, service_facts
-from specsheet.sources import PRACTICE
+from specsheet.sources import MEMORY, PRACTICE
 from specsheet.tag import Tag
 
 _CELSIUS = 273.15
@@ -51,6 +51,10 @@ _TEXTS = {
     "law of the place; the accuracy class there decides, not this sheet.",
     "safety_function": "Safety function ({safety}): the integrity of the whole loop is verified by "
     "a competent person (IEC 61508, IEC 61511); this sheet only asks for the figures.",
+    "sewage": "Sewage, sludge and their gas: they carry germs and give off hydrogen sulfide and "
+    "methane; test for gas and ventilate before opening, hygiene by the rules of the site.",
+    "static": "Flammable liquid that may hardly conduct: flow and filters charge it; bond and "
+    "earth the meter, and keep to the velocity of the site's code (IEC TS 60079-32-1, {memory}).",
     "potable_water": "Drinking water: every wetted part carries the approval for drinking water "
     "that the law of the place demands.",
 }
@@ -86,6 +90,7 @@ def cautions(
         "hottest": _hottest(service),
         "touch": TOUCH,
         "practice": PRACTICE,
+        "memory": MEMORY,
         "bar": (service.pressure or 0.0) / 1e5,
         "safety": tag.text("require.safety_function"),
     }
@@ -97,8 +102,8 @@ def cautions(
 def dangers(service: Service) -> frozenset[str]:
     """Return the dangers a service has: those stated, and those its facts have by nature.
 
-    Words: toxic, flammable, asphyxiant, oxygen_enriched, hydrogen, steam, hot_surface, cryogenic,
-    high_pressure, and the ones the tag states.
+    Words: toxic, flammable, static, asphyxiant, oxygen_enriched, hydrogen, steam, hot_surface,
+    cryogenic, high_pressure, and the ones the tag states.
     """
     found = {_SAME.get(word, word) for word in service.words}
     found.update(_by_substance(service))
@@ -113,6 +118,8 @@ def dangers(service: Service) -> frozenset[str]:
         "high_pressure": service.pressure is not None and service.pressure > HIGH_PRESSURE,
     }
     found.update(name for name, holds in conditions.items() if holds)
+    if "flammable" in found and service.phase == "liquid" and "water" not in service.fractions:
+        found.add("static")
     return frozenset(found)
 
 

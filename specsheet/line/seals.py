@@ -139,10 +139,9 @@ def _nothing() -> Finding:
 
 
 def _sentence(seal: Seal) -> str:
-    return (
-        f"{seal.name}: {seal.low - _CELSIUS:.0f} to {seal.high - _CELSIUS:.0f} °C; {seal.note} "
-        f"({seal.source})."
-    )
+    name = f"{seal.name[0].upper()}{seal.name[1:]}"
+    low, high = seal.low - _CELSIUS, seal.high - _CELSIUS
+    return f"{name}: {low:.0f} to {high:.0f} °C; {seal.note} ({seal.source})."
 
 
 def _usual(profile: Profile) -> Iterator[Seal]:

@@ -29,7 +29,7 @@ class Service:
     Attributes:
         fractions: substance key -> mole fraction; 1 for a pure substance, NaN where not known.
         words: hazards, kind of fluid and derived words ("sour", "chlorides", "abrasive", "acid",
-            "demineralised_water", "boiler_water", "amine").
+            "demineralised_water", "boiler_water", "potable_water", "sewage", "amine").
         phase: "liquid" or "gas", as stated.
         hottest, coldest: highest and lowest temperature, design and ambient included [K]; None
             where none is known.

@@ -158,12 +158,13 @@ def _judge(
     if side.reduced is not None and there >= side.reduced * (1.0 - 1e-9):
         message = (
             f"{has}: only the reduced length of {side.reduced:.3g} D is met, which adds "
-            f"{REDUCED_UNCERTAINTY:.1%} to the uncertainty of the flow."
+            f"{100.0 * REDUCED_UNCERTAINTY:.1f} % to the uncertainty of the flow."
         )
         code = f"{side.name}-length-reduced"
         finding = Finding(Level.CAUTION, code, side.entry, message, source=source)
         return message, (finding,), REDUCED_UNCERTAINTY
-    message = f"{has}: {side.wanted - there:.3g} D are missing; {_REMEDY}."
+    short = f"{side.wanted - there:.3g}"
+    message = f"{has}: {short} D {'is' if short == '1' else 'are'} missing; {_REMEDY}."
     code = f"{side.name}-length-short"
     return message, (Finding(Level.CAUTION, code, side.entry, message, source=source),), 0.0
 

@@ -12,6 +12,9 @@ from specsheet.sheet.units import Units
 if TYPE_CHECKING:
     from specsheet.evaluate.result import Evaluation, Result
 
+#: values by a volume at base conditions
+_AT_BASE = ("gross_calorific_value", "net_calorific_value", "wobbe_index")
+
 
 class Values:
     """Rows of the values of one evaluation.
@@ -59,9 +62,14 @@ class Values:
         results = self.results(key)
         if not results:
             return None
-        note = f"at {self.evaluation.tag.base.name}" if key == "base_volume_flow" else ""
-        shown = note if key in self.varying else ""
-        return rows.of_results(key, results, self.units, shown, gas=self._gas)
+        return rows.of_results(key, results, self.units, self._note(key), gas=self._gas)
+
+    def _note(self, key: str) -> str:
+        """Return what a volume at base, or an energy, must say to mean anything."""
+        tag = self.evaluation.tag
+        if key in _AT_BASE or (key == "base_volume_flow" and key in self.varying):
+            return f"at {tag.base.name}"
+        return tag.text("fluid.energy_basis") if key == "energy_flow" else ""
 
     def _entry(self, path: str) -> Row | None:
         tag = self.evaluation.tag

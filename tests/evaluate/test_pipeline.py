@@ -6,6 +6,8 @@ import pytest
 
 from specsheet import tagfile
 from specsheet.evaluate import evaluate
+from specsheet.evaluate.summary import _left
+from specsheet.evaluate.words import number
 from specsheet.findings import Level
 from tests.support.tags import NITROGEN, STEAM, WATER, point, tag_of
 
@@ -140,6 +142,16 @@ def test_turndown_that_the_limits_do_not_leave_is_said():
     assert evaluation.summary["turndown"].value == pytest.approx(100.0)
     assert float(evaluation.summary["turndown_available"].value) < 100.0
     assert "turndown-short" in {item.code for item in evaluation.findings}
+    assert "no flow holds all limits" in _left(0.0)
+    assert _left(13.24) == "the limits leave 13.2 to 1"
+
+
+@pytest.mark.parametrize(
+    ("value", "text"),
+    [(26_000.0, "26 000"), (7470.0, "7470"), (-1234.0, "-1230"), (0.0015, "0.0015"), (0.0, "0")],
+)
+def test_numbers_of_a_sentence_are_grouped_as_those_of_the_sheet(value, text):
+    assert number(value) == text
 
 
 def test_yearly_cost_of_the_loss():

@@ -108,8 +108,20 @@ def test_both_stated_within_the_tolerance_is_saturated_with_a_note() -> None:
     assert near is not None
     assert off is not None
     assert near.phase == "gas"
-    assert [item.code for item in near.findings] == ["on-saturation"]
+    assert [item.code for item in near.findings] == ["on-saturation", "dryness-assumed"]
     assert [item.code for item in off.findings] == ["phase-disagrees"]
+
+
+def test_saturated_steam_is_said_to_be_taken_as_dry() -> None:
+    saturated = evaluate.state(Water("gas"), Condition(None, 8e5)).state
+    stated = evaluate.state(Water("gas"), Condition(None, 8e5, 1.0)).state
+    water = evaluate.state(Water("liquid"), Condition(None, 8e5)).state
+    assert saturated is not None
+    assert stated is not None
+    assert water is not None
+    assert [item.code for item in saturated.findings] == ["dryness-assumed"]
+    assert not stated.findings
+    assert "dryness-assumed" not in [item.code for item in water.findings]
 
 
 def test_wet_steam_has_the_density_of_the_mixture() -> None:

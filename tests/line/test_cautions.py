@@ -50,6 +50,12 @@ def _said(fluid, point=COOL, design="", require=""):
             'kind = "petroleum"\nproduct = "fuel oil"\ndensity_15 = "870 kg/m3"\nphase = "liquid"',
             "Flammable",
         ),
+        # a liquid that burns and hardly conducts charges itself
+        (_substance("toluene").replace('"gas"', '"liquid"'), "bond and earth"),
+        # told by the name alone
+        (WATER.format("liquid") + '\nname = "Settled sewage"', "carry germs"),
+        ('kind = "given"\nphase = "liquid"\nname = "Digestate, 5 %"', "carry germs"),
+        (WATER.format("liquid") + '\nname = "Potable water"', "approval for drinking water"),
     ],
 )
 def test_what_the_substance_is_raises_the_caution(fluid, words):

@@ -85,6 +85,7 @@ RULES = [
     (WATER + 'name = "Boiler feed water"', "brass", 90, "conditional", "ammonia and amines"),
     (WATER + 'name = "Boiler feedwater"', "aluminium", 90, "avoid", "alkaline boiler water"),
     (WATER + 'name = "Condensate"', "galvanised steel", 90, "avoid", "zinc"),
+    (_substance("hydrogen sulfide", GASEOUS), "brass", 20, "avoid", "eats copper alloys"),
     (_substance("ammonia", GASEOUS), "brass", 20, "avoid", "copper alloys"),
     (_substance("ammonia"), "carbon steel", 20, "conditional", "stress relief"),
     (_substance("ammonia", GASEOUS), "FKM", 20, "avoid", "fluoroelastomers"),

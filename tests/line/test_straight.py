@@ -72,6 +72,13 @@ def test_enough_reduced_or_short(up, code, extra):
     assert REDUCED_UNCERTAINTY == 0.005
 
 
+def test_one_diameter_is_missing():
+    line = 'inside_diameter = "800 mm"\nupstream_length = "50 D"\ndownstream_length = "4 D"'
+    tag = line_tag(line=line, family="pitot_tube")
+    (finding,) = straight(tag, packs.profile("pitot_tube"), None, pipe_diameter=0.8).findings
+    assert "1 D is missing" in finding.message
+
+
 def test_a_short_length_names_the_remedies():
     (finding,) = _straight('upstream_length = "2 D"\ndownstream_length = "9 D"').findings
     assert finding.level is Level.CAUTION

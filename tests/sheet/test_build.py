@@ -375,3 +375,14 @@ def test_a_gas_has_a_saturation_pressure(phase: str, label: str, symbol: str) ->
         sheet.build(replace(held, tag=tag, points=(point,))), "fluid_points", "vapour_pressure"
     )
     assert (line.label, line.symbol, texts(line), line.unit) == (label, symbol, ["11.23"], "bar(a)")
+
+
+def test_energies_say_what_they_are_of() -> None:
+    """Gross and net differ by a tenth, volumes at 15 °C and at 0 °C by 5 %."""
+    held = samples.evaluation()
+    point = PointResult("normal", {"energy_flow": Result(3.4e6, Origin.DERIVED)})
+    fluid = {"gross_calorific_value": Result(3.8e7, Origin.DERIVED)}
+    tag = replace(held.tag, given={**held.tag.given, "fluid.energy_basis": "net"})
+    made = sheet.build(replace(held, tag=tag, points=(point,), fluid=fluid))
+    assert row(made, "fluid_points", "energy_flow").note == "net"
+    assert row(made, "fluid", "gross_calorific_value").note == f"at {tag.base.name}"

@@ -42,6 +42,15 @@ _KAPPA = Method("ρc²/p of the real gas, IAPWS-IF97", if97.SOURCE, 0.006)
 _MIXED = Method("no slip between vapour and water: 1/ρ = x/ρv + (1-x)/ρl", if97.SOURCE, 0.02)
 _MOLAR = Method("molar mass of water", if97.SOURCE, 0.0)
 
+_TAKEN_DRY = note(
+    "dryness-assumed",
+    "dryness_fraction",
+    "Saturated steam is taken as dry. Each per cent of water carried along is up to one per cent "
+    "of mass flow that the meter does not see: drain and separate upstream, or state the dryness "
+    "fraction.",
+    PRACTICE,
+)
+
 
 @dataclass(frozen=True, slots=True)
 class Water:
@@ -111,6 +120,7 @@ class Water:
         dryness = condition.dryness
         if dryness is None:
             dryness = 1.0 if self.phase == GAS else 0.0
+            findings += (_TAKEN_DRY,) if self.phase == GAS else ()
         if not 0.0 <= dryness <= 1.0:
             raise Refused(
                 stop(
