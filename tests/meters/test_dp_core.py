@@ -13,7 +13,8 @@ from specsheet.fields import TERMS
 from specsheet.findings import Level, Origin
 from specsheet.meters import registry
 from specsheet.meters.dp import transmitter
-from specsheet.meters.dp.response import flow_from, lanes_of, ratio_for, respond
+from specsheet.meters.dp.response import flow_from, lanes_of, pressure_of, ratio_for, respond
+from specsheet.meters.family import Stream
 
 FAMILIES = [
     "orifice_concentric",
@@ -58,6 +59,33 @@ def test_signal_goes_back_to_flow(key, make):
     start = request.stream.with_flow(request.stream.mass_flow * 1.3)
     back = flow_from(device, element, start, values["differential_pressure"])
     np.testing.assert_allclose(back, request.stream.mass_flow, rtol=1e-9)
+
+
+@pytest.mark.parametrize("key", FAMILIES)
+def test_liquid_and_gas_side_by_side_answer_as_alone(key):
+    """One call with lanes of both: each as in a call of its own, with ε = 1 in the liquid."""
+    device = device_of(key)
+    element = registry.family(key).size(steam(key))
+    wet, dry = water(key).stream, steam(key).stream
+    columns = (
+        np.concatenate([getattr(wet, name), getattr(dry, name)])
+        for name in Stream.__dataclass_fields__
+    )
+    both = respond(device, element, Stream(*columns))
+    assert both["expansibility"][:3] == pytest.approx(1.0, abs=0.0)
+    for name in ("differential_pressure", "expansibility"):
+        alone = [respond(device, element, stream)[name] for stream in (wet, dry)]
+        np.testing.assert_allclose(both[name], np.concatenate(alone), rtol=1e-12)
+
+
+@pytest.mark.parametrize("key", FAMILIES)
+@pytest.mark.parametrize("make", [water, steam])
+def test_sizing_asks_for_the_pressure_of_the_response(key, make):
+    request = make(key)
+    device, element = device_of(key), registry.family(key).size(request)
+    asked = pressure_of(device, element, request.stream)
+    told = respond(device, element, request.stream)["differential_pressure"]
+    np.testing.assert_array_equal(asked, told)
 
 
 @pytest.mark.parametrize("key", FAMILIES)

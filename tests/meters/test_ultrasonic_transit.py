@@ -47,6 +47,14 @@ def test_clamp_on_takes_the_pipe_and_two_passes():
     assert values["pressure_loss"] == pytest.approx(0.0, abs=0.0)
 
 
+@pytest.mark.parametrize("mounting", ["clamp-on", "inline"])
+def test_a_figure_of_nothing_is_a_stop_however_it_is_mounted(mounting):
+    nothing = tools.quantity(0.0, "angle", "°")
+    request = liquid(meter__mounting=mounting, meter__path_angle=nothing)
+    found = [item for item in FAMILY.size(request).findings if item.code == "figure-not-positive"]
+    assert [(item.level, item.field) for item in found] == [(Level.STOP, "meter.path_angle")]
+
+
 def test_line_size_unless_the_velocity_is_low():
     assert FAMILY.size(liquid()).values["meter_size"].value == "DN 100"
     assert FAMILY.size(liquid([1.0, 2.0, 3.0])).numbers["bore"] < 0.1

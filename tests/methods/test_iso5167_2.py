@@ -136,6 +136,8 @@ def test_roughness_table_at_its_nodes_and_between():
     assert limit(diameter_ratio=0.7, reynolds_number=1e8) == pytest.approx(0.3e-4)
     between = limit(diameter_ratio=0.55, reynolds_number=1e6)
     assert 1.0e-4 < between < 2.2e-4
+    ratios = np.array([0.5, 0.55])
+    assert limit(diameter_ratio=ratios, reynolds_number=1e6) == pytest.approx([2.2e-4, between])
 
 
 @pytest.mark.parametrize("taps", ["corner", "flange", "D and D/2"])
