@@ -82,3 +82,14 @@ def test_finding_on_the_uncertainty_names_the_three_largest():
     found = next(item for item in evaluation.findings if item.code == "uncertainty-demanded")
     for line in evaluation.budget[:3]:
         assert line.label in found.message
+
+
+@pytest.mark.parametrize(
+    ("family", "words"), [("orifice_concentric", "over two transmitters"), ("vortex", "two meters")]
+)
+def test_the_remedy_is_one_that_the_family_has(family, words):
+    rest = '[require]\nuncertainty = "0.2 %"\n'
+    point_of = point("normal", "2 t/h", "6 bar(g)", "20 degC")
+    evaluation = evaluate(tag_of(point_of, fluid=NITROGEN, rest=rest, family=family))
+    found = next(item for item in evaluation.findings if item.code == "uncertainty-demanded")
+    assert words in found.message

@@ -31,6 +31,13 @@ def of_profile(request: Request) -> tuple[Limit, ...]:
     )
 
 
+def _split(request: Request) -> str:
+    """Return how a family can hold an uncertainty over a wider range."""
+    if any(entry.path == "meter.second_range" for entry in request.profile.entries):
+        return "split it over two transmitters"
+    return "split it over two meters, take the reading by pulse or bus instead of 4-20 mA"
+
+
 def of_purchase(request: Request) -> tuple[Limit, ...]:
     """Return the demands of the purchase that bound a value."""
     wanted: list[Limit] = []
@@ -43,8 +50,8 @@ def of_purchase(request: Request) -> tuple[Limit, ...]:
                 high=uncertainty,
                 level=Level.CAUTION,
                 code="uncertainty-demanded",
-                message="the purchase demands less; narrow the range, split it over two "
-                "transmitters, or choose a family that holds it",
+                message=f"the purchase demands less; narrow the range, {_split(request)}, or choose "
+                "a family that holds it",
                 source="require.uncertainty",
             )
         )
