@@ -50,8 +50,8 @@ def of_purchase(request: Request) -> tuple[Limit, ...]:
                 high=uncertainty,
                 level=Level.CAUTION,
                 code="uncertainty-demanded",
-                message=f"the purchase demands less; narrow the range, {_split(request)}, or choose "
-                "a family that holds it",
+                message=f"the purchase demands less; narrow the range, {_split(request)}, or "
+                "choose a family that holds it",
                 source="require.uncertainty",
             )
         )
