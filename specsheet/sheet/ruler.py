@@ -34,11 +34,12 @@ def build(evaluation: Evaluation, units: Units, axis: FlowAxis) -> Ruler | None:
         return None
     # at the conditions of the normal point, to which the windows belong
     flows = {name: flow * axis.factors[name] / axis.factor for name, flow in stated.items()}
-    low, high = _ends(list(flows.values()), evaluation.bands)
+    bands = tuple(dict.fromkeys(evaluation.bands))  # one lane where two reasons set one bound
+    low, high = _ends(list(flows.values()), bands)
     span = math.log(high / low)
     windows = tuple(
         _window(band, label, axis, low, high, span)
-        for band, label in zip(evaluation.bands, _labels(evaluation.bands, units), strict=True)
+        for band, label in zip(bands, _labels(bands, units), strict=True)
     )
     start = max((window.low for window in windows), default=0.0)
     end = min((window.high for window in windows), default=1.0)
@@ -53,7 +54,7 @@ def build(evaluation: Evaluation, units: Units, axis: FlowAxis) -> Ruler | None:
                 name,
                 _typed(evaluation, name, axis) or axis.text(flow),
                 math.log(flow / low) / span,
-                _inside(flow, evaluation.bands),
+                _inside(flow, bands),
             )
             for name, flow in flows.items()
         ),
