@@ -7,26 +7,40 @@ import subprocess
 import sys
 import time
 from collections.abc import Callable, Sequence
+from contextlib import suppress
 from dataclasses import dataclass
 from pathlib import Path
 
+import psutil
 from cli_process import environment
+
+#: time between two looks at the memory of a program [s]
+_PAUSE = 0.05
 
 
 @dataclass(frozen=True, slots=True)
 class Cost:
-    """What a process cost: processor time [s] of it and its children, peak memory [MB]."""
+    """What a program cost, all its processes together.
+
+    Attributes:
+        seconds: processor time [s].
+        wall: time that its user waits [s].
+        megabytes: peak memory [MB]; what processes share counts once where the system tells.
+    """
 
     seconds: float
+    wall: float
     megabytes: float
 
 
-def process(arguments: Sequence[str], cwd: Path | None = None, repeats: int = 5) -> Cost:
-    """Run the interpreter with arguments; return the cheapest of the runs."""
-    return min((_once(arguments, cwd) for _ in range(repeats)), key=lambda cost: cost.seconds)
+def process(arguments: Sequence[str], cwd: Path | None = None) -> float:
+    """Run the interpreter with arguments; return the least processor time of five runs [s]."""
+    return min(cost(arguments, cwd).seconds for _ in range(5))
 
 
-def _once(arguments: Sequence[str], cwd: Path | None) -> Cost:
+def cost(arguments: Sequence[str], cwd: Path | None = None) -> Cost:
+    """Run the interpreter with arguments, once; return what it cost."""
+    start = time.perf_counter()
     with subprocess.Popen(
         [sys.executable, *arguments],
         cwd=cwd,
@@ -35,9 +49,28 @@ def _once(arguments: Sequence[str], cwd: Path | None) -> Cost:
         stderr=subprocess.DEVNULL,
         env=environment(),
     ) as child:
-        _, _, used = os.wait4(child.pid, 0)
+        peak = 0
+        while (ended := os.wait4(child.pid, os.WNOHANG))[0] == 0:
+            peak = max(peak, _held(child.pid))
+            time.sleep(_PAUSE)
         child.returncode = 0
-    return Cost(used.ru_utime + used.ru_stime, used.ru_maxrss / 1024)
+    used = ended[2]
+    return Cost(used.ru_utime + used.ru_stime, time.perf_counter() - start, peak / 1e6)
+
+
+def _held(pid: int) -> int:
+    """Return the memory that a process and those below it hold now [bytes]."""
+    with suppress(psutil.Error):
+        root = psutil.Process(pid)
+        return sum(map(_of_one, (root, *root.children(recursive=True))))
+    return 0
+
+
+def _of_one(one: psutil.Process) -> int:
+    with suppress(psutil.Error):
+        told = one.memory_full_info()
+        return int(getattr(told, "pss", told.rss))
+    return 0
 
 
 def calls(work: Callable[[int], object], count: int) -> float:
@@ -50,6 +83,7 @@ def calls(work: Callable[[int], object], count: int) -> float:
     return min(spent)
 
 
-def report(what: str, measured: float, unit: str, budget: float) -> None:
-    """Print one row of the table of measurements."""
-    print(f"\n{what:<58} {measured:9.3g} {unit:<4} of {budget:.4g}")
+def report(what: str, measured: float, unit: str, budget: float | None = None) -> None:
+    """Print one row of the table of measurements, with its budget where it has one."""
+    limit = "" if budget is None else f"of {budget:.4g}"
+    print(f"\n{what:<58} {measured:9.3g} {unit:<4} {limit}".rstrip())
