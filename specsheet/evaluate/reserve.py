@@ -15,6 +15,7 @@ from numpy.typing import NDArray
 
 from specsheet.evaluate.model import Model
 from specsheet.evaluate.stream import Lanes
+from specsheet.findings import Level
 from specsheet.meters.family import Array, Limit, Stream
 
 #: flow factors that the search looks at; 1 is among them
@@ -55,19 +56,16 @@ class Pains(NamedTuple):
         evenness: share of a step of the grid by which two readings of a crossing may differ and
             still be trusted.
         rounds: of closing in at most.
-        brink: whether to close in on a flow beyond which nothing is possible (the gas chokes);
-            else the last flow of the grid before it counts, up to 12 % short of it.
     """
 
     evenness: float
     rounds: int
-    brink: bool
 
 
 #: within 0.05 % of the flow, as measured over the demo job
-EXACT = Pains(0.001, 2, brink=True)
+EXACT = Pains(0.001, 2)
 #: within 0.3 % or so, which ranks families as well
-ROUGH = Pains(0.03, 1, brink=False)
+ROUGH = Pains(0.03, 1)
 
 
 @dataclass(frozen=True)
@@ -184,15 +182,12 @@ def find_flips(
     bounds = Bounds.of(limits)
     margins = bounds.margins(values).reshape(len(limits), points.size, FACTORS.size)
     holds = margins >= 0.0
-    of_limit, of_point, of_step = np.nonzero(holds[..., 1:] != holds[..., :-1])
+    flipped = (holds[..., 1:] != holds[..., :-1]) & ~_behind(searches, holds, values)
+    of_limit, of_point, of_step = np.nonzero(flipped)
     table = values.reshape(holds.shape)[of_limit, of_point]
     rising = holds[of_limit, of_point, of_step + 1]
     edges = _Edges.of(bounds.take(of_limit), table, of_step + ~rising)
     factor, clear = _read(edges, table, of_step, pains.evenness)
-    if not pains.brink:
-        brink = np.isnan(table[np.arange(of_step.size), of_step + ~rising])
-        factor = np.where(brink, FACTORS[of_step + rising], factor)
-        clear |= brink
     found = []
     first = 0
     for search in searches:
@@ -210,6 +205,37 @@ def find_flips(
         found.append(_seen_from_all(flips, stream, points))
         first += len(search.limits)
     return tuple(found)
+
+
+def _behind(
+    searches: Sequence[Search], holds: NDArray[np.bool_], values: Array
+) -> NDArray[np.bool_]:
+    """Tell which crossings only say that no flow is possible, where a limit ended before that.
+
+    A gas that chokes has no value of anything. Where the limit on the pressure ratio, say, ends
+    below that flow, the end of the possible is no flip of every other limit.
+
+    Args:
+        searches: as in :func:`find_flips`.
+        holds: whether each limit holds at each point over the grid, shape (k, m, len(FACTORS)).
+        values: values over the grid, k * m * len(FACTORS) of them.
+
+    Returns:
+        for each limit, point and step of the grid.
+    """
+    known = ~np.isnan(values).reshape(holds.shape)
+    ends = holds[..., :-1] & ~holds[..., 1:]
+    brink = ends & ~known[..., 1:]
+    if not brink.any():
+        return brink
+    first = 0
+    for search in searches:
+        own = slice(first, first + len(search.limits))
+        binding = [limit.level is not Level.NOTE for limit in search.limits]
+        ended = (ends & known[..., 1:])[own][binding].any(axis=0)
+        brink[own] &= np.logical_or.accumulate(ended, axis=-1)
+        first = own.stop
+    return brink
 
 
 @dataclass(frozen=True)

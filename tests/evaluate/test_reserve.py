@@ -101,3 +101,29 @@ def test_limit_that_no_flow_in_four_decades_crosses_has_no_reserve():
     for check in evaluate(tag).checks:
         if check.reserve is not None and check.reserve.driver == "mass_flow":
             assert -0.99 <= check.reserve.fraction <= 99.0
+
+
+def test_a_limit_does_not_flip_where_no_flow_is_possible_any_more():
+    """Beyond choking nothing has a value: only the limit on the pressure ratio ends before that."""
+    tag = tag_of(
+        point("normal", "3 t/h", "8 bar(g)", "20 degC"),
+        family="orifice_concentric",
+        fluid=NITROGEN,
+        rest=ORIFICE,
+    )
+    evaluation = evaluate(tag)
+    bands = {(band.key, band.least): band for band in evaluation.bands}
+    assert bands["pressure_ratio", 0.75].high is not None
+    cut_off = next(
+        band for (key, least), band in bands.items() if key == "signal_fraction" and least
+    )
+    assert cut_off.high is None
+    assert np.isnan(evaluation_at(tag, 10.0 * bands["pressure_ratio", 0.75].high))
+
+
+def evaluation_at(tag, mass_flow):
+    """Return the differential pressure at another flow, NaN where there is none."""
+    flow = parse(f"{mass_flow!r} kg/s", "flow")
+    moved = replace(tag.points[0], values={**tag.points[0].values, "flow": flow})
+    found = evaluate(replace(tag, points=(moved,))).points[0].values.get("differential_pressure")
+    return None if found is None else found.value
