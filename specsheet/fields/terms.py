@@ -222,8 +222,8 @@ _TERMS = (
     Term("flange_rating", "Flange rating", "", "text"),
     Term("allowable_pressure", "Allowable pressure of the rating", "", "pressure_gauge"),
     Term("seal_material", "Seals", "", "text"),
-    Term("flange_pressure", "Pressure on the flanges", "", "pressure_gauge"),
-    Term("flange_temperature", "Temperature of the flanges", "", "temperature"),
+    Term("flange_pressure", "Flange pressure", "", "pressure_gauge"),
+    Term("flange_temperature", "Flange temperature", "", "temperature"),
 )
 
 TERMS: dict[str, Term] = {term.key: term for term in _TERMS}

@@ -29,7 +29,7 @@ class Demand:
     def words(self) -> str:
         """The demand in words."""
         where = "design" if self.name == "design" else f"point {self.name}"
-        return f"{self.pressure / 1e5:.4g} bar(g) at {self.temperature - 273.15:.4g} degC ({where})"
+        return f"{self.pressure / 1e5:.4g} bar(g) at {self.temperature - 273.15:.4g} °C ({where})"
 
 
 @dataclass(frozen=True, slots=True)

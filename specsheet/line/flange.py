@@ -125,7 +125,7 @@ def allowed(rating: Rating, material: Material | None, temperature: float) -> Al
     tough = rating.system == CLASS and material.kind in TOUGH
     if temperature < lowest_temperature(rating.system) and not tough:
         floor = lowest_temperature(rating.system) - _CELSIUS
-        reason = f"the ratings hold from {floor:.0f} degC up"
+        reason = f"the ratings hold from {floor:.0f} °C up"
         return Allowed(None, standard(rating.system), reason)
     curve = _curve_of(rating, material)
     if curve is None:

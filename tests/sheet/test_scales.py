@@ -237,7 +237,7 @@ def test_the_loosest_are_left_to_the_table(count: int, more: str) -> None:
     tightest = own("flange_pressure", 12e5, None, 12.1e5)
     made = ruler(*many(count - 1), tightest)
     assert len(made.scales) == min(count, scales.MOST)
-    assert made.scales[0].label == "Pressure on the flanges"
+    assert made.scales[0].label == "Flange pressure"
     assert made.more == more
 
 
