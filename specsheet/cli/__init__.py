@@ -56,7 +56,10 @@ def _open_form(words: Sequence[str]) -> int:
 def _run(words: Sequence[str]) -> int:
     from specsheet.cli.parser import build_parser
 
-    parsed = build_parser().parse_args(words)
+    try:
+        parsed = build_parser().parse_args(words)
+    finally:
+        sys.stdout.flush()  # help is out, or told that it cannot be, before the parser ends us
     command = import_module(f"specsheet.cli.commands.{parsed.module}")
     status: int = command.run(parsed)
     return int(status)

@@ -2,12 +2,21 @@
 
 from __future__ import annotations
 
+import os
 import sys
 from io import TextIOWrapper
 
 
 def set_up() -> None:
-    """Write UTF-8 whatever the locale, and the names of files as the bytes that they are."""
+    """Write UTF-8 whatever the locale, and the names of files as the bytes that they are.
+
+    A stream that the caller closed is opened on nothing: data that cannot go out are then told
+    like any output that cannot be written, and narration is dropped.
+    """
+    for name, mode in (("stdin", os.O_RDONLY), ("stdout", os.O_RDONLY), ("stderr", os.O_WRONLY)):
+        if getattr(sys, name) is None:
+            nothing = os.open(os.devnull, mode)
+            setattr(sys, name, os.fdopen(nothing, "r" if name == "stdin" else "w"))
     for stream, strays in ((sys.stdout, "surrogateescape"), (sys.stderr, "backslashreplace")):
         if isinstance(stream, TextIOWrapper):  # a caller may have put another stream there
             stream.reconfigure(encoding="utf-8", errors=strays)

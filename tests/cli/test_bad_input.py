@@ -14,7 +14,7 @@ import sys
 from pathlib import Path
 
 import pytest
-from cli_process import call, demo_job, demo_text, run
+from cli_process import call, demo_job, demo_text, environment, run
 
 from specsheet.cli import main
 from specsheet.findings import Level
@@ -234,6 +234,34 @@ def test_output_that_cannot_be_written() -> None:
     assert done.returncode == 2
     assert done.stderr.startswith("the output: cannot be written")
     assert "Traceback" not in done.stderr
+
+
+@pytest.mark.skipif(os.name != "posix", reason="needs a shell that closes streams")
+@pytest.mark.parametrize(
+    ("words", "closed", "status", "said"),
+    [
+        ("families", ">&-", 2, "the output: cannot be written"),
+        ("--help", ">&-", 2, "the output: cannot be written"),
+        ("check absent.toml", "2>&-", 2, ""),
+        ("families", "2>&-", 0, ""),
+        ("form", "<&-", 2, "The form needs a terminal"),
+    ],
+)
+def test_a_stream_that_the_caller_closed(
+    words: str, closed: str, status: int, said: str, tmp_path: Path
+) -> None:
+    done = subprocess.run(
+        ["bash", "-c", f"{sys.executable} -m specsheet {words} {closed}"],
+        capture_output=True,
+        text=True,
+        check=False,
+        cwd=tmp_path,
+        env=environment(),
+    )
+    assert done.returncode == status
+    assert said in done.stderr
+    assert "Traceback" not in done.stderr
+    assert "Exception" not in done.stderr
 
 
 def test_reader_of_the_output_that_has_gone() -> None:
