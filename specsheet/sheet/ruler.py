@@ -20,8 +20,9 @@ if TYPE_CHECKING:
 _ROOM = 1.6
 _REACH = 4.0
 
-#: a flow this close to the end of a window stands on it (an end solved for the point itself) [-]
-_TOUCH = 1e-6
+#: a flow this close to the end of a window stands on it (an end solved for the point itself, and
+#: read off with this error at most) [-]
+_TOUCH = 1e-3
 
 #: where the short name of a value ends: "Signal", "Reynolds number", "Velocity", "Load"
 _BEYOND_NAME = re.compile(r",| in the | at | by the ")
