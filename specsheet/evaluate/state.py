@@ -11,10 +11,10 @@ from collections.abc import Iterator
 from specsheet.evaluate.prepare import Prepared
 from specsheet.evaluate.result import Check
 from specsheet.findings import Level, Reserve
+from specsheet.fluid.phases import GAS, LIQUID, TWO_PHASE
 from specsheet.fluid.state import State
 from specsheet.line.rating import Margin
 
-_LIQUID, _GAS = "liquid", "gas"
 _HOLDS = 1.0 + 1e-9
 _FLASHES = "the liquid boils: the meter reads wrong and may be damaged"
 _CONDENSES = "the gas condenses: drops and slugs disturb the meter or damage it"
@@ -23,35 +23,49 @@ _CONDENSES = "the gas condenses: drops and slugs disturb the meter or damage it"
 def phase_checks(prepared: Prepared) -> tuple[Check, ...]:
     """Return the margins of the stated phase at the point where each is smallest.
 
-    The margin to saturation flips with the temperature, the vapour pressure with the pressure.
-    What the fluid layer does not know gives no check.
+    The margin to saturation flips with the temperature, the vapour pressure with the pressure. A
+    point in the other phase breaks them. What the fluid layer does not know gives no check.
     """
     phase = prepared.tag.phase
     states = [
         (point.name, state)
         for point, state in zip(prepared.tag.points, prepared.fluid.points, strict=True)
-        if state is not None and state.phase == phase
+        if state is not None and state.phase in (LIQUID, GAS, TWO_PHASE)
     ]
-    if phase not in (_LIQUID, _GAS):
+    if phase not in (LIQUID, GAS):
         return ()
     by_temperature = [check for name, state in states for check in _saturation(phase, name, state)]
     by_pressure = [check for name, state in states for check in _vapour(phase, name, state)]
-    return tuple(min(found, key=_distance) for found in (by_temperature, by_pressure) if found)
+    return tuple(min(found, key=_tightness) for found in (by_temperature, by_pressure) if found)
 
 
-def _distance(check: Check) -> float:
+def _tightness(check: Check) -> float:
+    """Order by what is left of the driver; what is missing counts below nothing left."""
     assert check.reserve is not None
-    return abs(check.reserve.fraction)
+    return abs(check.reserve.fraction) * (1.0 if check.holds else -1.0)
 
 
 def _saturation(phase: str, name: str, state: State) -> Iterator[Check]:
-    margin = state.value("saturation_margin")
+    margin = _margin(phase, state)
     if margin is None:
         return
-    change = margin if phase == _LIQUID else -margin
+    change = margin if phase == LIQUID else -margin
     reserve = Reserve("temperature", state.temperature + change, change / state.temperature)
-    words = _FLASHES if phase == _LIQUID else _CONDENSES
+    words = _FLASHES if phase == LIQUID else _CONDENSES
     yield _check("saturation_margin", name, margin, (0.0, None), words, "", reserve)
+
+
+def _margin(phase: str, state: State) -> float | None:
+    """Return how far inside its stated phase a state is [K], negative in the other phase."""
+    if state.phase == phase:
+        return state.value("saturation_margin")
+    edge = state.value("saturation_temperature")
+    if edge is None and phase == GAS:
+        edge = state.value("dew_temperature")
+    if edge is None:
+        return None
+    above = state.temperature - edge
+    return above if phase == GAS else -above
 
 
 def _vapour(phase: str, name: str, state: State) -> Iterator[Check]:
@@ -59,8 +73,8 @@ def _vapour(phase: str, name: str, state: State) -> Iterator[Check]:
     if found is None or found.value <= 0.0:
         return
     reserve = Reserve("pressure", found.value, found.value / state.pressure - 1.0)
-    bounds = (None, state.pressure) if phase == _LIQUID else (state.pressure, None)
-    words = _FLASHES if phase == _LIQUID else _CONDENSES
+    bounds = (None, state.pressure) if phase == LIQUID else (state.pressure, None)
+    words = _FLASHES if phase == LIQUID else _CONDENSES
     yield _check("vapour_pressure", name, found.value, bounds, words, found.source, reserve)
 
 

@@ -105,9 +105,12 @@ def _condensing(state: State) -> Finding:
     limit = state.value("saturation_temperature") or state.value("dew_temperature")
     edge = "" if limit is None else f"; it is all gas above {celsius(limit)}"
     amount = "is partly liquid" if state.phase == TWO_PHASE else "is a liquid"
-    return stop(
+    wet = stop(
         "phase-disagrees",
         "fluid.phase",
         f"Gas is stated, but {where} the fluid {amount}{edge}. Correct the phase, the pressure or "
         "the temperature.",
     )
+    if limit is None:
+        return wet
+    return replace(wet, reserve=Reserve("temperature", limit, limit / state.temperature - 1.0))

@@ -90,6 +90,54 @@ def test_water_flashes_at_its_vapour_pressure() -> None:
     assert near.reserve == found.reserve
 
 
+def test_steam_that_has_condensed_at_one_point_breaks_its_margins_there() -> None:
+    """IAPWS-IF97, general library: saturation at 8.013 bar(a) and at 165 °C."""
+    evaluation = supposed("steam", "vortex", ("points.minimum.temperature", "165 degC"))
+    warmth, pressure = check(evaluation, "saturation_margin"), check(evaluation, "vapour_pressure")
+    assert (warmth.point, warmth.holds) == ("minimum", False)
+    assert (pressure.point, pressure.holds) == ("minimum", False)
+    assert warmth.reserve is not None
+    assert pressure.reserve is not None
+    saturated = iapws.iapws97._TSat_P(0.801325)
+    assert warmth.reserve.at == pytest.approx(saturated, abs=0.02)
+    assert warmth.value == pytest.approx(438.15 - saturated, abs=0.02)
+    assert pressure.reserve.at == pytest.approx(1e6 * iapws.iapws97._PSat_T(438.15), rel=1e-4)
+    (said,) = (item for item in evaluation.findings if item.code == "phase-disagrees")
+    assert said.reserve is not None
+    assert said.reserve.at == warmth.reserve.at
+    assert said.reserve.fraction == pytest.approx(warmth.reserve.fraction)
+
+
+def test_water_that_boils_at_one_point_breaks_its_margins_there() -> None:
+    """IAPWS-IF97, general library: saturation at 3.02 bar(a) and at 140 °C."""
+    change = ("points.maximum.temperature", "140 degC")
+    evaluation = supposed("boiling water", "ultrasonic_transit", change)
+    warmth, pressure = check(evaluation, "saturation_margin"), check(evaluation, "vapour_pressure")
+    assert (warmth.point, warmth.holds) == ("maximum", False)
+    assert warmth.reserve is not None
+    assert warmth.reserve.at == pytest.approx(iapws.iapws97._TSat_P(0.302), abs=0.02)
+    assert warmth.reserve.fraction < 0.0
+    (said,) = (item for item in evaluation.findings if item.code == "flashing")
+    assert said.reserve == pressure.reserve
+    assert not pressure.holds
+
+
+def test_humid_air_below_its_dew_point_breaks_its_margin() -> None:
+    """Air with a water dew point of 3 °C, as stated, that is 1 °C warm at one point."""
+    evaluation = supposed(
+        "compressed air",
+        "vortex",
+        ("fluid.kind", "humid_air"),
+        ("fluid.water_dew_point", "3 degC"),
+        ("points.minimum.temperature", "1 degC"),
+    )
+    warmth = check(evaluation, "saturation_margin")
+    assert (warmth.point, warmth.holds) == ("minimum", False)
+    assert warmth.reserve is not None
+    assert warmth.reserve.at - 273.15 == pytest.approx(3.0, abs=0.2)
+    assert warmth.value == pytest.approx(-2.0, abs=0.2)
+
+
 def test_a_design_beyond_the_family_is_named() -> None:
     """Axial turbine: usual up to 423 K (common practice, its profile)."""
     evaluation = supposed("water", "turbine_axial", ("design.temperature", "180 degC"))
