@@ -168,7 +168,8 @@ def _change(text: str) -> tuple[str, str]:
 def _whatif(commands: Commands[ArgumentParser]) -> None:
     more = (
         "The file stays as it is. A size that is free is chosen anew at every value; state the\n"
-        "size under [meter], or with --set, to see one meter over the whole range."
+        "size under [meter], or with --set, to see one meter over the whole range.\n"
+        "The exit status is 0 whatever the verdicts in the table, 2 where none can be made."
     )
     whatif = _command(commands, "whatif", "table of the verdict against one figure", more)
     whatif.add_argument("file", help="tag file")

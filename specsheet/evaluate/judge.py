@@ -104,8 +104,9 @@ def judge(tag: Tag) -> Judged:
 
 def _no_family(tag: Tag, profile: Profile | None) -> Finding:
     if profile is None:
+        known = f'There is no meter family "{tag.family}"' if tag.family else "State a meter family"
         message = (
-            f"There is no meter family {tag.family!r}; `specsheet families` lists them. The fluid "
+            f"{known}; `specsheet families` lists them. The fluid "
             "and the line are evaluated without a meter."
         )
         return Finding(Level.STOP, "family-unknown", "family", message)

@@ -114,7 +114,9 @@ def test_what_the_job_holds_and_cannot_be_used_is_a_stop(tmp_path):
 
 def test_an_entry_that_is_not_filled_in_yet_is_no_unusable_one():
     evaluation = spoilt(point("normal", "1 t/h", "7 bar(g)", "185 degC"), family="")
-    assert "entry-unusable" not in {item.code for item in evaluation.findings}
+    said = {item.code: item.message for item in evaluation.findings}
+    assert "entry-unusable" not in said
+    assert said["family-unknown"].startswith("State a meter family;")
 
 
 def test_a_tag_without_operating_points_is_stopped():
