@@ -19,6 +19,9 @@ THROATS = {
 #: relative expanded uncertainty of C, k = 2
 UNCERTAINTY = 0.003
 
+#: of the search for a Mach number; so near to one, two roots fall together and no nearer is told
+_ROUNDS, _TOLERANCE, _BELOW_ONE = 60, 1e-14, 1.0 - 1e-8
+
 
 def critical_flow_function(*, isentropic_exponent: Any) -> Any:
     """Return C* = sqrt(κ) (2/(κ+1))^((κ+1)/(2(κ-1))) of an ideal gas [-]."""
@@ -58,22 +61,25 @@ def mass_flux(*, isentropic_exponent: Any, pressure: Any, density: Any) -> Any:
 def exit_pressure_ratio(*, isentropic_exponent: Any, area_ratio: float) -> Any:
     """Return the subsonic exit pressure by stagnation pressure of a lossless diffuser [-].
 
-    Solves (A/A*)² = (2/(κ+1) (1 + (κ-1)/2 Ma²))^((κ+1)/(κ-1)) / Ma² for Ma below one.
+    Solves (A/A*)² = (2/(κ+1) (1 + (κ-1)/2 Ma²))^((κ+1)/(κ-1)) / Ma² for Ma below one, by Newton's
+    method on its logarithm, which rises to the root from the value of a gas at rest.
 
     Args:
         isentropic_exponent: κ [-]
         area_ratio: exit by throat, at least 1 [-]
     """
     kappa = np.asarray(isentropic_exponent, dtype=np.float64)
-    low, high = np.zeros_like(kappa), np.ones_like(kappa)
-    power = (kappa + 1.0) / (kappa - 1.0)
-    for _ in range(60):
-        mach = 0.5 * (low + high)
-        bracket = 2.0 / (kappa + 1.0) * (1.0 + 0.5 * (kappa - 1.0) * mach * mach)
-        wide = bracket**power / (mach * mach) > area_ratio * area_ratio
-        low, high = np.where(wide, mach, low), np.where(wide, high, mach)
-    mach = 0.5 * (low + high)
-    return (1.0 + 0.5 * (kappa - 1.0) * mach * mach) ** (-kappa / (kappa - 1.0))
+    half = 0.5 * (kappa - 1.0)
+    power = 0.25 * (kappa + 1.0) / half
+    mach = (2.0 / (kappa + 1.0)) ** power / area_ratio
+    for _ in range(_ROUNDS):
+        growth = 1.0 + half * mach * mach
+        excess = power * np.log(2.0 / (kappa + 1.0) * growth) - np.log(mach * area_ratio)
+        rise = excess * mach * growth / (1.0 - mach * mach)
+        if not (np.abs(rise) > _TOLERANCE * mach).any():
+            break
+        mach = np.minimum(mach + rise, _BELOW_ONE)
+    return (1.0 + half * mach * mach) ** (-kappa / (kappa - 1.0))
 
 
 def largest_back_pressure_ratio(*, isentropic_exponent: Any, area_ratio: float) -> Any:

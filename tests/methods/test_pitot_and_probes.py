@@ -199,6 +199,24 @@ def test_toroidal_throat():
     assert found == pytest.approx(0.99318, rel=1e-6)
 
 
+@pytest.mark.parametrize("mach", [0.03, 0.3, 0.8, 0.99])
+def test_exit_pressure_goes_back_to_the_area(mach):
+    """Ma -> A/A* by the isentropic law -> exit pressure -> Ma, for gases heavy and light."""
+    kappa = np.array([1.02, 1.2, 1.4, 1.667])
+    growth = 1.0 + 0.5 * (kappa - 1.0) * mach**2
+    area = (2.0 / (kappa + 1.0) * growth) ** (0.5 * (kappa + 1.0) / (kappa - 1.0)) / mach
+    for gas, wide, grown in zip(kappa, area, growth, strict=True):
+        found = iso9300.exit_pressure_ratio(isentropic_exponent=gas, area_ratio=wide)
+        assert found == pytest.approx(grown ** (-gas / (gas - 1.0)), rel=1e-11)
+
+
+def test_exit_pressure_of_a_gas_that_is_none_is_no_number():
+    kappa = np.array([1.4, np.nan])
+    found = iso9300.exit_pressure_ratio(isentropic_exponent=kappa, area_ratio=2.0)
+    assert np.isfinite(found[0])
+    assert np.isnan(found[1])
+
+
 def test_diffuser_lets_the_back_pressure_rise():
     """Area ratio 1 chokes at r*; a wide exit ideally at nearly the full pressure."""
     critical = iso9300.critical_pressure_ratio(isentropic_exponent=1.4)
