@@ -19,7 +19,16 @@ from functools import lru_cache
 from typing import Any
 
 from specsheet.findings import Finding, Origin
-from specsheet.fluid import dew_curve, envelope, if97, library, mixture_state, names, water_in_gas
+from specsheet.fluid import (
+    dew_curve,
+    dew_point,
+    envelope,
+    if97,
+    library,
+    mixture_state,
+    names,
+    water_in_gas,
+)
 from specsheet.fluid.backends import pure
 from specsheet.fluid.calorific import Composition
 from specsheet.fluid.model import Method, caution, celsius
@@ -30,8 +39,6 @@ from specsheet.sources import cite
 
 #: the Wilson estimate is never colder than the dew point by more than this [K]
 MARGIN = 20.0
-#: dew points of the cubic equation lie within this share of the temperature of the true ones
-CUBIC_MARGIN = 0.05
 #: a water content this near to saturation, relative, is saturated and not beyond it
 SATURATED = 1e-5
 #: a dew point nearer than this is worth a word [K]
@@ -191,7 +198,7 @@ def _by_cubic(
             fractions=fractions,
             components=components,
         )
-        for factor in (1.0, 1.0 - CUBIC_MARGIN, 1.0 + CUBIC_MARGIN)
+        for factor in (1.0, 1.0 - dew_point.CUBIC_MARGIN, 1.0 + dew_point.CUBIC_MARGIN)
     }
     other = cubic.LIQUID if stated == GAS else cubic.GAS
     if cubic.TWO in found:

@@ -43,6 +43,15 @@ def state_of(keys: tuple[str, ...], phase: str) -> Any:
     Raises:
         ValueError: a pair of components has no mixing parameters and the phase is liquid.
     """
+    return imposed(keys, phase)
+
+
+def imposed(keys: tuple[str, ...], phase: str) -> Any:
+    """Return a new state object of some components with the phase imposed.
+
+    Raises:
+        ValueError: a pair of components has no mixing parameters and the phase is liquid.
+    """
     module = library.fluids()
     table = names.substances()
     if phase == GAS:

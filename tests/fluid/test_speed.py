@@ -115,6 +115,20 @@ def test_five_component_gas() -> None:
     assert ours / (20.0 * best(blind)) <= 0.1
 
 
+def test_the_first_state_near_the_dew_point_is_cheaper_than_one_blind_flash() -> None:
+    """The library's own blind flash at the same state, for density alone, is the measure."""
+    table = names.substances()
+    module = library.fluids()
+    blind = module.AbstractState(
+        "HEOS", "&".join(table[key].equation for key, _ in FIVE.composition)
+    )
+    blind.set_mole_fractions([fraction for _, fraction in FIVE.composition])
+    near = Condition(248.0, 60e5)
+    ours = best(lambda: evaluate.state(FIVE, near))
+    theirs = best(lambda: blind.update(module.PT_INPUTS, near.pressure, near.temperature))
+    assert ours / theirs <= 0.7
+
+
 def test_near_its_dew_point_a_gas_costs_little_more_than_far_from_it() -> None:
     """Once the dew curve of the composition is followed, as after the first state."""
     far = conditions(11e5, 315.0, 335.0)
