@@ -24,20 +24,26 @@ class Bare(App):
         yield Static("HERE")
 Bare().run()
 """
-ROUNDS = 7
+FORM = ("-m", "specsheet", "form", "tags/FT-2104.toml")
+ROUNDS = 12
 
 
-def _seconds(arguments: tuple[str, ...], marker: str, cwd: Path) -> float:
-    best = float("inf")
-    for _ in range(ROUNDS):
-        with Terminal(arguments, cwd) as terminal:
-            best = min(best, terminal.until(marker))
-    return best
+def _until(arguments: tuple[str, ...], marker: str, cwd: Path) -> tuple[float, float]:
+    """Return the time on the wall and the processor time until a text has been drawn [s]."""
+    with Terminal(arguments, cwd) as terminal:
+        return terminal.until(marker), terminal.spent()
 
 
 def test_first_screen(tmp_path: Path) -> None:
     job = demo_job(tmp_path)
-    bare = _seconds(("-c", BARE), "HERE", job)
-    form = _seconds(("-m", "specsheet", "form", "tags/FT-2104.toml"), "Kind of fluid", job)
-    report("form filled in, by a bare application's first screen", form / bare, "", 1.35)
-    assert form / bare <= 1.35
+    bare, form = [], []
+    for _ in range(ROUNDS):  # in turn: a machine that is busy for a while delays both
+        bare.append(_until(("-c", BARE), "HERE", job))
+        form.append(_until(FORM, "Kind of fluid", job))
+    wall, spent = (
+        min(with_form) / min(without)
+        for with_form, without in zip(zip(*form, strict=True), zip(*bare, strict=True), strict=True)
+    )
+    report("form filled in, by a bare application's first screen", wall, "", 1.35)
+    report("the same in processor time", spent, "")
+    assert wall <= 1.35

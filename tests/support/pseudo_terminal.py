@@ -16,6 +16,7 @@ from collections.abc import Sequence
 from pathlib import Path
 from types import TracebackType
 
+import psutil
 from cli_process import environment
 
 
@@ -70,6 +71,11 @@ class Terminal:
             if not ready or not self._read():
                 raise AssertionError(f"{marker!r} was not drawn; seen: {self.seen[-2000:]!r}")
         return time.perf_counter() - self.started
+
+    def spent(self) -> float:
+        """Return the processor time of the command so far [s], without that of its children."""
+        used = psutil.Process(self._child.pid).cpu_times()
+        return used.user + used.system
 
     def press(self, keys: bytes) -> None:
         """Send keys, and forget what was drawn before them."""
