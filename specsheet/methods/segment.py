@@ -25,12 +25,12 @@ def area_ratio(*, height_ratio: Any) -> Any:
 def height_ratio(*, area_ratio: Any) -> Any:
     """Return h/D [-] of a segment with that share of the circle's area, 0 to 1 [-].
 
-    Newton on the half angle t, where area = (t - sin t cos t)/π and h/D = (1 - cos t)/2; the
-    function is convex below half the circle, so a start from the right end falls onto the root.
+    Newton on the half angle t, where area = (t - sin t cos t)/π and h/D = (1 - cos t)/2; it starts
+    from 2 t³/(3 π), which the area comes to in a small segment, and falls onto the root from above.
     """
     share = np.asarray(area_ratio, dtype=np.float64)
     small = np.minimum(share, 1.0 - share)
-    angle = np.full(share.shape, np.pi / 2.0)
+    angle = np.cbrt(1.5 * np.pi * small)
     for _ in range(_ROUNDS):
         sine = np.sin(angle)
         excess = angle - sine * np.cos(angle) - np.pi * small
