@@ -13,8 +13,8 @@ from family_keys import KEYS
 from services import service
 
 from specsheet import packs
+from specsheet.evaluate.candidates import Candidate, Verdict, candidates
 from specsheet.evaluate.prepare import Prepared, prepare
-from specsheet.evaluate.shortlist import Candidate, Verdict, candidate
 
 #: family: (a service it must accept, one it must refuse, code of the reason)
 CASES = {
@@ -98,7 +98,7 @@ def _prepared(name: str) -> Prepared:
 
 def held(family: str, name: str) -> Candidate:
     """Return a family held against a service."""
-    return candidate(_prepared(name), packs.profile(family))
+    return candidates(_prepared(name), [packs.profile(family)])[0]
 
 
 def test_every_family_has_its_pair() -> None:
