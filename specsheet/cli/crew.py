@@ -50,7 +50,6 @@ class Crew:
             while place not in self._done:
                 if not self._members:  # the system lets us have no process at all
                     self._done[place] = self._work(item)
-                    self._next = place + 1
                 else:
                     self._collect()
                     self._hand_out(place)
