@@ -18,6 +18,7 @@ from specsheet.line.cautions import dangers
 from specsheet.line.compatibility import SEALS, avoided_rules, rules_about
 from specsheet.line.service import Service, service_facts
 from specsheet.packs import Profile, table
+from specsheet.quantity.wording import join
 from specsheet.sources import PRACTICE
 from specsheet.tag import Tag
 
@@ -96,8 +97,7 @@ def seals(
     if not chosen:
         return SealResult({}, findings=(_nothing(),))
     best = sorted(chosen, key=lambda seal: bool(depends & rules_about(seal.name, seal=True)))[:3]
-    *others, last = [seal.name for seal in best]
-    names = f"{', '.join(others)} or {last}" if others else last
+    names = join(seal.name for seal in best)
     notes = tuple(_sentence(seal) for seal in best)
     return SealResult({"seal_material": Given(names, Origin.DERIVED, PRACTICE)}, notes)
 
