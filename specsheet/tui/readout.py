@@ -3,12 +3,12 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from specsheet.findings import Level, Origin
 from specsheet.render.text.ruler import beside, by_flow
 from specsheet.sheet.model import Row, Ruler, Sheet, Table
-from specsheet.tui.glyphs import LEVEL_LETTERS, ORIGIN_LETTERS
+from specsheet.tui.glyphs import LEVEL_LETTERS, ORIGIN_LETTERS, plain_ascii, wants_ascii
 from specsheet.tui.lines import Line, wrap
 from specsheet.tui.protocol import Trouble
 
@@ -203,6 +203,8 @@ def finding_lines(found: Sequence[Item], width: int) -> tuple[list[Line], list[i
 
 def ruler_lines(ruler: Ruler, width: int) -> list[Line]:
     """Return the range ruler, below it what else flips a verdict."""
+    if wants_ascii():  # words grow: they are laid out as they will be shown
+        ruler = _plain(ruler)
     texts, scales = by_flow(ruler, width), beside(ruler, width)
     windows = len(ruler.windows)
     lanes = len(texts) - windows - 2
@@ -211,6 +213,20 @@ def ruler_lines(ruler: Ruler, width: int) -> list[Line]:
     tones = ["head"] * lanes + ["text", "label"] + ["accent"] * windows
     tones += ["label", *["accent"] * (len(scales) - 1)] if scales else []
     return [((text, tone),) for text, tone in zip(texts, tones, strict=True)]
+
+
+def _plain(ruler: Ruler) -> Ruler:
+    """Return the ruler with its words in ASCII."""
+    return replace(
+        ruler,
+        label=plain_ascii(ruler.label),
+        unit=plain_ascii(ruler.unit),
+        windows=tuple(replace(one, label=plain_ascii(one.label)) for one in ruler.windows),
+        scales=tuple(
+            replace(one, label=plain_ascii(one.label), unit=plain_ascii(one.unit))
+            for one in ruler.scales
+        ),
+    )
 
 
 def counts(found: Sequence[Item]) -> str:

@@ -82,6 +82,23 @@ def test_what_flips_a_verdict_beside_the_flow_stands_below_the_windows() -> None
         assert len(said) == 78
 
 
+def test_the_ruler_keeps_its_columns_in_plain_ascii(monkeypatch: pytest.MonkeyPatch) -> None:
+    monkeypatch.setenv("SPECSHEET_ASCII", "1")
+    ruler = sheet().ruler
+    assert ruler is not None
+    mark = Mark("minimum", "182.0", 0.8, True)
+    words = ("170.4", mark, "−12 K", Level.STOP, False)
+    scale = Scale("Temperature", "°C", 0.7, 1.0, False, True, 0.0, *words)
+    windows = (replace(ruler.windows[0], label="Velocity ≤ 3 m/s"),)
+    ruler = replace(ruler, windows=windows, scales=(scale,))
+    lines = [plain_ascii(line) for line in text_of(readout.ruler_lines(ruler, 78))]
+    assert max(map(len, lines)) == 78
+    for name in ("Velocity <= 3 m/s", "Temperature, deg C"):
+        (line,) = (line for line in lines if name in line)
+        assert line.index(name) + len(name) == 26
+    assert lines[-1].endswith("-12 K")
+
+
 @pytest.mark.parametrize("text", ["━┿◂▸┣┫│─┴╴◆◇✓✗▸", "Δ ρ ≤ 5 m³/h ± 1 °C ·"])
 def test_every_sign_of_ours_has_a_plain_form(text: str) -> None:
     plain = plain_ascii(text)
