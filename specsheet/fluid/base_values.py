@@ -44,10 +44,8 @@ def constants(tag: Tag, fluid: Fluid) -> dict[str, Property]:
     return values
 
 
-def apply(
-    tag: Tag, fluid: Fluid, base: Base, outcome: Outcome
-) -> tuple[State, tuple[Finding, ...]]:
-    """Return the state at a base with the stated values in place, and the findings."""
+def apply(tag: Tag, fluid: Fluid, base: Base, outcome: Outcome) -> State:
+    """Return the state at a base with the stated values in place, and what is said of it."""
     found = outcome.state or State(base.temperature, base.pressure, fluid.phase, {})
     findings = [*found.findings, *outcome.findings]
     values = dict(found.properties)
@@ -58,7 +56,7 @@ def apply(
         values["density"] = given(_moved(density, tag.base, base, fluid.phase), 0.002)
     findings += _calorific(tag, base, values)
     said = tuple(_softened(tag, item, base) for item in findings if item.field not in _POINTS_ONLY)
-    return replace(found, properties=values), said
+    return State(found.temperature, found.pressure, found.phase, values, said)
 
 
 def _moved(density: float, own: Base, base: Base, phase: str) -> float:

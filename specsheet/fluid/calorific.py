@@ -53,7 +53,7 @@ def air_density(base: Base) -> float:
     return base.pressure * AIR_MOLAR_MASS / (GAS_CONSTANT * base.temperature * real)
 
 
-@lru_cache(maxsize=512)
+@lru_cache(maxsize=64)
 def molar(composition: Composition, combustion_temperature: float) -> tuple[float, float] | None:
     """Return gross and net molar calorific value [J/mol]; None where a component is not listed."""
     table = packs.table("fluids/calorific")

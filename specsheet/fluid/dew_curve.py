@@ -170,12 +170,12 @@ def _fresh(composition: Composition) -> Any:
     return state
 
 
-@lru_cache(maxsize=64)
+@lru_cache(maxsize=16)
 def _curve(composition: Composition) -> _Curve:
     return _Curve(composition, _fresh(composition))
 
 
-@lru_cache(maxsize=256)
+@lru_cache(maxsize=64)
 def _low(composition: Composition, pressure: float) -> float | None:
     """Return the dew temperature [K] at a low pressure."""
     state = _fresh(composition)

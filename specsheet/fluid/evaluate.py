@@ -45,7 +45,7 @@ def _too_low(field: str, value: float, lowest: float, unit: str) -> Outcome:
     return Outcome(None, (stop("fluid-limit", field, text),))
 
 
-@lru_cache(maxsize=4096)
+@lru_cache(maxsize=256)
 def _state(fluid: Fluid, condition: Condition) -> Outcome:
     outcome = _guarded(
         lambda: fluid.state(condition),
@@ -75,7 +75,7 @@ def base(fluid: Fluid, condition: Base) -> Outcome:
         return _base(fluid, condition)
 
 
-@lru_cache(maxsize=1024)
+@lru_cache(maxsize=64)
 def _base(fluid: Fluid, condition: Base) -> Outcome:
     return _guarded(
         lambda: fluid.base(condition), fluid.name, condition.temperature, condition.pressure

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Mapping
+from collections.abc import Mapping, Sequence
 from dataclasses import replace
 
 from specsheet.findings import Finding, Level, Origin
@@ -24,6 +24,7 @@ STATED: Mapping[str, tuple[float, float]] = {
     "heat_capacity": (0.02, 0.10),
 }
 _VISCOSITY = (0.05, 0.20)
+_MAY_BE_STATED = frozenset({*STATED, "viscosity"})
 
 _LABELS = {
     "density": "density",
@@ -58,9 +59,21 @@ _SETTLED = {
 }
 
 
-def apply(tag: Tag, point: Point, state: State, molar_mass: float | None) -> State:
-    """Return the state with the values stated at the point in place of the computed ones."""
+def apply(
+    tag: Tag, point: Point, state: State, molar_mass: float | None
+) -> tuple[dict[str, Property], Sequence[Finding]]:
+    """Return the properties and findings of a state with the values stated at the point in place.
+
+    Args:
+        tag: the tag.
+        point: what is stated.
+        state: what is computed there.
+        molar_mass: [kg/mol]; None where it is not known.
+    """
     values = dict(state.properties)
+    if point.values.keys().isdisjoint(_MAY_BE_STATED):
+        _kinematic(values)
+        return values, state.findings
     findings = [
         item for item in state.findings if point.quantity(_SETTLED.get(item.code, "")) is None
     ]
@@ -79,7 +92,7 @@ def apply(tag: Tag, point: Point, state: State, molar_mass: float | None) -> Sta
     _kinematic(values)
     if "vapour_pressure" in values and point.quantity("vapour_pressure") is not None:
         findings += _boiling(tag, state, values["vapour_pressure"].value)
-    return replace(state, properties=values, findings=tuple(findings))
+    return values, findings
 
 
 #: refusals that a stated density makes good: the point is beyond what is known, not impossible

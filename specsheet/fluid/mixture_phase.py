@@ -118,7 +118,7 @@ def _wet_verdict(
 # All else in the gas -------------------------------------------------------------------------
 
 
-@lru_cache(maxsize=256)
+@lru_cache(maxsize=64)
 def _dry(composition: Composition) -> tuple[tuple[float, ...], tuple[equilibrium.Critical, ...]]:
     """Return fractions of the composition without its water, summing to one, and constants."""
     kept = [(key, fraction) for key, fraction in composition if key != "water"]
@@ -208,7 +208,7 @@ def _by_cubic(
     return (LIQUID if stated == GAS else GAS) if len(found) == 1 else UNVERIFIED
 
 
-@lru_cache(maxsize=256)
+@lru_cache(maxsize=64)
 def without_water(composition: Composition) -> Composition:
     """Return a composition without its water, summing to one."""
     fractions, _ = _dry(composition)
@@ -216,7 +216,7 @@ def without_water(composition: Composition) -> Composition:
     return tuple(zip(keys, fractions, strict=True))
 
 
-@lru_cache(maxsize=1024)
+@lru_cache(maxsize=64)
 def _wilson(composition: Composition, pressure: float) -> Mapping[str, Property]:
     fractions, components = _dry(composition)
     found = equilibrium.wilson_dew_temperature(
@@ -256,7 +256,7 @@ def _liquid(composition: Composition, temperature: float, pressure: float) -> Ve
     return Verdict(_by_cubic(LIQUID, fractions, components, temperature, pressure))
 
 
-@lru_cache(maxsize=1024)
+@lru_cache(maxsize=64)
 def bubble_pressure(composition: Composition, temperature: float) -> float | None:
     """Return the bubble pressure [Pa] of a liquid mixture; None where it is not sure."""
     table = names.substances()

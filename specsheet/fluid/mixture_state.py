@@ -20,7 +20,7 @@ from specsheet.methods.equilibrium import Critical
 _FAR = 0.6
 
 
-@lru_cache(maxsize=256)
+@lru_cache(maxsize=64)
 def critical(composition: Composition) -> tuple[tuple[float, ...], tuple[Critical, ...]]:
     """Return fractions and critical constants of a composition."""
     table = names.substances()
@@ -34,7 +34,7 @@ def critical(composition: Composition) -> tuple[tuple[float, ...], tuple[Critica
     )
 
 
-@lru_cache(maxsize=32)
+@lru_cache(maxsize=16)
 def state_of(keys: tuple[str, ...], phase: str) -> Any:
     """Return the one state object of some components and imposed phase, under the lock of the room.
 
@@ -74,7 +74,7 @@ def updated(composition: Composition, phase: str, temperature: float, pressure: 
     return state
 
 
-@lru_cache(maxsize=256)
+@lru_cache(maxsize=64)
 def estimate_pairs(keys: tuple[str, ...]) -> tuple[tuple[str, str], ...]:
     """Give pairs without mixing parameters the linear rule; return those pairs."""
     module = library.fluids()

@@ -41,7 +41,7 @@ def _gas_state(equation: str) -> Any:
     return state
 
 
-@lru_cache(maxsize=4096)
+@lru_cache(maxsize=512)
 def dilute_viscosity(key: str, temperature: float) -> float:
     """Return the viscosity [Pa s] of a component at low density."""
     item = names.substances()[key]
@@ -49,7 +49,7 @@ def dilute_viscosity(key: str, temperature: float) -> float:
     return transport.dilute(item, temperature).value if found is None else found
 
 
-@lru_cache(maxsize=4096)
+@lru_cache(maxsize=512)
 def dilute_conductivity(key: str, temperature: float) -> float | None:
     """Return the thermal conductivity [W/m/K] of a component at low density; None if unknown."""
     state = _gas_state(names.substances()[key].equation)
@@ -157,7 +157,7 @@ def liquid(
     }
 
 
-@lru_cache(maxsize=1024)
+@lru_cache(maxsize=128)
 def _liquid_viscosity(key: str, temperature: float, pressure: float) -> float | None:
     """Return the viscosity [Pa s] of a component as liquid; its gas where it cannot be one."""
     item = names.substances()[key]

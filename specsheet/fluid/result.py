@@ -113,9 +113,10 @@ def _points(
         found = outcome.state
         if found is not None:
             molar_mass = None if molar is None else molar.value
-            found = given_values.apply(tag, point, found, molar_mass)
-            found = replace(found, findings=tuple(_at(point, item) for item in found.findings))
-            findings += found.findings
+            values, said = given_values.apply(tag, point, found, molar_mass)
+            here = tuple(_at(point, item) for item in said)
+            found = State(found.temperature, found.pressure, found.phase, values, here)
+            findings += here
         findings += [_at(point, item) for item in (*outcome.findings, *_unused(fluid, point))]
         states.append(found)
     by_name = dict(zip((point.name for point in tag.points), states, strict=True))
@@ -148,9 +149,9 @@ def _bases(
     findings: list[tuple[Base, Finding]] = []
     for base in base_values.bases_of(tag):
         outcome = evaluate.base(fluid, base)
-        found, said = base_values.apply(tag, fluid, base, outcome)
-        bases[base] = replace(found, findings=said)
-        findings += [(base, item) for item in said if not _repeated(item, at_points)]
+        found = base_values.apply(tag, fluid, base, outcome)
+        bases[base] = found
+        findings += [(base, item) for item in found.findings if not _repeated(item, at_points)]
     return bases, repeats.over_bases(findings)
 
 

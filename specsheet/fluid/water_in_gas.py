@@ -45,7 +45,7 @@ def saturation(temperature: float) -> float:
     return equilibrium.ice_vapour_pressure(temperature)
 
 
-@lru_cache(maxsize=1024)
+@lru_cache(maxsize=64)
 def _saturated_coefficient(temperature: float) -> float:
     """Return the fugacity coefficient of saturated steam, from its compressibility factor."""
     if temperature < if97.LOWEST_TEMPERATURE:

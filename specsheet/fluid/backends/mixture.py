@@ -235,7 +235,7 @@ def _dense(phase: str, state: Any) -> str:
     return GAS if phase == LIQUID and ratio < 0.7 else phase
 
 
-@lru_cache(maxsize=256)
+@lru_cache(maxsize=64)
 def _name(composition: Composition) -> str:
     table = names.substances()
     dry = [(key, fraction) for key, fraction in composition if key != "water"]
@@ -251,7 +251,7 @@ def _name(composition: Composition) -> str:
     return "mixture of " + ", ".join(listed) + more
 
 
-@lru_cache(maxsize=256)
+@lru_cache(maxsize=64)
 def _range(composition: Composition) -> limits.Range:
     """Return the limits: of the equation within its components, wide enough for ISO 20765-2."""
     weighty = [names.substances()[key] for key, fraction in composition if fraction >= 0.01]
@@ -262,7 +262,7 @@ def _range(composition: Composition) -> limits.Range:
     return limits.Range(60.0, max(500.0, highest), pressure, _SOURCE, above=200.0)
 
 
-@lru_cache(maxsize=256)
+@lru_cache(maxsize=64)
 def _methods(composition: Composition, dense: bool) -> tuple[Method, Method, Method]:
     """Return the methods of density, sound speed and heat capacity, with honest uncertainties."""
     known = all(key in _GERG for key, _ in composition)

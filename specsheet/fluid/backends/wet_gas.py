@@ -20,6 +20,11 @@ from specsheet.fluid.phases import GAS
 from specsheet.fluid.state import Property, State
 from specsheet.quantity.value import Base
 
+#: states to find the water of a saturated gas from, at most
+_STATES = 3
+#: a step by the one before, below which the rest of them is a geometric series to 1e-7 or better
+_SMALL = 0.015
+
 
 @dataclass(frozen=True, slots=True)
 class WetGas:
@@ -88,7 +93,7 @@ def wetted(dry: Composition, fraction: float) -> Composition:
     return (*scaled, ("water", fraction)) if fraction > 0.0 else scaled
 
 
-@lru_cache(maxsize=1024)
+@lru_cache(maxsize=64)
 def saturated(dry: Composition, temperature: float, pressure: float) -> float:
     """Return the mole fraction of water at which a dry gas is saturated with it [-].
 
@@ -113,18 +118,27 @@ def saturated(dry: Composition, temperature: float, pressure: float) -> float:
             "relative humidity means nothing. State the composition with its water."
         )
         raise Refused(stop("humidity-range", "temperature", text))
-    for _ in range(3):
-        wet = wetted(dry, min(fraction, 0.98))
-        try:
-            state = mixture_state.updated(wet, GAS, temperature, pressure)
-        except library.ERRORS:
-            mixture_state.forget()
-            text = f"No gas of this composition exists at {celsius(temperature)}."
-            raise Refused(stop("fluid-no-state", "temperature", text)) from None
-        before, fraction = (
-            fraction,
-            water_in_gas.saturated_fraction(wet, temperature, pressure, state),
-        )
-        if abs(fraction - before) < 1e-6 * fraction:
+    step = 0.0
+    for _ in range(_STATES):
+        before, last = fraction, step
+        fraction = _held(wetted(dry, min(fraction, 0.98)), temperature, pressure)
+        step = fraction - before
+        # each step is the same small share of the one before: what is left of them is known
+        if abs(step) < 1e-6 * fraction or (last and abs(step) < _SMALL * abs(last)):
             break
-    return fraction
+    return fraction + step * step / (last - step) if abs(step) < 0.5 * abs(last) else fraction
+
+
+def _held(wet: Composition, temperature: float, pressure: float) -> float:
+    """Return the mole fraction of water at which a gas near to it is saturated [-].
+
+    Raises:
+        Refused: there is no such gas.
+    """
+    try:
+        state = mixture_state.updated(wet, GAS, temperature, pressure)
+    except library.ERRORS:
+        mixture_state.forget()
+        text = f"No gas of this composition exists at {celsius(temperature)}."
+        raise Refused(stop("fluid-no-state", "temperature", text)) from None
+    return water_in_gas.saturated_fraction(wet, temperature, pressure, state)
