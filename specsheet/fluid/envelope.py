@@ -37,6 +37,8 @@ class Envelope:
 
 
 _known: dict[Composition, Envelope | None] = {}
+#: envelopes kept at most, the latest ones
+_KEPT = 64
 
 
 def known(composition: Composition) -> Envelope | None:
@@ -52,6 +54,8 @@ def settle(composition: Composition, seconds: float) -> bool:
         seconds: after which the search is given up, for good.
     """
     if composition not in _known:
+        while len(_known) >= _KEPT:
+            del _known[next(iter(_known))]
         _known[composition] = _search(composition, seconds)
     return _known[composition] is not None
 
