@@ -60,7 +60,7 @@ class Batch:
         results = spread(partial(_one, work, changes), self._files)
         for listed, done in zip(self._files, results, strict=True):
             if isinstance(done, Lost):
-                done = _Done("", (str(_lost(listed, done.cause)),), None)
+                done = _Done("", (str(_lost(listed)),), None)
             repeated = numbers.repeated(done.name, listed.path, listed.home)
             self._narrate((*done.problems, str(repeated)) if repeated else done.problems)
             yield done.result
@@ -86,6 +86,9 @@ def _one(work: Callable[[Tag], Result], changes: Sequence[Change], listed: Liste
     return _Done(name, problems, work(tag))
 
 
-def _lost(listed: Listed, cause: str) -> Problem:
-    message = f"the process that worked on this tag {cause}; run the command on this file alone"
+def _lost(listed: Listed) -> Problem:
+    message = (
+        "the process that worked on this tag ended, for want of memory perhaps; run the command on "
+        "this file alone"
+    )
     return Problem(str(listed.path), 1, "file", message)

@@ -21,11 +21,11 @@ import os, signal, sys
 from specsheet.cli import main, spread
 from specsheet.cli.commands import check
 spread.cores = lambda: {cores}
-real = check.evaluate_settled
+real = check.findings_settled
 def evaluate(tag):
     {spoil}
     return real(tag)
-check.evaluate_settled = evaluate
+check.findings_settled = evaluate
 sys.exit(main({arguments!r}))
 """
 TAGS = 60
@@ -117,14 +117,13 @@ def test_a_tag_that_ends_its_process_is_named_and_no_other_is_lost(job: Path) ->
     status, out, err = _run(job, "check", cores=3, spoil=spoil)
     assert status == 2
     message, totals = err.splitlines()
-    assert message.startswith("tags/FT-41.toml:1: file: the process that worked on this tag ")
-    assert "was ended by the signal SIGKILL" in message
+    assert message.startswith("tags/FT-41.toml:1: file: the process that worked on this tag ended")
     assert totals.startswith(f"{TAGS - 1} tags: ")
     whole = _run(job, "check", cores=1)[1].splitlines()
     assert out.splitlines() == [line for line in whole if not line.startswith("tags/FT-41.toml")]
 
 
-def _crew_of(child: subprocess.Popen[str]) -> list[psutil.Process]:
+def _pool_of(child: subprocess.Popen[str]) -> list[psutil.Process]:
     """Return the processes that work for the program, once they are there."""
     for _ in range(600):
         found = psutil.Process(child.pid).children()
@@ -143,14 +142,14 @@ def test_a_program_that_is_stopped_leaves_no_process(
     # ctrl+c ends what is at work; a process whose parent was killed ends after its tag
     spoil = f"__import__('time').sleep({seconds} if int(tag.name[3:]) > 30 else 0)"
     with _start(job, "check", cores=2, spoil=spoil) as child:
-        crew = _crew_of(child)
+        pool = _pool_of(child)
         time.sleep(0.3)
         if sent == signal.SIGINT:
             os.killpg(child.pid, sent)  # as a terminal does: every process gets it
         else:
             child.send_signal(sent)
         _, err = child.communicate(timeout=20)
-    _, left = psutil.wait_procs(crew, timeout=20)
+    _, left = psutil.wait_procs(pool, timeout=20)
     assert left == []
     if sent == signal.SIGINT:
         assert child.returncode == 130

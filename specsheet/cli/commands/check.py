@@ -10,7 +10,7 @@ from functools import partial
 from specsheet.cli.batch import Batch
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status, verdict
-from specsheet.evaluate import evaluate_settled
+from specsheet.evaluate import findings_settled
 from specsheet.findings import Finding, Level
 from specsheet.tag import Tag
 
@@ -44,7 +44,7 @@ def run(arguments: Namespace) -> Status:
 
 
 def _check(tag: Tag, *, notes: bool) -> _Checked:
-    findings = evaluate_settled(tag).findings
+    findings = findings_settled(tag)
     shown = (item for item in findings if notes or item.level is not Level.NOTE)
     levels = Counter(item.level for item in findings)
     return _Checked("".join(_line(tag.path, item) for item in shown), levels)

@@ -1,4 +1,4 @@
-"""Works for a crew of processes, in a module that every one of them can import."""
+"""Works for a pool of processes, in a module that every one of them can import."""
 
 from __future__ import annotations
 
@@ -32,6 +32,13 @@ def left_at_sixty_and_seventy(item: int) -> int:
     """Return twice the item, unless the process ends with the status 3."""
     if item in (60, 70):
         os._exit(3)
+    return 2 * item
+
+
+def left_at_the_last(item: int) -> int:
+    """Return twice the item, unless it is the last: then the process ends."""
+    if item == 149:
+        os._exit(0)
     return 2 * item
 
 
