@@ -6,12 +6,13 @@ at the top of the repository; in an installed wheel it stands inside the package
 
 from __future__ import annotations
 
-import tomllib
 from collections.abc import Mapping
 from dataclasses import dataclass, field
 from functools import cache
 from pathlib import Path
 from typing import Any
+
+import tomli
 
 from specsheet.fields import Entry
 
@@ -36,7 +37,7 @@ def folder() -> Path:
 def table(name: str) -> Mapping[str, Any]:
     """Return the pack ``profiles/<name>.toml`` as plain TOML data (do not change it)."""
     with (folder() / f"{name}.toml").open("rb") as file:
-        return tomllib.load(file)
+        return tomli.load(file)
 
 
 @dataclass(frozen=True, slots=True)

@@ -11,12 +11,13 @@ heat_capacity = [["20 degC", "1.9 kJ/kg/K"], ...] # if known
 
 from __future__ import annotations
 
-import tomllib
 from collections.abc import Mapping
 from dataclasses import dataclass
 from functools import lru_cache
 from pathlib import Path
 from typing import Any
+
+import tomli
 
 from specsheet import quantity
 from specsheet.findings import Finding
@@ -70,8 +71,8 @@ def _read(path: str, changed: int, phase: str) -> _File:
     del changed
     stem = names.normal(Path(path).stem)
     try:
-        raw = tomllib.loads(Path(path).read_text(encoding="utf-8"))
-    except (OSError, UnicodeDecodeError, tomllib.TOMLDecodeError) as error:
+        raw = tomli.loads(Path(path).read_text(encoding="utf-8"))
+    except (OSError, UnicodeDecodeError, tomli.TOMLDecodeError) as error:
         text = f"The substance file {path} cannot be read: {error}"
         return _File(frozenset((stem,)), None, (stop("substance-file", _FIELD, text),))
     listed = raw.get("names", [])

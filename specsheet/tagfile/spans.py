@@ -1,15 +1,16 @@
 """Where everything stands in a valid TOML text: the characters of each header, key and value.
 
-tomllib gives no places, and a file edited in place must change nothing but what was edited; so
+tomli gives no places, and a file edited in place must change nothing but what was edited; so
 one scan of the text serves the line numbers of problems and the edits alike. The text must have
-been accepted by tomllib before.
+been accepted by tomli before.
 """
 
 from __future__ import annotations
 
 import re
-import tomllib
 from dataclasses import dataclass, field
+
+import tomli
 
 #: place of an entry: keys, and the index of a table in an array ("points", 0, "flow")
 Place = tuple[str | int, ...]
@@ -193,11 +194,11 @@ def _name(match: re.Match[str]) -> str:
         return literal if bare is None else bare
     if "\\" not in basic:
         return basic
-    return next(iter(tomllib.loads(f'"{basic}" = 0')))
+    return next(iter(tomli.loads(f'"{basic}" = 0')))
 
 
 def scan(text: str) -> Spans:
-    """Return where everything stands in ``text``, which tomllib must have accepted.
+    """Return where everything stands in ``text``, which tomli must have accepted.
 
     Raises:
         ValueError, IndexError: the text is no TOML.
@@ -212,7 +213,7 @@ class Lines:
         self._text = text
         try:
             self._first = scan(text).first
-        except RecursionError:  # nested to the very limit that tomllib itself bears
+        except RecursionError:  # nested to the very limit that tomli itself bears
             self._first = {}
 
     def of(self, place: Place) -> int:

@@ -3,9 +3,10 @@
 from __future__ import annotations
 
 import re
-import tomllib
 from collections.abc import Mapping
 from typing import Any
+
+import tomli
 
 from specsheet.tagfile.migrate import CURRENT
 from specsheet.tagfile.problem import WHOLE_FILE, Problem
@@ -18,8 +19,8 @@ _AT_LINE = re.compile(r" \(at line (\d+), column (\d+)\)$")
 def parse(text: str, path: str) -> dict[str, Any] | Problem:
     """Return the TOML data of a text, its floats remembering how they were typed."""
     try:
-        return tomllib.loads(text.removeprefix(BOM), parse_float=Number)
-    except tomllib.TOMLDecodeError as error:
+        return tomli.loads(text.removeprefix(BOM), parse_float=Number)
+    except tomli.TOMLDecodeError as error:
         return _syntax(str(error), text, path)
     except RecursionError:
         return Problem(path, 1, WHOLE_FILE, "tables or lists stand too deep inside one another")

@@ -4,10 +4,11 @@ from __future__ import annotations
 
 import math
 import re
-import tomllib
 from collections.abc import Callable, Mapping
 from datetime import date, datetime
 from typing import Any
+
+import tomli
 
 from specsheet import quantity
 from specsheet.fields import KINDS, PLAIN_KINDS, Entry
@@ -75,7 +76,7 @@ def is_number(text: str) -> bool:
 
 def _literal(entry: Entry, text: str) -> Any | Refusal:
     try:
-        return tomllib.loads(f"value = {text}", parse_float=Number)["value"]
+        return tomli.loads(f"value = {text}", parse_float=Number)["value"]
     except (ValueError, RecursionError):
         return Refusal(_wanted(entry, _NAMES[entry.kind], text))
 

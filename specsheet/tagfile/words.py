@@ -15,7 +15,7 @@ class Number(float):
     text: str
 
     def __new__(cls, text: str) -> Number:
-        """Make one from its text, as tomllib hands it over."""
+        """Make one from its text, as tomli hands it over."""
         number = super().__new__(cls, text)
         number.text = text.replace("_", "")
         return number

@@ -16,9 +16,9 @@ HOMES = {
     "textual": ("specsheet/tui/",),
     "rich": ("specsheet/cli/", "specsheet/tui/"),
     "argparse": ("specsheet/cli/",),
-    "tomllib": ("specsheet/packs.py", "specsheet/tagfile/", "specsheet/fluid/", "specsheet/tui/"),
+    "tomli": ("specsheet/packs.py", "specsheet/tagfile/", "specsheet/fluid/"),
 }
-ABSENT = {"fluids", "iapws", "chemicals", "pyaga8", "scipy", "pandas", "pint"}
+ABSENT = {"fluids", "iapws", "chemicals", "pyaga8", "scipy", "pandas", "pint", "tomllib"}
 #: rooms that everything is built on and that must load fast
 WITHOUT_NUMPY = ("fields", "quantity", "tagfile", "job", "cli")
 
