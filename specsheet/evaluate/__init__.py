@@ -10,6 +10,7 @@
 * :mod:`specsheet.evaluate.stream`   operating points as arrays
 * :mod:`specsheet.evaluate.model`    the meter as one function of the stream
 * :mod:`specsheet.evaluate.limits`   which limits apply
+* :mod:`specsheet.evaluate.grid`     flows to look at, and crossings read off them
 * :mod:`specsheet.evaluate.reserve`  where a verdict flips
 * :mod:`specsheet.evaluate.checks`   checks, findings and bands
 * :mod:`specsheet.evaluate.summary`  turndown and cost

@@ -8,8 +8,9 @@ from math import isnan, log, nan
 
 import numpy as np
 
+from specsheet.evaluate.grid import FACTORS, Bounds
 from specsheet.evaluate.model import Model
-from specsheet.evaluate.reserve import FACTORS, NO_FLIPS, Bounds, Flips, Search
+from specsheet.evaluate.reserve import NO_FLIPS, Flips, Search
 from specsheet.evaluate.result import Band, Check
 from specsheet.evaluate.words import facts
 from specsheet.findings import Finding, Level, Reserve

@@ -13,33 +13,12 @@ from typing import NamedTuple
 import numpy as np
 from numpy.typing import NDArray
 
+from specsheet.evaluate.grid import FACTORS, LOGS, Bounds, Edges, read
 from specsheet.evaluate.model import Model
 from specsheet.evaluate.stream import Lanes
 from specsheet.findings import Level
 from specsheet.meters.family import Array, Limit, Stream
 
-#: flow factors that the search looks at; 1 is among them
-FACTORS = np.geomspace(0.01, 100.0, 81)
-_LOGS = np.log(FACTORS)
-#: a value that rises over a step so much more than over those beside it jumps there
-_STEEP = 2.5
-#: six points of the grid around a crossing, in steps from the one before it
-_AROUND = np.arange(-2, 4)
-_POWERS = np.arange(6.0)
-
-
-def _through(first: int, last: int) -> Array:
-    """Return values at the six points -> coefficients of the polynomial through some of them."""
-    chosen = slice(first, last)
-    powers = np.vander(_AROUND[chosen], increasing=True)
-    matrix = np.zeros((6, 6))
-    matrix[chosen, : last - first] = np.linalg.inv(powers).T
-    return matrix
-
-
-_THROUGH_ALL = _through(0, 6)
-#: through four points around the crossing, by the place of the one before it
-_THROUGH_FOUR = np.array([_through(first, first + 4) for first in (0, 0, 1, 2, 2)])
 #: twenty cuts narrow a step of the grid to 0.55 %, within which a value that follows a power of the
 #: flow is interpolated exactly, and a sum of powers to 1e-6
 _CUTS = np.linspace(0.0, 1.0, 22)[1:-1]
@@ -87,46 +66,6 @@ class Flips:
 
 #: no crossing was looked for
 NO_FLIPS = Flips(np.empty(0, np.intp), np.empty(0, np.intp), np.empty(0), np.empty(0, np.bool_))
-
-
-@dataclass(frozen=True)
-class Bounds:
-    """The bounds of k limits as columns of shape (k, 1), infinite where a limit has none.
-
-    ``low_scale`` and ``high_scale`` make a margin relative to its bound (1 where that is zero).
-    """
-
-    low: Array
-    high: Array
-    low_scale: Array
-    high_scale: Array
-
-    @classmethod
-    def of(cls, limits: Sequence[Limit]) -> Bounds:
-        """Return the bounds of limits."""
-        low = [-np.inf if limit.low is None else limit.low for limit in limits]
-        high = [np.inf if limit.high is None else limit.high for limit in limits]
-        scales = (
-            [abs(limit.low or 1.0) for limit in limits],
-            [abs(limit.high or 1.0) for limit in limits],
-        )
-        return cls(*(np.array([column]).T for column in (low, high, *scales)))
-
-    def take(self, rows: NDArray[np.intp]) -> Bounds:
-        """Return the bounds of the chosen limits (repeats allowed)."""
-        return Bounds(self.low[rows], self.high[rows], self.low_scale[rows], self.high_scale[rows])
-
-    def margins(self, values: Array) -> Array:
-        """Return how far inside its bounds each value is; shape (k, m) as ``values``.
-
-        Relative to the bound; negative is outside. NaN (an impossible state) counts as outside by
-        one.
-        """
-        inside = np.minimum(
-            (values - self.low) / self.low_scale, (self.high - values) / self.high_scale
-        )
-        clipped = np.minimum(np.maximum(inside, -1e9), 1e9)
-        return np.asarray(np.where(np.isnan(values), -1.0, clipped))
 
 
 def looked_at(stream: Stream) -> NDArray[np.intp]:
@@ -186,8 +125,8 @@ def find_flips(
     of_limit, of_point, of_step = np.nonzero(flipped)
     table = values.reshape(holds.shape)[of_limit, of_point]
     rising = holds[of_limit, of_point, of_step + 1]
-    edges = _Edges.of(bounds.take(of_limit), table, of_step + ~rising)
-    factor, clear = _read(edges, table, of_step, pains.evenness)
+    edges = Edges.of(bounds.take(of_limit), table, of_step + ~rising)
+    factor, clear = read(edges, table, of_step, pains.evenness)
     found = []
     first = 0
     for search in searches:
@@ -238,98 +177,6 @@ def _behind(
     return brink
 
 
-@dataclass(frozen=True)
-class _Edges:
-    """The bound that each of k crossings goes over, as columns of shape (k, 1).
-
-    Attributes:
-        bound: the bound.
-        sense: 1 for a lower bound, -1 for an upper one.
-    """
-
-    bound: Array
-    sense: Array
-
-    @classmethod
-    def of(cls, bounds: Bounds, values: Array, outside: NDArray[np.intp]) -> _Edges:
-        """Return the bounds gone over.
-
-        Args:
-            bounds: bounds of the limit of each crossing.
-            values: values over the grid, shape (k, len(FACTORS)).
-            outside: place on the grid, beside each crossing, where the limit does not hold.
-        """
-        beyond = values[np.arange(outside.size), outside][:, None]
-        over = (beyond > bounds.high) | np.isnan(beyond) & np.isinf(bounds.low)
-        return cls(np.where(over, bounds.high, bounds.low), np.where(over, -1.0, 1.0))
-
-    def take(self, rows: NDArray[np.intp]) -> _Edges:
-        """Return the bounds of the chosen crossings."""
-        return _Edges(self.bound[rows], self.sense[rows])
-
-    def distance(self, values: Array) -> Array:
-        """Return how far inside the bound each value is, shape (k, m) as ``values``.
-
-        The logarithm of value by bound where there is one, since a power of the flow is a straight
-        line over the logarithm of the flow there; else the difference. NaN is outside by one.
-        """
-        unknown = np.isnan(values)
-        powers = (self.bound > 0.0) & ((values > 0.0) | unknown).all(axis=1, keepdims=True)
-        with np.errstate(all="ignore"):
-            inside = np.where(powers, np.log(values / self.bound), values - self.bound)
-        return np.asarray(np.where(unknown, -1.0, self.sense * inside))
-
-
-def _read(
-    edges: _Edges, values: Array, steps: NDArray[np.intp], evenness: float
-) -> tuple[Array, NDArray[np.bool_]]:
-    """Return the factors read off the grid for k crossings, and which of them can be trusted.
-
-    The crossing of the polynomial through six points, three before and three behind it where they
-    are possible; where the one through four crosses elsewhere, the value is not smooth there. Where
-    it jumps they may agree, so its rise is compared with those beside it too.
-
-    Args:
-        edges: the bound of each crossing.
-        values: values over the grid, shape (k, len(FACTORS)).
-        steps: step of the grid in which each crossing lies.
-        evenness: as in :class:`Pains`.
-    """
-    rows = np.arange(steps.size)
-    last = FACTORS.size - 1 - np.argmax(~np.isnan(values)[:, ::-1], axis=1)
-    middle = np.clip(np.minimum(steps, last - 3), 2, FACTORS.size - 4)
-    beyond = steps - middle  # steps from the middle of the six points to the crossing
-    inside = edges.distance(values[rows[:, None], middle[:, None] + _AROUND])
-    place = np.clip(beyond + 2, 0, 4)
-    before, behind = inside[rows, place], inside[rows, place + 1]
-    with np.errstate(all="ignore"):
-        start = beyond + before / (before - behind)
-        four = np.einsum("ki,kij->kj", inside, _THROUGH_FOUR[place])
-        inner = _root(four, start)
-        found = _root(inside @ _THROUGH_ALL, inner)
-        clear = (np.abs(found - inner) <= evenness) & (place == beyond + 2)
-        clear &= np.abs(found - beyond - 0.5) <= 0.5 + evenness  # in its own step
-        rises = np.abs(np.diff(inside))
-        beside = np.minimum(rises[rows, np.abs(place - 1)], rises[rows, 4 - np.abs(3 - place)])
-        clear &= rises[rows, place] <= _STEEP * beside
-        return np.exp(_LOGS[middle] + found * (_LOGS[1] - _LOGS[0])), clear
-
-
-def _root(coefficients: Array, start: Array) -> Array:
-    """Return a root of each of k polynomials, by Newton's method.
-
-    Args:
-        coefficients: rising powers, shape (k, 6).
-        start: places near the roots, shape (k,).
-    """
-    place = start
-    for _ in range(3):
-        powers = place[:, None] ** _POWERS
-        rise = (coefficients[:, 1:] * powers[:, :-1]) @ _POWERS[1:]
-        place = place - (coefficients * powers).sum(axis=1) / rise
-    return place
-
-
 def _seen_from_all(flips: Flips, stream: Stream, seen: NDArray[np.intp]) -> Flips:
     """Return flips as each of n points sees them, its own flow at factor 1.
 
@@ -364,7 +211,7 @@ class _Brackets:
 
     model: Model
     conditions: Stream
-    edges: _Edges
+    edges: Edges
     keys: Sequence[str]
 
     def close_in(self, values: Array, steps: NDArray[np.intp], rounds: int) -> Array:
@@ -379,7 +226,7 @@ class _Brackets:
             rounds: of narrowing at most.
         """
         rows = np.arange(steps.size)
-        low, high = _LOGS[steps], _LOGS[steps + 1]
+        low, high = LOGS[steps], LOGS[steps + 1]
         at_low, at_high = values[rows, steps], values[rows, steps + 1]
         for _ in range(rounds):
             cuts = low[:, None] + (high - low)[:, None] * _CUTS

@@ -100,7 +100,9 @@ def test_smaller_meter_where_the_zero_stability_outweighs():
     """Zero stability 0.005 % of nominal flow: base error 0.1 % holds down to 1/20 of it."""
     element = FAMILY.size(liquid([0.06, 0.3, 0.6]))
     assert element.values["meter_size"].value == "DN 25"
-    assert any("DN 40 would break: expected meter error" in text for text in element.notes["element"])
+    assert any(
+        "DN 40 would break: expected meter error" in text for text in element.notes["element"]
+    )
 
 
 def test_demanded_loss_outweighs_the_note_on_zero_stability():
