@@ -1,16 +1,13 @@
-"""The dew points of a dry gas, kept by composition.
+"""The dew point of a dry gas at a pressure.
 
-Each is found at its own pressure (:mod:`specsheet.fluid.dew_point`). Where that fails, near the
+It is found at its own pressure (:mod:`specsheet.fluid.dew_point`). Where that fails, near the
 highest pressure of two phases, the curve is followed upwards from a lower pressure, since from a
-neighbour a dew point is found at once. Near points that are known it is interpolated.
+neighbour a dew point is found at once. What is found depends on nothing that was asked before.
 """
 
 from __future__ import annotations
 
-import bisect
 import math
-from collections.abc import Sequence
-from dataclasses import dataclass, field
 from functools import lru_cache
 from typing import Any
 
@@ -28,101 +25,51 @@ _FALL = 2.0
 MOST_COMPONENTS = 12
 #: change of temperature over one step that no true curve shows [K]
 _JUMP = 15.0
-#: ln p over which a dew curve may change its course, its change meanwhile and the error allowed [K]
-_COURSE, _CHANGE, _ERROR = 0.1, 10.0, 1e-3
-#: points to interpolate between at most
-_POINTS = 4
 
 
-@dataclass(slots=True)
-class _Curve:
-    """Points of one curve, growing; under the lock of the room.
+@lru_cache(maxsize=64)
+def dew_temperature(composition: Composition, pressure: float) -> float | None:
+    """Return the dew temperature [K] of a dry gas at a pressure [Pa]; None where it is not sure.
 
-    Attributes:
-        composition: components and mole fractions.
-        state: state object, standing at the point found last; None where there is no mixing rule.
-        levels: ln(p/Pa), rising.
-        temperatures: [K]
-        end: ln(p/Pa) from which no dew point is found.
+    Args:
+        composition: components and mole fractions, without water, summing to one.
+        pressure: [Pa]
     """
-
-    composition: Composition
-    state: Any
-    levels: list[float] = field(default_factory=list)
-    temperatures: list[float] = field(default_factory=list)
-    end: float = math.inf
-
-    def temperature(self, level: float) -> float | None:
-        """Return the dew temperature [K] from points known; None where they are not near enough."""
-        near = sorted(
-            zip(self.levels, self.temperatures, strict=True), key=lambda row: abs(row[0] - level)
-        )
-        error = _CHANGE
-        for count, (known, _) in enumerate(near[:_POINTS], 1):
-            error *= abs(level - known) / _COURSE
-            if error < _ERROR:
-                return _between(near[:count], level)
+    if len(composition) < 2 or (pressure >= START and len(composition) > MOST_COMPONENTS):
         return None
+    state = _fresh(composition)
+    if state is None:
+        return None
+    if pressure < START:
+        return _dew(composition, state, pressure, guessed=False)
+    found = dew_point.find(composition, pressure, state)
+    return _followed(composition, pressure) if found is None else found
 
-    def find(self, level: float) -> float | None:
-        """Return the dew temperature [K] at a level, and keep it; None where there is none."""
-        if self.state is None or level >= self.end:
+
+def _followed(composition: Composition, pressure: float) -> float | None:
+    """Return the dew temperature [K] at a pressure [Pa], followed from a lower one."""
+    level, start = math.log(pressure), math.log(START)
+    found, back = None, _STEP
+    while found is None and level - back > start:
+        state = _fresh(composition)  # what one holds that failed is not to be used
+        before = level - back
+        found, back = dew_point.find(composition, math.exp(before), state), 2.0 * back
+    if found is None:
+        state, before = _fresh(composition), start
+        found = _dew(composition, state, START, guessed=False)
+    slope = 0.0
+    while found is not None and before < level:
+        # short where the curve bends back: a search beyond its highest pressure takes its time
+        step = _STEP if slope >= 0.0 else min(_STEP, _FALL / -slope)
+        if step < _SMALLEST:
             return None
-        found = self._at(level)
-        if found is None:
-            found = self._followed(level)
-        if found is None:
-            self.end = level
-        return found
-
-    def _at(self, level: float) -> float | None:
-        """Return the dew temperature [K] found at a level by itself."""
-        found = dew_point.find(self.composition, math.exp(level), self.state)
-        if found is None:
-            self.state = _fresh(self.composition)  # what a failed one holds is not to be used
-        else:
-            self._keep(level, found)
-        return found
-
-    def _keep(self, level: float, temperature: float) -> None:
-        place = bisect.bisect_left(self.levels, level)
-        self.levels.insert(place, level)
-        self.temperatures.insert(place, temperature)
-
-    def _followed(self, level: float) -> float | None:
-        """Return the dew temperature [K] at a level, followed from a lower one."""
-        start, back = math.log(START), _STEP
-        found = None
-        while found is None and level - back > start:
-            before = level - back
-            found, back = self._at(before), 2.0 * back
-        if found is None:
-            before = start
-            found = _dew(self.composition, self.state, START, guessed=False)
-        slope = 0.0
-        while found is not None and before < level:
-            # short where the curve bends back: a search beyond its highest pressure takes its time
-            step = _STEP if slope >= 0.0 else min(_STEP, _FALL / -slope)
-            if step < _SMALLEST:
-                return None
-            after = min(before + step, level)
-            warmth = _dew(self.composition, self.state, math.exp(after), guessed=True)
-            if warmth is None or abs(warmth - found) > _JUMP:
-                self.state = _fresh(self.composition)
-                return None
-            slope = (warmth - found) / (after - before)
-            before, found = after, warmth
-            self._keep(before, found)
-        return found
-
-
-def _between(points: Sequence[tuple[float, float]], level: float) -> float:
-    """Return the temperature [K] at a level on the polynomial through some points."""
-    return sum(
-        warmth
-        * math.prod((level - other) / (known - other) for other, _ in points if other != known)
-        for known, warmth in points
-    )
+        after = min(before + step, level)
+        warmth = _dew(composition, state, math.exp(after), guessed=True)
+        if warmth is None or abs(warmth - found) > _JUMP:
+            return None
+        slope = (warmth - found) / (after - before)
+        before, found = after, warmth
+    return found
 
 
 def _dew(composition: Composition, state: Any, pressure: float, *, guessed: bool) -> float | None:
@@ -168,40 +115,3 @@ def _fresh(composition: Composition) -> Any:
         return None
     state.set_mole_fractions([fraction for _, fraction in composition])
     return state
-
-
-@lru_cache(maxsize=16)
-def _curve(composition: Composition) -> _Curve:
-    return _Curve(composition, _fresh(composition))
-
-
-@lru_cache(maxsize=64)
-def _low(composition: Composition, pressure: float) -> float | None:
-    """Return the dew temperature [K] at a low pressure."""
-    state = _fresh(composition)
-    return None if state is None else _dew(composition, state, pressure, guessed=False)
-
-
-def known(composition: Composition, pressure: float) -> float | None:
-    """Return the dew temperature [K] where points near by are known already, else None."""
-    if len(composition) < 2 or pressure < START:
-        return None
-    return _curve(composition).temperature(math.log(pressure))
-
-
-def dew_temperature(composition: Composition, pressure: float) -> float | None:
-    """Return the dew temperature [K] of a dry gas at a pressure [Pa]; None where it is not sure.
-
-    Args:
-        composition: components and mole fractions, without water, summing to one.
-        pressure: [Pa]
-    """
-    if len(composition) < 2:
-        return None
-    if pressure < START:
-        return _low(composition, pressure)
-    if len(composition) > MOST_COMPONENTS:
-        return None
-    curve, level = _curve(composition), math.log(pressure)
-    found = curve.temperature(level)
-    return curve.find(level) if found is None else found

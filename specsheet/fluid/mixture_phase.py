@@ -4,10 +4,11 @@
    below one even 20 K colder (no dew point of 3000 random mixtures lay higher).
 2. Water: its fugacity in the gas against that in liquid water (or ice) at the same state.
 3. The rest: the tangent-plane test of a cubic equation, where it holds with room to spare.
-4. The phase envelope, where it was found beforehand (:mod:`specsheet.fluid.envelope`).
-5. Near the edge: the dew point (gas) or bubble point (liquid) of the equation of state, with gates
+4. Near the edge: the dew point (gas) or bubble point (liquid) of the equation of state, with gates
    that keep out false solutions.
-What none of them settles is "unverified", never guessed.
+5. The phase envelope, where it was found beforehand (:mod:`specsheet.fluid.envelope`).
+What none of them settles is "unverified", never guessed. No step depends on what was asked before,
+but the last: that is taken where nothing else settles the phase, and once it has been found.
 """
 
 from __future__ import annotations
@@ -138,26 +139,17 @@ def _dry_verdict(composition: Composition, temperature: float, pressure: float) 
         return Verdict(GAS, _wilson(composition, pressure))
     if len(fractions) == 1:
         return _lone(composition, temperature, pressure)
-    found = envelope.known(without_water(composition))
-    if found is not None:
-        return _by_envelope(found, temperature, pressure)
-    dew = dew_curve.known(without_water(composition), pressure)
-    if dew is not None and temperature > dew:
-        return _above(dew, temperature)
     plain = _by_cubic(GAS, fractions, components, temperature, pressure)
     if plain == GAS:
         return Verdict(GAS)
     dew = dew_curve.dew_temperature(without_water(composition), pressure)
     if dew is None:
-        return Verdict(plain)
+        found = envelope.known(without_water(composition)) if plain == UNVERIFIED else None
+        return Verdict(plain) if found is None else _by_envelope(found, temperature, pressure)
     if temperature > dew:
-        return _above(dew, temperature)
+        values = {"dew_temperature": _DEW(dew)}
+        return Verdict(GAS, values, _near(dew, temperature, "the gas"))
     return Verdict(LIQUID if plain == LIQUID else TWO_PHASE, {"dew_temperature": _DEW(dew)})
-
-
-def _above(dew: float, temperature: float) -> Verdict:
-    """Return the verdict on a gas above its dew point [K]."""
-    return Verdict(GAS, {"dew_temperature": _DEW(dew)}, _near(dew, temperature, "the gas"))
 
 
 def _by_envelope(found: envelope.Envelope, temperature: float, pressure: float) -> Verdict:

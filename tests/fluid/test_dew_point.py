@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import math
 import random
 
 import pytest
@@ -62,26 +61,35 @@ def test_found_at_once_is_found_step_by_step(pressure: float) -> None:
     while at < pressure:
         at = min(1.05 * at, pressure)
         followed = dew_curve._dew(PIPELINE, state, at, guessed=True)
-    dew_curve._curve.cache_clear()
+    dew_curve.dew_temperature.cache_clear()
     assert dew_curve.dew_temperature(PIPELINE, pressure) == pytest.approx(followed, abs=1e-4)
 
 
-def test_between_known_points_the_curve_is_as_good_as_found() -> None:
-    curve = dew_curve._Curve(PIPELINE, dew_curve._fresh(PIPELINE))
-    for pressure in (58e5, 59e5, 61e5, 62e5):
-        curve.find(math.log(pressure))
-    for pressure in (58e5, 59.99e5, 60e5, 61.5e5):
-        between = curve.temperature(math.log(pressure))
-        if between is not None:
-            exact = dew_point.find(PIPELINE, pressure, dew_curve._fresh(PIPELINE))
-            assert between == pytest.approx(exact, abs=2e-3)
-    assert curve.temperature(math.log(61.01e5)) is not None
-    assert curve.temperature(math.log(30e5)) is None
+def test_a_dew_point_does_not_depend_on_those_asked_for_before() -> None:
+    dew_curve.dew_temperature.cache_clear()
+    alone = dew_curve.dew_temperature(PIPELINE, 60e5)
+    dew_curve.dew_temperature.cache_clear()
+    for pressure in (20e5, 59.5e5, 60.5e5, 74e5, 80e5):
+        dew_curve.dew_temperature(PIPELINE, pressure)
+    assert dew_curve.dew_temperature(PIPELINE, 60e5) == pytest.approx(alone, abs=1e-7)
+
+
+def test_a_warm_gas_shows_the_same_whatever_was_asked_before() -> None:
+    """Far above its dew point no dew point is worth the search, so none is told."""
+    warm = Condition(300.0, 60e5)
+    evaluate.forget()
+    alone = evaluate.state(Mixture(PIPELINE, "gas"), warm).state
+    evaluate.forget()
+    evaluate.state(Mixture(PIPELINE, "gas"), Condition(248.0, 60e5))
+    again = evaluate.state(Mixture(PIPELINE, "gas"), warm).state
+    assert alone is not None
+    assert again is not None
+    assert alone.properties.keys() == again.properties.keys()
 
 
 def test_no_dew_point_above_the_highest_pressure_of_two_phases() -> None:
     """77 bar for this gas by its phase envelope (fluid library)."""
-    dew_curve._curve.cache_clear()
+    dew_curve.dew_temperature.cache_clear()
     assert dew_curve.dew_temperature(PIPELINE, 80e5) is None
     assert dew_curve.dew_temperature(PIPELINE, 90e5) is None
     assert dew_curve.dew_temperature(PIPELINE, 60e5) is not None
@@ -91,7 +99,7 @@ def test_the_state_of_the_gas_is_not_touched_by_the_search() -> None:
     """The phase is decided between the update of a state and the reading of its properties."""
     condition = Condition(250.0, 60e5)
     evaluate.forget()
-    dew_curve._curve.cache_clear()
+    dew_curve.dew_temperature.cache_clear()
     first = evaluate.state(Mixture(PIPELINE, "gas"), condition).state
     evaluate.forget()
     again = evaluate.state(Mixture(PIPELINE, "gas"), condition).state

@@ -50,8 +50,7 @@ def forget() -> None:
     for cached in (
         mixture_transport.dilute_viscosity,
         mixture_transport.dilute_conductivity,
-        dew_curve._low,
-        dew_curve._curve,
+        dew_curve.dew_temperature,
         mixture_phase._wilson,
     ):
         cached.cache_clear()
