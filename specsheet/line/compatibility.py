@@ -101,24 +101,25 @@ def materials(
     return MaterialResult((*notes, _CLOSING), tuple(dict.fromkeys(findings)))
 
 
-def avoided_rules(
-    service: Service, words: frozenset[str], verdict: str = "avoid"
-) -> frozenset[int]:
-    """Return which rules call a material one to avoid in a service; ``words`` with its dangers.
+def rules_by_verdict(service: Service, words: frozenset[str]) -> Mapping[str, frozenset[int]]:
+    """Return which rules hold in a service, by their verdict ("avoid", "conditional", "suited").
 
     Args:
         service: facts of the service.
         words: words of the service with its dangers.
-        verdict: another verdict asked for ("conditional").
     """
     known = _known(service, words)
-    return frozenset(
-        index
-        for index, (rule, condition) in enumerate(
-            zip(table("compatibility")["rule"], _conditions(), strict=True)
-        )
-        if rule["verdict"] == verdict and _holds(condition, service, known)
-    )
+    found: dict[str, list[int]] = {verdict: [] for verdict in _ORDER}
+    rules = zip(table("compatibility")["rule"], _conditions(), strict=True)
+    for index, (rule, condition) in enumerate(rules):
+        if _holds(condition, service, known):
+            found[rule["verdict"]].append(index)
+    return {verdict: frozenset(indices) for verdict, indices in found.items()}
+
+
+def avoided_rules(service: Service, words: frozenset[str]) -> frozenset[int]:
+    """Return which rules call a material one to avoid; arguments as :func:`rules_by_verdict`."""
+    return rules_by_verdict(service, words)["avoid"]
 
 
 def unsuited_parts(profile: Profile, avoided: frozenset[int]) -> tuple[Finding, ...]:

@@ -15,7 +15,7 @@ from typing import Any
 from specsheet.findings import Finding, Given, Level, Origin
 from specsheet.fluid.state import FluidResult
 from specsheet.line.cautions import dangers
-from specsheet.line.compatibility import SEALS, avoided_rules, rules_about
+from specsheet.line.compatibility import SEALS, rules_about, rules_by_verdict
 from specsheet.line.service import Service, service_facts
 from specsheet.packs import Profile, table
 from specsheet.quantity.wording import join
@@ -89,14 +89,15 @@ def seals(
     if not usual or tag.text("meter.mounting") == "clamp-on":  # from outside nothing is sealed
         return SealResult({})
     words = service.words | dangers(service)
-    avoided = avoided_rules(service, words)
-    depends = avoided_rules(service, words, "conditional")
+    rules = rules_by_verdict(service, words)
     known = dict.fromkeys((*usual, *_pack()))
-    suited = [seal for seal in known if not _against(tag, seal, service, avoided)]
+    suited = [seal for seal in known if not _against(tag, seal, service, rules["avoid"])]
     chosen = [seal for seal in suited if seal in usual] or suited
     if not chosen:
         return SealResult({}, findings=(_nothing(),))
-    best = sorted(chosen, key=lambda seal: bool(depends & rules_about(seal.name, seal=True)))[:3]
+    best = sorted(
+        chosen, key=lambda seal: bool(rules["conditional"] & rules_about(seal.name, seal=True))
+    )[:3]
     names = join(seal.name for seal in best)
     notes = tuple(_sentence(seal) for seal in best)
     return SealResult({"seal_material": Given(names, Origin.DERIVED, PRACTICE)}, notes)
