@@ -25,12 +25,10 @@ class Cost:
     Attributes:
         seconds: processor time [s].
         wall: time that its user waits [s].
-        megabytes: peak memory [MB]; what processes share counts once where the system tells.
     """
 
     seconds: float
     wall: float
-    megabytes: float
 
 
 def process(arguments: Sequence[str], cwd: Path | None = None) -> float:
@@ -41,21 +39,35 @@ def process(arguments: Sequence[str], cwd: Path | None = None) -> float:
 def cost(arguments: Sequence[str], cwd: Path | None = None) -> Cost:
     """Run the interpreter with arguments, once; return what it cost."""
     start = time.perf_counter()
-    with subprocess.Popen(
+    with _started(arguments, cwd) as child:
+        _, _, used = os.wait4(child.pid, 0)
+        child.returncode = 0
+    return Cost(used.ru_utime + used.ru_stime, time.perf_counter() - start)
+
+
+def memory(arguments: Sequence[str], cwd: Path | None = None) -> float:
+    """Run the interpreter with arguments, once; return the most that its processes held [MB].
+
+    In a run of its own, since a look at the memory of a process holds it up. What processes share
+    counts once where the system tells.
+    """
+    peak = 0
+    with _started(arguments, cwd) as child:
+        while child.poll() is None:
+            peak = max(peak, _held(child.pid))
+            time.sleep(_PAUSE)
+    return peak / 1e6
+
+
+def _started(arguments: Sequence[str], cwd: Path | None) -> subprocess.Popen[bytes]:
+    return subprocess.Popen(
         [sys.executable, *arguments],
         cwd=cwd,
         stdin=subprocess.DEVNULL,
         stdout=subprocess.DEVNULL,
         stderr=subprocess.DEVNULL,
         env=environment(),
-    ) as child:
-        peak = 0
-        while (ended := os.wait4(child.pid, os.WNOHANG))[0] == 0:
-            peak = max(peak, _held(child.pid))
-            time.sleep(_PAUSE)
-        child.returncode = 0
-    used = ended[2]
-    return Cost(used.ru_utime + used.ru_stime, time.perf_counter() - start, peak / 1e6)
+    )
 
 
 def _held(pid: int) -> int:
