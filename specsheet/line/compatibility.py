@@ -110,10 +110,10 @@ def rules_by_verdict(service: Service, words: frozenset[str]) -> Mapping[str, fr
     """
     known = _known(service, words)
     found: dict[str, list[int]] = {verdict: [] for verdict in _ORDER}
-    rules = zip(table("compatibility")["rule"], _conditions(), strict=True)
-    for index, (rule, condition) in enumerate(rules):
-        if _holds(condition, service, known):
-            found[rule["verdict"]].append(index)
+    rules, conditions, by_word = table("compatibility")["rule"], _conditions(), _by_word()
+    for index in set().union(*(by_word.get(word, ()) for word in known)):
+        if _holds(conditions[index], service, known):
+            found[rules[index]["verdict"]].append(index)
     return {verdict: frozenset(indices) for verdict, indices in found.items()}
 
 
@@ -206,6 +206,16 @@ def _conditions() -> tuple[_Condition, ...]:
         )
         for rule in table("compatibility")["rule"]
     )
+
+
+@cache
+def _by_word() -> Mapping[str, frozenset[int]]:
+    """Return the rules that are about each word."""
+    words = frozenset().union(*(condition.when for condition in _conditions()))
+    return {
+        word: frozenset(i for i, condition in enumerate(_conditions()) if word in condition.when)
+        for word in words
+    }
 
 
 def _known(service: Service, words: frozenset[str]) -> frozenset[str]:

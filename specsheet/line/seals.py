@@ -66,6 +66,36 @@ class SealResult:
     findings: tuple[Finding, ...] = ()
 
 
+@dataclass(frozen=True, slots=True)
+class _Wanted:
+    """What a seal has to bear: temperatures in K, pressures in Pa, None where not known.
+
+    Attributes:
+        hottest, coldest: temperatures, design included.
+        lowest: absolute pressure, design included.
+        gauge: highest gauge pressure, design included.
+    """
+
+    hottest: float | None
+    coldest: float | None
+    lowest: float | None
+    gauge: float | None
+
+    @classmethod
+    def of(cls, tag: Tag, service: Service) -> _Wanted:
+        """Return what the tag wants in its service."""
+        held = [point.quantity("pressure") for point in tag.points]
+        held.append(tag.quantity("design.minimum_pressure"))
+        pressures = [tag.absolute(pressure) for pressure in held if pressure is not None]
+        highest = service.pressure
+        return cls(
+            max(filter(None, (service.hottest, tag.si("design.temperature"))), default=None),
+            service.coldest,
+            min(pressures, default=None),
+            None if highest is None else highest - tag.atmospheric_pressure,
+        )
+
+
 def seals(
     tag: Tag,
     profile: Profile | None,
@@ -82,16 +112,17 @@ def seals(
         service: facts of the service, where the caller has them already.
     """
     service = service_facts(tag, fluid) if service is None else service
+    wanted = _Wanted.of(tag, service)
     stated = tag.text(ENTRY)
     if stated and stated != PROPOSE:
-        return _stated(tag, stated, service)
+        return _stated(stated, wanted)
     usual = tuple(_usual(profile)) if profile is not None else ()
     if not usual or tag.text("meter.mounting") == "clamp-on":  # from outside nothing is sealed
         return SealResult({})
     words = service.words | dangers(service)
     rules = rules_by_verdict(service, words)
     known = dict.fromkeys((*usual, *_pack()))
-    suited = [seal for seal in known if not _against(tag, seal, service, rules["avoid"])]
+    suited = [seal for seal in known if not _against(seal, wanted, rules["avoid"])]
     chosen = [seal for seal in suited if seal in usual] or suited
     if not chosen:
         return SealResult({}, findings=(_nothing(),))
@@ -103,7 +134,7 @@ def seals(
     return SealResult({"seal_material": Given(names, Origin.DERIVED, PRACTICE)}, notes)
 
 
-def _stated(tag: Tag, stated: str, service: Service) -> SealResult:
+def _stated(stated: str, wanted: _Wanted) -> SealResult:
     """Check the seal stated; chemistry is left to the notes on materials, which see it too."""
     values = {"seal_material": Given(stated, Origin.GIVEN)}
     if _NONE.search(stated.lower()):
@@ -126,7 +157,7 @@ def _stated(tag: Tag, stated: str, service: Service) -> SealResult:
             f"{stated}: {words}. Choose another seal.",
             source=seal.source,
         )
-        for level, words in _objections(tag, seal, service)
+        for level, words in _objections(seal, wanted)
     )
     return SealResult(values, (_sentence(seal),), findings)
 
@@ -152,45 +183,35 @@ def _usual(profile: Profile) -> Iterator[Seal]:
             yield from (seal for text in choices if (seal := find_seal(text)) is not None)
 
 
-def _against(tag: Tag, seal: Seal, service: Service, avoided: frozenset[int]) -> bool:
-    return bool(avoided & rules_about(seal.name, seal=True)) or any(_objections(tag, seal, service))
+def _against(seal: Seal, wanted: _Wanted, avoided: frozenset[int]) -> bool:
+    return bool(avoided & rules_about(seal.name, seal=True)) or any(_objections(seal, wanted))
 
 
-def _objections(tag: Tag, seal: Seal, service: Service) -> Iterator[tuple[Level, str]]:
+def _objections(seal: Seal, wanted: _Wanted) -> Iterator[tuple[Level, str]]:
     """Return what speaks against a seal, in words, with the level of it."""
-    hottest = max(filter(None, (service.hottest, tag.si("design.temperature"))), default=None)
+    hottest, coldest, lowest, gauge = wanted.hottest, wanted.coldest, wanted.lowest, wanted.gauge
     if hottest is not None and hottest > seal.high:
         yield (
             Level.STOP,
             f"{hottest - _CELSIUS:.0f} °C is wanted, it bears up to {seal.high - _CELSIUS:.0f} °C",
         )
-    if service.coldest is not None and service.coldest < seal.low:
+    if coldest is not None and coldest < seal.low:
         yield (
             Level.STOP,
-            f"{service.coldest - _CELSIUS:.0f} °C is wanted, it bears down to "
-            f"{seal.low - _CELSIUS:.0f} °C",
+            f"{coldest - _CELSIUS:.0f} °C is wanted, it bears down to {seal.low - _CELSIUS:.0f} °C",
         )
-    lowest = min(_pressures(tag), default=None)
     if seal.vacuum is not None and lowest is not None and lowest < seal.vacuum:
         yield (
             Level.CAUTION,
             f"it does not stay tight at {lowest / 1e5:.2g} bar(a); at least "
             f"{seal.vacuum / 1e5:.2g} bar(a) is usual",
         )
-    gauge = None if service.pressure is None else service.pressure - tag.atmospheric_pressure
     if seal.pressure is not None and gauge is not None and gauge > seal.pressure:
         yield (
             Level.CAUTION,
             f"{gauge / 1e5:.4g} bar(g) is wanted, as a flat gasket it bears up to "
             f"{seal.pressure / 1e5:.4g} bar(g)",
         )
-
-
-def _pressures(tag: Tag) -> Iterator[float]:
-    """Return the absolute pressures of points and design [Pa]."""
-    held = [point.quantity("pressure") for point in tag.points]
-    held.append(tag.quantity("design.minimum_pressure"))
-    yield from (tag.absolute(pressure) for pressure in held if pressure is not None)
 
 
 @cache
