@@ -57,6 +57,12 @@ class Reserve:
     at: float
     fraction: float
 
+    @property
+    def change(self) -> float:
+        """By how much the driver can change [SI unit of the driver]."""
+        present = 0.0 if self.fraction == -1.0 else self.at / (1.0 + self.fraction)
+        return self.at - present
+
 
 @dataclass(frozen=True, slots=True)
 class Finding:

@@ -102,7 +102,7 @@ _TERMS = (
     Term("pulse_rate", "Output pulses", "fp", "frequency"),
     Term("pulse_volume", "Volume of one output pulse", "", "volume"),
     Term("pulse_mass", "Mass of one output pulse", "", "mass"),
-    Term("load", "Load by the largest flow", "", "ratio"),
+    Term("load", "Share of the largest flow", "", "ratio"),
     Term("flow_by_smallest", "Flow by the smallest flow", "", "dimensionless"),
     Term("slip", "Slip", "", "ratio"),
     Term("rotation", "Speed of rotation", "n", "rotation"),

@@ -26,10 +26,11 @@ _VERDICTS = {
 def limits(evaluation: Evaluation, units: Units, axis: FlowAxis) -> tuple[LimitRow, ...]:
     """Return every limit looked at, those that do not hold first, worst first."""
     checks = sorted(evaluation.checks, key=lambda check: (check.holds, _ORDER[check.level]))
-    return tuple(_limit(check, units, axis) for check in checks)
+    gas = evaluation.tag.phase == "gas"
+    return tuple(_limit(check, units, axis, gas=gas) for check in checks)
 
 
-def _limit(check: Check, units: Units, axis: FlowAxis) -> LimitRow:
+def _limit(check: Check, units: Units, axis: FlowAxis, *, gas: bool) -> LimitRow:
     kind = rows.kind_of(check.key)
     bounds = [value for value in (check.low, check.high) if value is not None]
     unit = rows.unit_of(check.key, [check.value, *bounds], units)
@@ -38,10 +39,11 @@ def _limit(check: Check, units: Units, axis: FlowAxis) -> LimitRow:
         for value in (check.low, check.high)
     )
     change, flips = reserve(check.reserve, units, axis, check.point)
+    label, symbol = words.named_of(check.key, gas=gas)
     return LimitRow(
         key=check.key,
-        label=words.label(check.key),
-        symbol=words.symbol(check.key),
+        label=label,
+        symbol=symbol,
         point=check.point,
         value=rows.number(check.value, check.key, kind, unit),
         allowed=_allowed(low, high),
@@ -80,8 +82,7 @@ def reserve(held: Reserve | None, units: Units, axis: FlowAxis, point: str) -> t
     flips = f"{rows.number(held.at, held.driver, kind, unit)} {words.unit(unit)}".strip()
     if kind != "temperature" or held.fraction == -1.0:
         return percent(held.fraction), flips
-    change = held.at - held.at / (1.0 + held.fraction)
-    return f"{signed(change)} K", flips
+    return f"{signed(held.change)} K", flips
 
 
 def percent(fraction: float) -> str:

@@ -11,7 +11,8 @@ from specsheet.cli.batch import Batch
 from specsheet.cli.narrate import data, say
 from specsheet.cli.status import Status, verdict
 from specsheet.evaluate import findings_settled
-from specsheet.findings import Finding, Level
+from specsheet.fields import TERMS
+from specsheet.findings import Finding, Level, Reserve
 from specsheet.tag import Tag
 
 
@@ -50,9 +51,15 @@ def _check(tag: Tag, *, notes: bool) -> _Checked:
     return _Checked("".join(_line(tag.path, item) for item in shown), levels)
 
 
+def _margin(reserve: Reserve) -> str:
+    """Return what flips the verdict, a temperature by kelvins: "mass flow +9.4%"."""
+    words = reserve.driver.replace("_", " ")
+    if reserve.driver in TERMS and TERMS[reserve.driver].kind == "temperature":
+        return f"{words} {reserve.change:+.3g} K"
+    return f"{words} {reserve.fraction:+.1%}"
+
+
 def _line(path: str, finding: Finding) -> str:
-    margin = ""
-    if finding.reserve is not None:
-        margin = f" [{finding.reserve.driver.replace('_', ' ')} {finding.reserve.fraction:+.1%}]"
+    margin = "" if finding.reserve is None else f" [{_margin(finding.reserve)}]"
     where = f" {finding.field}:" if finding.field else ""
     return f"{path}: {finding.level} {finding.code}:{where} {finding.message}{margin}\n"
