@@ -14,10 +14,10 @@ but the last: that is taken where nothing else settles the phase, and once it ha
 from __future__ import annotations
 
 import math
-from collections.abc import Mapping, Sequence
+from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 from functools import lru_cache
-from typing import Any
+from typing import Any, NamedTuple
 
 from specsheet.findings import Finding, Origin
 from specsheet.fluid import (
@@ -139,16 +139,17 @@ def _dry_verdict(composition: Composition, temperature: float, pressure: float) 
         return Verdict(GAS, _wilson(composition, pressure))
     if len(fractions) == 1:
         return _lone(composition, temperature, pressure)
-    plain = _by_cubic(GAS, fractions, components, temperature, pressure)
-    if plain == GAS:
+    at = _Place(fractions, components, temperature, pressure)
+    if _clearly(GAS, at):
         return Verdict(GAS)
     dew = dew_curve.dew_temperature(without_water(composition), pressure)
+    if dew is not None and temperature > dew:
+        values = {"dew_temperature": _DEW(dew)}
+        return Verdict(GAS, values, _near(dew, temperature, "the gas"))
+    plain = _by_cubic(GAS, at)
     if dew is None:
         found = envelope.known(without_water(composition)) if plain == UNVERIFIED else None
         return Verdict(plain) if found is None else _by_envelope(found, temperature, pressure)
-    if temperature > dew:
-        values = {"dew_temperature": _DEW(dew)}
-        return Verdict(GAS, values, _near(dew, temperature, "the gas"))
     return Verdict(LIQUID if plain == LIQUID else TWO_PHASE, {"dew_temperature": _DEW(dew)})
 
 
@@ -171,27 +172,40 @@ def _lone(composition: Composition, temperature: float, pressure: float) -> Verd
     return Verdict(GAS if vapour is None or pressure < vapour else TWO_PHASE)
 
 
-def _by_cubic(
-    stated: str,
-    fractions: Sequence[float],
-    components: Sequence[equilibrium.Critical],
-    temperature: float,
-    pressure: float,
-) -> str:
-    """Return the phase where a cubic equation gives it with room to spare, else unverified.
+class _Place(NamedTuple):
+    """A mixture somewhere: temperature [K], pressure [Pa]."""
+
+    fractions: Sequence[float]
+    components: Sequence[equilibrium.Critical]
+    temperature: float
+    pressure: float
+
+
+def _around(stated: str, at: _Place) -> Iterator[str]:
+    """Yield the phase by a cubic equation a little nearer to the other phase, there, and beyond.
 
     Dew points of the cubic and the multi-fluid equation lie within 5 % of the temperature (250
-    random mixtures of up to six components), so the answer must hold that much colder and warmer.
+    random mixtures of up to six components), so an answer must hold that much colder and warmer.
     """
-    found = {
-        cubic.phase(
-            temperature=temperature * factor,
-            pressure=pressure,
-            fractions=fractions,
-            components=components,
+    nearer = -dew_point.CUBIC_MARGIN if stated == GAS else dew_point.CUBIC_MARGIN
+    for factor in (1.0 + nearer, 1.0, 1.0 - nearer):
+        yield cubic.phase(
+            temperature=at.temperature * factor,
+            pressure=at.pressure,
+            fractions=at.fractions,
+            components=at.components,
         )
-        for factor in (1.0, 1.0 - dew_point.CUBIC_MARGIN, 1.0 + dew_point.CUBIC_MARGIN)
-    }
+
+
+def _clearly(stated: str, at: _Place) -> bool:
+    """Tell whether a cubic equation gives the phase stated with room to spare (:func:`_around`)."""
+    other = cubic.LIQUID if stated == GAS else cubic.GAS
+    return all(phase not in (cubic.TWO, other) for phase in _around(stated, at))
+
+
+def _by_cubic(stated: str, at: _Place) -> str:
+    """Return the phase where a cubic equation gives it with room to spare, else unverified."""
+    found = set(_around(stated, at))
     other = cubic.LIQUID if stated == GAS else cubic.GAS
     if cubic.TWO in found:
         return TWO_PHASE if len(found) == 1 else UNVERIFIED
@@ -245,7 +259,7 @@ def _liquid(composition: Composition, temperature: float, pressure: float) -> Ve
     )
     if pressure > warmer:
         return Verdict(LIQUID)
-    return Verdict(_by_cubic(LIQUID, fractions, components, temperature, pressure))
+    return Verdict(_by_cubic(LIQUID, _Place(fractions, components, temperature, pressure)))
 
 
 @lru_cache(maxsize=64)

@@ -134,7 +134,9 @@ def test_screen_and_cubic_never_call_gas_what_the_equation_of_state_condenses() 
                 **shared,
             )
             assert screen >= 1.0, (gas, pressure, colder)
-            answer = mixture_phase._by_cubic("gas", fractions, components, **here)
+            place = mixture_phase._Place(fractions, components, here["temperature"], pressure)
+            answer = mixture_phase._by_cubic("gas", place)
+            assert not mixture_phase._clearly("gas", place)
             assert answer != "gas", (gas, pressure, colder)
             checked += 1
     assert checked > 90
