@@ -18,7 +18,7 @@ GAS = (
 def _forgotten(monkeypatch):
     """Leave the phase open, as that of a gas of more components than are followed at once."""
     monkeypatch.setattr(dew_curve, "MOST_COMPONENTS", 4)
-    dew_curve.dew_temperature.cache_clear()
+    dew_curve._found.cache_clear()
     envelope._known.clear()
     states.forget()
 

@@ -61,14 +61,14 @@ def test_found_at_once_is_found_step_by_step(pressure: float) -> None:
     while at < pressure:
         at = min(1.05 * at, pressure)
         followed = dew_curve._dew(PIPELINE, state, at, guessed=True)
-    dew_curve.dew_temperature.cache_clear()
+    dew_curve._found.cache_clear()
     assert dew_curve.dew_temperature(PIPELINE, pressure) == pytest.approx(followed, abs=1e-4)
 
 
 def test_a_dew_point_does_not_depend_on_those_asked_for_before() -> None:
-    dew_curve.dew_temperature.cache_clear()
+    dew_curve._found.cache_clear()
     alone = dew_curve.dew_temperature(PIPELINE, 60e5)
-    dew_curve.dew_temperature.cache_clear()
+    dew_curve._found.cache_clear()
     for pressure in (20e5, 59.5e5, 60.5e5, 74e5, 80e5):
         dew_curve.dew_temperature(PIPELINE, pressure)
     assert dew_curve.dew_temperature(PIPELINE, 60e5) == pytest.approx(alone, abs=1e-7)
@@ -89,7 +89,7 @@ def test_a_warm_gas_shows_the_same_whatever_was_asked_before() -> None:
 
 def test_no_dew_point_above_the_highest_pressure_of_two_phases() -> None:
     """77 bar for this gas by its phase envelope (fluid library)."""
-    dew_curve.dew_temperature.cache_clear()
+    dew_curve._found.cache_clear()
     assert dew_curve.dew_temperature(PIPELINE, 80e5) is None
     assert dew_curve.dew_temperature(PIPELINE, 90e5) is None
     assert dew_curve.dew_temperature(PIPELINE, 60e5) is not None
@@ -99,7 +99,7 @@ def test_the_state_of_the_gas_is_not_touched_by_the_search() -> None:
     """The phase is decided between the update of a state and the reading of its properties."""
     condition = Condition(250.0, 60e5)
     evaluate.forget()
-    dew_curve.dew_temperature.cache_clear()
+    dew_curve._found.cache_clear()
     first = evaluate.state(Mixture(PIPELINE, "gas"), condition).state
     evaluate.forget()
     again = evaluate.state(Mixture(PIPELINE, "gas"), condition).state

@@ -50,7 +50,7 @@ def forget() -> None:
     for cached in (
         mixture_transport.dilute_viscosity,
         mixture_transport.dilute_conductivity,
-        dew_curve.dew_temperature,
+        dew_curve._found,
         mixture_phase._wilson,
     ):
         cached.cache_clear()
