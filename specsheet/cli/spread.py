@@ -16,7 +16,7 @@ Item = TypeVar("Item")
 Result = TypeVar("Result")
 
 #: items done before other processes are thought of, and the fewest that pay for them
-FIRST, WORTHWHILE = 24, 24
+FIRST, WORTHWHILE = 12, 24
 #: processes at most: each takes some 25 MB beside what all share, 40 MB where sheets are printed
 MOST_PROCESSES = 3
 
