@@ -2,9 +2,8 @@
 
 from __future__ import annotations
 
-import random
-
 import pytest
+from fluid_tags import random_gases
 
 from specsheet.fluid import dew_curve, dew_point, evaluate, library
 from specsheet.fluid.backends.mixture import Mixture
@@ -21,18 +20,6 @@ PIPELINE = (
 POOL = ("methane", "ethane", "propane", "n_butane", "n_pentane", "nitrogen", "carbon_dioxide")
 
 
-def _random_gases(count: int, seed: int) -> list[tuple[Composition, float]]:
-    choose = random.Random(seed)
-    found = []
-    for _ in range(count):
-        keys = choose.sample(POOL, choose.randint(2, 5))
-        weights = [choose.random() ** 3 + 1e-3 for _ in keys]
-        total = sum(weights)
-        gas = tuple((key, weight / total) for key, weight in zip(keys, weights, strict=True))
-        found.append((gas, 10 ** choose.uniform(6.0, 6.8)))
-    return found
-
-
 def _vapour(gas: Composition, temperature: float, pressure: float) -> float:
     """Return the share of vapour by the blind flash of the library; beyond 0 to 1 in one phase."""
     state = dew_curve._fresh(gas)
@@ -42,7 +29,7 @@ def _vapour(gas: Composition, temperature: float, pressure: float) -> float:
 
 def test_a_blind_flash_finds_two_phases_just_below_and_one_just_above() -> None:
     checked = 0
-    for gas, pressure in _random_gases(16, 21):
+    for gas, pressure in random_gases(POOL, (6.0, 6.8), 16, 21):
         found = dew_point.find(gas, pressure, dew_curve._fresh(gas))
         if found is None:
             continue

@@ -3,10 +3,9 @@
 from __future__ import annotations
 
 import itertools
-import random
 
 import pytest
-from fluid_tags import point, stops, tag
+from fluid_tags import point, random_gases, stops, tag
 from gas_cases import ISO_GASES
 
 from specsheet import fluid
@@ -105,22 +104,10 @@ POOL = (
 )
 
 
-def _random_gases(count: int, seed: int) -> list[tuple[Composition, float]]:
-    choose = random.Random(seed)
-    found = []
-    for _ in range(count):
-        keys = choose.sample(POOL, choose.randint(2, 5))
-        weights = [choose.random() ** 3 + 1e-3 for _ in keys]
-        total = sum(weights)
-        gas = tuple((key, weight / total) for key, weight in zip(keys, weights, strict=True))
-        found.append((gas, 10 ** choose.uniform(5.0, 6.7)))
-    return found
-
-
 def test_screen_and_cubic_never_call_gas_what_the_equation_of_state_condenses() -> None:
     """Dew points of the multi-fluid equation are the truth; both cheap steps must stay clear."""
     checked = 0
-    for gas, pressure in _random_gases(60, 11):
+    for gas, pressure in random_gases(POOL, (5.0, 6.7), 60, 11):
         dew = dew_curve.dew_temperature(gas, pressure)
         if dew is None:
             continue

@@ -1,9 +1,13 @@
-"""Tags for the tests of the fluid room, written as a user writes them."""
+"""Tags for the tests of the fluid room, written as a user writes them, and random gases."""
 
 from __future__ import annotations
 
+import random
+from collections.abc import Sequence
+
 from specsheet import tagfile
 from specsheet.findings import Finding, Level
+from specsheet.fluid.calorific import Composition
 from specsheet.fluid.state import FluidResult
 from specsheet.tag import Tag
 
@@ -40,3 +44,25 @@ def finding(result: FluidResult, code: str) -> Finding:
 def stops(result: FluidResult) -> list[str]:
     """Return the codes of all stop findings."""
     return [item.code for item in result.findings if item.level is Level.STOP]
+
+
+def random_gases(
+    pool: Sequence[str], exponents: tuple[float, float], count: int, seed: int
+) -> list[tuple[Composition, float]]:
+    """Return gases of two to five components of a pool, each at a random pressure [Pa].
+
+    Args:
+        pool: keys of the components.
+        exponents: of the least and the largest pressure, as powers of ten.
+        count: how many.
+        seed: of the random numbers.
+    """
+    choose = random.Random(seed)
+    found = []
+    for _ in range(count):
+        keys = choose.sample(pool, choose.randint(2, 5))
+        weights = [choose.random() ** 3 + 1e-3 for _ in keys]
+        total = sum(weights)
+        gas = tuple((key, weight / total) for key, weight in zip(keys, weights, strict=True))
+        found.append((gas, 10 ** choose.uniform(*exponents)))
+    return found
