@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
@@ -10,6 +11,13 @@ if TYPE_CHECKING:  # a text is parsed without it
 
 #: field of a problem that concerns the file as a whole
 WHOLE_FILE = "file"
+
+_CONTROL = re.compile(r"[\x00-\x1f\x7f]")
+
+
+def in_one_line(path: str) -> str:
+    """Return the name of a file for a message of one line: a line end in it is written as \\n."""
+    return _CONTROL.sub(lambda found: found[0].encode("unicode_escape").decode("ascii"), path)
 
 
 @dataclass(frozen=True, slots=True)
@@ -31,7 +39,7 @@ class Problem:
     lacking: bool = False
 
     def __str__(self) -> str:
-        return f"{self.path or '-'}:{self.line}: {self.field}: {self.message}"
+        return f"{in_one_line(self.path) or '-'}:{self.line}: {self.field}: {self.message}"
 
 
 @dataclass(frozen=True, slots=True)

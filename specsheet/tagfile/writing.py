@@ -90,7 +90,9 @@ def _mode(target: Path) -> int:
     if not stat.S_ISREG(status.st_mode):
         raise SaveError(f"{target} was not saved: it is a device or pipe; choose another name")
     if not os.access(target, os.W_OK):
-        raise PermissionError(errno.EACCES, os.strerror(errno.EACCES))
+        sealed = hasattr(os, "statvfs") and os.statvfs(target).f_flag & os.ST_RDONLY
+        number = errno.EROFS if sealed else errno.EACCES
+        raise OSError(number, os.strerror(number))
     return stat.S_IMODE(status.st_mode)
 
 

@@ -144,6 +144,20 @@ def test_nothing_at_the_path(command: str, tmp_path: Path) -> None:
     assert "Traceback" not in told.stderr
 
 
+@pytest.mark.skipif(os.name != "posix", reason="a name with a line end")
+def test_a_line_end_in_the_name_of_a_file_parts_no_line(tmp_path: Path) -> None:
+    path = tmp_path / "a\nb.toml"
+    path.write_text(
+        'schema = 1\ntag = "FT-1"\nfamily = "vortex"\ncolour = "red"\n', encoding="utf-8"
+    )
+    done = run("check", str(path))
+    assert done.returncode == 2
+    lines = (done.stdout + done.stderr).splitlines()
+    named = [line for line in lines if not line.startswith("1 tag")]
+    assert named != []
+    assert all(line.startswith(f"{tmp_path}/a\\nb.toml:") for line in named)
+
+
 def test_folder_without_tags(tmp_path: Path) -> None:
     told = run("check", cwd=tmp_path)
     assert told.returncode == 2

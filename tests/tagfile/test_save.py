@@ -6,6 +6,7 @@ import errno
 import os
 import stat
 from pathlib import Path
+from types import SimpleNamespace
 
 import pytest
 
@@ -96,6 +97,22 @@ def test_a_disk_that_fills_half_way(path: Path, monkeypatch: pytest.MonkeyPatch)
         save(path, NEW)
     monkeypatch.undo()
     assert calls == [len(NEW.encode()), len(NEW.encode()) - 5]
+    assert untouched(path)
+
+
+def test_a_read_only_file_system_is_not_taken_for_permissions(
+    path: Path, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    """As the system tells it of a file on a mount that is read-only (POSIX, statvfs)."""
+    sealed = SimpleNamespace(f_flag=os.ST_RDONLY)
+    monkeypatch.setattr(os, "access", lambda *_: False)
+    monkeypatch.setattr(os, "statvfs", lambda _: sealed)
+    with pytest.raises(SaveError, match="the file system is read-only"):
+        save(path, NEW)
+    sealed.f_flag = 0
+    with pytest.raises(SaveError, match="look at the permissions"):
+        save(path, NEW)
+    monkeypatch.undo()
     assert untouched(path)
 
 

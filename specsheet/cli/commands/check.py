@@ -14,6 +14,7 @@ from specsheet.evaluate import findings_settled
 from specsheet.fields import TERMS
 from specsheet.findings import Finding, Level, Reserve
 from specsheet.tag import Tag
+from specsheet.tagfile.problem import in_one_line
 
 
 @dataclass(frozen=True, slots=True)
@@ -62,4 +63,6 @@ def _margin(reserve: Reserve) -> str:
 def _line(path: str, finding: Finding) -> str:
     margin = "" if finding.reserve is None else f" [{_margin(finding.reserve)}]"
     where = f" {finding.field}:" if finding.field else ""
-    return f"{path}: {finding.level} {finding.code}:{where} {finding.message}{margin}\n"
+    return (
+        f"{in_one_line(path)}: {finding.level} {finding.code}:{where} {finding.message}{margin}\n"
+    )
