@@ -13,6 +13,8 @@ pytestmark = pytest.mark.benchmark
 
 SPECSHEET = ("-m", "specsheet")
 BASELINE = ("-c", "import numpy, pint")
+#: processor time of that on the machine that the budgets in milliseconds were set on [s]
+IMPORTED = 0.25
 FLUIDS = "from specsheet.fluid.library import {0}; {0}()"
 
 
@@ -71,11 +73,13 @@ def _hold(command: str, few: Path, many: Path, budget: float) -> None:
     spent = min(run.seconds for run in runs)
     growth = spent / min(cost((*SPECSHEET, command), few).seconds for _ in range(3))
     held = memory((*SPECSHEET, command), many)
+    pace = process(BASELINE) / IMPORTED
     report(f"{what}, time a tag", wall, "ms", budget)
+    report(f"{what}, time a tag at the pace of the budgets", wall / pace, "ms", budget)
     report(f"{what}, processor time a tag", 1e3 * spent / count, "ms")
     report(f"{what}, processor time by a quarter of them", growth, "", 4.4)
     report(f"{what}, memory of all processes", held, "MB", 250.0)
-    assert wall <= budget
+    assert wall / pace <= budget
     assert growth <= 4.4
     assert held <= 250.0
 
