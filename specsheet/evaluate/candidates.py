@@ -9,6 +9,7 @@ from __future__ import annotations
 from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 from enum import StrEnum
+from math import log1p
 
 import numpy as np
 
@@ -268,7 +269,8 @@ def _tightest(checked: Checked) -> Reserve | None:
         and check.reserve.driver == "mass_flow"
         and abs(check.reserve.fraction) > SIZED_TO
     ]
-    return min(found, key=lambda reserve: abs(reserve.fraction), default=None)
+    # by ratio: half the flow is as far as twice the flow
+    return min(found, key=lambda reserve: abs(log1p(reserve.fraction)), default=None)
 
 
 def _element(element: Element, key: str) -> float | None:
