@@ -146,7 +146,7 @@ def _on_curve(curve: _Curve, temperature: float) -> Allowed:
         return Allowed(first + (second - first) * share, curve.source)
     last = curve.temperatures[-1] - _CELSIUS
     whose = "the standard" if curve.complete else "the table here"
-    reason = f"{whose} ends at {last:.0f} degC for this material"
+    reason = f"{whose} ends at {last:.0f} °C for this material"
     return Allowed(None, curve.source, reason, forbidden=curve.complete)
 
 

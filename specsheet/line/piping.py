@@ -108,7 +108,7 @@ def _expansion(tag: Tag, material: Material | None) -> tuple[Given, tuple[Findin
         return given, ()
     message = (
         f"{material.name} has no coefficient of expansion above {material.highest - 273.15:.0f} "
-        f"degC in the table; the last one is used at {temperature - 273.15:.0f} degC. Check that "
+        f"°C in the table; the last one is used at {temperature - 273.15:.0f} °C. Check that "
         "the material may be used there."
     )
     code = "expansion-out-of-table"

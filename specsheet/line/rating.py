@@ -251,7 +251,7 @@ def _cold(
         return
     tough = material is not None and material.kind in TOUGH
     message = (
-        f"{stated[entry] - 273.15:.4g} degC is below {floor - 273.15:.0f} degC, down to which the "
+        f"{stated[entry] - 273.15:.4g} °C is below {floor - 273.15:.0f} °C, down to which the "
         f"ratings of {standard(rating.system)} hold: the material must be qualified for it (impact "
         "tests, low-temperature grade) by the piping code."
     )
