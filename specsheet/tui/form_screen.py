@@ -39,7 +39,7 @@ class FormScreen(FormAsking):
     def begin(self) -> None:
         """Ask for the values, then offer what earlier sessions left behind."""
         super().begin()
-        found = leftovers.survey(self.session.path)
+        found = leftovers.survey(self.session.path, self.session.journal)
         if found.busy:
             name = self.session.path.name
             self.say(f"{name} has unsaved edits in another window: the later save is asked about")

@@ -71,6 +71,11 @@ class Journal:
         self._name: Path | None = None
         self._closed = False
 
+    @property
+    def file(self) -> Path | None:
+        """Where the journal stands; None while there is nothing in it."""
+        return self._name
+
     def record(self, state: State, name: str, saved: str) -> None:
         """Write the state after a change; never raises for a full or read-only disk.
 

@@ -49,12 +49,19 @@ class Survey:
     busy: bool
 
 
-def survey(path: Path) -> Survey:
-    """Look for unsaved edits of ``path`` that other sessions hold or left."""
+def survey(path: Path, own: Path | None = None) -> Survey:
+    """Look for unsaved edits of ``path`` that other sessions hold or left.
+
+    Args:
+        path: the tag file.
+        own: the journal of the session that asks, which is no other's.
+    """
     found: list[tuple[float, Leftover]] = []
     busy = False
     for folder in places(path):
         for name in folder.glob(f"{stem(path)}-*{SUFFIX}"):
+            if name == own:
+                continue
             try:
                 with name.open("r+b") as file:
                     if not take_lock(file):

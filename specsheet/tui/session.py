@@ -61,6 +61,11 @@ class Session:
     # What there is
 
     @property
+    def journal(self) -> Path | None:
+        """Where the unsaved edits of this session stand; None while there are none."""
+        return self._journal.file
+
+    @property
     def text(self) -> str:
         """Text of the tag file as saving would write it."""
         return self._history.state.text

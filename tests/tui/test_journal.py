@@ -65,6 +65,16 @@ def test_a_killed_process_leaves_its_edits(tag_file: Path) -> None:
     assert 'size = "DN 125"' in leftover.state.text
 
 
+def test_a_session_does_not_take_its_own_journal_for_that_of_another(tag_file: Path) -> None:
+    session = opened(tag_file)
+    assert session.journal is None
+    session.edit(SIZE, "DN 100")
+    found = survey(tag_file, session.journal)
+    assert not found.busy
+    assert found.leftovers == ()
+    session.close()
+
+
 def test_a_running_session_is_told_of_and_its_edits_are_not_offered(tag_file: Path) -> None:
     session = opened(tag_file)
     session.edit(SIZE, "DN 100")
